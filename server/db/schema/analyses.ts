@@ -1,0 +1,109 @@
+import { boolean, double, index, int, json, mysqlEnum, mysqlTable, text, uniqueIndex, varchar } from 'drizzle-orm/mysql-core'
+import { id, instant, reference, rowVersion } from './columns.ts'
+
+export const analyses = mysqlTable(
+  'analyses',
+  {
+    id: id(),
+    pumpingTestId: reference().notNull(),
+    method: varchar({ length: 40 }).notNull(),
+    methodVersion: int().notNull(),
+    state: mysqlEnum(['draft', 'submitted', 'accepted', 'returned', 'withdrawn']).notNull(),
+    /** Snapshot of all inputs with a version literal, and its hash: the analysis can be repeated from this row alone. */
+    inputs: json().$type<unknown>().notNull(),
+    inputsSha256: varchar({ length: 64 }).notNull(),
+    options: json().$type<unknown>().notNull(),
+    result: json().$type<unknown>().notNull(),
+    label: varchar({ length: 120 }),
+    rationale: text(),
+    submittedAt: instant(),
+    createdBy: reference(),
+    createdAt: instant().notNull(),
+    rowVersion: rowVersion(),
+  },
+  (table) => [index('analyses_test').on(table.pumpingTestId), index('analyses_state').on(table.state)],
+)
+
+export const reviews = mysqlTable(
+  'reviews',
+  {
+    id: id(),
+    analysisId: reference().notNull(),
+    decision: mysqlEnum(['accepted', 'returned']).notNull(),
+    comment: text(),
+    reviewerId: reference(),
+    createdAt: instant().notNull(),
+  },
+  (table) => [index('reviews_analysis').on(table.analysisId)],
+)
+
+/** The regional table and its history: a row is current while validTo is empty. Values are replaced, never overwritten. */
+export const adoptedValues = mysqlTable(
+  'adopted_values',
+  {
+    id: id(),
+    pumpingTestId: reference().notNull(),
+    analysisId: reference().notNull(),
+    wellId: reference().notNull(),
+    unitId: reference().notNull(),
+    quantity: mysqlEnum(['T', 'S', 'K']).notNull(),
+    storageClass: mysqlEnum(['elastic', 'specific-yield', 'apparent', 'unclassified']),
+    /** log10 of the value in SI (m²/s, 1, m/s), and the standard deviation of its error. */
+    log10Value: double().notNull(),
+    log10Error: double().notNull(),
+    evidence: mysqlEnum(['firm', 'fair', 'slight']).notNull(),
+    method: varchar({ length: 40 }).notNull(),
+    thicknessBasis: mysqlEnum(['aquifer', 'screen', 'saturated', 'unknown']).notNull(),
+    composite: boolean().notNull().default(false),
+    /** Whether estimates may use it (S from a pumped well alone or of a slug test never is). */
+    usable: boolean().notNull().default(true),
+    testYear: int().notNull(),
+    validFrom: instant().notNull(),
+    validTo: instant(),
+    replacedBy: reference(),
+    adoptedBy: reference(),
+    reviewId: reference(),
+  },
+  (table) => [
+    index('adopted_values_current').on(table.unitId, table.quantity, table.validTo),
+    index('adopted_values_test').on(table.pumpingTestId),
+    index('adopted_values_well').on(table.wellId, table.validTo),
+    index('adopted_values_analysis').on(table.analysisId),
+  ],
+)
+
+/** Counts every change that would alter an estimate of the unit. */
+export const dataVersions = mysqlTable('data_versions', {
+  unitId: reference().primaryKey(),
+  version: int().notNull(),
+})
+
+/** Fitted by a job after the data version moved; until then the newest serves, with a note. */
+export const variogramModels = mysqlTable(
+  'variogram_models',
+  {
+    id: id(),
+    unitId: reference().notNull(),
+    quantity: varchar({ length: 4 }).notNull(),
+    scope: mysqlEnum(['published', 'internal']).notNull(),
+    dataVersion: int().notNull(),
+    valueCount: int().notNull(),
+    model: json().$type<unknown>().notNull(),
+    createdAt: instant().notNull(),
+  },
+  (table) => [uniqueIndex('variogram_models_key').on(table.unitId, table.quantity, table.scope, table.dataVersion)],
+)
+
+/** What the demo region was drawn from, so that its estimates can be compared with the truth. */
+export const demoTruth = mysqlTable(
+  'demo_truth',
+  {
+    id: id(),
+    unitCode: varchar({ length: 20 }).notNull(),
+    quantity: varchar({ length: 4 }).notNull(),
+    lon: double().notNull(),
+    lat: double().notNull(),
+    log10Value: double().notNull(),
+  },
+  (table) => [index('demo_truth_unit').on(table.unitCode, table.quantity)],
+)

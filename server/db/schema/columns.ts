@@ -1,0 +1,8 @@
+import { bigint, datetime, int } from 'drizzle-orm/mysql-core'
+
+export const id = () => bigint({ mode: 'number', unsigned: true }).autoincrement().primaryKey()
+export const reference = () => bigint({ mode: 'number', unsigned: true })
+/** Instants are UTC with milliseconds. */
+export const instant = () => datetime({ fsp: 3, mode: 'date' })
+/** Sent back with every update; a stale one is an edit conflict. */
+export const rowVersion = () => int().notNull().default(1)

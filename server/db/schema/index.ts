@@ -1,0 +1,6 @@
+export * from './people.ts'
+export * from './region.ts'
+export * from './wells.ts'
+export * from './pumping-tests.ts'
+export * from './analyses.ts'
+export * from './system.ts'

@@ -1,0 +1,60 @@
+import { double, index, int, mysqlEnum, mysqlTable, text, uniqueIndex, varchar } from 'drizzle-orm/mysql-core'
+import { point } from '../spatial.ts'
+import { id, instant, reference, rowVersion } from './columns.ts'
+
+/** private: its creator and stewards see it, until it is released. */
+export const visibility = () => mysqlEnum(['published', 'internal', 'private']).notNull()
+
+export const wells = mysqlTable(
+  'wells',
+  {
+    id: id(),
+    /** Unique without regard to case (the column's collation sees to it). */
+    code: varchar({ length: 40 }).notNull(),
+    name: varchar({ length: 120 }),
+    kind: mysqlEnum(['well', 'piezometer', 'planned']).notNull(),
+    position: point().notNull(),
+    /** Web Mercator integers (2^24 a side), so that map clusters are one grouped query. */
+    mx: int().notNull(),
+    my: int().notNull(),
+    /** As given by the person or file that brought the well. */
+    originalX: double().notNull(),
+    originalY: double().notNull(),
+    originalEpsg: int().notNull(),
+    positionOperation: varchar({ length: 200 }).notNull(),
+    positionAccuracyM: double().notNull(),
+    groundElevationM: double(),
+    measuringPointM: double(),
+    verticalDatum: varchar({ length: 40 }),
+    depthM: double(),
+    wellRadiusM: double(),
+    casingRadiusM: double(),
+    staticDepthM: double(),
+    drilledYear: int(),
+    ownerLabel: varchar({ length: 120 }),
+    notes: text(),
+    visibility: visibility(),
+    embargoUntil: instant(),
+    createdBy: reference(),
+    createdAt: instant().notNull(),
+    rowVersion: rowVersion(),
+  },
+  (table) => [
+    uniqueIndex('wells_code').on(table.code),
+    index('wells_mercator').on(table.mx, table.my, table.visibility, table.embargoUntil),
+  ],
+)
+
+export const wellScreens = mysqlTable(
+  'well_screens',
+  {
+    id: id(),
+    wellId: reference().notNull(),
+    /** Depths below ground, m. */
+    topM: double().notNull(),
+    bottomM: double().notNull(),
+    validFrom: instant(),
+    validTo: instant(),
+  },
+  (table) => [index('well_screens_well').on(table.wellId)],
+)

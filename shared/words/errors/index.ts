@@ -1,0 +1,22 @@
+import type { ErrorEntry, ErrorParams } from './catalogue.ts'
+import { fieldErrors } from './fields.ts'
+import { requestErrors } from './requests.ts'
+
+export type { ErrorParams } from './catalogue.ts'
+
+/** Every error the program can answer with. To add an area, write its file and spread it here. */
+export const errorCatalogue = {
+  ...requestErrors,
+  ...fieldErrors,
+}
+
+export type ErrorCode = keyof typeof errorCatalogue
+
+export const isErrorCode = (code: string): code is ErrorCode => Object.hasOwn(errorCatalogue, code)
+
+export const errorStatus = (code: ErrorCode): number => errorCatalogue[code].status
+
+export function errorText(code: ErrorCode, params: ErrorParams = {}): string {
+  const entry: ErrorEntry = errorCatalogue[code]
+  return entry.sentence(params)
+}
