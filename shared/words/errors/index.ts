@@ -1,6 +1,7 @@
 import type { ErrorEntry, ErrorParams } from './catalogue.ts'
 import { fieldErrors } from './fields.ts'
 import { requestErrors } from './requests.ts'
+import { sessionErrors } from './sessions.ts'
 
 export type { ErrorParams } from './catalogue.ts'
 
@@ -8,6 +9,7 @@ export type { ErrorParams } from './catalogue.ts'
 export const errorCatalogue = {
   ...requestErrors,
   ...fieldErrors,
+  ...sessionErrors,
 }
 
 export type ErrorCode = keyof typeof errorCatalogue

@@ -1,0 +1,40 @@
+import { setTimeout as pause } from 'node:timers/promises'
+
+/** Deadlock (also a cluster's certification failure), lock wait, node not ready, connection lost: the work may simply be done again. */
+const passing = new Set(['ER_LOCK_DEADLOCK', 'ER_LOCK_WAIT_TIMEOUT', 'ER_UNKNOWN_COM_ERROR', 'PROTOCOL_CONNECTION_LOST'])
+/** The database cannot be reached at all. */
+const unreachable = new Set([
+  'ECONNREFUSED',
+  'ECONNRESET',
+  'ETIMEDOUT',
+  'EPIPE',
+  'ENOENT',
+  'PROTOCOL_CONNECTION_LOST',
+  'PROTOCOL_ENQUEUE_AFTER_FATAL_ERROR',
+  'ER_SERVER_SHUTDOWN',
+  'ER_CON_COUNT_ERROR',
+  'ER_UNKNOWN_COM_ERROR',
+])
+
+/** The driver's code of an error, looked for behind the wrappers that libraries put around it. */
+export function databaseCode(error: unknown): string | null {
+  for (let cause = error; cause instanceof Error; cause = cause.cause) {
+    if ('code' in cause && typeof cause.code === 'string') return cause.code
+  }
+  return null
+}
+
+export const isDuplicate = (error: unknown) => databaseCode(error) === 'ER_DUP_ENTRY'
+export const isUnreachable = (error: unknown) => unreachable.has(databaseCode(error) ?? '')
+
+/** Runs a transaction again when the database says that it only lost a race. */
+export async function withRetry<T>(work: () => Promise<T>, attempts = 4): Promise<T> {
+  for (let attempt = 1; ; attempt += 1) {
+    try {
+      return await work()
+    } catch (error) {
+      if (attempt >= attempts || !passing.has(databaseCode(error) ?? '')) throw error
+      await pause(20 * 2 ** attempt + Math.random() * 20)
+    }
+  }
+}
