@@ -16,4 +16,6 @@ export interface Deps {
   storage: Storage
   jobs: Jobs
   workers: Workers
+  /** Aborted when the process begins to shut down: open streams end then. */
+  stopping: AbortController
 }

@@ -1,5 +1,6 @@
 import type { ErrorEntry, ErrorParams } from './catalogue.ts'
 import { fieldErrors } from './fields.ts'
+import { jobErrors } from './jobs.ts'
 import { requestErrors } from './requests.ts'
 import { sessionErrors } from './sessions.ts'
 
@@ -9,6 +10,7 @@ export type { ErrorParams } from './catalogue.ts'
 export const errorCatalogue = {
   ...requestErrors,
   ...fieldErrors,
+  ...jobErrors,
   ...sessionErrors,
 }
 

@@ -1,0 +1,10 @@
+import type { Deps } from '../deps.ts'
+import { cleanUp } from './handlers/clean-up.ts'
+import { deliverMail } from './handlers/deliver-mail.ts'
+
+/** Every kind of job this program knows. To add one: its handler, and a line here. */
+export function registerHandlers(deps: Deps): void {
+  const { jobs } = deps
+  jobs.handle('mail', deliverMail(deps))
+  jobs.handle('clean-up', cleanUp(deps))
+}

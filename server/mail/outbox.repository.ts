@@ -1,0 +1,23 @@
+import { eq } from 'drizzle-orm'
+import type { Executor } from '../db/client.ts'
+import { mailOutbox } from '../db/schema/index.ts'
+import type { Message } from './mail.ts'
+
+export async function insertMail(executor: Executor, { to, subject, text }: Message, now: Date): Promise<number> {
+  const [row] = await executor
+    .insert(mailOutbox)
+    .values({ recipient: to, subject, body: text, state: 'waiting', createdAt: now })
+    .$returningId()
+  return row!.id
+}
+
+export async function findMail(executor: Executor, id: number) {
+  const [row] = await executor.select().from(mailOutbox).where(eq(mailOutbox.id, id))
+  return row ?? null
+}
+
+export const markSent = (executor: Executor, id: number, now: Date) =>
+  executor.update(mailOutbox).set({ state: 'sent', sentAt: now, error: null }).where(eq(mailOutbox.id, id))
+
+export const markFailed = (executor: Executor, id: number, error: string) =>
+  executor.update(mailOutbox).set({ state: 'failed', error }).where(eq(mailOutbox.id, id))
