@@ -1,0 +1,31 @@
+import { z } from 'zod'
+import { instant, listOf, paging, recordId } from './common.ts'
+
+export const auditEntry = z.object({
+  id: recordId,
+  at: instant,
+  /** Null: the program itself. */
+  actorId: recordId.nullable(),
+  actorName: z.string(),
+  /** `area/what`, as in `people/edit`. */
+  action: z.string(),
+  subject: z.string(),
+  subjectId: recordId.nullable(),
+  details: z.record(z.string(), z.unknown()),
+})
+export type AuditEntry = z.infer<typeof auditEntry>
+
+export const auditQuery = paging.extend({
+  actorId: z.coerce.number().int().positive().optional(),
+  /** Part of the actor's name at the time. */
+  actor: z.string().trim().max(120).optional(),
+  /** A whole action, or its area: `people` finds `people/edit`. */
+  action: z.string().trim().max(60).optional(),
+  subject: z.string().trim().max(40).optional(),
+  subjectId: z.coerce.number().int().positive().optional(),
+  from: instant.optional(),
+  to: instant.optional(),
+})
+export type AuditQuery = z.infer<typeof auditQuery>
+
+export const auditList = listOf(auditEntry)
