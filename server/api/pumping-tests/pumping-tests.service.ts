@@ -1,0 +1,118 @@
+import type { PumpingTest, PumpingTestInput, PumpingTestQuery, PumpingTestUpdate } from '#shared/contracts/pumping-tests.ts'
+import { toSI } from '#shared/quantities/units.ts'
+import type { Viewer } from '#shared/contracts/permissions.ts'
+import type { Executor } from '../../db/client.ts'
+import { withRetry } from '../../db/retry.ts'
+import type { Deps } from '../../deps.ts'
+import { AppError, fieldError, notFound } from '../../errors.ts'
+import { recordAudit } from '../audit-trail/record-audit.ts'
+import type { createWellsService } from '../wells/wells.service.ts'
+import { countPumpingTests, listPumpingTests, unitNames } from './list.repository.ts'
+import * as repository from './pumping-tests.repository.ts'
+import { startTime } from './start-time.ts'
+import { testedInterval } from './tested-interval.ts'
+import { testWellRows, type WellForTest } from './test-wells.ts'
+import { mayEdit, pumpingTestView, summaryView } from './view.ts'
+
+export interface PumpingTestsNeeds {
+  wells: Pick<ReturnType<typeof createWellsService>, 'screensOf'>
+}
+
+export function createPumpingTestsService({ connection: { db }, now }: Deps, { wells }: PumpingTestsNeeds) {
+  /** Every check of an input against the database, and the rows to write. */
+  async function resolve(executor: Executor, viewer: Viewer, input: PumpingTestInput) {
+    const ids = [input.wellId, ...input.observationWells.map(({ wellId }) => wellId)]
+    const found = await repository.findWellsForTest(executor, viewer, ids)
+    const known = new Map<number, WellForTest>(found.map((well) => [well.id, well]))
+    const wellRows = testWellRows(input, known)
+    const start = startTime(input.startLocal, input.zone, now())
+    const screens = await wells.screensOf(executor, input.wellId)
+    const interval = testedInterval(input, known.get(input.wellId)!, screens, start.at)
+    const unitIds = new Set(input.units.map(({ unitId }) => unitId))
+    if ((await repository.countUnits(executor, [...unitIds])) !== input.units.length) throw fieldError('units', 'pumping-test/unknown-unit')
+    checkVisibility(input, found)
+    return { wellRows, row: { ...columns(input), ...interval, startAt: start.at, startPrecision: start.precision } }
+  }
+
+  async function write(executor: Executor, id: number, input: PumpingTestInput, wellRows: repository.NewTestWell[]) {
+    await repository.replaceTestWells(executor, id, wellRows)
+    await repository.replaceUnits(executor, id, input.units)
+    await repository.replaceSteps(executor, id, input.rateSteps.map(stepRow))
+  }
+
+  async function get(viewer: Viewer, id: number, executor: Executor = db): Promise<PumpingTest> {
+    const found = await repository.findPumpingTest(executor, viewer, id)
+    if (!found) throw notFound()
+    const [testWells, units, steps, series] = await Promise.all([
+      repository.listTestWells(executor, viewer, id),
+      repository.listTestUnits(executor, id),
+      repository.listRateSteps(executor, id),
+      repository.listSeries(executor, id),
+    ])
+    return pumpingTestView(viewer, found, { wells: testWells, units, steps, series })
+  }
+
+  /** The locked row of a test that the viewer may change. */
+  async function lockForEdit(executor: Executor, viewer: Viewer, id: number) {
+    const row = await repository.lockPumpingTest(executor, viewer, id)
+    if (!row) throw notFound()
+    if (!mayEdit(viewer, row)) throw new AppError('pumping-test/not-editable')
+    return row
+  }
+
+  return {
+    get,
+    lockForEdit,
+
+    async list(viewer: Viewer, query: PumpingTestQuery) {
+      const [rows, total] = await Promise.all([listPumpingTests(db, viewer, query), countPumpingTests(db, viewer, query)])
+      const names = await unitNames(
+        db,
+        rows.map(({ test }) => test.id),
+      )
+      const end = query.offset + rows.length
+      return { items: rows.map((row) => summaryView(row, names)), total, next: end < total ? end : null }
+    },
+
+    create: (viewer: Viewer, input: PumpingTestInput) =>
+      withRetry(() =>
+        db.transaction(async (tx) => {
+          const { row, wellRows } = await resolve(tx, viewer, input)
+          const at = now()
+          const id = await repository.insertPumpingTest(tx, { ...row, kind: 'constant-rate', createdBy: viewer.id, createdAt: at })
+          await write(tx, id, input, wellRows)
+          await recordAudit(tx, { viewer, at, action: 'pumping-tests/create', subject: 'pumping-test', subjectId: id })
+          return { id }
+        }),
+      ),
+
+    update: (viewer: Viewer, id: number, { rowVersion, ...input }: PumpingTestUpdate) =>
+      withRetry(() =>
+        db.transaction(async (tx) => {
+          await lockForEdit(tx, viewer, id)
+          const { row, wellRows } = await resolve(tx, viewer, input)
+          if (!(await repository.updatePumpingTest(tx, id, rowVersion, row))) throw new AppError('edit/conflict')
+          await write(tx, id, input, wellRows)
+          await recordAudit(tx, { viewer, at: now(), action: 'pumping-tests/edit', subject: 'pumping-test', subjectId: id })
+          return get(viewer, id, tx)
+        }),
+      ),
+  }
+}
+
+function columns(input: PumpingTestInput) {
+  const { wellId, zone, aquifer, intervalBasis, thicknessM, thicknessBasis, thicknessError, rateError, conditions, visibility } = input
+  return { wellId, zone, aquifer, intervalBasis, thicknessM, thicknessBasis, thicknessError, rateError, conditions, visibility }
+}
+
+function stepRow({ startS, rate }: PumpingTestInput['rateSteps'][number]): repository.NewRateStep {
+  return { startS, rateM3S: toSI(rate.value, rate.unit), enteredValue: rate.value, enteredUnit: rate.unit }
+}
+
+const openness = { private: 0, internal: 1, published: 2 }
+
+function checkVisibility(input: PumpingTestInput, wells: { id: number; visibility: keyof typeof openness }[]) {
+  const well = wells.find(({ id }) => id === input.wellId)!
+  if (openness[input.visibility] > openness[well.visibility]) throw fieldError('visibility', 'pumping-test/more-visible-than-well')
+  if (!input.rateSteps.some(({ rate }) => rate.value > 0)) throw fieldError('rateSteps', 'pumping-test/no-pumping')
+}

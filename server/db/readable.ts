@@ -1,0 +1,45 @@
+import { and, eq, exists, isNull, ne, or, sql, type SQL } from 'drizzle-orm'
+import { alias, QueryBuilder } from 'drizzle-orm/mysql-core'
+import { atLeast, type Viewer } from '#shared/contracts/permissions.ts'
+import { pumpingTests, wells } from './schema/index.ts'
+
+type Guarded = Pick<typeof wells, 'visibility' | 'embargoUntil' | 'createdBy'> | Pick<typeof pumpingTests, 'visibility' | 'embargoUntil' | 'createdBy'>
+
+/**
+ * What estimates, statistics and maps are computed from. Embargoes end through a job, which clears the date and moves
+ * the data version, so that no cache outlives them: here a date, past or future, always hides.
+ */
+export type Scope = 'published' | 'internal'
+
+export const scopeOf = (viewer: Viewer): Scope => (atLeast(viewer, 'analyst') ? 'internal' : 'published')
+
+/** Stands for everybody of a scope, so that what is cached holds nobody's private records. */
+export const viewerOfScope = (scope: Scope): Viewer => ({
+  id: null,
+  name: scope,
+  role: scope === 'internal' ? 'analyst' : 'reader',
+  mayReview: false,
+})
+
+function rows(table: Guarded, viewer: Viewer): SQL {
+  if (atLeast(viewer, 'steward')) return sql`true`
+  const open = atLeast(viewer, 'analyst')
+    ? ne(table.visibility, 'private')
+    : and(eq(table.visibility, 'published'), isNull(table.embargoUntil))
+  return (viewer.id === null ? open : or(open, eq(table.createdBy, viewer.id))) ?? sql`false`
+}
+
+const parent = alias(wells, 'readable_parent')
+
+/** The rows of a table that the viewer may see; a pumping test is never more visible than its well. */
+export const readable = {
+  wells: (viewer: Viewer): SQL => rows(wells, viewer),
+  pumpingTests(viewer: Viewer): SQL {
+    if (atLeast(viewer, 'steward')) return sql`true`
+    const well = new QueryBuilder()
+      .select({ one: sql`1` })
+      .from(parent)
+      .where(and(eq(parent.id, pumpingTests.wellId), rows(parent, viewer)))
+    return and(rows(pumpingTests, viewer), exists(well)) ?? sql`false`
+  },
+}
