@@ -1,0 +1,98 @@
+import { z } from 'zod'
+
+/** Stored analyses carry `version: 1`; a later shape brings its own literal and one upgrade from this one. */
+
+export const parameterEstimate = z.object({
+  value: z.number(),
+  low: z.number(),
+  high: z.number(),
+  logSd: z.number(),
+  determined: z.boolean(),
+})
+
+export const finding = z.object({
+  code: z.string(),
+  severity: z.enum(['good', 'note', 'caution', 'bad']),
+  params: z.record(z.string(), z.union([z.string(), z.number()])),
+})
+
+export const storageClass = z.enum(['elastic', 'specific-yield', 'apparent', 'unclassified'])
+
+const leftOutReason = z.enum([
+  'excluded',
+  'not-finite',
+  'outside-phase',
+  'outside-window',
+  'not-positive',
+  'thinned',
+  'pumped-well',
+  'not-measured',
+])
+
+export const analysisResult = z.object({
+  version: z.literal(1),
+  method: z.string(),
+  methodVersion: z.int(),
+  T: parameterEstimate.nullable(),
+  S: parameterEstimate.nullable(),
+  K: parameterEstimate.nullable(),
+  storageClass: storageClass.nullable(),
+  extras: z.record(z.string(), z.number()),
+  residuals: z.array(z.object({ wellId: z.string(), elapsed_s: z.number(), residual_m: z.number() })),
+  fit: z.object({
+    n: z.int(),
+    effectiveN: z.number(),
+    rmse_m: z.number(),
+    autocorrelation: z.number(),
+    iterations: z.int(),
+    converged: z.boolean(),
+    singular: z.boolean(),
+    objective: z.number(),
+    correlation: z.number().optional(),
+  }),
+  findings: z.array(finding),
+  leftOut: z.array(z.object({ wellId: z.string(), count: z.int(), reason: leftOutReason })),
+})
+export type StoredResult = z.infer<typeof analysisResult>
+
+export const rateStep = z.object({ start_s: z.number(), rate_m3_s: z.number() })
+
+export const series = z.object({
+  wellId: z.string(),
+  label: z.string(),
+  role: z.enum(['pumped', 'observation']),
+  distance_m: z.number(),
+  distanceSd_m: z.number(),
+  wellRadius_m: z.number().nullable(),
+  casingRadius_m: z.number().nullable(),
+  elapsed_s: z.array(z.number()),
+  drawdown_m: z.array(z.number()),
+  included: z.array(z.boolean()),
+})
+
+export const analysisInputs = z.object({
+  version: z.literal(1),
+  rates: z.array(rateStep),
+  rateError: z.number(),
+  series: z.array(series),
+  aquifer: z.enum(['confined', 'leaky', 'unconfined']),
+  thickness_m: z.number().nullable(),
+  thicknessBasis: z.enum(['aquifer', 'screen', 'saturated', 'unknown']),
+  thicknessError: z.number(),
+  streamDistance_m: z.number().nullable(),
+})
+
+const window = z.object({ from_s: z.number(), to_s: z.number() })
+
+export const analysisOptions = z.object({
+  wellIds: z.array(z.string()).max(60),
+  window: window.nullable(),
+  line: z.object({ slope: z.number(), intercept: z.number() }).nullable().optional(),
+  objective: z.enum(['drawdown', 'log-drawdown']).optional(),
+  thinning: z.boolean().optional(),
+  afterDrainage: z.boolean().nullable().optional(),
+  readingsPerCycle: z.int().positive().nullable().optional(),
+  phase: z.enum(['pumping', 'all']).optional(),
+  time_s: z.number().positive().nullable().optional(),
+  rateHistory: z.enum(['superposition', 'equivalent']).optional(),
+})
