@@ -288,6 +288,8 @@ CREATE TABLE `analyses` (
 	`state` enum('draft','submitted','accepted','returned','withdrawn') NOT NULL,
 	`inputs` json NOT NULL,
 	`inputs_sha256` varchar(64) NOT NULL,
+	`inputs_changed` boolean NOT NULL DEFAULT false,
+	`evidence` enum('firm','fair','slight'),
 	`options` json NOT NULL,
 	`result` json NOT NULL,
 	`label` varchar(120),
@@ -416,6 +418,7 @@ CREATE INDEX `pumping_tests_start` ON `pumping_tests` (`start_at`);--> statement
 CREATE INDEX `reading_edits_series` ON `reading_edits` (`series_id`,`seq`);--> statement-breakpoint
 CREATE INDEX `reading_series_test` ON `reading_series` (`pumping_test_id`);--> statement-breakpoint
 CREATE INDEX `adopted_values_current` ON `adopted_values` (`unit_id`,`quantity`,`valid_to`);--> statement-breakpoint
+CREATE INDEX `adopted_values_valid` ON `adopted_values` (`valid_to`,`quantity`);--> statement-breakpoint
 CREATE INDEX `adopted_values_test` ON `adopted_values` (`pumping_test_id`);--> statement-breakpoint
 CREATE INDEX `adopted_values_well` ON `adopted_values` (`well_id`,`valid_to`);--> statement-breakpoint
 CREATE INDEX `adopted_values_analysis` ON `adopted_values` (`analysis_id`);--> statement-breakpoint

@@ -12,6 +12,9 @@ export const analyses = mysqlTable(
     /** Snapshot of all inputs with a version literal, and its hash: the analysis can be repeated from this row alone. */
     inputs: json().$type<unknown>().notNull(),
     inputsSha256: varchar({ length: 64 }).notNull(),
+    /** Readings, rates or distances of the test are no longer those of the snapshot. */
+    inputsChanged: boolean().notNull().default(false),
+    evidence: mysqlEnum(['firm', 'fair', 'slight']),
     options: json().$type<unknown>().notNull(),
     result: json().$type<unknown>().notNull(),
     label: varchar({ length: 120 }),
@@ -66,6 +69,7 @@ export const adoptedValues = mysqlTable(
   },
   (table) => [
     index('adopted_values_current').on(table.unitId, table.quantity, table.validTo),
+    index('adopted_values_valid').on(table.validTo, table.quantity),
     index('adopted_values_test').on(table.pumpingTestId),
     index('adopted_values_well').on(table.wellId, table.validTo),
     index('adopted_values_analysis').on(table.analysisId),
