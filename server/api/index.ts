@@ -5,13 +5,26 @@ import { createRateLimiters } from '../middleware/rate-limit.ts'
 import { databaseRateStore } from '../middleware/rate-limit-store.ts'
 import { sessions } from '../middleware/sessions.ts'
 import { viewerOf, withViewer } from '../middleware/viewer.ts'
+import { accountRoutes } from './account/account.routes.ts'
+import { auditTrailRoutes } from './audit-trail/audit-trail.routes.ts'
+import { jobsRoutes } from './jobs/jobs.routes.ts'
 import { mountRoutes } from './mount.ts'
+import { outboxRoutes } from './outbox/outbox.routes.ts'
+import { regionRoutes } from './region/region.routes.ts'
 import type { Route } from './registry.ts'
 import { createServices, type Services } from './services.ts'
+import { sessionRoutes } from './session/session.routes.ts'
 
 /** Every route of the program. To add a resource: its routes file, and a line here. */
-export function allRoutes(_services: Services, _deps: Deps): Route[] {
-  return []
+export function allRoutes(services: Services, deps: Deps): Route[] {
+  return [
+    ...sessionRoutes(services, deps),
+    ...accountRoutes(services),
+    ...regionRoutes(services),
+    ...auditTrailRoutes(services),
+    ...outboxRoutes(services),
+    ...jobsRoutes(services, deps),
+  ]
 }
 
 export function apiRouter(deps: Deps): Router {
@@ -20,7 +33,7 @@ export function apiRouter(deps: Deps): Router {
   router.use('/api', sessions(deps), withViewer(deps), csrfGuard(deps.config), json({ limit: '1mb' }))
   router.use(
     mountRoutes(allRoutes(services, deps), {
-      limiters: createRateLimiters(() => databaseRateStore(deps)),
+      limiters: createRateLimiters((name) => databaseRateStore(deps, name)),
       viewerOf,
       regionAccess: services.region.access,
     }),

@@ -4,7 +4,7 @@ import type { Action, Viewer } from '#shared/contracts/permissions.ts'
 
 export type Method = 'get' | 'post' | 'put' | 'patch' | 'delete'
 /** Named rate limits; the numbers stand in middleware/rate-limit.ts. */
-export type Limit = 'usual' | 'sign-in' | 'upload' | 'heavy'
+export type Limit = 'usual' | 'sign-in' | 'mail' | 'upload' | 'heavy'
 
 type Parsed<Schema> = Schema extends z.ZodType ? z.output<Schema> : undefined
 

@@ -7,7 +7,11 @@ import { AppError } from '../errors.ts'
 export const requestId = (req: Request): string => String(req.id ?? '')
 
 /** Errors of Express and its body parsers, by the status they carry. */
-const bodyErrors: Record<number, ErrorCode> = { 400: 'request/malformed', 404: 'request/not-found', 413: 'request/too-large' }
+const bodyErrors: Record<number, ErrorCode> = {
+  400: 'request/malformed',
+  404: 'request/not-found',
+  413: 'request/too-large',
+}
 
 function toAppError(error: unknown, req: Request): AppError {
   if (error instanceof AppError) return error
@@ -41,5 +45,8 @@ export const sendProblem: ErrorRequestHandler = (error, req, res, next) => {
   const known = toAppError(error, req)
   if (known.status >= 500) req.log.error({ err: error }, 'request failed')
   if (known.code === 'server/unavailable') res.set('Retry-After', '5')
-  res.status(known.status).type('application/problem+json').send(JSON.stringify(problemOf(known, requestId(req))))
+  res
+    .status(known.status)
+    .type('application/problem+json')
+    .send(JSON.stringify(problemOf(known, requestId(req))))
 }

@@ -3,6 +3,7 @@ import { z } from 'zod'
 export const recordId = z.int().positive()
 /** A record id in an address or query string. */
 export const idInPath = z.coerce.number().int().positive()
+export const idParams = z.object({ id: idInPath })
 export const rowVersion = z.int().positive()
 export const instant = z.iso.datetime()
 export const longitude = z.number().min(-180).max(180)

@@ -1,6 +1,9 @@
 import type { ErrorEntry, ErrorParams } from './catalogue.ts'
+import { clientErrors } from './client.ts'
 import { fieldErrors } from './fields.ts'
 import { jobErrors } from './jobs.ts'
+import { peopleErrors } from './people.ts'
+import { regionErrors } from './region.ts'
 import { requestErrors } from './requests.ts'
 import { sessionErrors } from './sessions.ts'
 
@@ -10,7 +13,10 @@ export type { ErrorParams } from './catalogue.ts'
 export const errorCatalogue = {
   ...requestErrors,
   ...fieldErrors,
+  ...clientErrors,
   ...jobErrors,
+  ...peopleErrors,
+  ...regionErrors,
   ...sessionErrors,
 }
 
