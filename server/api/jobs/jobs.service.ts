@@ -1,10 +1,12 @@
 import type { Job } from '#shared/contracts/jobs.ts'
 import { atLeast, type Viewer } from '#shared/contracts/permissions.ts'
 import type { Paging } from '#shared/contracts/common.ts'
+import { inTransaction } from '../../db/transaction.ts'
 import type { Deps } from '../../deps.ts'
 import { AppError } from '../../errors.ts'
 import { activeJobs, cancelJob, countJobs, listJobs, type JobRow } from '../../jobs/jobs.repository.ts'
 import { recordAudit } from '../audit-trail/record-audit.ts'
+import { pageOf } from '../page-of.ts'
 
 export function jobView(row: JobRow): Job {
   const { id, kind, state, done, total, message, errorCode, attempts, cancelRequested } = row
@@ -15,16 +17,17 @@ export function jobView(row: JobRow): Job {
 /** Stewards follow everybody's work, others their own. */
 const scopeOf = (viewer: Viewer) => (atLeast(viewer, 'steward') ? null : viewer.id)
 
-export function createJobsService({ connection: { db }, now }: Deps) {
+export function createJobsService(deps: Deps) {
+  const { db } = deps.connection
+  const { now } = deps
   return {
     async list({ limit, offset }: Paging) {
       const [rows, total] = await Promise.all([listJobs(db, null, limit, offset), countJobs(db)])
-      const end = offset + rows.length
-      return { items: rows.map(jobView), total, next: end < total ? end : null }
+      return pageOf(rows.map(jobView), total, { offset })
     },
 
     async cancel(viewer: Viewer, id: number) {
-      await db.transaction(async (tx) => {
+      await inTransaction(deps, async (tx) => {
         if (!(await cancelJob(tx, id, now()))) throw new AppError('job/not-active')
         await recordAudit(tx, { viewer, at: now(), action: 'jobs/cancel', subject: 'job', subjectId: id })
       })

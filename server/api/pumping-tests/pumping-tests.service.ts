@@ -2,10 +2,11 @@ import type { PumpingTest, PumpingTestInput, PumpingTestQuery, PumpingTestUpdate
 import { toSI } from '#shared/quantities/units.ts'
 import type { Viewer } from '#shared/contracts/permissions.ts'
 import type { Executor } from '../../db/client.ts'
-import { withRetry } from '../../db/retry.ts'
+import { inTransaction } from '../../db/transaction.ts'
 import type { Deps } from '../../deps.ts'
 import { AppError, fieldError, notFound } from '../../errors.ts'
 import { recordAudit } from '../audit-trail/record-audit.ts'
+import { pageOf } from '../page-of.ts'
 import type { createWellsService } from '../wells/wells.service.ts'
 import { countPumpingTests, listPumpingTests, unitNames } from './list.repository.ts'
 import * as repository from './pumping-tests.repository.ts'
@@ -16,9 +17,13 @@ import { mayEdit, pumpingTestView, summaryView } from './view.ts'
 
 export interface PumpingTestsNeeds {
   wells: Pick<ReturnType<typeof createWellsService>, 'screensOf'>
+  /** Compares every analysis of a test with the test as it is now. */
+  markInputsChanged: (executor: Executor, testId: number) => Promise<void>
 }
 
-export function createPumpingTestsService({ connection: { db }, now }: Deps, { wells }: PumpingTestsNeeds) {
+export function createPumpingTestsService(deps: Deps, { wells, markInputsChanged }: PumpingTestsNeeds) {
+  const { db } = deps.connection
+  const { now } = deps
   /** Every check of an input against the database, and the rows to write. */
   async function resolve(executor: Executor, viewer: Viewer, input: PumpingTestInput) {
     const ids = [input.wellId, ...input.observationWells.map(({ wellId }) => wellId)]
@@ -70,33 +75,33 @@ export function createPumpingTestsService({ connection: { db }, now }: Deps, { w
         db,
         rows.map(({ test }) => test.id),
       )
-      const end = query.offset + rows.length
-      return { items: rows.map((row) => summaryView(row, names)), total, next: end < total ? end : null }
+      return pageOf(
+        rows.map((row) => summaryView(row, names)),
+        total,
+        query,
+      )
     },
 
     create: (viewer: Viewer, input: PumpingTestInput) =>
-      withRetry(() =>
-        db.transaction(async (tx) => {
-          const { row, wellRows } = await resolve(tx, viewer, input)
-          const at = now()
-          const id = await repository.insertPumpingTest(tx, { ...row, kind: 'constant-rate', createdBy: viewer.id, createdAt: at })
-          await write(tx, id, input, wellRows)
-          await recordAudit(tx, { viewer, at, action: 'pumping-tests/create', subject: 'pumping-test', subjectId: id })
-          return { id }
-        }),
-      ),
+      inTransaction(deps, async (tx) => {
+        const { row, wellRows } = await resolve(tx, viewer, input)
+        const at = now()
+        const id = await repository.insertPumpingTest(tx, { ...row, kind: 'constant-rate', createdBy: viewer.id, createdAt: at })
+        await write(tx, id, input, wellRows)
+        await recordAudit(tx, { viewer, at, action: 'pumping-tests/create', subject: 'pumping-test', subjectId: id })
+        return { id }
+      }),
 
     update: (viewer: Viewer, id: number, { rowVersion, ...input }: PumpingTestUpdate) =>
-      withRetry(() =>
-        db.transaction(async (tx) => {
-          await lockForEdit(tx, viewer, id)
-          const { row, wellRows } = await resolve(tx, viewer, input)
-          if (!(await repository.updatePumpingTest(tx, id, rowVersion, row))) throw new AppError('edit/conflict')
-          await write(tx, id, input, wellRows)
-          await recordAudit(tx, { viewer, at: now(), action: 'pumping-tests/edit', subject: 'pumping-test', subjectId: id })
-          return get(viewer, id, tx)
-        }),
-      ),
+      inTransaction(deps, async (tx) => {
+        await lockForEdit(tx, viewer, id)
+        const { row, wellRows } = await resolve(tx, viewer, input)
+        if (!(await repository.updatePumpingTest(tx, id, rowVersion, row))) throw new AppError('edit/conflict')
+        await write(tx, id, input, wellRows)
+        await markInputsChanged(tx, id)
+        await recordAudit(tx, { viewer, at: now(), action: 'pumping-tests/edit', subject: 'pumping-test', subjectId: id })
+        return get(viewer, id, tx)
+      }),
   }
 }
 
