@@ -1,0 +1,192 @@
+import type { MethodId } from './catalogue.ts'
+
+/** A step of the pumping rate; a step with rate 0 is the stop. Times in seconds on the clock of `elapsed_s`. */
+export interface RateStep {
+  start_s: number
+  rate_m3_s: number
+}
+
+export interface Series {
+  wellId: string
+  label: string
+  role: 'pumped' | 'observation'
+  /** Distance from the pumped well; ignored for the pumped well itself. */
+  distance_m: number
+  distanceSd_m: number
+  wellRadius_m: number | null
+  /** Inner radius of the casing in which the water level moves, the riser's area taken off. */
+  casingRadius_m: number | null
+  elapsed_s: number[]
+  drawdown_m: number[]
+  included: boolean[]
+}
+
+/** Everything an analysis depends on, all in SI; stored as the analysis's snapshot. */
+export interface AnalysisInputs {
+  version: 1
+  rates: RateStep[]
+  /** Relative standard deviation of the rate, 0.05 unless known better. */
+  rateError: number
+  series: Series[]
+  aquifer: 'confined' | 'leaky' | 'unconfined'
+  thickness_m: number | null
+  thicknessBasis: 'aquifer' | 'screen' | 'saturated' | 'unknown'
+  /** Relative standard deviation of the thickness. */
+  thicknessError: number
+  /** Distance to a connected stream, null where there is none. */
+  streamDistance_m: number | null
+}
+
+export interface TimeWindow {
+  from_s: number
+  to_s: number
+}
+
+/** A straight line drawn by hand: drawdown in metres on log10 of the method's abscissa (seconds, metres or t/t'). */
+export interface HandLine {
+  slope: number
+  intercept: number
+}
+
+export interface AnalysisOptions {
+  wellIds: string[]
+  /** Elapsed time, or for recovery the time since the stop; null lets the method choose (curve methods: all readings). */
+  window: TimeWindow | null
+  /** Replaces the regression of straight-line methods. Default null. */
+  line?: HandLine | null
+  /** What the least squares of curve methods are taken of. Default 'drawdown'. */
+  objective?: 'drawdown' | 'log-drawdown'
+  /** Replace s by s − s²/2b in an unconfined aquifer. Default false. */
+  thinning?: boolean
+  /** The analyst's word that the window lies after delayed drainage; null: judged by its end (72 h). Default null. */
+  afterDrainage?: boolean | null
+  /** Most readings used in each factor of ten in time, per well; null uses all. Default 50. */
+  readingsPerCycle?: number | null
+  /** Readings a curve method fits: those during pumping, or recovery too, by superposition. Default 'pumping'. */
+  phase?: 'pumping' | 'all'
+  /** Moment at which distance–drawdown compares the wells; null: the last moment common to all. Default null. */
+  time_s?: number | null
+  /** How recovery treats a rate that varied. Default 'superposition'; 'equivalent': tp = volume / last rate. */
+  rateHistory?: 'superposition' | 'equivalent'
+}
+
+/** A positive quantity with its 95 % interval; `logSd` is the standard deviation of log10. */
+export interface ParameterEstimate {
+  value: number
+  low: number
+  high: number
+  logSd: number
+  /** False when the interval is too wide for the value to mean anything. */
+  determined: boolean
+}
+
+/** A statement about a result: a code with SI parameters; the sentence is in shared/words/findings.ts. */
+export interface Finding {
+  code: string
+  severity: 'good' | 'note' | 'caution' | 'bad'
+  params: Record<string, number | string>
+}
+
+export type StorageClass = 'elastic' | 'specific-yield' | 'apparent' | 'unclassified'
+
+export type LeftOutReason =
+  | 'excluded'
+  | 'not-finite'
+  | 'outside-phase'
+  | 'outside-window'
+  | 'not-positive'
+  | 'thinned'
+  | 'pumped-well'
+  | 'not-measured'
+
+export interface LeftOut {
+  wellId: string
+  count: number
+  reason: LeftOutReason
+}
+
+export interface Residual {
+  wellId: string
+  elapsed_s: number
+  /** Measured − calculated drawdown. */
+  residual_m: number
+}
+
+export interface FitSummary {
+  n: number
+  effectiveN: number
+  rmse_m: number
+  autocorrelation: number
+  iterations: number
+  converged: boolean
+  singular: boolean
+  /** Sum of squared residuals of the objective. */
+  objective: number
+  /** Correlation of ln T and ln S. */
+  correlation?: number
+}
+
+/** What a method's `run` returns; `analyse` adds which method it was. */
+export interface MethodOutcome {
+  T: ParameterEstimate | null
+  S: ParameterEstimate | null
+  storageClass: StorageClass | null
+  /** Further numbers by name: slope, intercept, distances, the window used (window_from_s, window_to_s). */
+  extras: Record<string, number>
+  residuals: Residual[]
+  fit: FitSummary
+  findings: Finding[]
+  leftOut: LeftOut[]
+}
+
+export interface AnalysisResult extends MethodOutcome {
+  version: 1
+  method: MethodId
+  methodVersion: number
+  K: ParameterEstimate | null
+}
+
+/** Drawdown of the fitted model in one well, at the times asked for; null where the model says nothing. */
+export interface FittedCurve {
+  wellId: string
+  drawdown_m: (number | null)[]
+}
+
+export type AnalysisErrorCode =
+  | 'analysis/unknown-method'
+  | 'analysis/no-wells'
+  | 'analysis/unknown-well'
+  | 'analysis/wrong-wells'
+  | 'analysis/too-few-wells'
+  | 'analysis/uneven-series'
+  | 'analysis/no-rate'
+  | 'analysis/bad-rate'
+  | 'analysis/negative-rate'
+  | 'analysis/rates-out-of-order'
+  | 'analysis/bad-option'
+  | 'analysis/zero-distance'
+  | 'analysis/distances-equal'
+  | 'analysis/too-few-readings'
+  | 'analysis/times-equal'
+  | 'analysis/slope-not-positive'
+  | 'analysis/no-drawdown'
+  | 'analysis/no-recovery'
+  | 'analysis/no-common-time'
+  | 'analysis/no-thickness'
+  | 'analysis/not-unconfined'
+  | 'analysis/thinning-too-large'
+  | 'analysis/thinning-early'
+  | 'analysis/no-fit'
+
+/** Inputs a method refuses, as a code and parameters; the sentence is in shared/words/findings.ts. */
+export class AnalysisError extends Error {
+  readonly code: AnalysisErrorCode
+  readonly params: Record<string, number | string>
+
+  constructor(code: AnalysisErrorCode, params: Record<string, number | string> = {}) {
+    super(`${code} ${JSON.stringify(params)}`)
+    this.name = 'AnalysisError'
+    this.code = code
+    this.params = params
+  }
+}

@@ -1,0 +1,115 @@
+import { effectiveNumber, lagOneAutocorrelation, residualFreedom } from '#shared/numerics/autocorrelation.ts'
+import type { LeastSquaresFit } from '#shared/numerics/levenberg-marquardt.ts'
+import type { AnalysisInputs, AnalysisOptions, FitSummary, ParameterEstimate, Residual } from './analysis.ts'
+import { curveProblem, curveReadings } from './curve-problem.ts'
+import { parameterEstimate, scaledEstimate, UNDETERMINED_FACTOR } from './parameter-estimate.ts'
+import type { RateHistory } from './rates.ts'
+import type { Selected } from './selection.ts'
+import type { Solution } from './solution.ts'
+import { thinningFactor } from './unconfined.ts'
+import { distanceError, radiusOf } from './wells.ts'
+
+/** Everything known once a curve is fitted. */
+export interface Fitted {
+  inputs: AnalysisInputs
+  options: AnalysisOptions
+  solution: Solution
+  history: RateHistory
+  wells: Selected[]
+  logarithmic: boolean
+  fit: LeastSquaresFit
+}
+
+/** Step in ln of a distance for its effect on the residuals. */
+const DISTANCE_STEP = 1e-4
+
+/** Measured − calculated drawdown of each reading, in metres whatever the objective. */
+export function curveResiduals({ wells, fit, logarithmic }: Fitted): Residual[] {
+  const readings = wells.flatMap(({ series, elapsed_s, drawdown_m }) =>
+    elapsed_s.map((time, i) => ({ wellId: series.wellId, elapsed_s: time, drawdown_m: drawdown_m[i] as number })),
+  )
+  return readings.map(({ wellId, elapsed_s, drawdown_m }, i) => {
+    const residual = fit.residuals[i] as number
+    return { wellId, elapsed_s, residual_m: logarithmic ? -drawdown_m * Math.expm1(residual) : -residual }
+  })
+}
+
+export function curveSummary(fitted: Fitted): FitSummary {
+  const { fit, wells, solution } = fitted
+  const n = fit.residuals.length
+  const autocorrelation = lagOneAutocorrelation(residualsByWell(fitted), solution.unknowns.length)
+  const squares = curveResiduals(fitted).reduce((sum, { residual_m }) => sum + residual_m * residual_m, 0)
+  const [[tt = 0, ts = 0] = [], [, ss = 0] = []] = fit.normalInverse
+  return {
+    n,
+    effectiveN: effectiveNumber(n, autocorrelation),
+    rmse_m: Math.sqrt(squares / n),
+    autocorrelation,
+    iterations: fit.iterations,
+    converged: fit.converged,
+    singular: fit.singular,
+    objective: fit.objective,
+    ...(tt * ss > 0 && wells.length > 0 ? { correlation: ts / Math.sqrt(tt * ss) } : {}),
+  }
+}
+
+/** T, S and what else the solution has, each with the scatter of the readings and the errors of rate and distances. */
+export function curveEstimates(fitted: Fitted, { effectiveN }: FitSummary): ParameterEstimate[] {
+  const { fit, solution, inputs, options, wells } = fitted
+  const freedom = residualFreedom(effectiveN, solution.unknowns.length)
+  const shifts = [rateShift(fitted), ...wells.map((well, w) => distanceShift(fitted, well, w))]
+  return solution.unknowns.map(({ id }, k) => {
+    const variance = ((fit.normalInverse[k] as number[])[k] as number) * (fit.objective / freedom)
+    const uncertainty = {
+      fitSd: fit.singular || fit.atBound.includes(k) ? Infinity : Math.sqrt(variance),
+      freedom,
+      otherSd: Math.hypot(...shifts.map((shift) => shift[k] as number)),
+    }
+    const widest = id === 'T' ? UNDETERMINED_FACTOR.T : UNDETERMINED_FACTOR.S
+    const estimate = parameterEstimate(fit.parameters[k] as number, uncertainty, widest)
+    return id === 'S' ? scaledEstimate(estimate, thinningFactor(inputs, options, wells)) : estimate
+  })
+}
+
+/** Change of the fitted parameters when the rate is one standard deviation higher. */
+function rateShift({ fit, wells, logarithmic, inputs }: Fitted): number[] {
+  const measured = wells.flatMap((well) => well.drawdown_m)
+  const effect = measured.map((value, i) => (logarithmic ? 1 : value + (fit.residuals[i] as number)))
+  return parameterShift(fit, effect).map((shift) => shift * inputs.rateError)
+}
+
+/** Change of the fitted parameters when one well's distance is one standard deviation longer. */
+function distanceShift(fitted: Fitted, well: Selected, index: number): number[] {
+  const error = distanceError(well.series)
+  if (!(error > 0)) return fitted.solution.unknowns.map(() => 0)
+  const longer = residualsAt(fitted, index, Math.exp(DISTANCE_STEP))
+  const shorter = residualsAt(fitted, index, Math.exp(-DISTANCE_STEP))
+  const effect = Array.from(longer, (value, i) => (value - (shorter[i] as number)) / (2 * DISTANCE_STEP))
+  return parameterShift(fitted.fit, effect).map((shift) => shift * error)
+}
+
+function residualsAt(
+  { solution, wells, history, logarithmic, fit }: Fitted,
+  index: number,
+  stretch: number,
+): Float64Array {
+  const distances = wells.map(({ series }, w) => radiusOf(series) * (w === index ? stretch : 1))
+  const problem = curveProblem(solution, curveReadings(wells, distances), history.increments, logarithmic)
+  const residuals = new Float64Array(problem.count)
+  problem.residuals(fit.parameters, residuals)
+  return residuals
+}
+
+/** First-order move −(J'J)⁻¹J'v of the minimum when residuals change by v. */
+function parameterShift({ normalInverse, jacobian }: LeastSquaresFit, effect: number[]): number[] {
+  const size = normalInverse.length
+  const projected = normalInverse.map((_, k) =>
+    effect.reduce((sum, value, i) => sum + value * (jacobian[i * size + k] as number), 0),
+  )
+  return normalInverse.map((row) => -row.reduce((sum, value, k) => sum + value * (projected[k] as number), 0))
+}
+
+function residualsByWell({ fit, wells }: Fitted): Float64Array[] {
+  let from = 0
+  return wells.map(({ time_s }) => fit.residuals.subarray(from, (from += time_s.length)))
+}

@@ -1,0 +1,157 @@
+import { levenbergMarquardt } from '#shared/numerics/levenberg-marquardt.ts'
+import {
+  AnalysisError,
+  type AnalysisInputs,
+  type AnalysisOptions,
+  type Finding,
+  type FittedCurve,
+  type MethodOutcome,
+} from './analysis.ts'
+import { casingFinding } from './casing-storage.ts'
+import { curveEstimates, curveResiduals, curveSummary, type Fitted } from './curve-fit.ts'
+import { curveProblem, curveReadings } from './curve-problem.ts'
+import {
+  aquiferFindings,
+  determinationFindings,
+  distanceFindings,
+  fitFindings,
+  pumpedStorageFinding,
+  storageClassOf,
+} from './findings.ts'
+import { sharedOptions, type Method } from './method.ts'
+import { rateHistory, type RateHistory } from './rates.ts'
+import { chosenSeries, largest, pumpingPhase, requireReadings, selectReadings, type Selected } from './selection.ts'
+import type { Solution } from './solution.ts'
+import { drawdownHistory } from './superposition.ts'
+import { drawnDrawdown, thinningFindings, thinningGuard } from './unconfined.ts'
+import { radiusOf } from './wells.ts'
+
+/** A catalogue method that fits one analytical solution to any number of wells jointly, under any rate history. */
+export function curveMethod(solution: Solution): Method {
+  const { id, label, version, source, unknowns, validity } = solution
+  return {
+    id,
+    label,
+    version,
+    source,
+    unknowns,
+    validity,
+    needs: { phase: 'pumping', wells: { least: 1, most: null, roles: ['pumped', 'observation'] } },
+    options: curveOptions,
+    run: (inputs, options) => run(solution, inputs, options),
+    curve: (inputs, options, outcome, times_s) => curve(solution, inputs, options, outcome, times_s),
+  }
+}
+
+const curveOptions: Method['options'] = [
+  sharedOptions.window,
+  {
+    name: 'objective',
+    label: 'Least squares of',
+    kind: 'choice',
+    values: ['drawdown', 'log-drawdown'],
+    default: 'drawdown',
+  },
+  { name: 'phase', label: 'Readings fitted', kind: 'choice', values: ['pumping', 'all'], default: 'pumping' },
+  sharedOptions.thinning,
+  sharedOptions.afterDrainage,
+  sharedOptions.readingsPerCycle,
+]
+
+function run(solution: Solution, inputs: AnalysisInputs, options: AnalysisOptions): MethodOutcome {
+  const history = rateHistory(inputs.rates)
+  const phase = pumpingPhase(history, options.window)
+  const selection = selectReadings(inputs, options, {
+    ...phase,
+    end_s: options.phase === 'all' ? null : phase.end_s,
+    positiveOnly: options.objective === 'log-drawdown',
+  })
+  requireReadings(selection, solution.unknowns.length + 1)
+  const wells = selection.wells.filter((well) => well.time_s.length > 0)
+  const last_s = largest(wells.map((well) => well.time_s.at(-1) as number))
+  thinningGuard(options, last_s)
+  const fitted = fit(solution, wells, history, inputs, options)
+  const summary = curveSummary(fitted)
+  const observed = wells.some(({ series }) => series.role === 'observation')
+  const [T = null, S = null] = curveEstimates(fitted, summary)
+  return {
+    T,
+    S: observed ? S : null,
+    storageClass: observed ? storageClassOf(inputs, options, last_s) : null,
+    extras: extrasOf(fitted),
+    residuals: curveResiduals(fitted),
+    fit: summary,
+    findings: [
+      ...modelFindings(fitted, last_s),
+      ...fitFindings(summary),
+      ...determinationFindings(observed ? { T, S } : { T }),
+    ],
+    leftOut: selection.leftOut,
+  }
+}
+
+function fit(
+  solution: Solution,
+  wells: Selected[],
+  history: RateHistory,
+  inputs: AnalysisInputs,
+  options: AnalysisOptions,
+): Fitted {
+  const logarithmic = options.objective === 'log-drawdown'
+  const problem = curveProblem(solution, curveReadings(wells), history.increments, logarithmic)
+  if (wells.every((well) => well.drawdown_m.every((value) => !(value > 0))))
+    throw new AnalysisError('analysis/no-drawdown')
+  try {
+    const result = levenbergMarquardt(problem, { starts: solution.guess({ wells, history }) })
+    return { inputs, options, solution, history, wells, logarithmic, fit: result }
+  } catch (error) {
+    if (error instanceof RangeError) throw new AnalysisError('analysis/no-fit')
+    throw error
+  }
+}
+
+/** The fitted parameters beyond T and S by their id, the raw S of a pumped well for drawing, and the window used. */
+function extrasOf({ solution, fit, wells }: Fitted): Record<string, number> {
+  const fitted = Object.fromEntries(solution.unknowns.map(({ id }, k) => [`fitted_${id}`, fit.parameters[k] as number]))
+  return {
+    ...fitted,
+    window_from_s: Math.min(...wells.map((well) => well.time_s[0] as number)),
+    window_to_s: Math.max(...wells.map((well) => well.time_s.at(-1) as number)),
+  }
+}
+
+function modelFindings({ inputs, options, solution, history, wells, fit }: Fitted, last_s: number): Finding[] {
+  const pumped = wells.filter(({ series }) => series.role === 'pumped')
+  const T = fit.parameters[0] as number
+  return [
+    ...solution.judge(fit.parameters, { wells, history }),
+    ...pumped.map((well) => casingFinding(T, well.series, well.time_s[0] as number, 'drawdown')),
+    ...(pumped.length === wells.length ? [pumpedStorageFinding] : []),
+    ...(pumped.length > 0 && pumped.length < wells.length ? [pumpedInJointFit] : []),
+    ...aquiferFindings(inputs, options, last_s),
+    ...thinningFindings(largest(wells.flatMap((well) => well.measured_m)), inputs, options),
+    ...distanceFindings(wells),
+    ...fit.atBound.map((k) => atBound(solution.unknowns[k]?.id ?? '')),
+  ]
+}
+
+/** Skin and well loss of the pumped well pull a joint fit. */
+const pumpedInJointFit: Finding = { code: 'pumped-well-in-joint-fit', severity: 'caution', params: {} }
+const atBound = (parameter: string): Finding => ({ code: 'at-bound', severity: 'bad', params: { parameter } })
+
+function curve(
+  solution: Solution,
+  inputs: AnalysisInputs,
+  options: AnalysisOptions,
+  { extras }: MethodOutcome,
+  times_s: number[],
+): FittedCurve[] {
+  const { increments } = rateHistory(inputs.rates)
+  const parameters = solution.unknowns.map(({ id }) => extras[`fitted_${id}`] as number)
+  return chosenSeries(inputs, options).map((series) => ({
+    wellId: series.wellId,
+    drawdown_m: drawdownHistory(solution.response, parameters, increments, times_s, radiusOf(series)).map((value) =>
+      drawnDrawdown(value, inputs, options),
+    ),
+  }))
+}

@@ -1,0 +1,213 @@
+import { studentQuantile } from '#shared/numerics/student.ts'
+import type {
+  AnalysisInputs,
+  AnalysisOptions,
+  Finding,
+  FittedCurve,
+  MethodOutcome,
+  ParameterEstimate,
+} from './analysis.ts'
+import { casingFinding } from './casing-storage.ts'
+import { transmissivityFromSlope } from './cooper-jacob.ts'
+import { determinationFindings, fitFindings, handLineFinding } from './findings.ts'
+import { sharedOptions, transmissivity, type Method } from './method.ts'
+import { parameterEstimate, UNDETERMINED_FACTOR } from './parameter-estimate.ts'
+import { lateWindow, straightLineStart } from './proposed-window.ts'
+import { meanRate, rateHistory, volumeUntil, type RateHistory } from './rates.ts'
+import { largest, pumpingPhase, recoveryPhase, requireReadings, selectReadings, type Selected } from './selection.ts'
+import { LARGEST_U, smallUFinding } from './small-u.ts'
+import { slopeSd, straightLine, zeroAbscissa, zeroSd, type StraightLine } from './straight-line.ts'
+import { drawnDrawdown, thinningFindings, thinningGuard } from './unconfined.ts'
+
+/** S/S' between these is near enough to 1 to need no explanation (common practice). */
+const RATIO_RANGE = { low: 0.5, high: 2 }
+
+/**
+ * Abscissa of the recovery plot. For one constant rate it is log10(t/t'); for a varying rate the superposition of the
+ * logarithms of every step, scaled by the last rate, so that slope and formula stay the same.
+ * Source: Theis 1935; ASTM D5269; superposition of the logarithmic approximation.
+ */
+export function recoveryAbscissa(history: RateHistory, options: AnalysisOptions, elapsed_s: number): number {
+  const { stop_s, lastRate_m3_s } = history
+  const since = elapsed_s - (stop_s as number)
+  if (options.rateHistory === 'equivalent') {
+    const pumped_s = volumeUntil(history, stop_s as number) / lastRate_m3_s
+    return Math.log10((pumped_s + since) / since)
+  }
+  return history.increments.reduce(
+    (sum, { start_s, change_m3_s }) => sum - (change_m3_s / lastRate_m3_s) * Math.log10(elapsed_s - start_s),
+    0,
+  )
+}
+
+function run(inputs: AnalysisInputs, options: AnalysisOptions): MethodOutcome {
+  const history = rateHistory(inputs.rates)
+  const selection = selectReadings(
+    inputs,
+    options,
+    recoveryPhase(history, options.window ?? proposed(inputs, options, history)),
+  )
+  requireReadings(selection, 3)
+  const well = selection.wells[0] as Selected
+  thinningGuard(options, well.elapsed_s.at(-1) as number)
+  const x = well.elapsed_s.map((elapsed) => recoveryAbscissa(history, options, elapsed))
+  const line = straightLine(x, well.drawdown_m, { hand: options.line ?? null })
+  const uncertainty = { fitSd: slopeSd(line), freedom: line.freedom, otherSd: inputs.rateError }
+  const T = parameterEstimate(
+    transmissivityFromSlope(history.lastRate_m3_s, line.slope),
+    uncertainty,
+    UNDETERMINED_FACTOR.T,
+  )
+  const ratio = storageRatio(line)
+  return {
+    T,
+    S: null,
+    storageClass: null,
+    extras: extrasOf(line, ratio, history, well),
+    residuals: well.elapsed_s.map((elapsed_s, i) => ({
+      wellId: well.series.wellId,
+      elapsed_s,
+      residual_m: line.residuals[i] as number,
+    })),
+    fit: line.summary,
+    findings: [
+      ...ageFindings(inputs, options, history, well, T),
+      ratioFinding(ratio),
+      ...(options.line ? [handLineFinding] : []),
+      ...thinningFindings(largest(well.measured_m), inputs, options),
+      ...fitFindings(line.summary),
+      ...determinationFindings({ T }),
+    ],
+    leftOut: selection.leftOut,
+  }
+}
+
+interface StorageRatio {
+  value: number
+  low: number
+  high: number
+}
+
+/** t/t' at which the line reaches zero: S/S', 1 where storage came back as it went. Source: Theis 1935; ASTM D5269. */
+function storageRatio(line: StraightLine): StorageRatio {
+  const log = zeroAbscissa(line) * Math.LN10
+  const half = Math.min(studentQuantile(0.975, line.freedom) * zeroSd(line), Math.log(1e30))
+  return { value: Math.exp(log), low: Math.exp(log - half), high: Math.exp(log + half) }
+}
+
+function ratioFinding({ value, low, high }: StorageRatio): Finding {
+  const params = { ratio: value, low, high }
+  if (value > RATIO_RANGE.high && low > 1) return { code: 'recovery-ratio-high', severity: 'caution', params }
+  if (value < RATIO_RANGE.low && high < 1) return { code: 'recovery-ratio-low', severity: 'caution', params }
+  return { code: 'recovery-ratio-near-one', severity: 'good', params }
+}
+
+/** Late recovery at an observation well (u' ≤ 0.05), recovery after casing storage at the pumped well. */
+function ageFindings(
+  inputs: AnalysisInputs,
+  options: AnalysisOptions,
+  history: RateHistory,
+  { series, time_s }: Selected,
+  T: ParameterEstimate,
+): Finding[] {
+  const first_s = time_s[0] as number
+  if (series.role === 'pumped') return [casingFinding(T.value, series, first_s, 'straightLine')]
+  const validFrom_s = lateRecoveryStart(inputs, options, history, T.value)
+  // u falls as 1/t, so the limit at the moment it is reached gives u at the first reading.
+  return validFrom_s === null || validFrom_s === 0
+    ? [{ code: 'u-unknown', severity: 'note', params: {} }]
+    : [smallUFinding((LARGEST_U * validFrom_s) / first_s, validFrom_s)]
+}
+
+/** Time since the stop from which u' ≤ 0.05, S being taken from the last drawdown while pumping; null without one. */
+function lateRecoveryStart(
+  inputs: AnalysisInputs,
+  options: AnalysisOptions,
+  history: RateHistory,
+  T: number,
+): number | null {
+  const well = selectReadings(inputs, options, pumpingPhase(history, null)).wells[0]
+  const late_s = well?.time_s.at(-1)
+  if (!well || late_s === undefined) return null
+  const late_m = well.drawdown_m.at(-1) as number
+  return straightLineStart(well.series, T, { rate: meanRate(history, history.start_s + late_s), late_s, late_m })
+}
+
+function proposed(inputs: AnalysisInputs, options: AnalysisOptions, history: RateHistory) {
+  const well = selectReadings(inputs, options, recoveryPhase(history, null)).wells[0]
+  if (!well) return null
+  const x = well.elapsed_s.map((elapsed) => recoveryAbscissa(history, options, elapsed))
+  return lateWindow({ ...well, x }, history.lastRate_m3_s, (T) => lateRecoveryStart(inputs, options, history, T) ?? 0)
+}
+
+function extrasOf(
+  line: StraightLine,
+  ratio: StorageRatio,
+  history: RateHistory,
+  well: Selected,
+): Record<string, number> {
+  return {
+    slope_m: line.slope,
+    intercept_m: line.intercept,
+    storage_ratio: ratio.value,
+    storage_ratio_low: ratio.low,
+    storage_ratio_high: ratio.high,
+    rate_m3_s: history.lastRate_m3_s,
+    stop_s: history.stop_s as number,
+    window_from_s: well.time_s[0] as number,
+    window_to_s: well.time_s.at(-1) as number,
+  }
+}
+
+function curve(
+  inputs: AnalysisInputs,
+  options: AnalysisOptions,
+  { extras }: MethodOutcome,
+  times_s: number[],
+): FittedCurve[] {
+  const history = rateHistory(inputs.rates)
+  const drawdown_m = times_s.map((time) => {
+    if (!(time > (extras.stop_s as number))) return null
+    const x = recoveryAbscissa(history, options, time)
+    return drawnDrawdown((extras.intercept_m as number) + (extras.slope_m as number) * x, inputs, options)
+  })
+  return options.wellIds.map((wellId) => ({ wellId, drawdown_m }))
+}
+
+export const recovery: Method = {
+  id: 'recovery',
+  label: 'Recovery line (Theis)',
+  version: 1,
+  source: 'Theis 1935; ASTM D5269',
+  needs: { phase: 'recovery', wells: { least: 1, most: 1, roles: ['pumped', 'observation'] } },
+  unknowns: [transmissivity],
+  options: [
+    { name: 'window', label: 'Window of time since the stop', kind: 'window', axis: 'since-stop' },
+    { name: 'line', label: 'Line drawn by hand', kind: 'line', abscissa: 'time-ratio' },
+    {
+      name: 'rateHistory',
+      label: 'Rate that varied',
+      kind: 'choice',
+      values: ['superposition', 'equivalent'],
+      default: 'superposition',
+    },
+    sharedOptions.thinning,
+    sharedOptions.afterDrainage,
+    sharedOptions.readingsPerCycle,
+  ],
+  validity: [
+    { code: 'u-large', statement: "u' = r²S/(4Tt') is at most 0.05 in the window", source: 'ASTM D5269' },
+    {
+      code: 'casing-storage',
+      statement: 'At the pumped well the window begins after 250 r_c²/T',
+      source: 'Papadopulos & Cooper 1967',
+    },
+    {
+      code: 'recovery-ratio-high',
+      statement: "The line reaches zero near t/t' = 1",
+      source: 'Theis 1935; ASTM D5269',
+    },
+  ],
+  run,
+  curve,
+}
