@@ -228,6 +228,7 @@ CREATE TABLE `readings` (
 	`value_m` double,
 	`taken` boolean NOT NULL,
 	`flags` varchar(300) NOT NULL,
+	`issues` json,
 	CONSTRAINT `readings_series_id_seq_pk` PRIMARY KEY(`series_id`,`seq`)
 );
 --> statement-breakpoint

@@ -108,8 +108,10 @@ export const readings = mysqlTable(
     elapsedS: double(),
     valueM: double(),
     taken: boolean().notNull(),
-    /** Comma-separated flags and reasons, empty when nothing was found. */
+    /** Comma-separated flags, empty when nothing was found. */
     flags: varchar({ length: 300 }).notNull(),
+    /** What was found in the row, with the numbers its sentences need; empty when nothing was. */
+    issues: json().$type<{ code: string; field: string; params: Record<string, string | number> }[]>(),
   },
   (table) => [primaryKey({ columns: [table.seriesId, table.seq] })],
 )
