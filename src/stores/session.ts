@@ -1,0 +1,75 @@
+import { defineStore } from 'pinia'
+import { computed, ref, shallowRef } from 'vue'
+import { can as mayDo, visitor, type Action, type Viewer } from '#shared/contracts/permissions.ts'
+import type { Region } from '#shared/contracts/region.ts'
+import type { Session, SignIn } from '#shared/contracts/session.ts'
+import { changePassword } from '../api/account.ts'
+import { fetchSession, signIn, signOut } from '../api/session.ts'
+import { usePreferences } from './preferences.ts'
+
+const RETRY_MS = 3_000
+const wait = (ms: number) => new Promise((resolve) => setTimeout(resolve, ms))
+
+/** Who reads, what they may do, and in which region they are. */
+export const useSession = defineStore('session', () => {
+  const current = shallowRef<Session | null>(null)
+  /** The first question could not be answered; it is asked again until it can. */
+  const unreachable = ref(false)
+  let loading: Promise<void> | null = null
+
+  const viewer = computed<Viewer>(() => current.value?.viewer ?? visitor)
+  const email = computed(() => current.value?.viewer.email ?? '')
+  const region = computed<Region | null>(() => current.value?.region ?? null)
+  const signedIn = computed(() => viewer.value.id !== null)
+
+  function can(action: Action): boolean {
+    return mayDo(viewer.value, action, { openToVisitors: region.value?.openToVisitors ?? false })
+  }
+
+  function enter(session: Session) {
+    current.value = session
+    usePreferences().enter(session.preferences, session.region.unitSystem, session.viewer.id !== null)
+  }
+
+  async function loadUntilAnswered() {
+    for (;;) {
+      try {
+        enter(await fetchSession())
+        unreachable.value = false
+        return
+      } catch {
+        unreachable.value = true
+        await wait(RETRY_MS)
+      }
+    }
+  }
+
+  /** Resolves as soon as it is known who reads. */
+  const known = (): Promise<void> => (loading ??= loadUntilAnswered())
+
+  const signInWith = async (credentials: SignIn) => enter(await signIn(credentials))
+
+  const leave = async () => enter(await signOut())
+
+  const changeOwnPassword = async (currentPassword: string, newPassword: string) =>
+    enter(await changePassword({ currentPassword, newPassword }))
+
+  function setRegion(changed: Region) {
+    if (current.value) enter({ ...current.value, region: changed })
+  }
+
+  return {
+    current,
+    viewer,
+    email,
+    region,
+    signedIn,
+    unreachable,
+    can,
+    known,
+    signInWith,
+    leave,
+    changeOwnPassword,
+    setRegion,
+  }
+})
