@@ -43,6 +43,17 @@ export function takeLock(path, refusal) {
 }
 
 /**
+ * Whether another process holds a lock now.
+ * @param {string} path
+ */
+export function isLocked(path) {
+  const fd = open(path)
+  const { status } = spawnSync('flock', ['-n', '3'], { stdio: ['ignore', 'ignore', 'ignore', fd] })
+  closeSync(fd)
+  return status !== 0
+}
+
+/**
  * Takes a lock, waiting until its holder gives it back.
  * @param {string} path
  * @returns {Promise<() => void>} gives it back

@@ -2,7 +2,8 @@ import { spawn } from 'node:child_process'
 import { createReadStream, createWriteStream, renameSync, rmSync } from 'node:fs'
 import { pipeline } from 'node:stream/promises'
 import { createGunzip, createGzip } from 'node:zlib'
-import { CommandFailed, ended, run } from './processes.mjs'
+import { CommandFailed } from './problem.mjs'
+import { ended, run } from './processes.mjs'
 
 /**
  * How to reach a database with Debian's client programs.

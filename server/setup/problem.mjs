@@ -1,6 +1,20 @@
 /** A failure that its reader can act on: one paragraph that says what is wrong and what to do about it. */
 export class SetupProblem extends Error {}
 
+/** A command that ended badly; the message carries the end of what it printed. */
+export class CommandFailed extends Error {
+  /**
+   * @param {string} command
+   * @param {number | NodeJS.Signals | null} status
+   * @param {string} output
+   */
+  constructor(command, status, output) {
+    super(`${command} ended with ${status}:\n${output.trim().split('\n').slice(-25).join('\n')}`)
+    this.status = status
+    this.output = output
+  }
+}
+
 /** @type {Record<string, string>} */
 const remedies = {
   EADDRINUSE: 'The port is in use by another program. Stop that program, or choose another port: PORT=8090 npm start',
@@ -41,5 +55,6 @@ export function explain(error) {
   const code = codeOf(error)
   const text = error instanceof Error ? error.message : String(error)
   if (code) return `${remedies[code]}\n(${text})`
+  if (error instanceof CommandFailed) return text
   return error instanceof Error ? (error.stack ?? text) : text
 }

@@ -1,6 +1,7 @@
 import { spawn } from 'node:child_process'
 import { existsSync, readdirSync, readFileSync } from 'node:fs'
 import { setTimeout as delay } from 'node:timers/promises'
+import { CommandFailed } from './problem.mjs'
 
 /** @typedef {import('node:child_process').ChildProcess} ChildProcess */
 
@@ -27,20 +28,6 @@ export function startChild(command, args, options = {}) {
  * @property {(text: string) => void} [onOutput] Sees the output as it comes.
  * @property {AbortSignal} [signal]
  */
-
-/** A command that ended badly; the message carries the end of what it printed. */
-export class CommandFailed extends Error {
-  /**
-   * @param {string} command
-   * @param {number | NodeJS.Signals | null} status
-   * @param {string} output
-   */
-  constructor(command, status, output) {
-    super(`${command} ended with ${status}:\n${output.trim().split('\n').slice(-25).join('\n')}`)
-    this.status = status
-    this.output = output
-  }
-}
 
 /**
  * Runs a command to its end.
@@ -89,6 +76,21 @@ export function ended(child) {
   })
 }
 
+/**
+ * Ends a child and whatever it started itself.
+ * @param {ChildProcess} child made by startChild
+ * @param {number} graceMs
+ */
+export async function endGroup(child, graceMs) {
+  if (child.pid === undefined || child.exitCode !== null || child.signalCode !== null) return
+  const group = -child.pid
+  const over = ended(child)
+  signalIfThere(group, 'SIGTERM')
+  const late = setTimeout(() => signalIfThere(group, 'SIGKILL'), graceMs)
+  await over
+  clearTimeout(late)
+}
+
 /** @param {number} pid */
 export function isAlive(pid) {
   try {
@@ -126,20 +128,20 @@ export function processesWith(argument) {
  * @param {number} graceMs
  */
 export async function endProcess(pid, graceMs) {
-  if (!signalIfAlive(pid, 'SIGTERM')) return
+  if (!signalIfThere(pid, 'SIGTERM')) return
   const limit = performance.now() + graceMs
   while (isAlive(pid) && performance.now() < limit) await delay(20)
   if (!isAlive(pid)) return
-  signalIfAlive(pid, 'SIGKILL')
+  signalIfThere(pid, 'SIGKILL')
   while (isAlive(pid)) await delay(20)
 }
 
 /**
- * @param {number} pid
+ * @param {number} pid or minus the number of a group
  * @param {NodeJS.Signals} signal
+ * @returns {boolean} whether there was somebody to tell
  */
-function signalIfAlive(pid, signal) {
-  if (!isAlive(pid)) return false
+function signalIfThere(pid, signal) {
   try {
     return process.kill(pid, signal)
   } catch (error) {

@@ -1,0 +1,82 @@
+import { setTimeout as delay } from 'node:timers/promises'
+import { buildClient, clientIsBuilt } from './client-build.mjs'
+import { demoAccounts } from './demo-accounts.mjs'
+import { tryPort } from './free-port.mjs'
+import { aborted, runCommand } from './lifecycle.mjs'
+import { inRoot, root } from './places.mjs'
+import { marker, prepare } from './prepare.mjs'
+import { SetupProblem } from './problem.mjs'
+import { endProcess, ended, startChild } from './processes.mjs'
+import { makeSteps, seconds } from './steps.mjs'
+import { keepRunning } from './supervise.mjs'
+
+/** The application drains for 10 s. */
+const stopLimitMs = 15_000
+const readyLimitMs = 120_000
+
+await runCommand(async (life) => {
+  const begun = performance.now()
+  const steps = makeSteps()
+  const { settings, config, database, env } = await prepare(steps, life)
+  if (!clientIsBuilt(inRoot('dist'))) {
+    await steps.step('Building the pages', () => buildClient(inRoot('dist'), life.stopping))
+  }
+  const port = await tryPort(config.port, config.host)
+  const start = application({ ...env, PORT: String(port) }, settings.dataDir, life)
+  const options = { stopping: life.stopping, say: steps.say }
+  const running = Promise.race([
+    aborted(life.stopping),
+    database.keepRunning(options),
+    keepRunning('The application', start, options),
+  ])
+  const address = `http://${localHost(config.host)}:${port}`
+  await steps.step('Starting the application', () => Promise.race([running, ready(address, life.stopping)]))
+  if (life.stopping.aborted) return
+  steps.say(`\nBasinbook is ready at ${config.publicUrl} after ${seconds(performance.now() - begun)}. Ctrl-C stops it.`)
+  if (settings.demo) steps.say(demoAccounts())
+  await running
+})
+
+/**
+ * @param {NodeJS.ProcessEnv} env
+ * @param {string} dataDir
+ * @param {import('./lifecycle.mjs').Life} life
+ */
+function application(env, dataDir, { onClose }) {
+  /** @type {number | undefined} */
+  let pid
+  onClose(async () => {
+    if (pid) await endProcess(pid, stopLimitMs)
+  })
+  return () => {
+    const child = startChild(process.execPath, ['--import', 'tsx', inRoot('server/index.ts'), marker(dataDir)], {
+      cwd: root,
+      env,
+      stdio: ['ignore', 'inherit', 'inherit'],
+    })
+    pid = child.pid
+    return { ended: ended(child) }
+  }
+}
+
+/** An address at which this machine reaches a server that listens on `host`. */
+const localHost = (/** @type {string} */ host) => {
+  if (host === '0.0.0.0') return '127.0.0.1'
+  if (host === '::') return '[::1]'
+  return host.includes(':') ? `[${host}]` : host
+}
+
+/**
+ * @param {string} address
+ * @param {AbortSignal} stopping
+ */
+async function ready(address, stopping) {
+  const limit = performance.now() + readyLimitMs
+  while (!stopping.aborted && performance.now() < limit) {
+    const answer = await fetch(`${address}/readyz`).catch(() => null)
+    if (answer?.ok) return
+    await delay(100)
+  }
+  if (!stopping.aborted)
+    throw new SetupProblem(`The application does not become ready at ${address}. Its messages are above.`)
+}
