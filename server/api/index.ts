@@ -6,10 +6,14 @@ import { databaseRateStore } from '../middleware/rate-limit-store.ts'
 import { sessions } from '../middleware/sessions.ts'
 import { viewerOf, withViewer } from '../middleware/viewer.ts'
 import { accountRoutes } from './account/account.routes.ts'
+import { withDescription } from './api-description/api-description.routes.ts'
 import { auditTrailRoutes } from './audit-trail/audit-trail.routes.ts'
+import { healthRoutes } from './health/health.routes.ts'
 import { jobsRoutes } from './jobs/jobs.routes.ts'
 import { mountRoutes } from './mount.ts'
 import { outboxRoutes } from './outbox/outbox.routes.ts'
+import { passwordRoutes } from './password/password.routes.ts'
+import { peopleRoutes } from './people/people.routes.ts'
 import { regionRoutes } from './region/region.routes.ts'
 import type { Route } from './registry.ts'
 import { createServices, type Services } from './services.ts'
@@ -17,14 +21,18 @@ import { sessionRoutes } from './session/session.routes.ts'
 
 /** Every route of the program. To add a resource: its routes file, and a line here. */
 export function allRoutes(services: Services, deps: Deps): Route[] {
-  return [
+  const routes = [
+    ...healthRoutes(services),
     ...sessionRoutes(services, deps),
     ...accountRoutes(services),
+    ...passwordRoutes(services),
+    ...peopleRoutes(services, deps),
     ...regionRoutes(services),
     ...auditTrailRoutes(services),
     ...outboxRoutes(services),
     ...jobsRoutes(services, deps),
   ]
+  return withDescription(routes, deps)
 }
 
 export function apiRouter(deps: Deps): Router {

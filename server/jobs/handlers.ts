@@ -1,4 +1,5 @@
 import type { Deps } from '../deps.ts'
+import { mailResetLink } from '../api/password/forgotten.ts'
 import { cleanUp } from './handlers/clean-up.ts'
 import { deliverMail } from './handlers/deliver-mail.ts'
 
@@ -6,5 +7,6 @@ import { deliverMail } from './handlers/deliver-mail.ts'
 export function registerHandlers(deps: Deps): void {
   const { jobs } = deps
   jobs.handle('mail', deliverMail(deps))
+  jobs.handle('forgotten-password', mailResetLink(deps))
   jobs.handle('clean-up', cleanUp(deps))
 }

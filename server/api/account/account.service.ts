@@ -34,11 +34,11 @@ export function createAccountService(deps: Deps, region: RegionService) {
         throw fieldError('currentPassword', 'password/wrong')
       checkPassword('newPassword', newPassword, found.email)
       const hash = await hashPassword(newPassword)
-      const { name: regionName } = await region.get()
       await inTransaction(deps, async (tx) => {
         await savePassword(tx, id, hash)
         await endSessionsOf(tx, id)
-        await queueMail(tx, deps, { to: found.email, ...passwordChangedMail({ region: regionName, name: found.name }) })
+        const words = passwordChangedMail({ region: (await region.get(tx)).name, name: found.name })
+        await queueMail(tx, deps, { to: found.email, ...words })
         await recordAudit(tx, { viewer, at: now(), action: 'password/change', subject: 'person', subjectId: id })
       })
     },

@@ -42,7 +42,7 @@ export function createRegionService(deps: Deps) {
   let known: { access: RegionAccess; until: number } | null = null
 
   return {
-    get: () => loadRegion(connection.db),
+    get: (executor: Executor = connection.db): Promise<Region> => loadRegion(executor),
 
     /** What the permission check of every request needs; asked of the database every few seconds only. */
     async access(): Promise<RegionAccess> {
