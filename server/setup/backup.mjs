@@ -2,7 +2,7 @@ import { existsSync, statSync } from 'node:fs'
 import { userInfo } from 'node:os'
 import { databaseFolder, openDatabase } from './databases.mjs'
 import { runCommand } from './lifecycle.mjs'
-import { isLocked } from './locks.mjs'
+import { lockHolder } from './locks.mjs'
 import { bySocket } from './mariadb-client.mjs'
 import { readAccess } from './mariadb-files.mjs'
 import { debianPackages, installMissing, lockFile, takeDataFolder } from './prepare.mjs'
@@ -40,8 +40,9 @@ async function reachDatabase(settings, life) {
   if (databaseUrl) return (await openDatabase(settings)).reach
   const folder = databaseFolder(dataDir)
   if (!existsSync(folder)) throw new SetupProblem(`There is nothing to back up in ${dataDir}.`)
-  if (isLocked(lockFile(dataDir))) return runningDatabase(folder)
-  takeDataFolder(settings, life)
+  const holder = lockHolder(lockFile(dataDir))
+  if (holder?.purpose === 'run') return runningDatabase(folder)
+  takeDataFolder(settings, 'backup', life)
   const database = await openDatabase(settings)
   life.onClose(database.stop)
   return database.reach

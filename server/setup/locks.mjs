@@ -15,42 +15,60 @@ function open(path) {
   return openSync(path, 'a+', 0o600)
 }
 
+/** @param {number} fd */
+const taken = (fd) => {
+  const { status, error } = spawnSync('flock', ['-n', '3'], { stdio: ['ignore', 'ignore', 'ignore', fd] })
+  if (error) throw error
+  return status === 0
+}
+
 /**
  * @param {number} fd
+ * @param {string} purpose
  * @returns {() => void} gives the lock back
  */
-function hold(fd) {
+function hold(fd, purpose) {
   ftruncateSync(fd)
-  writeSync(fd, `${process.pid}\n`)
+  writeSync(fd, `${process.pid} ${purpose}\n`)
   return () => closeSync(fd)
+}
+
+/** @typedef {{ pid: number, purpose: string }} Holder */
+
+/**
+ * @param {string} path
+ * @returns {Holder}
+ */
+function readHolder(path) {
+  const [pid, ...purpose] = readFileSync(path, 'utf8').trim().split(' ')
+  return { pid: Number(pid), purpose: purpose.join(' ') }
 }
 
 /**
  * Takes a lock that nobody may hold.
  * @param {string} path
- * @param {(pid: string) => string} refusal What to say when another process has it.
+ * @param {string} purpose what it is taken for, for those who find it taken
+ * @param {(holder: Holder) => string} refusal What to say when another process has it.
  * @returns {() => void} gives it back
  * @throws {SetupProblem} naming the holder
  */
-export function takeLock(path, refusal) {
+export function takeLock(path, purpose, refusal) {
   const fd = open(path)
-  const { status, error } = spawnSync('flock', ['-n', '3'], { stdio: ['ignore', 'ignore', 'ignore', fd] })
-  if (status === 0) return hold(fd)
-  const pid = readFileSync(path, 'utf8').trim()
+  if (taken(fd)) return hold(fd, purpose)
   closeSync(fd)
-  if (error) throw error
-  throw new SetupProblem(refusal(pid))
+  throw new SetupProblem(refusal(readHolder(path)))
 }
 
 /**
- * Whether another process holds a lock now.
+ * Who holds a lock now.
  * @param {string} path
+ * @returns {Holder | null}
  */
-export function isLocked(path) {
+export function lockHolder(path) {
   const fd = open(path)
-  const { status } = spawnSync('flock', ['-n', '3'], { stdio: ['ignore', 'ignore', 'ignore', fd] })
+  const free = taken(fd)
   closeSync(fd)
-  return status !== 0
+  return free ? null : readHolder(path)
 }
 
 /**
@@ -61,7 +79,7 @@ export function isLocked(path) {
 export async function waitForLock(path) {
   const fd = open(path)
   const status = await ended(spawn('flock', ['3'], { stdio: ['ignore', 'ignore', 'inherit', fd] }))
-  if (status === 0) return hold(fd)
+  if (status === 0) return hold(fd, 'turn')
   closeSync(fd)
   throw new SetupProblem(`The lock ${path} could not be taken.`)
 }

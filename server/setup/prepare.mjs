@@ -21,13 +21,14 @@ export const lockFile = (dataDir) => join(dataDir, 'in-use')
 /**
  * Takes the data folder for this process.
  * @param {Settings} settings
+ * @param {'run' | 'restore' | 'backup'} purpose
  * @param {Life} life
  */
-export function takeDataFolder({ dataDir }, life) {
+export function takeDataFolder({ dataDir }, purpose, life) {
   prepareDataFolder(dataDir)
-  const refusal = (/** @type {string} */ pid) =>
+  const refusal = (/** @type {import('./locks.mjs').Holder} */ { pid }) =>
     `The data folder ${dataDir} is in use by process ${pid}. Stop that one first (kill ${pid}), or choose another folder: DATA_DIR=/some/folder npm start`
-  life.onClose(takeLock(lockFile(dataDir), refusal))
+  life.onClose(takeLock(lockFile(dataDir), purpose, refusal))
 }
 
 /**
@@ -55,7 +56,7 @@ export const marker = (/** @type {string} */ dataDir) => `--data-folder=${dataDi
  */
 export async function prepare(steps, life) {
   const settings = readSettings(process.env)
-  takeDataFolder(settings, life)
+  takeDataFolder(settings, 'run', life)
   await installMissing(debianPackages(settings), steps, life.stopping)
   const config = await checkedConfig(process.env, settings)
   for (const pid of processesWith(marker(settings.dataDir))) await endProcess(pid, 15_000)

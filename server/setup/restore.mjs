@@ -1,5 +1,5 @@
-import { existsSync, renameSync, rmSync } from 'node:fs'
-import { join } from 'node:path'
+import { existsSync, mkdirSync, renameSync, rmSync } from 'node:fs'
+import { dirname, join } from 'node:path'
 import { withArchive } from './archive.mjs'
 import { openDatabase } from './databases.mjs'
 import { runCommand } from './lifecycle.mjs'
@@ -22,7 +22,7 @@ await runCommand(async (life) => {
   if (!file) throw new SetupProblem('Name the file to restore: npm run restore -- basinbook.tar.gz')
   const settings = readSettings(process.env)
   const steps = makeSteps()
-  takeDataFolder(settings, life)
+  takeDataFolder(settings, 'restore', life)
   await installMissing(debianPackages(settings), steps, life.stopping)
   await withArchive(file, settings.dataDir, async ({ manifest, dump, storage }) => {
     pendingMigrations(manifest.schema)
@@ -30,8 +30,8 @@ await runCommand(async (life) => {
     life.onClose(database.stop)
     await clear(database.reach, settings, args.includes('--replace'), steps)
     await steps.step(`Restoring the state of ${manifest.madeAt}`, () => loadDump(database.reach, dump))
-    if (storage) replaceStorage(settings.dataDir, storage)
-    if (manifest.storage === 's3') steps.say('Its files are in S3 and were not part of the backup.')
+    if (manifest.storage === 'folder') replaceStorage(settings.dataDir, storage)
+    else steps.say('Its files are in S3 and were not part of the backup.')
   })
   steps.say('Restored. npm start brings the database up to date if the backup is older than the program.')
 })
@@ -49,7 +49,7 @@ async function clear(reach, { dataDir }, replace, { say, step }) {
   if (tables.length === 0 && !existsSync(join(dataDir, 'storage'))) return
   if (!replace) {
     throw new SetupProblem(
-      'There are data already. To replace them (a dump of the database is kept), add --replace: npm run restore -- FILE --replace',
+      'There are data already. To replace them (what is there now is kept in the folder backups), add --replace: npm run restore -- FILE --replace',
     )
   }
   if (tables.length === 0) return
@@ -70,11 +70,17 @@ async function refuseWhileInUse(reach) {
 }
 
 /**
+ * The files that were there are kept once, as the database is.
  * @param {string} dataDir
- * @param {string} restored
+ * @param {string | null} restored null: the backup has no files
  */
 function replaceStorage(dataDir, restored) {
   const storage = join(dataDir, 'storage')
-  rmSync(storage, { recursive: true, force: true })
-  renameSync(restored, storage)
+  const kept = join(dataDir, 'backups', 'storage-before-restore')
+  if (existsSync(storage)) {
+    mkdirSync(dirname(kept), { recursive: true, mode: 0o700 })
+    rmSync(kept, { recursive: true, force: true })
+    renameSync(storage, kept)
+  }
+  if (restored) renameSync(restored, storage)
 }
