@@ -9,7 +9,7 @@ export interface CallOptions<Answer extends z.ZodType> {
   /** The contract of the answer: every answer is parsed with it. */
   response: Answer
   query?: Record<string, QueryValue>
-  signal?: AbortSignal
+  signal?: AbortSignal | undefined
 }
 
 export interface WriteOptions<Answer extends z.ZodType> extends CallOptions<Answer> {
