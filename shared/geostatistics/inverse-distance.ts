@@ -8,7 +8,8 @@ export function inverseDistance(distances: ArrayLike<number>, z: ArrayLike<numbe
   if (z.length === 0) throw new GeostatisticsError('too-few', 'inverse distance needs a value')
   const here = Array.from({ length: z.length }, (_, i) => i).filter((i) => distances[i] === 0)
   if (here.length > 0) return here.reduce((sum, i) => sum + z[i]!, 0) / here.length
-  let [sum, total] = [0, 0]
+  let sum = 0
+  let total = 0
   for (let i = 0; i < z.length; i++) {
     const weight = distances[i]! ** -power
     sum += weight * z[i]!

@@ -1,5 +1,6 @@
-import { backSolve, choleskyInPlace, forwardSolve } from './cholesky.ts'
+import { backSolve, choleskyInPlace, dot, forwardSolve } from './cholesky.ts'
 import { GeostatisticsError, requireFinite } from './errors.ts'
+import { variogramModel } from './catalogue.ts'
 import type { Point } from './planar.ts'
 import { structureCovariance, totalSill, type Variogram } from './variogram.ts'
 
@@ -52,11 +53,15 @@ export function observationCovariance(
   exact: boolean,
 ): Float64Array {
   const { n, between } = geometry
+  // Looked up once: this is the innermost loop of every fit and estimate.
+  const { correlation } = variogramModel(v.model)
+  const { sill, range } = v
+  const shared = exact ? v.nugget : 0
   const c = new Float64Array(n * n)
   for (let i = 0; i < n; i++) {
     for (let j = 0; j < i; j++) {
       const h = between[i * n + j]!
-      c[i * n + j] = structureCovariance(v, h) + (exact && h === 0 ? v.nugget : 0)
+      c[i * n + j] = sill * correlation(h / range) + (h === 0 ? shared : 0)
     }
     c[i * n + i] = totalSill(v) + (errorVariance?.[i] ?? 0)
   }
@@ -83,12 +88,9 @@ export function krigeGeometry(
   const one = new Float64Array(n).fill(1)
   forwardSolve(l, n, c)
   forwardSolve(l, n, one)
-  let [cc, c1, oneOne] = [0, 0, 0]
-  for (let i = 0; i < n; i++) {
-    cc += c[i]! * c[i]!
-    c1 += c[i]! * one[i]!
-    oneOne += one[i]! * one[i]!
-  }
+  const cc = dot(c, c, n)
+  const c1 = dot(c, one, n)
+  const oneOne = dot(one, one, n)
   const lagrange = (1 - c1) / oneOne
   const weights = c.map((value, i) => value + lagrange * one[i]!)
   backSolve(l, n, weights)

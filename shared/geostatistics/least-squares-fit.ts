@@ -25,7 +25,11 @@ const weightOf = (lag: Lag): number => lag.pairs / Math.max(lag.distance, 1e-9) 
 /** Best nugget and sill, both ≥ 0, for one range: least squares in two unknowns, then along the edges when outside. */
 function linearPart(lags: readonly Lag[], model: VariogramModelId, range: number): LinearPart {
   const { correlation } = variogramModel(model)
-  let [w, wf, wff, wg, wfg] = [0, 0, 0, 0, 0]
+  let w = 0
+  let wf = 0
+  let wff = 0
+  let wg = 0
+  let wfg = 0
   const rise = lags.map((lag) => 1 - correlation(lag.distance / range))
   lags.forEach((lag, i) => {
     const weight = weightOf(lag)

@@ -1,4 +1,4 @@
-import { choleskyInPlace, forwardSolve, logDeterminant } from './cholesky.ts'
+import { choleskyInPlace, dot, forwardSolve, logDeterminant } from './cholesky.ts'
 import type { KrigingData } from './kriging.ts'
 import { krigingGeometry, observationCovariance } from './kriging.ts'
 import type { Variogram } from './variogram.ts'
@@ -29,13 +29,12 @@ export function exactLikelihood(data: KrigingData): LogLikelihood {
     const one = new Float64Array(n).fill(1)
     forwardSolve(l, n, z)
     forwardSolve(l, n, one)
-    let [zz, z1, oneOne] = [0, 0, 0]
-    for (let i = 0; i < n; i++) {
-      zz += z[i]! * z[i]!
-      z1 += z[i]! * one[i]!
-      oneOne += one[i]! * one[i]!
-    }
-    return restricted({ logDeterminant: logDeterminant(l, n), zz, z1, one: oneOne })
+    return restricted({
+      logDeterminant: logDeterminant(l, n),
+      zz: dot(z, z, n),
+      z1: dot(z, one, n),
+      one: dot(one, one, n),
+    })
   }
 }
 

@@ -3,7 +3,7 @@ import { GeostatisticsError } from './errors.ts'
 import type { KrigingData } from './kriging.ts'
 import { exactLikelihood, vecchiaLikelihood, type LogLikelihood } from './likelihood.ts'
 import { compassSearch, widthOfPeak, type Scored } from './search.ts'
-import type { Variogram } from './variogram.ts'
+import { totalSill, type Variogram } from './variogram.ts'
 
 export interface VariogramNode {
   /** Share of belief; the nodes' weights sum to 1. */
@@ -24,7 +24,7 @@ export interface PosteriorOptions {
   pair?: (i: number, j: number) => boolean
   /** Values above which the likelihood is approximated; default 250. */
   exactUpTo?: number
-  /** Most nodes kept; default 24. */
+  /** Most nodes returned; default 12. */
   maxNodes?: number
 }
 
@@ -40,9 +40,9 @@ interface Space {
 const LARGEST_NUGGET_SHARE = 0.98
 const VECCHIA_NEIGHBOURS = 20
 const STEPS = [0.8, 0.3, 0.4]
-/** Nodes whose log density lies further below the peak add less than 1 % and are not explored (Rue et al. 2009, 3.1). */
-const DEPTH = 4.5
-const MOST_EVALUATIONS = 300
+/** Nodes with less than 2 % of the density at the peak (e^-4) are not explored (Rue et al. 2009, 3.1). */
+const DEPTH = 4
+const MOST_EVALUATIONS = 150
 
 function toVariogram(space: Space, at: readonly number[]): Variogram {
   const total = Math.exp(at[2]!)
@@ -73,13 +73,13 @@ function findPeak(space: Space): Scored {
   const best = starts
     .map((at) => ({ at, score: score(at) }))
     .reduce((kept, next) => (next.score > kept.score ? next : kept))
-  return compassSearch(score, best.at, STEPS)
+  return compassSearch(score, best.at, STEPS, 0.05)
 }
 
 /** Lattice around the peak, spread from it while the density is worth having: it follows ridges and stops at bounds. */
 function explore(space: Space, peak: Scored): { points: Scored[]; cell: number } {
   const score = (at: readonly number[]): number => scoreIn(space, at)
-  const steps = STEPS.map((limit, axis) => widthOfPeak(score, peak, axis, 1, limit))
+  const steps = STEPS.map((limit, axis) => widthOfPeak(score, peak, axis, 1.5, limit))
   const seen = new Set(['0,0,0'])
   const points: Scored[] = [peak]
   const queue = [[0, 0, 0]]
@@ -98,10 +98,21 @@ function explore(space: Space, peak: Scored): { points: Scored[]; cell: number }
   return { points, cell: steps.reduce((product, step) => product * step, 1) }
 }
 
-function heaviest(nodes: VariogramNode[], most: number): VariogramNode[] {
-  const kept = nodes.sort((a, b) => b.weight - a.weight).slice(0, most)
-  const total = kept.reduce((sum, node) => sum + node.weight, 0)
-  return kept.map((node) => ({ ...node, weight: node.weight / total }))
+/**
+ * A few nodes that stand for all: systematic sampling along the total sill, which sets the width of intervals, so that
+ * short and long tails both keep their due (Kitagawa 1996, systematic resampling).
+ */
+function representatives(nodes: VariogramNode[], most: number): VariogramNode[] {
+  const sorted = [...nodes].sort((a, b) => totalSill(a.variogram) - totalSill(b.variogram))
+  const total = sorted.reduce((sum, node) => sum + node.weight, 0)
+  const picked = new Map<VariogramNode, number>()
+  let passed = 0
+  let next = 0.5
+  for (const node of sorted) {
+    passed += (node.weight / total) * most
+    for (; next < passed && next < most; next++) picked.set(node, (picked.get(node) ?? 0) + 1 / most)
+  }
+  return [...picked].map(([node, weight]) => ({ ...node, weight })).sort((a, b) => b.weight - a.weight)
 }
 
 function spacesFor(data: KrigingData, options: PosteriorOptions): Space[] {
@@ -158,6 +169,6 @@ export function variogramPosterior(data: KrigingData, options: PosteriorOptions 
   return {
     mode: toVariogram(best.space, best.peak.at),
     logLikelihood: best.peak.score,
-    nodes: heaviest(nodes, options.maxNodes ?? 24),
+    nodes: representatives(nodes, options.maxNodes ?? 12),
   }
 }
