@@ -44,7 +44,10 @@ function run(inputs: AnalysisInputs, options: AnalysisOptions): MethodOutcome {
   const well = selection.wells[0] as Selected
   const last_s = well.time_s.at(-1) as number
   thinningGuard(options, last_s)
-  const line = straightLine(well.time_s.map(Math.log10), well.drawdown_m, { hand: options.line ?? null })
+  const line = straightLine(well.time_s.map(Math.log10), well.drawdown_m, {
+    hand: options.line ?? null,
+    time_s: well.time_s,
+  })
   const rate = meanRate(history, history.start_s + last_s)
   const { T, S } = estimates(line, rate, inputs, options, well)
   return {

@@ -1,4 +1,6 @@
-import { effectiveNumber, lagOneAutocorrelation, residualFreedom } from '#shared/numerics/autocorrelation.ts'
+import { lagOneAutocorrelation } from '#shared/numerics/autocorrelation.ts'
+import { correlatedCovariance, type CorrelatedCovariance } from '#shared/numerics/correlated-residuals.ts'
+import type { ResidualSeries } from '#shared/numerics/fading-noise.ts'
 import type { LeastSquaresFit } from '#shared/numerics/levenberg-marquardt.ts'
 import type { AnalysisInputs, AnalysisOptions, FitSummary, ParameterEstimate, Residual } from './analysis.ts'
 import { curveProblem, curveReadings } from './curve-problem.ts'
@@ -34,32 +36,36 @@ export function curveResiduals({ wells, fit, logarithmic }: Fitted): Residual[] 
   })
 }
 
-export function curveSummary(fitted: Fitted): FitSummary {
-  const { fit, wells, solution } = fitted
+export function curveCovariance(fitted: Fitted): CorrelatedCovariance {
+  return correlatedCovariance(residualSeries(fitted), fitted.fit.normalInverse)
+}
+
+export function curveSummary(fitted: Fitted, { covariance, effectiveNumber }: CorrelatedCovariance): FitSummary {
+  const { fit } = fitted
   const n = fit.residuals.length
-  const autocorrelation = lagOneAutocorrelation(residualsByWell(fitted), solution.unknowns.length)
+  const autocorrelation = lagOneAutocorrelation(residualSeries(fitted).map(({ residuals }) => residuals))
   const squares = curveResiduals(fitted).reduce((sum, { residual_m }) => sum + residual_m * residual_m, 0)
-  const [[tt = 0, ts = 0] = [], [, ss = 0] = []] = fit.normalInverse
+  const [[tt = 0, ts = 0] = [], [, ss = 0] = []] = covariance
   return {
     n,
-    effectiveN: effectiveNumber(n, autocorrelation),
+    effectiveN: effectiveNumber,
     rmse_m: Math.sqrt(squares / n),
     autocorrelation,
     iterations: fit.iterations,
     converged: fit.converged,
     singular: fit.singular,
     objective: fit.objective,
-    ...(tt * ss > 0 && wells.length > 0 ? { correlation: ts / Math.sqrt(tt * ss) } : {}),
+    ...(tt * ss > 0 ? { correlation: ts / Math.sqrt(tt * ss) } : {}),
   }
 }
 
 /** T, S and what else the solution has, each with the scatter of the readings and the errors of rate and distances. */
-export function curveEstimates(fitted: Fitted, { effectiveN }: FitSummary): ParameterEstimate[] {
+export function curveEstimates(fitted: Fitted, { covariance }: CorrelatedCovariance): ParameterEstimate[] {
   const { fit, solution, inputs, options, wells } = fitted
-  const freedom = residualFreedom(effectiveN, solution.unknowns.length)
+  const freedom = Math.max(1, fit.residuals.length - solution.unknowns.length)
   const shifts = [rateShift(fitted), ...wells.map((well, w) => distanceShift(fitted, well, w))]
   return solution.unknowns.map(({ id }, k) => {
-    const variance = ((fit.normalInverse[k] as number[])[k] as number) * (fit.objective / freedom)
+    const variance = (covariance[k] as number[])[k] as number
     const uncertainty = {
       fitSd: fit.singular || fit.atBound.includes(k) ? Infinity : Math.sqrt(variance),
       freedom,
@@ -109,7 +115,17 @@ function parameterShift({ normalInverse, jacobian }: LeastSquaresFit, effect: nu
   return normalInverse.map((row) => -row.reduce((sum, value, k) => sum + value * (projected[k] as number), 0))
 }
 
-function residualsByWell({ fit, wells }: Fitted): Float64Array[] {
+/** Residuals of each well apart, alike along time or along its logarithm. */
+function residualSeries({ fit, wells }: Fitted): ResidualSeries[] {
+  const size = fit.normalInverse.length
   let from = 0
-  return wells.map(({ time_s }) => fit.residuals.subarray(from, (from += time_s.length)))
+  return wells.map(({ time_s }) => {
+    const first = from
+    from += time_s.length
+    return {
+      residuals: fit.residuals.subarray(first, from),
+      jacobian: fit.jacobian.subarray(first * size, from * size),
+      axes: [time_s, time_s.map(Math.log)],
+    }
+  })
 }

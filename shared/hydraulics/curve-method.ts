@@ -8,7 +8,7 @@ import {
   type MethodOutcome,
 } from './analysis.ts'
 import { casingFinding } from './casing-storage.ts'
-import { curveEstimates, curveResiduals, curveSummary, type Fitted } from './curve-fit.ts'
+import { curveCovariance, curveEstimates, curveResiduals, curveSummary, type Fitted } from './curve-fit.ts'
 import { curveProblem, curveReadings } from './curve-problem.ts'
 import {
   aquiferFindings,
@@ -71,9 +71,10 @@ function run(solution: Solution, inputs: AnalysisInputs, options: AnalysisOption
   const last_s = largest(wells.map((well) => well.time_s.at(-1) as number))
   thinningGuard(options, last_s)
   const fitted = fit(solution, wells, history, inputs, options)
-  const summary = curveSummary(fitted)
+  const covariance = curveCovariance(fitted)
+  const summary = curveSummary(fitted, covariance)
   const observed = wells.some(({ series }) => series.role === 'observation')
-  const [T = null, S = null] = curveEstimates(fitted, summary)
+  const [T = null, S = null] = curveEstimates(fitted, covariance)
   return {
     T,
     S: observed ? S : null,

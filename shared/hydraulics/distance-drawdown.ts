@@ -122,7 +122,6 @@ function takeSnapshot(wells: Selected[], history: RateHistory, options: Analysis
   }))
   const line = straightLine(logDistances(points), drawdowns(points), {
     hand: options.line ?? null,
-    ordered: false,
     rising: false,
   })
   return { points, time_s, rate: meanRate(history, history.start_s + time_s), line }

@@ -13,8 +13,8 @@ import { DISTANCE_ERROR_LIMIT, distanceError } from './wells.ts'
 
 /** Fewer readings than this make a fit easy to upset (common practice). */
 const FEW_READINGS = 8
-/** Residuals more alike than this are worth a note. */
-const NOTABLE_AUTOCORRELATION = 0.3
+/** Residuals so alike that the readings are worth less than this share of their number are noted. */
+const NOTABLE_SHARE = 0.5
 /** A straight line over less than this share of a factor of ten is short (common practice asks for a whole one). */
 const SHORT_WINDOW = 0.7
 
@@ -33,7 +33,7 @@ export function rateFindings(history: RateHistory, until_s: number): Finding[] {
 export function fitFindings(fit: FitSummary): Finding[] {
   const findings: Finding[] = []
   if (fit.n < FEW_READINGS) findings.push({ code: 'few-readings', severity: 'note', params: { n: fit.n } })
-  if (fit.autocorrelation > NOTABLE_AUTOCORRELATION) {
+  if (fit.effectiveN < NOTABLE_SHARE * fit.n) {
     const params = { autocorrelation: fit.autocorrelation, n: fit.n, effectiveN: fit.effectiveN }
     findings.push({ code: 'residuals-correlated', severity: 'note', params })
   }

@@ -51,7 +51,7 @@ function run(inputs: AnalysisInputs, options: AnalysisOptions): MethodOutcome {
   const well = selection.wells[0] as Selected
   thinningGuard(options, well.elapsed_s.at(-1) as number)
   const x = well.elapsed_s.map((elapsed) => recoveryAbscissa(history, options, elapsed))
-  const line = straightLine(x, well.drawdown_m, { hand: options.line ?? null })
+  const line = straightLine(x, well.drawdown_m, { hand: options.line ?? null, time_s: well.time_s })
   const uncertainty = { fitSd: slopeSd(line), freedom: line.freedom, otherSd: inputs.rateError }
   const T = parameterEstimate(
     transmissivityFromSlope(history.lastRate_m3_s, line.slope),

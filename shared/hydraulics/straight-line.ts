@@ -1,8 +1,8 @@
-import { effectiveNumber, lagOneAutocorrelation, residualFreedom } from '#shared/numerics/autocorrelation.ts'
-import { describeLine, linearRegression, type LineFit } from '#shared/numerics/linear-regression.ts'
+import { lagOneAutocorrelation } from '#shared/numerics/autocorrelation.ts'
+import { correlatedCovariance } from '#shared/numerics/correlated-residuals.ts'
+import { describeLine, lineFreedom, linearRegression, type LineFit } from '#shared/numerics/linear-regression.ts'
+import { invertSymmetric } from '#shared/numerics/small-matrix.ts'
 import { AnalysisError, type FitSummary, type HandLine } from './analysis.ts'
-
-const UNKNOWNS = 2
 
 /** A line of drawdown on a logarithmic axis, with its covariance widened for residuals that are not independent. */
 export interface StraightLine {
@@ -15,15 +15,23 @@ export interface StraightLine {
   summary: FitSummary
 }
 
+interface LineOptions {
+  /** A line drawn by hand takes the place of the regression. */
+  hand?: HandLine | null
+  /** Times of the readings in order, for the likeness of residuals; left out where readings have no order in time. */
+  time_s?: number[]
+  /** False where drawdown falls along x, as it does with distance. */
+  rising?: boolean
+}
+
 /**
  * Regression of drawdown on x, or the description of a line drawn by hand over the same readings.
- * @param ordered false when residuals have no order in time (one per well), so that autocorrelation means nothing
- * @throws AnalysisError when all x are equal, or when the slope is not positive
+ * @throws AnalysisError when all x are equal, or when the slope has the wrong sign
  */
 export function straightLine(
   x: number[],
   drawdown: number[],
-  { hand = null, ordered = true, rising = true }: { hand?: HandLine | null; ordered?: boolean; rising?: boolean } = {},
+  { hand = null, time_s, rising = true }: LineOptions = {},
 ): StraightLine {
   if (x.every((value) => value === x[0])) throw new AnalysisError('analysis/times-equal')
   if (hand && !(Number.isFinite(hand.slope) && Number.isFinite(hand.intercept))) {
@@ -33,27 +41,36 @@ export function straightLine(
   if (!(rising ? fit.slope > 0 : fit.slope < 0)) {
     throw new AnalysisError('analysis/slope-not-positive', { slope: rising ? fit.slope : -fit.slope })
   }
-  const rho = ordered ? lagOneAutocorrelation([fit.residuals], UNKNOWNS) : 0
-  const effectiveN = effectiveNumber(fit.count, rho)
-  const freedom = residualFreedom(effectiveN, UNKNOWNS)
-  const widening = residualFreedom(fit.count, UNKNOWNS) / freedom
+  const { covariance, effectiveNumber } = lineCovariance(x, fit.residuals, time_s)
   return {
     slope: fit.slope,
     intercept: fit.intercept,
-    covariance: fit.covariance.map((row) => row.map((value) => value * widening)) as LineFit['covariance'],
-    freedom,
+    covariance: covariance as LineFit['covariance'],
+    freedom: lineFreedom(fit.count),
     residuals: fit.residuals,
     summary: {
       n: fit.count,
-      effectiveN,
+      effectiveN: effectiveNumber,
       rmse_m: Math.sqrt(fit.sumOfSquares / fit.count),
-      autocorrelation: rho,
+      autocorrelation: time_s ? lagOneAutocorrelation([fit.residuals]) : 0,
       iterations: hand ? 0 : 1,
       converged: true,
       singular: false,
       objective: fit.sumOfSquares,
     },
   }
+}
+
+function lineCovariance(x: number[], residuals: number[], time_s: number[] | undefined) {
+  const jacobian = x.flatMap((value) => [1, value])
+  const sumX = x.reduce((sum, value) => sum + value, 0)
+  const sumXX = x.reduce((sum, value) => sum + value * value, 0)
+  const { inverse } = invertSymmetric([
+    [x.length, sumX],
+    [sumX, sumXX],
+  ])
+  const axes = time_s ? [time_s, time_s.map(Math.log)] : []
+  return correlatedCovariance([{ residuals, jacobian, axes }], inverse)
 }
 
 /** Abscissa at which the line reaches zero drawdown, as log10. */

@@ -1,4 +1,3 @@
-import { residualFreedom } from './autocorrelation.ts'
 import { studentQuantile } from './student.ts'
 
 export interface LineFit {
@@ -10,6 +9,9 @@ export interface LineFit {
   sumOfSquares: number
   count: number
 }
+
+/** Degrees of freedom left by a line, at least one, so that two points give an interval too wide rather than none. */
+export const lineFreedom = (count: number) => Math.max(1, count - 2)
 
 /**
  * Ordinary least squares of y on x.
@@ -31,7 +33,7 @@ export function describeLine(x: ArrayLike<number>, y: ArrayLike<number>, slope: 
   const { meanX, sxx } = moments(x, y)
   const residuals = Array.from(x, (xi, i) => (y[i] as number) - intercept - slope * xi)
   const sumOfSquares = residuals.reduce((sum, residual) => sum + residual * residual, 0)
-  const variance = sumOfSquares / residualFreedom(count, 2)
+  const variance = sumOfSquares / lineFreedom(count)
   const slopeVariance = sxx > 0 ? variance / sxx : 0
   const covariance: LineFit['covariance'] = [
     [variance / count + meanX * meanX * slopeVariance, -meanX * slopeVariance],
@@ -42,7 +44,7 @@ export function describeLine(x: ArrayLike<number>, y: ArrayLike<number>, slope: 
 
 /** Two-sided intervals of slope and intercept at a confidence level, 0.95 by default. */
 export function lineIntervals(fit: LineFit, { level = 0.95 } = {}) {
-  const t = studentQuantile((1 + level) / 2, residualFreedom(fit.count, 2))
+  const t = studentQuantile((1 + level) / 2, lineFreedom(fit.count))
   const around = (value: number, variance: number) => {
     const half = t * Math.sqrt(variance)
     return { low: value - half, high: value + half }

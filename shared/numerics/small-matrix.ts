@@ -7,6 +7,8 @@ export interface SymmetricInverse {
   inverse: number[][]
   /** True when a direction carries no information; the inverse is then the pseudo-inverse over the others. */
   singular: boolean
+  /** Logarithm of the determinant, over the determined directions when singular. */
+  logDeterminant: number
 }
 
 /** Solves a small symmetric positive definite system by Cholesky; null when it is not positive definite. */
@@ -37,5 +39,10 @@ export function invertSymmetric(matrix: number[][]): SymmetricInverse {
       return sum * (scale[i] as number) * (scale[j] as number)
     }),
   )
-  return { inverse, singular: weak.some(Boolean) }
+  let logDeterminant = 0
+  realEigenvalues.forEach((value, k) => {
+    if (!weak[k]) logDeterminant += Math.log(value)
+  })
+  for (const factor of scale) if (factor > 0) logDeterminant -= 2 * Math.log(factor)
+  return { inverse, singular: weak.some(Boolean), logDeterminant }
 }

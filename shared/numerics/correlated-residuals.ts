@@ -1,0 +1,100 @@
+import { noiseSums, WHITE, type FadingNoise, type ResidualSeries } from './fading-noise.ts'
+import { invertSymmetric } from './small-matrix.ts'
+
+export interface CorrelatedCovariance {
+  /** Covariance of the least-squares parameters. */
+  covariance: number[][]
+  /** Number of independent residuals that would leave the parameters as uncertain; the least over the parameters. */
+  effectiveNumber: number
+}
+
+/** Grid of descriptions. Half of the weight beforehand lies on independent residuals. */
+const SHARES = [0.6, 0.9, 1]
+const REACH_RATIO = 2.5
+const MOST_REACHES = 12
+/** A likeness that outlasts a quarter of the series cannot be told from a shift of the model. */
+const LONGEST_REACH = 1 / 4
+
+interface Judged {
+  logWeight: number
+  covariance: number[][]
+}
+
+/**
+ * Covariance of least-squares parameters when residuals are not independent, for use with Student's t at
+ * n − unknowns degrees of freedom.
+ * Residuals are described as white noise plus an Ornstein–Uhlenbeck process along one of the axes. Every description on
+ * a grid is weighed by its restricted likelihood, and the covariance NJ'RJN·σ² of ordinary least squares is averaged
+ * with these weights. One lag-1 autocorrelation is not enough: the readings of a logger, thinned logarithmically, lie
+ * close together early and far apart late, and 95 % intervals for a 72 h one-minute log would cover 60 % (see the tests).
+ * @param normalInverse N = (J'J)⁻¹ over all series
+ * Sources: Patterson & Thompson 1971 (restricted likelihood); Hoeting et al. 1999 (averaging).
+ */
+export function correlatedCovariance(series: ResidualSeries[], normalInverse: number[][]): CorrelatedCovariance {
+  const noises = fadingNoises(series)
+  const white = judge(series, normalInverse, WHITE, Math.log(Math.max(1, noises.length)))
+  const judged = [white, ...noises.map((noise) => judge(series, normalInverse, noise, 0))]
+  const heaviest = judged.reduce((most, { logWeight }) => Math.max(most, logWeight), -Infinity)
+  const weights = judged.map(({ logWeight }) => Math.exp(logWeight - heaviest))
+  const total = weights.reduce((sum, weight) => sum + weight, 0)
+  const covariance = normalInverse.map((row, i) =>
+    row.map((_, j) =>
+      judged.reduce((sum, one, k) => sum + ((weights[k] as number) / total) * at(one.covariance, i, j), 0),
+    ),
+  )
+  const shares = normalInverse.map((_, k) => at(white.covariance, k, k) / at(covariance, k, k))
+  return { covariance, effectiveNumber: countOf(series) * Math.min(1, ...shares.filter(Number.isFinite)) }
+}
+
+const countOf = (series: ResidualSeries[]) => series.reduce((sum, { residuals }) => sum + residuals.length, 0)
+
+/** Reaches from the closest spacing to a share of the whole length of each axis. */
+function fadingNoises(series: ResidualSeries[]): FadingNoise[] {
+  const axes = series[0]?.axes.length ?? 0
+  return Array.from({ length: axes }, (_, axis) => axis).flatMap((axis) => {
+    const gaps = series.map((one) => gapsOf(one.axes[axis] as ArrayLike<number>))
+    const longest = LONGEST_REACH * Math.max(...gaps.map((gap) => gap.whole))
+    const shortest = Math.min(...gaps.map((gap) => gap.least))
+    if (!(longest > 0) || !Number.isFinite(shortest)) return []
+    const wanted = Math.ceil(Math.log(longest / shortest) / Math.log(REACH_RATIO)) + 1
+    const count = Math.max(1, Math.min(MOST_REACHES, wanted))
+    const reaches = Array.from({ length: count }, (_, i) => longest / REACH_RATIO ** i)
+    return reaches.flatMap((reach) => SHARES.map((share) => ({ axis, reach, share })))
+  })
+}
+
+function gapsOf(positions: ArrayLike<number>): { least: number; whole: number } {
+  let least = Infinity
+  let whole = 0
+  for (let i = 1; i < positions.length; i++) {
+    const gap = (positions[i] as number) - (positions[i - 1] as number)
+    if (gap > 0) least = Math.min(least, gap)
+    whole += gap
+  }
+  return { least, whole }
+}
+
+function judge(series: ResidualSeries[], normalInverse: number[][], noise: FadingNoise, logPrior: number): Judged {
+  const size = normalInverse.length
+  const { squares, projected, whitened, spread, logDeterminant } = noiseSums(series, size, noise)
+  const { inverse, logDeterminant: logInformation } = invertSymmetric(whitened)
+  const freedom = Math.max(1, countOf(series) - size)
+  const variance = Math.max(0, squares - quadratic(inverse, projected)) / freedom
+  return {
+    logWeight: logPrior - 0.5 * (logDeterminant + logInformation + freedom * Math.log(variance || Number.MIN_VALUE)),
+    covariance: sandwich(normalInverse, spread).map((row) => row.map((value) => value * variance)),
+  }
+}
+
+const quadratic = (matrix: number[][], vector: number[]) =>
+  vector.reduce((sum, a, i) => sum + vector.reduce((inner, b, j) => inner + a * b * at(matrix, i, j), 0), 0)
+
+function sandwich(outer: number[][], inner: number[][]): number[][] {
+  return outer.map((row) =>
+    outer.map((column) =>
+      row.reduce((sum, a, i) => sum + column.reduce((part, b, j) => part + a * b * at(inner, i, j), 0), 0),
+    ),
+  )
+}
+
+const at = (matrix: number[][], i: number, j: number) => (matrix[i] as number[])[j] as number
