@@ -269,6 +269,7 @@ CREATE TABLE `adopted_values` (
 	`log10_error` double NOT NULL,
 	`evidence` enum('firm','fair','slight') NOT NULL,
 	`method` varchar(40) NOT NULL,
+	`origin` enum('observation-well','pumped-well','slug-test','other') NOT NULL,
 	`thickness_basis` enum('aquifer','screen','saturated','unknown') NOT NULL,
 	`composite` boolean NOT NULL DEFAULT false,
 	`usable` boolean NOT NULL DEFAULT true,

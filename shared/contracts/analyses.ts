@@ -93,6 +93,10 @@ export const workbenchInputs = z.object({
       flags: z.array(z.string()),
     }),
   ),
+  /** Logs that give no drawdown yet, and what is missing. */
+  problems: z.array(
+    z.object({ wellId: z.string(), code: z.string(), params: z.record(z.string(), z.union([z.string(), z.number()])) }),
+  ),
 })
 export type WorkbenchInputs = z.infer<typeof workbenchInputs>
 

@@ -8,7 +8,7 @@ import { AppError, notFound } from '../../errors.ts'
 import { recordAudit } from '../audit-trail/record-audit.ts'
 import { pageOf } from '../page-of.ts'
 import * as repository from './adopted-values.repository.ts'
-import { bumpDataVersions } from './data-versions.repository.ts'
+import { bumpDataVersions, dataVersion } from './data-versions.repository.ts'
 import { adoptedValuesCsv } from './export-csv.ts'
 import { statisticsOf } from './statistics.ts'
 import { adoptedValueView } from './view.ts'
@@ -29,6 +29,7 @@ export function createAdoptedValuesService(deps: Deps) {
 
   return {
     changed,
+    dataVersion,
 
     async list(viewer: Viewer, query: AdoptedValueQuery) {
       const [rows, logarithms] = await Promise.all([

@@ -46,6 +46,10 @@ export async function updateAnalysis(executor: Executor, id: number, version: nu
   return result.affectedRows === 1
 }
 
+/** Not an edit: the row version stays, so that a person who is working on the analysis is not thrown out. */
+export const setInputsChanged = (executor: Executor, id: number, inputsChanged: boolean) =>
+  executor.update(analyses).set({ inputsChanged }).where(eq(analyses.id, id))
+
 export const deleteAnalysis = (executor: Executor, id: number) => executor.delete(analyses).where(eq(analyses.id, id))
 
 /** Whether anything submitted or accepted rests on the test's inputs. */

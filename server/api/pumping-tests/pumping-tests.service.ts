@@ -45,16 +45,21 @@ export function createPumpingTestsService(deps: Deps, { wells, markInputsChanged
     await repository.replaceSteps(executor, id, input.rateSteps.map(stepRow))
   }
 
-  async function get(viewer: Viewer, id: number, executor: Executor = db): Promise<PumpingTest> {
+  /** A test with everything that belongs to it, as far as the viewer may see it. */
+  async function whole(executor: Executor, viewer: Viewer, id: number) {
     const found = await repository.findPumpingTest(executor, viewer, id)
     if (!found) throw notFound()
-    const [testWells, units, steps, series] = await Promise.all([
-      repository.listTestWells(executor, viewer, id),
-      repository.listTestUnits(executor, id),
-      repository.listRateSteps(executor, id),
-      repository.listSeries(executor, id),
-    ])
-    return pumpingTestView(viewer, found, { wells: testWells, units, steps, series })
+    // One after the other: inside a transaction there is one connection.
+    const testWells = await repository.listTestWells(executor, viewer, id)
+    const units = await repository.listTestUnits(executor, id)
+    const steps = await repository.listRateSteps(executor, id)
+    const series = await repository.listSeries(executor, id)
+    return { found, parts: { wells: testWells, units, steps, series } }
+  }
+
+  async function get(viewer: Viewer, id: number, executor: Executor = db): Promise<PumpingTest> {
+    const { found, parts } = await whole(executor, viewer, id)
+    return pumpingTestView(viewer, found, parts)
   }
 
   /** The locked row of a test that the viewer may change. */
@@ -67,6 +72,12 @@ export function createPumpingTestsService(deps: Deps, { wells, markInputsChanged
 
   return {
     get,
+    whole,
+
+    async maySee(executor: Executor, viewer: Viewer, id: number): Promise<boolean> {
+      return (await repository.findPumpingTest(executor, viewer, id)) !== null
+    },
+
     lockForEdit,
 
     async list(viewer: Viewer, query: PumpingTestQuery) {
@@ -118,6 +129,7 @@ const openness = { private: 0, internal: 1, published: 2 }
 
 function checkVisibility(input: PumpingTestInput, wells: { id: number; visibility: keyof typeof openness }[]) {
   const well = wells.find(({ id }) => id === input.wellId)!
-  if (openness[input.visibility] > openness[well.visibility]) throw fieldError('visibility', 'pumping-test/more-visible-than-well')
+  const hidden = input.visibility !== 'private' && wells.some(({ visibility }) => visibility === 'private')
+  if (hidden || openness[input.visibility] > openness[well.visibility]) throw fieldError('visibility', 'pumping-test/more-visible-than-well')
   if (!input.rateSteps.some(({ rate }) => rate.value > 0)) throw fieldError('rateSteps', 'pumping-test/no-pumping')
 }

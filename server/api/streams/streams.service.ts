@@ -11,13 +11,19 @@ export interface NearStream {
 }
 
 export function createStreamsService(_deps: Deps) {
+  /** Streams connected to any of the units, nearest first, with their distance in metres. */
+  async function connected(executor: Executor, unitIds: number[], place: Position): Promise<NearStream[]> {
+    return (await connectedStreams(executor, unitIds))
+      .map(({ id, name, path }) => ({ id, name, distanceM: distanceTo(path, place) }))
+      .sort((a, b) => a.distanceM - b.distanceM)
+  }
+
   return {
-    /** The nearest stream that is connected to one of the units, with its distance in metres; null where none is. */
+    connected,
+
+    /** Null where no stream is connected to the units. */
     async nearestConnected(executor: Executor, unitIds: number[], place: Position): Promise<NearStream | null> {
-      const near = (await connectedStreams(executor, unitIds))
-        .map(({ id, name, path }) => ({ id, name, distanceM: distanceTo(path, place) }))
-        .sort((a, b) => a.distanceM - b.distanceM)
-      return near[0] ?? null
+      return (await connected(executor, unitIds, place))[0] ?? null
     },
   }
 }

@@ -56,6 +56,8 @@ export const adoptedValues = mysqlTable(
     log10Error: double().notNull(),
     evidence: mysqlEnum(['firm', 'fair', 'slight']).notNull(),
     method: varchar({ length: 40 }).notNull(),
+    /** Where the drawdown behind it was measured. */
+    origin: mysqlEnum(['observation-well', 'pumped-well', 'slug-test', 'other']).notNull(),
     thicknessBasis: mysqlEnum(['aquifer', 'screen', 'saturated', 'unknown']).notNull(),
     composite: boolean().notNull().default(false),
     /** Whether estimates may use it (S from a pumped well alone or of a slug test never is). */

@@ -2,15 +2,41 @@ import type { ErrorCatalogue } from './catalogue.ts'
 
 export const analysisErrors = {
   'analysis/refused': { status: 400, sentence: ({ reason }) => String(reason) },
-  'analysis/result-differs': { status: 409, sentence: ({ quantity }) => `The server calculated another ${quantity} than this page. Nothing was saved. Reload the page and try again.` },
-  'analysis/method-version': { status: 409, sentence: () => 'The method has been improved since this page was opened. Reload the page and try again.' },
-  'analysis/inputs-changed': { status: 409, sentence: () => 'Readings, rates or distances have changed since this was calculated. Reload the page to calculate with the new ones.' },
-  'analysis/not-draft': { status: 409, sentence: () => 'This analysis has been submitted and cannot be changed. Make a new one from it.' },
-  'analysis/not-yours': { status: 403, sentence: () => 'Only the person who made this analysis, or a steward, can change it.' },
-  'analysis/no-transmissivity': { status: 400, sentence: () => 'This analysis gives no transmissivity that could be adopted.' },
+  'analysis/result-differs': {
+    status: 409,
+    sentence: ({ quantity }) =>
+      `The server calculated another ${quantity} than this page. Nothing was saved. Reload the page and try again.`,
+  },
+  'analysis/method-version': {
+    status: 409,
+    sentence: () => 'The method has been improved since this page was opened. Reload the page and try again.',
+  },
+  'analysis/inputs-changed': {
+    status: 409,
+    sentence: () =>
+      'Readings, rates or distances have changed since this was calculated. Reload the page to calculate with the new ones.',
+  },
+  'analysis/not-draft': {
+    status: 409,
+    sentence: () => 'This analysis has been submitted and cannot be changed. Make a new one from it.',
+  },
+  'analysis/not-yours': {
+    status: 403,
+    sentence: () => 'Only the person who made this analysis, or a steward, can change it.',
+  },
+  'analysis/no-transmissivity': {
+    status: 400,
+    sentence: () => 'This analysis gives no transmissivity that could be adopted.',
+  },
   'analysis/outside-limits': { status: 400, sentence: ({ reason }) => `This value cannot be adopted: ${reason}` },
-  'analysis/confirmation-needed': { status: 409, sentence: ({ reason }) => `Please confirm an unusual value: ${reason}` },
-  'analysis/private-test': { status: 400, sentence: () => 'A private test must be released before a value can be submitted from it.' },
+  'analysis/confirmation-needed': {
+    status: 409,
+    sentence: ({ reason }) => `Please confirm an unusual value: ${reason}`,
+  },
+  'analysis/private-test': {
+    status: 400,
+    sentence: () => 'A private test must be released before a value can be submitted from it.',
+  },
   'review/comment-needed': { status: 400, sentence: () => 'Say what should be changed.' },
   'review/own-work': { status: 403, sentence: () => 'Nobody reviews their own analysis. Ask another reviewer.' },
   'review/not-submitted': { status: 409, sentence: () => 'This analysis is not waiting for review any more.' },

@@ -1,0 +1,160 @@
+import type { AnalysisInput, AnalysisUpdate, SubmissionInput } from '#shared/contracts/analyses.ts'
+import type { Viewer } from '#shared/contracts/permissions.ts'
+import { limitFindings } from '#shared/hydraulics/limits.ts'
+import { defaultUnitSystemId, unitSystemById } from '#shared/quantities/systems.ts'
+import { findingText } from '#shared/words/findings.ts'
+import type { Executor } from '../../db/client.ts'
+import { inTransaction } from '../../db/transaction.ts'
+import type { Deps } from '../../deps.ts'
+import { AppError, notFound } from '../../errors.ts'
+import { recordAudit } from '../audit-trail/record-audit.ts'
+import * as repository from './analyses.repository.ts'
+import { adoptedRows } from './adoption.ts'
+import { calculate, checkExpected, checkRepeats } from './calculate.ts'
+import type { createInputsService } from './inputs.service.ts'
+import { analysisView, mayChange } from './view.ts'
+
+/**
+ * Analyses are calculated from all wells of a test, whoever saves: a test that is not private has no private wells,
+ * so that everybody who analyses sees the same inputs.
+ */
+const everything: Viewer = { id: null, name: 'Basinbook', role: 'steward', mayReview: false }
+
+export function createAnalysesService(deps: Deps, inputs: ReturnType<typeof createInputsService>) {
+  const { db } = deps.connection
+  const { now } = deps
+
+  async function view(executor: Executor, viewer: Viewer, id: number) {
+    const found = await repository.findAnalysis(executor, viewer, id)
+    if (!found) throw notFound()
+    return analysisView(viewer, found, await repository.listReviews(executor, [id]))
+  }
+
+  async function compute(executor: Executor, testId: number, input: AnalysisInput) {
+    const snapshot = await inputs.snapshot(executor, everything, testId)
+    if (snapshot.sha256 !== input.inputsSha256) throw new AppError('analysis/inputs-changed')
+    const result = calculate(snapshot.inputs, input)
+    checkExpected(result, input.expected)
+    const { method, options, label } = input
+    const { methodVersion } = result
+    return { method, methodVersion, options, label, result, inputs: snapshot.inputs, inputsSha256: snapshot.sha256, inputsChanged: false }
+  }
+
+  /** The locked draft, when the viewer may change it. */
+  async function lockDraft(executor: Executor, viewer: Viewer, id: number) {
+    const found = await repository.findAnalysis(executor, viewer, id)
+    const row = found && (await repository.lockAnalysis(executor, id))
+    if (!row) throw notFound()
+    if (row.state !== 'draft') throw new AppError('analysis/not-draft')
+    if (!mayChange(viewer, row)) throw new AppError('analysis/not-yours')
+    return row
+  }
+
+  return {
+    hasSubmitted: repository.hasSubmitted,
+
+    async workbench(viewer: Viewer, testId: number) {
+      const { inputs: built, sha256, readings, problems } = await inputs.snapshot(db, viewer, testId)
+      return { inputs: built, sha256, readings, problems }
+    },
+
+    async list(viewer: Viewer, testId: number) {
+      const rows = await repository.listAnalyses(db, viewer, testId)
+      const reviews = await repository.listReviews(
+        db,
+        rows.map(({ row }) => row.id),
+      )
+      return { items: rows.map((row) => analysisView(viewer, row, reviews)) }
+    },
+
+    get: (viewer: Viewer, id: number, executor: Executor = db) => view(executor, viewer, id),
+
+    create: (viewer: Viewer, testId: number, input: AnalysisInput) =>
+      inTransaction(deps, async (tx) => {
+        if (!(await inputs.maySee(tx, viewer, testId))) throw notFound()
+        const computed = await compute(tx, testId, input)
+        const row = { ...computed, pumpingTestId: testId, state: 'draft' as const, createdBy: viewer.id, createdAt: now() }
+        const id = await repository.insertAnalysis(tx, row)
+        await recordAudit(tx, { viewer, at: now(), action: 'analyses/create', subject: 'analysis', subjectId: id, details: { testId } })
+        return view(tx, viewer, id)
+      }),
+
+    update: (viewer: Viewer, id: number, { rowVersion, ...input }: AnalysisUpdate) =>
+      inTransaction(deps, async (tx) => {
+        const row = await lockDraft(tx, viewer, id)
+        const computed = await compute(tx, row.pumpingTestId, input)
+        if (!(await repository.updateAnalysis(tx, id, rowVersion, computed))) throw new AppError('edit/conflict')
+        await recordAudit(tx, { viewer, at: now(), action: 'analyses/edit', subject: 'analysis', subjectId: id })
+        return view(tx, viewer, id)
+      }),
+
+    remove: (viewer: Viewer, id: number) =>
+      inTransaction(deps, async (tx) => {
+        await lockDraft(tx, viewer, id)
+        await repository.deleteAnalysis(tx, id)
+        await recordAudit(tx, { viewer, at: now(), action: 'analyses/delete', subject: 'analysis', subjectId: id })
+        return {}
+      }),
+
+    /** Freezes an analysis for review; its inputs must be those of the test as it is now. */
+    submit: (viewer: Viewer, id: number, { rowVersion, rationale, confirmed }: SubmissionInput) =>
+      inTransaction(deps, async (tx) => {
+        const row = await lockDraft(tx, viewer, id)
+        const snapshot = await inputs.snapshot(tx, everything, row.pumpingTestId)
+        if (snapshot.sha256 !== row.inputsSha256) throw new AppError('analysis/inputs-changed')
+        if (snapshot.test.found.test.visibility === 'private') throw new AppError('analysis/private-test')
+        const { result } = await view(tx, viewer, id)
+        checkAdoptable(result, confirmed)
+        const change = { state: 'submitted' as const, rationale, submittedAt: now() }
+        if (!(await repository.updateAnalysis(tx, id, rowVersion, change))) throw new AppError('edit/conflict')
+        const details = { rationale, confirmed }
+        await recordAudit(tx, { viewer, at: now(), action: 'analyses/submit', subject: 'analysis', subjectId: id, details })
+        return view(tx, viewer, id)
+      }),
+
+    /** The locked analysis that waits for review. */
+    async lockSubmitted(executor: Executor, viewer: Viewer, id: number) {
+      const found = await repository.findAnalysis(executor, viewer, id)
+      const row = found && (await repository.lockAnalysis(executor, id))
+      if (!row) throw notFound()
+      if (row.state !== 'submitted') throw new AppError('review/not-submitted')
+      return row
+    },
+
+    async settle(executor: Executor, id: number, rowVersion: number, state: 'accepted' | 'returned') {
+      if (!(await repository.updateAnalysis(executor, id, rowVersion, { state }))) throw new AppError('edit/conflict')
+    },
+
+    /** The values an accepted analysis stands for, after repeating it from its own snapshot. */
+    async valuesOf(executor: Executor, id: number) {
+      const found = await repository.findAnalysis(executor, everything, id)
+      if (!found) throw notFound()
+      if (found.row.inputsChanged) throw new AppError('analysis/inputs-changed')
+      checkRepeats(found.row)
+      const test = await inputs.testOf(executor, everything, found.row.pumpingTestId)
+      return { pumpingTestId: found.row.pumpingTestId, values: adoptedRows(found.row, test) }
+    },
+
+    /** Compares every analysis of a test with the test as it is now, and marks those that were made from other inputs. */
+    async markInputsChanged(executor: Executor, testId: number) {
+      const rows = (await repository.listAnalyses(executor, everything, testId)).map(({ row }) => row)
+      const fitted = rows.filter(({ method }) => method !== 'reported')
+      if (fitted.length === 0) return
+      const { sha256 } = await inputs.snapshot(executor, everything, testId)
+      for (const row of fitted) {
+        const inputsChanged = row.inputsSha256 !== sha256
+        if (inputsChanged !== row.inputsChanged) await repository.setInputsChanged(executor, row.id, inputsChanged)
+      }
+    },
+  }
+}
+
+function checkAdoptable(result: { T: { value: number } | null; S: { value: number } | null; storageClass: Parameters<typeof limitFindings>[0]['storageClass'] }, confirmed: string[]) {
+  if (!result.T) throw new AppError('analysis/no-transmissivity')
+  const units = unitSystemById(defaultUnitSystemId)
+  const limits = limitFindings({ T: result.T.value, S: result.S?.value ?? null, storageClass: result.storageClass })
+  const refused = limits.find(({ severity }) => severity === 'bad')
+  if (refused) throw new AppError('analysis/outside-limits', { reason: findingText(refused, units) })
+  const open = limits.find(({ code }) => !confirmed.includes(code))
+  if (open) throw new AppError('analysis/confirmation-needed', { reason: findingText(open, units), code: open.code })
+}

@@ -1,0 +1,63 @@
+import { estimateQuantity, type EstimateQuantity } from '#shared/contracts/estimates.ts'
+import type { UnitModel } from '#shared/estimates/types.ts'
+import type { Scope } from '../../db/readable.ts'
+import type { Deps } from '../../deps.ts'
+import { AppError } from '../../errors.ts'
+import type { FitModelInput } from '../../jobs/tasks/fit-model.ts'
+import type { EstimatesNeeds } from './estimates.service.ts'
+import * as repository from './estimates.repository.ts'
+import { loadUnitData, type UnitData } from './unit-data.ts'
+
+const scopes: Scope[] = ['published', 'internal']
+/** Units times quantities times scopes of a large region; the oldest go first. */
+const mostKept = 64
+
+/** Values and fitted models per unit, quantity, scope and data version; what is kept here can be lost at any time. */
+export function createModels(deps: Deps, adoptedValues: EstimatesNeeds['adoptedValues']) {
+  const { db } = deps.connection
+  const kept = new Map<string, Promise<UnitData | null>>()
+
+  function dataOf(unitId: number, quantity: EstimateQuantity, scope: Scope, epsg: number, version: number) {
+    const key = [unitId, quantity, scope, epsg, version].join(':')
+    const found = kept.get(key)
+    if (found) return found
+    const loading = loadUnitData(db, unitId, quantity, scope, epsg)
+    loading.catch(() => kept.delete(key))
+    kept.set(key, loading)
+    if (kept.size > mostKept) kept.delete(kept.keys().next().value!)
+    return loading
+  }
+
+  async function fit(unitId: number, quantity: EstimateQuantity, scope: Scope, dataVersion: number, data: UnitData): Promise<UnitModel> {
+    const input: FitModelInput = { values: data.siteValues, options: { quantity, barriers: data.barriers } }
+    const model = await deps.workers.run<UnitModel>('fit-model', input)
+    await repository.saveModel(db, { unitId, quantity, scope, dataVersion, model, createdAt: deps.now() })
+    return model
+  }
+
+  return {
+    /** The unit's values as they are now, with the newest model; the first estimate ever waits for a fit. */
+    async current(unitId: number, quantity: EstimateQuantity, scope: Scope, epsg: number) {
+      const dataVersion = await adoptedValues.dataVersion(db, unitId)
+      const data = await dataOf(unitId, quantity, scope, epsg, dataVersion)
+      if (!data) throw new AppError('estimate/unknown-unit')
+      const newest = await repository.newestModel(db, unitId, quantity, scope)
+      const model = newest?.model ?? (await fit(unitId, quantity, scope, dataVersion, data))
+      return { data, model, dataVersion, outdated: newest !== null && newest.dataVersion !== dataVersion }
+    },
+
+    /** Fits every quantity and scope of a unit whose values have moved on since its newest model. */
+    async refit(unitId: number, epsg: number, report: (done: number, total: number) => Promise<void>) {
+      const work = scopes.flatMap((scope) => estimateQuantity.options.map((quantity) => ({ scope, quantity })))
+      for (const [i, { scope, quantity }] of work.entries()) {
+        await report(i, work.length)
+        const dataVersion = await adoptedValues.dataVersion(db, unitId)
+        const newest = await repository.newestModel(db, unitId, quantity, scope)
+        if (newest?.dataVersion === dataVersion) continue
+        const data = await dataOf(unitId, quantity, scope, epsg, dataVersion)
+        if (data) await fit(unitId, quantity, scope, dataVersion, data)
+      }
+      await report(work.length, work.length)
+    },
+  }
+}

@@ -1,0 +1,37 @@
+import type { ReadingRow } from '#shared/contracts/reading-series.ts'
+import type { LogReading, RowIssue } from '#shared/readings/model.ts'
+import type { readings } from '../../db/schema/index.ts'
+
+type StoredRow = typeof readings.$inferSelect
+
+/** Longest raw line that is kept in the row itself; the file keeps all of it. */
+const mostRaw = 1_000
+const mostFlags = 300
+
+function issuesByRow(issues: RowIssue[]): Map<number, RowIssue[]> {
+  const map = new Map<number, RowIssue[]>()
+  for (const issue of issues) map.set(issue.row, [...(map.get(issue.row) ?? []), issue])
+  return map
+}
+
+/** A parsed log as rows of the table `readings`. */
+export function readingRows(seriesId: number, { rows, issues }: LogReading): StoredRow[] {
+  const found = issuesByRow(issues)
+  return rows.map((row, seq) => ({
+    seriesId,
+    seq,
+    fileRow: row.row,
+    raw: row.raw.slice(0, mostRaw),
+    elapsedS: row.elapsed_s,
+    valueM: row.value_m,
+    taken: row.taken,
+    flags: row.flags.join(',').slice(0, mostFlags),
+    issues: found.get(row.row)?.map(({ code, field, params }) => ({ code, field, params })) ?? null,
+  }))
+}
+
+export function rowView(row: StoredRow, decision: ReadingRow['decision']): ReadingRow {
+  const { seq, fileRow, raw, elapsedS, valueM, taken, issues } = row
+  const included = decision === null ? taken : decision.action === 'take' && elapsedS !== null && valueM !== null
+  return { seq, fileRow, raw, elapsedS, valueM, taken, included, issues: issues ?? [], decision }
+}

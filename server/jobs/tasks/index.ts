@@ -1,0 +1,14 @@
+import { fitModelTask } from './fit-model.ts'
+import { readLogTask } from './read-log.ts'
+
+/** Work for threads. To add a task: its function, and a line here. */
+const tasks = {
+  'fit-model': fitModelTask,
+  'read-log': readLogTask,
+} as const
+
+export type TaskName = keyof typeof tasks
+
+export default function run({ name, input }: { name: TaskName; input: never }): unknown {
+  return tasks[name](input)
+}

@@ -1,0 +1,37 @@
+import { z } from 'zod'
+import { analysisMethod } from './analyses.ts'
+import { parameterEstimate, storageClass } from './analysis-result.ts'
+import { instant, listOf, recordId } from './common.ts'
+
+export const reviewQueueItem = z.object({
+  id: recordId,
+  pumpingTestId: recordId,
+  wellCode: z.string(),
+  testStart: instant,
+  method: analysisMethod,
+  label: z.string().nullable(),
+  rationale: z.string().nullable(),
+  T: parameterEstimate.nullable(),
+  S: parameterEstimate.nullable(),
+  storageClass: storageClass.nullable(),
+  author: z.string(),
+  submittedAt: instant,
+  inputsChanged: z.boolean(),
+  /** False for the author's own work. */
+  mayReview: z.boolean(),
+})
+export type ReviewQueueItem = z.infer<typeof reviewQueueItem>
+
+export const reviewQueue = listOf(reviewQueueItem)
+
+export const decidedReview = z.object({
+  id: recordId,
+  pumpingTestId: recordId,
+  wellCode: z.string(),
+  method: analysisMethod,
+  decision: z.enum(['accepted', 'returned']),
+  comment: z.string().nullable(),
+  reviewer: z.string(),
+  createdAt: instant,
+})
+export const decidedReviews = z.object({ items: z.array(decidedReview) })
