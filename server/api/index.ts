@@ -1,4 +1,4 @@
-import { Router, json } from 'express'
+import { Router, json, type RequestHandler } from 'express'
 import type { Deps } from '../deps.ts'
 import { csrfGuard } from '../middleware/csrf.ts'
 import { createRateLimiters } from '../middleware/rate-limit.ts'
@@ -10,6 +10,12 @@ import { withDescription } from './api-description/api-description.routes.ts'
 import { auditTrailRoutes } from './audit-trail/audit-trail.routes.ts'
 import { healthRoutes } from './health/health.routes.ts'
 import { jobsRoutes } from './jobs/jobs.routes.ts'
+import { adoptedValuesRoutes } from './adopted-values/adopted-values.routes.ts'
+import { analysesRoutes } from './analyses/analyses.routes.ts'
+import { estimatesRoutes } from './estimates/estimates.routes.ts'
+import { pumpingTestsRoutes } from './pumping-tests/pumping-tests.routes.ts'
+import { readingSeriesRoutes } from './reading-series/reading-series.routes.ts'
+import { reviewsRoutes } from './reviews/reviews.routes.ts'
 import { mountRoutes } from './mount.ts'
 import { outboxRoutes } from './outbox/outbox.routes.ts'
 import { passwordRoutes } from './password/password.routes.ts'
@@ -31,14 +37,26 @@ export function allRoutes(services: Services, deps: Deps): Route[] {
     ...auditTrailRoutes(services),
     ...outboxRoutes(services),
     ...jobsRoutes(services, deps),
+    ...pumpingTestsRoutes(services),
+    ...readingSeriesRoutes(services),
+    ...analysesRoutes(services),
+    ...reviewsRoutes(services),
+    ...adoptedValuesRoutes(services),
+    ...estimatesRoutes(services),
   ]
   return withDescription(routes, deps)
+}
+
+/** Answers are for one person: nothing between keeps them, and the browser asks again before it shows one. */
+const privately: RequestHandler = (_req, res, next) => {
+  res.set('Cache-Control', 'private, no-cache')
+  next()
 }
 
 export function apiRouter(deps: Deps): Router {
   const services = createServices(deps)
   const router = Router()
-  router.use('/api', sessions(deps), withViewer(deps), csrfGuard(deps.config), json({ limit: '1mb' }))
+  router.use('/api', privately, sessions(deps), withViewer(deps), csrfGuard(deps.config), json({ limit: '1mb' }))
   router.use(
     mountRoutes(allRoutes(services, deps), {
       limiters: createRateLimiters((name) => databaseRateStore(deps, name)),

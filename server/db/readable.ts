@@ -1,9 +1,9 @@
 import { and, eq, exists, isNull, ne, or, sql, type SQL } from 'drizzle-orm'
-import { alias, QueryBuilder } from 'drizzle-orm/mysql-core'
+import { alias, QueryBuilder, type AnyMySqlColumn } from 'drizzle-orm/mysql-core'
 import { atLeast, type Viewer } from '#shared/contracts/permissions.ts'
 import { pumpingTests, wells } from './schema/index.ts'
 
-type Guarded = Pick<typeof wells, 'visibility' | 'embargoUntil' | 'createdBy'> | Pick<typeof pumpingTests, 'visibility' | 'embargoUntil' | 'createdBy'>
+type Guarded = Record<'visibility' | 'embargoUntil' | 'createdBy', AnyMySqlColumn>
 
 /**
  * What estimates, statistics and maps are computed from. Embargoes end through a job, which clears the date and moves

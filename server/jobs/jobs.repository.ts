@@ -33,7 +33,13 @@ export async function claimJob(db: Database, kinds: string[], holder: string, no
       .limit(1)
       .for('update', { skipLocked: true })
     if (!row) return null
-    const claim = { state: 'running' as const, claimedBy: holder, heartbeatAt: now, uniqueKey: null, attempts: row.attempts + 1 }
+    const claim = {
+      state: 'running' as const,
+      claimedBy: holder,
+      heartbeatAt: now,
+      uniqueKey: null,
+      attempts: row.attempts + 1,
+    }
     await tx.update(jobs).set(claim).where(eq(jobs.id, row.id))
     return { ...row, ...claim }
   })
@@ -49,7 +55,10 @@ export async function beat(db: Database, id: number, holder: string, now: Date):
 }
 
 export const saveProgress = (db: Database, id: number, holder: string, { done, total, message }: JobProgress) =>
-  db.update(jobs).set({ done, total, message: message.slice(0, 300) }).where(held(id, holder))
+  db
+    .update(jobs)
+    .set({ done, total, message: message.slice(0, 300) })
+    .where(held(id, holder))
 
 export interface Outcome {
   state: 'done' | 'failed' | 'cancelled' | 'waiting'
@@ -118,8 +127,17 @@ export function activeJobs(executor: Executor, createdBy: number | null, endedSi
 }
 
 /** Takes a named lease when nobody holds it; true for exactly one of any number of processes. */
-export async function takeLease(executor: Executor, name: string, holder: string, now: Date, expiresAt: Date): Promise<boolean> {
-  await executor.insert(leases).ignore().values({ name, holder, expiresAt: new Date(0) })
+export async function takeLease(
+  executor: Executor,
+  name: string,
+  holder: string,
+  now: Date,
+  expiresAt: Date,
+): Promise<boolean> {
+  await executor
+    .insert(leases)
+    .ignore()
+    .values({ name, holder, expiresAt: new Date(0) })
   const [taken] = await executor
     .update(leases)
     .set({ holder, expiresAt })

@@ -30,9 +30,13 @@ export function createQueue(options: QueueOptions): Jobs {
   const claim = () => withRetry(() => claimJob(db, [...handlers.keys()], holder, now()))
 
   async function execute(job: JobRow) {
-    const outcome = await runJob(job, handlers.get(job.kind)!, { db, holder, now, beatMs, signal: stopping.signal }).catch(
-      (error: unknown) => failure(job, error),
-    )
+    const outcome = await runJob(job, handlers.get(job.kind)!, {
+      db,
+      holder,
+      now,
+      beatMs,
+      signal: stopping.signal,
+    }).catch((error: unknown) => failure(job, error))
     await finishJob(db, job.id, holder, now(), outcome)
   }
 
@@ -42,8 +46,14 @@ export function createQueue(options: QueueOptions): Jobs {
     log.error({ err: error, jobId: job.id, kind: job.kind }, 'job failed')
     const errorCode = error instanceof AppError ? error.code : 'job/failed'
     const errorDetail = error instanceof Error ? error.message : String(error)
-    if (error instanceof AppError || job.attempts >= job.maxAttempts) return { state: 'failed' as const, errorCode, errorDetail }
-    return { state: 'waiting' as const, errorCode, errorDetail, runAt: new Date(now().getTime() + 2 ** job.attempts * 1000) }
+    if (error instanceof AppError || job.attempts >= job.maxAttempts)
+      return { state: 'failed' as const, errorCode, errorDetail }
+    return {
+      state: 'waiting' as const,
+      errorCode,
+      errorDetail,
+      runAt: new Date(now().getTime() + 2 ** job.attempts * 1000),
+    }
   }
 
   function launch(job: JobRow) {

@@ -13,12 +13,19 @@ export function startRecurring(db: Database, jobs: Jobs, log: Logger, now: () =>
   async function look() {
     for (const { kind, everyMs } of work) {
       await db.transaction(async (tx) => {
-        const due = await takeLease(tx, `recurring:${kind}`, String(process.pid), now(), new Date(now().getTime() + everyMs))
+        const due = await takeLease(
+          tx,
+          `recurring:${kind}`,
+          String(process.pid),
+          now(),
+          new Date(now().getTime() + everyMs),
+        )
         if (due) await jobs.enqueue(tx, kind, { uniqueKey: `recurring:${kind}` })
       })
     }
   }
-  const safely = () => void look().catch((error: unknown) => log.warn({ err: error }, 'recurring work could not be enqueued'))
+  const safely = () =>
+    void look().catch((error: unknown) => log.warn({ err: error }, 'recurring work could not be enqueued'))
   safely()
   const timer = setInterval(safely, 60_000)
   return () => clearInterval(timer)

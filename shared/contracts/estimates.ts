@@ -98,7 +98,13 @@ export const nearbyQuery = z.object({
 })
 export type NearbyQuery = z.infer<typeof nearbyQuery>
 
-export const nearbyValue = z.object({ quantity: adoptedQuantity, value: z.number(), storageClass: storageClass.nullable(), evidence, method: analysisMethod })
+export const nearbyValue = z.object({
+  quantity: adoptedQuantity,
+  value: z.number(),
+  storageClass: storageClass.nullable(),
+  evidence,
+  method: analysisMethod,
+})
 
 export const nearbyTest = z.object({
   pumpingTestId: recordId,

@@ -71,4 +71,5 @@ export function can(viewer: Viewer, action: Action, region: RegionAccess = { ope
   return viewer.role !== null && rank[viewer.role] >= rank[needed]
 }
 
-export const atLeast = (viewer: Viewer, needed: Role): boolean => viewer.role !== null && rank[viewer.role] >= rank[needed]
+export const atLeast = (viewer: Viewer, needed: Role): boolean =>
+  viewer.role !== null && rank[viewer.role] >= rank[needed]

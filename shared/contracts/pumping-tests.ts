@@ -131,7 +131,9 @@ export const pumpingTest = z.object({
   thicknessBasis,
   thicknessError: z.number(),
   rateError: z.number(),
-  rateSteps: z.array(z.object({ startS: z.number(), rateM3S: z.number(), enteredValue: z.number(), enteredUnit: z.string() })),
+  rateSteps: z.array(
+    z.object({ startS: z.number(), rateM3S: z.number(), enteredValue: z.number(), enteredUnit: z.string() }),
+  ),
   wells: z.array(testWell),
   series: z.array(seriesSummary),
   conditions: z.string().nullable(),

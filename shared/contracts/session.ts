@@ -1,5 +1,6 @@
 import { z } from 'zod'
 import { preferences } from './account.ts'
+import { basemap } from './basemap.ts'
 import { emailAddress, password } from './password.ts'
 import { role } from './permissions.ts'
 import { region } from './region.ts'
@@ -21,5 +22,7 @@ export const session = z.object({
   csrfToken: z.string().nullable(),
   region,
   preferences,
+  /** The one to show first in front. */
+  basemaps: z.array(basemap),
 })
 export type Session = z.infer<typeof session>

@@ -59,7 +59,10 @@ export function createAdoptedValuesService(deps: Deps) {
         const heir = values.findIndex(({ unitId, quantity }) => unitId === old.unitId && quantity === old.quantity)
         await repository.endValues(executor, [old.id], at, heir === -1 ? null : ids[heir]!)
       }
-      await changed(executor, [...before, ...values].map(({ unitId }) => unitId))
+      await changed(
+        executor,
+        [...before, ...values].map(({ unitId }) => unitId),
+      )
       return ids
     },
 
@@ -73,7 +76,14 @@ export function createAdoptedValuesService(deps: Deps) {
         await repository.endValues(tx, [id], now(), null)
         await changed(tx, [row.unitId])
         const details = { reason, quantity: row.quantity, pumpingTestId: row.pumpingTestId }
-        await recordAudit(tx, { viewer, at: now(), action: 'adopted-values/withdraw', subject: 'adopted-value', subjectId: id, details })
+        await recordAudit(tx, {
+          viewer,
+          at: now(),
+          action: 'adopted-values/withdraw',
+          subject: 'adopted-value',
+          subjectId: id,
+          details,
+        })
         return {}
       }),
   }

@@ -19,8 +19,14 @@ function columns(system: UnitSystem): Column[] {
     ['storage_class', ({ storageClass }) => storageClass],
     ['value', (value) => shown(value, value.value)],
     ['unit', (value) => unitOf(value).label],
-    [`transmissivity_${unitById(system.transmissivity).label}`, (value) => (value.quantity === 'T' ? shown(value, value.value) : null)],
-    [`conductivity_${unitById(system.conductivity).label}`, (value) => (value.quantity === 'K' ? shown(value, value.value) : null)],
+    [
+      `transmissivity_${unitById(system.transmissivity).label}`,
+      (value) => (value.quantity === 'T' ? shown(value, value.value) : null),
+    ],
+    [
+      `conductivity_${unitById(system.conductivity).label}`,
+      (value) => (value.quantity === 'K' ? shown(value, value.value) : null),
+    ],
     ['storativity_1', (value) => (value.quantity === 'S' ? value.value : null)],
     ['low_95', (value) => shown(value, value.low)],
     ['high_95', (value) => shown(value, value.high)],

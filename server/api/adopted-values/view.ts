@@ -3,7 +3,14 @@ import type { FoundValue } from './adopted-values.repository.ts'
 
 const normal975 = 1.959963984540054
 
-export function adoptedValueView({ row, wellCode, position: [lon, lat], unitName, inputsChanged, adoptedByName }: FoundValue): AdoptedValue {
+export function adoptedValueView({
+  row,
+  wellCode,
+  position: [lon, lat],
+  unitName,
+  inputsChanged,
+  adoptedByName,
+}: FoundValue): AdoptedValue {
   const { log10Value, log10Error, method } = row
   return {
     ...row,

@@ -1,5 +1,12 @@
 import { z } from 'zod'
-import { analysis, analysisInput, analysisList, analysisUpdate, submissionInput, workbenchInputs } from '#shared/contracts/analyses.ts'
+import {
+  analysis,
+  analysisInput,
+  analysisList,
+  analysisUpdate,
+  submissionInput,
+  workbenchInputs,
+} from '#shared/contracts/analyses.ts'
 import { idInPath, nothing } from '#shared/contracts/common.ts'
 import { route, type Route } from '../registry.ts'
 import type { Services } from '../services.ts'
@@ -22,7 +29,14 @@ export function analysesRoutes({ analyses }: Services): Route[] {
       ({ viewer, params: { id } }) => analyses.workbench(viewer, id),
     ),
     route(
-      { method: 'get', path: ofTest, action: 'analyses/read', summary: 'Analyses of a test', params, response: analysisList },
+      {
+        method: 'get',
+        path: ofTest,
+        action: 'analyses/read',
+        summary: 'Analyses of a test',
+        params,
+        response: analysisList,
+      },
       ({ viewer, params: { id } }) => analyses.list(viewer, id),
     ),
     route(

@@ -37,7 +37,16 @@ export function createAnalysesService(deps: Deps, inputs: ReturnType<typeof crea
     checkExpected(result, input.expected)
     const { method, options, label } = input
     const { methodVersion } = result
-    return { method, methodVersion, options, label, result, inputs: snapshot.inputs, inputsSha256: snapshot.sha256, inputsChanged: false }
+    return {
+      method,
+      methodVersion,
+      options,
+      label,
+      result,
+      inputs: snapshot.inputs,
+      inputsSha256: snapshot.sha256,
+      inputsChanged: false,
+    }
   }
 
   /** The locked draft, when the viewer may change it. */
@@ -73,9 +82,22 @@ export function createAnalysesService(deps: Deps, inputs: ReturnType<typeof crea
       inTransaction(deps, async (tx) => {
         if (!(await inputs.maySee(tx, viewer, testId))) throw notFound()
         const computed = await compute(tx, testId, input)
-        const row = { ...computed, pumpingTestId: testId, state: 'draft' as const, createdBy: viewer.id, createdAt: now() }
+        const row = {
+          ...computed,
+          pumpingTestId: testId,
+          state: 'draft' as const,
+          createdBy: viewer.id,
+          createdAt: now(),
+        }
         const id = await repository.insertAnalysis(tx, row)
-        await recordAudit(tx, { viewer, at: now(), action: 'analyses/create', subject: 'analysis', subjectId: id, details: { testId } })
+        await recordAudit(tx, {
+          viewer,
+          at: now(),
+          action: 'analyses/create',
+          subject: 'analysis',
+          subjectId: id,
+          details: { testId },
+        })
         return view(tx, viewer, id)
       }),
 
@@ -108,7 +130,14 @@ export function createAnalysesService(deps: Deps, inputs: ReturnType<typeof crea
         const change = { state: 'submitted' as const, rationale, submittedAt: now() }
         if (!(await repository.updateAnalysis(tx, id, rowVersion, change))) throw new AppError('edit/conflict')
         const details = { rationale, confirmed }
-        await recordAudit(tx, { viewer, at: now(), action: 'analyses/submit', subject: 'analysis', subjectId: id, details })
+        await recordAudit(tx, {
+          viewer,
+          at: now(),
+          action: 'analyses/submit',
+          subject: 'analysis',
+          subjectId: id,
+          details,
+        })
         return view(tx, viewer, id)
       }),
 
@@ -149,7 +178,14 @@ export function createAnalysesService(deps: Deps, inputs: ReturnType<typeof crea
   }
 }
 
-function checkAdoptable(result: { T: { value: number } | null; S: { value: number } | null; storageClass: Parameters<typeof limitFindings>[0]['storageClass'] }, confirmed: string[]) {
+function checkAdoptable(
+  result: {
+    T: { value: number } | null
+    S: { value: number } | null
+    storageClass: Parameters<typeof limitFindings>[0]['storageClass']
+  },
+  confirmed: string[],
+) {
   if (!result.T) throw new AppError('analysis/no-transmissivity')
   const units = unitSystemById(defaultUnitSystemId)
   const limits = limitFindings({ T: result.T.value, S: result.S?.value ?? null, storageClass: result.storageClass })
@@ -158,3 +194,4 @@ function checkAdoptable(result: { T: { value: number } | null; S: { value: numbe
   const open = limits.find(({ code }) => !confirmed.includes(code))
   if (open) throw new AppError('analysis/confirmation-needed', { reason: findingText(open, units), code: open.code })
 }
+export type AnalysesService = ReturnType<typeof createAnalysesService>

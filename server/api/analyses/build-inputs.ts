@@ -65,7 +65,9 @@ export function buildInputs(parts: InputParts): BuiltInputs {
 function wellSeries(well: TestWellRow, { series, readings, edits }: InputParts): Built[] {
   const log = series.filter(({ testWellId }) => testWellId === well.row.id).at(-1)
   if (!log) return []
-  const decided = new Map(edits.filter(({ seriesId }) => seriesId === log.id).map(({ seq, action }) => [seq, action === 'take']))
+  const decided = new Map(
+    edits.filter(({ seriesId }) => seriesId === log.id).map(({ seq, action }) => [seq, action === 'take']),
+  )
   const rows = readings.filter((row) => row.seriesId === log.id && row.elapsedS !== null && row.valueM !== null)
   const included = rows.map(({ seq, taken }) => decided.get(seq) ?? taken)
   const drawdown = drawdownOf(rows, included, log.quantity, staticLevel(well))
@@ -99,14 +101,25 @@ const staticLevel = ({ row }: TestWellRow): StaticLevel =>
   row.staticLevelM === null ? { beforePumping: true, removeTrend: false } : { given_m: row.staticLevelM }
 
 /** A step backwards in time stays in the file; analyses want rising times. */
-const byTime = (a: { row: ReadingRow }, b: { row: ReadingRow }) => a.row.elapsedS! - b.row.elapsedS! || a.row.seq - b.row.seq
+const byTime = (a: { row: ReadingRow }, b: { row: ReadingRow }) =>
+  a.row.elapsedS! - b.row.elapsedS! || a.row.seq - b.row.seq
 
 /**
  * Drawdown of every row, or why there is none. The static level comes from the included readings alone; the drawdown of
  * readings that are left out is computed from it too, so that the workbench can show them.
  */
-function drawdownOf(rows: ReadingRow[], included: boolean[], quantity: Quantity, level: StaticLevel): number[] | Problem {
-  const asRows = rows.map(({ elapsedS, valueM }, i) => ({ row: i, elapsed_s: elapsedS, value_m: valueM, taken: included[i]! }))
+function drawdownOf(
+  rows: ReadingRow[],
+  included: boolean[],
+  quantity: Quantity,
+  level: StaticLevel,
+): number[] | Problem {
+  const asRows = rows.map(({ elapsedS, valueM }, i) => ({
+    row: i,
+    elapsed_s: elapsedS,
+    value_m: valueM,
+    taken: included[i]!,
+  }))
   const found = toDrawdown(asRows, quantity, level)
   if (!found.ok) return { code: found.code, params: found.params }
   if (found.static === null) return rows.map(({ valueM }) => valueM!)

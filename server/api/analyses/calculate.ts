@@ -10,7 +10,10 @@ import type { AnalysisRow } from './analyses.repository.ts'
 const tolerance = 1e-6
 
 /** @throws AppError with the method's own sentence when it refuses the inputs. */
-export function calculate(inputs: AnalysisInputs, { method, options }: Pick<AnalysisInput, 'method' | 'options'>): AnalysisResult {
+export function calculate(
+  inputs: AnalysisInputs,
+  { method, options }: Pick<AnalysisInput, 'method' | 'options'>,
+): AnalysisResult {
   try {
     return analyse(method, inputs, options)
   } catch (error) {
@@ -28,18 +31,28 @@ const differs = (a: number | null, b: number | null) =>
  */
 export function checkExpected(result: AnalysisResult, expected: AnalysisInput['expected']): void {
   if (expected.methodVersion !== result.methodVersion) throw new AppError('analysis/method-version')
-  if (differs(expected.T, result.T?.value ?? null)) throw new AppError('analysis/result-differs', { quantity: 'transmissivity' })
-  if (differs(expected.S, result.S?.value ?? null)) throw new AppError('analysis/result-differs', { quantity: 'storativity' })
+  if (differs(expected.T, result.T?.value ?? null))
+    throw new AppError('analysis/result-differs', { quantity: 'transmissivity' })
+  if (differs(expected.S, result.S?.value ?? null))
+    throw new AppError('analysis/result-differs', { quantity: 'storativity' })
 }
 
 /**
  * Repeats a stored analysis from its own snapshot. A reported value has nothing to repeat.
  * @throws AppError when another version of the method, or another number, comes out.
  */
-export function checkRepeats({ method, inputs, options, result }: Pick<AnalysisRow, 'method' | 'inputs' | 'options' | 'result'>): void {
+export function checkRepeats({
+  method,
+  inputs,
+  options,
+  result,
+}: Pick<AnalysisRow, 'method' | 'inputs' | 'options' | 'result'>): void {
   const stored = analysisResult.parse(result)
   if (method === 'reported') return
-  const again = calculate(analysisInputs.parse(inputs), { method: fittedMethod.parse(method), options: analysisOptions.parse(options) })
+  const again = calculate(analysisInputs.parse(inputs), {
+    method: fittedMethod.parse(method),
+    options: analysisOptions.parse(options),
+  })
   const { methodVersion, T, S } = stored
   checkExpected(again, { methodVersion, T: T?.value ?? null, S: S?.value ?? null })
 }

@@ -32,7 +32,11 @@ export const listReadings = (executor: Executor, seriesIds: number[]): Promise<R
 export const listEdits = (executor: Executor, seriesIds: number[]) =>
   seriesIds.length === 0
     ? Promise.resolve([])
-    : executor.select().from(readingEdits).where(inArray(readingEdits.seriesId, seriesIds)).orderBy(asc(readingEdits.id))
+    : executor
+        .select()
+        .from(readingEdits)
+        .where(inArray(readingEdits.seriesId, seriesIds))
+        .orderBy(asc(readingEdits.id))
 
 export const listLiveSeries = (executor: Executor, testId: number) =>
   executor

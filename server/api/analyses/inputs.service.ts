@@ -18,7 +18,8 @@ export interface Snapshot extends BuiltInputs {
 }
 
 /** The inputs of an analysis are written field by field in a fixed order, so their JSON text identifies them. */
-export const sha256Of = (inputs: AnalysisInputs): string => createHash('sha256').update(JSON.stringify(inputs)).digest('hex')
+export const sha256Of = (inputs: AnalysisInputs): string =>
+  createHash('sha256').update(JSON.stringify(inputs)).digest('hex')
 
 /** What analyses of a test are made from, as the viewer sees the test. */
 export function createInputsService({ pumpingTests, streams }: InputsNeeds) {
@@ -35,7 +36,13 @@ export function createInputsService({ pumpingTests, streams }: InputsNeeds) {
       const pumped = wells.find(({ row }) => row.role === 'pumped')
       const unitIds = units.map(({ unitId }) => unitId)
       const stream = pumped ? await streams.nearestConnected(executor, unitIds, pumped.position) : null
-      const built = buildInputs({ test: test.found.test, ...test.parts, readings, edits, streamDistanceM: stream?.distanceM ?? null })
+      const built = buildInputs({
+        test: test.found.test,
+        ...test.parts,
+        readings,
+        edits,
+        streamDistanceM: stream?.distanceM ?? null,
+      })
       return { ...built, sha256: sha256Of(built.inputs), test }
     },
   }

@@ -16,7 +16,11 @@ export const mayDecide = (viewer: Viewer, { createdBy, state }: FoundAnalysis['r
 
 export function analysisView(viewer: Viewer, { row, authorName }: FoundAnalysis, reviews: ReviewRows): Analysis {
   const result = analysisResult.parse(row.result)
-  const limits = limitFindings({ T: result.T?.value ?? null, S: result.S?.value ?? null, storageClass: result.storageClass })
+  const limits = limitFindings({
+    T: result.T?.value ?? null,
+    S: result.S?.value ?? null,
+    storageClass: result.storageClass,
+  })
   return {
     id: row.id,
     pumpingTestId: row.pumpingTestId,

@@ -3,7 +3,16 @@ import type { EstimateQuantity } from '#shared/contracts/estimates.ts'
 import type { UnitModel } from '#shared/estimates/types.ts'
 import type { Executor } from '../../db/client.ts'
 import { readable, viewerOfScope, type Scope } from '../../db/readable.ts'
-import { adoptedValues, aquiferUnits, boundaries, boundaryUnits, pumpingTests, unitPicks, variogramModels, wells } from '../../db/schema/index.ts'
+import {
+  adoptedValues,
+  aquiferUnits,
+  boundaries,
+  boundaryUnits,
+  pumpingTests,
+  unitPicks,
+  variogramModels,
+  wells,
+} from '../../db/schema/index.ts'
 import type { Position } from '../../db/spatial.ts'
 
 const at = ([lon, lat]: Position) => sql`ST_GeomFromText(${`POINT(${lon} ${lat})`}, 4326)`
@@ -67,7 +76,9 @@ export async function newestModel(executor: Executor, unitId: number, quantity: 
   const [row] = await executor
     .select()
     .from(variogramModels)
-    .where(and(eq(variogramModels.unitId, unitId), eq(variogramModels.quantity, quantity), eq(variogramModels.scope, scope)))
+    .where(
+      and(eq(variogramModels.unitId, unitId), eq(variogramModels.quantity, quantity), eq(variogramModels.scope, scope)),
+    )
     .orderBy(desc(variogramModels.dataVersion))
     .limit(1)
   return row ? { dataVersion: row.dataVersion, model: row.model as UnitModel } : null

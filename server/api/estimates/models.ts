@@ -28,7 +28,13 @@ export function createModels(deps: Deps, adoptedValues: EstimatesNeeds['adoptedV
     return loading
   }
 
-  async function fit(unitId: number, quantity: EstimateQuantity, scope: Scope, dataVersion: number, data: UnitData): Promise<UnitModel> {
+  async function fit(
+    unitId: number,
+    quantity: EstimateQuantity,
+    scope: Scope,
+    dataVersion: number,
+    data: UnitData,
+  ): Promise<UnitModel> {
     const input: FitModelInput = { values: data.siteValues, options: { quantity, barriers: data.barriers } }
     const model = await deps.workers.run<UnitModel>('fit-model', input)
     await repository.saveModel(db, { unitId, quantity, scope, dataVersion, model, createdAt: deps.now() })

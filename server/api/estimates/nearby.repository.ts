@@ -33,7 +33,9 @@ export async function testsInBox(executor: Executor, viewer: Viewer, box: Box, u
     .innerJoin(aquiferUnits, eq(aquiferUnits.id, testUnits.unitId))
     .where(and(inside(box), readable.pumpingTests(viewer), readable.wells(viewer)))
     .orderBy(asc(pumpingTests.id), asc(aquiferUnits.depthOrder))
-  const wanted = new Set(rows.filter((row) => unitId === undefined || row.unitId === unitId).map((row) => row.pumpingTestId))
+  const wanted = new Set(
+    rows.filter((row) => unitId === undefined || row.unitId === unitId).map((row) => row.pumpingTestId),
+  )
   return rows.filter(({ pumpingTestId }) => wanted.has(pumpingTestId))
 }
 

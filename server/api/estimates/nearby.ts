@@ -48,7 +48,13 @@ export async function nearbyTests(executor: Executor, viewer: Viewer, query: Nea
   return { items, truncated: near.length > shown.length }
 }
 
-const valueView = ({ quantity, storageClass, evidence, method, log10Value }: Awaited<ReturnType<typeof valuesOfTests>>[number]) => ({
+const valueView = ({
+  quantity,
+  storageClass,
+  evidence,
+  method,
+  log10Value,
+}: Awaited<ReturnType<typeof valuesOfTests>>[number]) => ({
   quantity,
   storageClass,
   evidence,

@@ -26,7 +26,13 @@ export const projector =
     return { x, y }
   }
 
-export async function loadUnitData(executor: Executor, unitId: number, quantity: EstimateQuantity, scope: Scope, epsg: number): Promise<UnitData | null> {
+export async function loadUnitData(
+  executor: Executor,
+  unitId: number,
+  quantity: EstimateQuantity,
+  scope: Scope,
+  epsg: number,
+): Promise<UnitData | null> {
   const unit = await repository.findUnit(executor, unitId)
   if (!unit) return null
   const project = projector(epsg)
@@ -52,7 +58,10 @@ export async function loadUnitData(executor: Executor, unitId: number, quantity:
   }
 }
 
-function siteValue({ row, wellCode, position, accuracyM, intervalTopM, intervalBottomM }: ValueRow, project: ReturnType<typeof projector>): SiteValue {
+function siteValue(
+  { row, wellCode, position, accuracyM, intervalTopM, intervalBottomM }: ValueRow,
+  project: ReturnType<typeof projector>,
+): SiteValue {
   return {
     id: String(row.id),
     testId: String(row.pumpingTestId),

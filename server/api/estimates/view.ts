@@ -58,7 +58,10 @@ const variogramView = ({ variogram: v }: UnitModel): Estimate['variogram'] =>
   v && { model: v.model, nugget: v.nugget, partialSill: v.sill, rangeM: v.range }
 
 /** Where no unit is mapped, or no value may be seen, the answer says so instead of being an error. */
-export function estimateView({ place: [lon, lat], point, epsg, units, unit, quantity }: Asked, answered: Answered | null): Estimate {
+export function estimateView(
+  { place: [lon, lat], point, epsg, units, unit, quantity }: Asked,
+  answered: Answered | null,
+): Estimate {
   const place = { lon, lat, ...point, epsg, quantity, units: units.map(unitView), unit: unit && unitView(unit) }
   if (!answered) return { ...place, ...noUnit }
   const { result, model, data, dataVersion, outdated, stream } = answered
@@ -70,9 +73,12 @@ export function estimateView({ place: [lon, lat], point, epsg, units, unit, quan
     truth: distributionView(result.truth),
     newTest: distributionView(result.newTest),
     contributions: result.contributions.map((c) => contributionView(data.positions, c)),
-    secondOpinion: result.secondOpinion && { value: 10 ** result.secondOpinion.log10, ratio: result.secondOpinion.ratio },
+    secondOpinion: result.secondOpinion && {
+      value: 10 ** result.secondOpinion.log10,
+      ratio: result.secondOpinion.ratio,
+    },
     excludedCount: result.excluded.length,
-    notes: result.notes,
+    notes: result.notes.map(({ code, severity, params }) => ({ code, severity, params: { ...params } })),
     support: result.support,
     supportBecause: result.supportBecause,
     crossValidation: crossValidationView(model),

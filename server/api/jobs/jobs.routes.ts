@@ -9,7 +9,14 @@ import { streamProgress } from './progress-stream.ts'
 export function jobsRoutes({ jobs }: Services, { now, stopping }: Deps): Route[] {
   return [
     route(
-      { method: 'get', path: '/api/jobs', action: 'jobs/read', summary: 'Running and finished work', query: paging, response: jobList },
+      {
+        method: 'get',
+        path: '/api/jobs',
+        action: 'jobs/read',
+        summary: 'Running and finished work',
+        query: paging,
+        response: jobList,
+      },
       ({ query }) => jobs.list(query),
     ),
     route(
@@ -24,8 +31,15 @@ export function jobsRoutes({ jobs }: Services, { now, stopping }: Deps): Route[]
       ({ viewer, params }) => jobs.cancel(viewer, params.id),
     ),
     route(
-      { method: 'get', path: '/api/progress', action: 'progress/follow', summary: 'Progress of work as server-sent events', response: 'sent' },
-      ({ viewer, res }) => streamProgress(res, { load: (since) => jobs.active(viewer, since), now, stopping: stopping.signal }),
+      {
+        method: 'get',
+        path: '/api/progress',
+        action: 'progress/follow',
+        summary: 'Progress of work as server-sent events',
+        response: 'sent',
+      },
+      ({ viewer, res }) =>
+        streamProgress(res, { load: (since) => jobs.active(viewer, since), now, stopping: stopping.signal }),
     ),
   ]
 }

@@ -3,7 +3,15 @@ import type { PumpingTestQuery } from '#shared/contracts/pumping-tests.ts'
 import type { Viewer } from '#shared/contracts/permissions.ts'
 import type { Executor } from '../../db/client.ts'
 import { readable } from '../../db/readable.ts'
-import { analyses, aquiferUnits, pumpingTests, readingSeries, testUnits, testWells, wells } from '../../db/schema/index.ts'
+import {
+  analyses,
+  aquiferUnits,
+  pumpingTests,
+  readingSeries,
+  testUnits,
+  testWells,
+  wells,
+} from '../../db/schema/index.ts'
 
 const escapeLike = (text: string) => text.replace(/[\\%_]/g, '\\$&')
 
@@ -16,8 +24,14 @@ const state = sql<'no-readings' | 'open' | 'submitted' | 'returned' | 'accepted'
   else 'no-readings' end)`
 
 const counts = {
-  wellCount: sql<number>`(select count(*) from ${testWells} where ${testWells.pumpingTestId} = ${pumpingTests.id})`.mapWith(Number),
-  analysisCount: sql<number>`(select count(*) from ${analyses} where ${analyses.pumpingTestId} = ${pumpingTests.id})`.mapWith(Number),
+  wellCount:
+    sql<number>`(select count(*) from ${testWells} where ${testWells.pumpingTestId} = ${pumpingTests.id})`.mapWith(
+      Number,
+    ),
+  analysisCount:
+    sql<number>`(select count(*) from ${analyses} where ${analyses.pumpingTestId} = ${pumpingTests.id})`.mapWith(
+      Number,
+    ),
 }
 
 const orders = { '-start': desc(pumpingTests.startAt), start: asc(pumpingTests.startAt), well: asc(wells.code) }

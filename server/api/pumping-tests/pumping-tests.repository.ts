@@ -2,7 +2,16 @@ import { and, asc, eq, inArray, isNull } from 'drizzle-orm'
 import type { Viewer } from '#shared/contracts/permissions.ts'
 import type { Executor } from '../../db/client.ts'
 import { readable } from '../../db/readable.ts'
-import { aquiferUnits, pumpingTests, rateSteps, readingSeries, testUnits, testWells, users, wells } from '../../db/schema/index.ts'
+import {
+  aquiferUnits,
+  pumpingTests,
+  rateSteps,
+  readingSeries,
+  testUnits,
+  testWells,
+  users,
+  wells,
+} from '../../db/schema/index.ts'
 
 export type PumpingTestRow = typeof pumpingTests.$inferSelect
 export type NewPumpingTest = typeof pumpingTests.$inferInsert
@@ -37,7 +46,12 @@ export async function insertPumpingTest(executor: Executor, row: NewPumpingTest)
 }
 
 /** False when the row version is stale. */
-export async function updatePumpingTest(executor: Executor, id: number, version: number, change: Partial<NewPumpingTest>) {
+export async function updatePumpingTest(
+  executor: Executor,
+  id: number,
+  version: number,
+  change: Partial<NewPumpingTest>,
+) {
   const [result] = await executor
     .update(pumpingTests)
     .set({ ...change, rowVersion: version + 1 })

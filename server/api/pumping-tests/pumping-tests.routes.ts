@@ -40,7 +40,14 @@ export function pumpingTestsRoutes({ pumpingTests }: Services): Route[] {
       ({ viewer, body }) => pumpingTests.create(viewer, body),
     ),
     route(
-      { method: 'get', path: one, action: 'pumping-tests/read', summary: 'A pumping test', params, response: pumpingTest },
+      {
+        method: 'get',
+        path: one,
+        action: 'pumping-tests/read',
+        summary: 'A pumping test',
+        params,
+        response: pumpingTest,
+      },
       ({ viewer, params: { id } }) => pumpingTests.get(viewer, id),
     ),
     route(

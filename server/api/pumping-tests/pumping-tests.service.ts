@@ -1,4 +1,9 @@
-import type { PumpingTest, PumpingTestInput, PumpingTestQuery, PumpingTestUpdate } from '#shared/contracts/pumping-tests.ts'
+import type {
+  PumpingTest,
+  PumpingTestInput,
+  PumpingTestQuery,
+  PumpingTestUpdate,
+} from '#shared/contracts/pumping-tests.ts'
 import { toSI } from '#shared/quantities/units.ts'
 import type { Viewer } from '#shared/contracts/permissions.ts'
 import type { Executor } from '../../db/client.ts'
@@ -34,7 +39,8 @@ export function createPumpingTestsService(deps: Deps, { wells, markInputsChanged
     const screens = await wells.screensOf(executor, input.wellId)
     const interval = testedInterval(input, known.get(input.wellId)!, screens, start.at)
     const unitIds = new Set(input.units.map(({ unitId }) => unitId))
-    if ((await repository.countUnits(executor, [...unitIds])) !== input.units.length) throw fieldError('units', 'pumping-test/unknown-unit')
+    if ((await repository.countUnits(executor, [...unitIds])) !== input.units.length)
+      throw fieldError('units', 'pumping-test/unknown-unit')
     checkVisibility(input, found)
     return { wellRows, row: { ...columns(input), ...interval, startAt: start.at, startPrecision: start.precision } }
   }
@@ -81,7 +87,10 @@ export function createPumpingTestsService(deps: Deps, { wells, markInputsChanged
     lockForEdit,
 
     async list(viewer: Viewer, query: PumpingTestQuery) {
-      const [rows, total] = await Promise.all([listPumpingTests(db, viewer, query), countPumpingTests(db, viewer, query)])
+      const [rows, total] = await Promise.all([
+        listPumpingTests(db, viewer, query),
+        countPumpingTests(db, viewer, query),
+      ])
       const names = await unitNames(
         db,
         rows.map(({ test }) => test.id),
@@ -97,7 +106,12 @@ export function createPumpingTestsService(deps: Deps, { wells, markInputsChanged
       inTransaction(deps, async (tx) => {
         const { row, wellRows } = await resolve(tx, viewer, input)
         const at = now()
-        const id = await repository.insertPumpingTest(tx, { ...row, kind: 'constant-rate', createdBy: viewer.id, createdAt: at })
+        const id = await repository.insertPumpingTest(tx, {
+          ...row,
+          kind: 'constant-rate',
+          createdBy: viewer.id,
+          createdAt: at,
+        })
         await write(tx, id, input, wellRows)
         await recordAudit(tx, { viewer, at, action: 'pumping-tests/create', subject: 'pumping-test', subjectId: id })
         return { id }
@@ -110,15 +124,43 @@ export function createPumpingTestsService(deps: Deps, { wells, markInputsChanged
         if (!(await repository.updatePumpingTest(tx, id, rowVersion, row))) throw new AppError('edit/conflict')
         await write(tx, id, input, wellRows)
         await markInputsChanged(tx, id)
-        await recordAudit(tx, { viewer, at: now(), action: 'pumping-tests/edit', subject: 'pumping-test', subjectId: id })
+        await recordAudit(tx, {
+          viewer,
+          at: now(),
+          action: 'pumping-tests/edit',
+          subject: 'pumping-test',
+          subjectId: id,
+        })
         return get(viewer, id, tx)
       }),
   }
 }
 
 function columns(input: PumpingTestInput) {
-  const { wellId, zone, aquifer, intervalBasis, thicknessM, thicknessBasis, thicknessError, rateError, conditions, visibility } = input
-  return { wellId, zone, aquifer, intervalBasis, thicknessM, thicknessBasis, thicknessError, rateError, conditions, visibility }
+  const {
+    wellId,
+    zone,
+    aquifer,
+    intervalBasis,
+    thicknessM,
+    thicknessBasis,
+    thicknessError,
+    rateError,
+    conditions,
+    visibility,
+  } = input
+  return {
+    wellId,
+    zone,
+    aquifer,
+    intervalBasis,
+    thicknessM,
+    thicknessBasis,
+    thicknessError,
+    rateError,
+    conditions,
+    visibility,
+  }
 }
 
 function stepRow({ startS, rate }: PumpingTestInput['rateSteps'][number]): repository.NewRateStep {
@@ -130,6 +172,7 @@ const openness = { private: 0, internal: 1, published: 2 }
 function checkVisibility(input: PumpingTestInput, wells: { id: number; visibility: keyof typeof openness }[]) {
   const well = wells.find(({ id }) => id === input.wellId)!
   const hidden = input.visibility !== 'private' && wells.some(({ visibility }) => visibility === 'private')
-  if (hidden || openness[input.visibility] > openness[well.visibility]) throw fieldError('visibility', 'pumping-test/more-visible-than-well')
+  if (hidden || openness[input.visibility] > openness[well.visibility])
+    throw fieldError('visibility', 'pumping-test/more-visible-than-well')
   if (!input.rateSteps.some(({ rate }) => rate.value > 0)) throw fieldError('rateSteps', 'pumping-test/no-pumping')
 }

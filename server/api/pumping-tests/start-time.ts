@@ -6,7 +6,12 @@ export interface StartTime {
   precision: 'instant' | 'day' | 'year'
 }
 
-const formats = { 4: ['yyyy', 'year'], 10: ['yyyy-MM-dd', 'day'], 16: ["yyyy-MM-dd'T'HH:mm", 'instant'], 19: ["yyyy-MM-dd'T'HH:mm:ss", 'instant'] } as const
+const formats = {
+  4: ['yyyy', 'year'],
+  10: ['yyyy-MM-dd', 'day'],
+  16: ["yyyy-MM-dd'T'HH:mm", 'instant'],
+  19: ["yyyy-MM-dd'T'HH:mm:ss", 'instant'],
+} as const
 
 /**
  * The instant of a wall-clock time in an IANA zone, with the precision it was given in.
@@ -17,7 +22,8 @@ export function startTime(local: string, zone: string, now: Date): StartTime {
   const time = format ? DateTime.fromFormat(local, format, { zone }) : null
   if (!time?.isValid || !precision || !format) throw fieldError('startLocal', 'pumping-test/start-format')
   // Luxon moves a skipped wall-clock time forward; what it reads back then differs from what was typed.
-  if (time.toFormat(format) !== local) throw fieldError('startLocal', 'pumping-test/start-in-gap', { time: local, zone })
+  if (time.toFormat(format) !== local)
+    throw fieldError('startLocal', 'pumping-test/start-in-gap', { time: local, zone })
   if (time.toMillis() > now.getTime()) throw fieldError('startLocal', 'pumping-test/start-in-future')
   return { at: time.toJSDate(), precision }
 }

@@ -29,7 +29,8 @@ export function testWellRows(input: PumpingTestInput, known: Map<number, WellFor
   const observed = input.observationWells.map((observation, i) => {
     const well = known.get(observation.wellId)
     if (!well) throw fieldError(`observationWells.${i}.wellId`, 'pumping-test/unknown-well')
-    if (seen.has(well.id)) throw fieldError(`observationWells.${i}.wellId`, 'pumping-test/same-well', { code: well.code })
+    if (seen.has(well.id))
+      throw fieldError(`observationWells.${i}.wellId`, 'pumping-test/same-well', { code: well.code })
     seen.add(well.id)
     return {
       wellId: well.id,
@@ -52,7 +53,12 @@ function distance(observation: Observation, pumped: WellForTest, well: WellForTe
     { lon: well.position[0], lat: well.position[1] },
   )
   if (!(onMap > 0)) throw fieldError(path, 'pumping-test/same-place', { code: well.code })
-  return { distanceM: onMap, distanceSdM: Math.hypot(pumped.accuracyM, well.accuracyM), distanceBasis, distanceReason: null }
+  return {
+    distanceM: onMap,
+    distanceSdM: Math.hypot(pumped.accuracyM, well.accuracyM),
+    distanceBasis,
+    distanceReason: null,
+  }
 }
 
 const staticLevel = (staticLevelM: number | null) => ({

@@ -1,7 +1,14 @@
 import type { PumpingTest, PumpingTestSummary, SeriesSummary, TestWell } from '#shared/contracts/pumping-tests.ts'
 import { atLeast, type Viewer } from '#shared/contracts/permissions.ts'
 import type { countPumpingTests, listPumpingTests } from './list.repository.ts'
-import type { findPumpingTest, listRateSteps, listSeries, listTestUnits, listTestWells, PumpingTestRow } from './pumping-tests.repository.ts'
+import type {
+  findPumpingTest,
+  listRateSteps,
+  listSeries,
+  listTestUnits,
+  listTestWells,
+  PumpingTestRow,
+} from './pumping-tests.repository.ts'
 import { localStart } from './start-time.ts'
 
 type Rows<F extends (...args: never[]) => unknown> = Awaited<ReturnType<F>>
@@ -59,8 +66,22 @@ export function pumpingTestView(viewer: Viewer, found: FoundTest, parts: TestPar
   }
 }
 
-export function summaryView(row: Rows<typeof listPumpingTests>[number], names: Map<number, string[]>): PumpingTestSummary {
+export function summaryView(
+  row: Rows<typeof listPumpingTests>[number],
+  names: Map<number, string[]>,
+): PumpingTestSummary {
   const { test, wellCode, state, wellCount, analysisCount } = row
   const { id, kind, wellId, visibility } = test
-  return { id, kind, wellId, visibility, wellCode, state, wellCount, analysisCount, ...start(test), unitNames: names.get(id) ?? [] }
+  return {
+    id,
+    kind,
+    wellId,
+    visibility,
+    wellCode,
+    state,
+    wellCount,
+    analysisCount,
+    ...start(test),
+    unitNames: names.get(id) ?? [],
+  }
 }

@@ -61,10 +61,17 @@ const conditions: Record<ReadingRowQuery['only'], SQL | undefined> = {
   decided: sql`exists (select 1 from ${readingEdits} where ${readingEdits.seriesId} = ${readings.seriesId} and ${readingEdits.seq} = ${readings.seq})`,
 }
 
-const matching = (seriesId: number, only: ReadingRowQuery['only']) => and(eq(readings.seriesId, seriesId), conditions[only])
+const matching = (seriesId: number, only: ReadingRowQuery['only']) =>
+  and(eq(readings.seriesId, seriesId), conditions[only])
 
 export const listRows = (executor: Executor, seriesId: number, { only, limit, offset }: ReadingRowQuery) =>
-  executor.select().from(readings).where(matching(seriesId, only)).orderBy(asc(readings.seq)).limit(limit).offset(offset)
+  executor
+    .select()
+    .from(readings)
+    .where(matching(seriesId, only))
+    .orderBy(asc(readings.seq))
+    .limit(limit)
+    .offset(offset)
 
 export const countRows = (executor: Executor, seriesId: number, only: ReadingRowQuery['only']): Promise<number> =>
   executor.$count(readings, matching(seriesId, only))

@@ -1,6 +1,13 @@
 import { z } from 'zod'
 import { idInPath, nothing } from '#shared/contracts/common.ts'
-import { readingDecision, readingRowQuery, readingRows, seriesCreated, seriesDeletion, seriesForm } from '#shared/contracts/reading-series.ts'
+import {
+  readingDecision,
+  readingRowQuery,
+  readingRows,
+  seriesCreated,
+  seriesDeletion,
+  seriesForm,
+} from '#shared/contracts/reading-series.ts'
 import { fieldError } from '../../errors.ts'
 import { route, type Route } from '../registry.ts'
 import type { Services } from '../services.ts'
@@ -42,7 +49,14 @@ export function readingSeriesRoutes({ readingSeries }: Services): Route[] {
       ({ viewer, params: { id }, query }) => readingSeries.rows(viewer, id, query),
     ),
     route(
-      { method: 'get', path: `${one}/file`, action: 'pumping-tests/read', summary: 'An uploaded log as it came', params, response: 'sent' },
+      {
+        method: 'get',
+        path: `${one}/file`,
+        action: 'pumping-tests/read',
+        summary: 'An uploaded log as it came',
+        params,
+        response: 'sent',
+      },
       async ({ viewer, params: { id }, res }) => {
         const { name, bytes } = await readingSeries.file(viewer, id)
         res.attachment(name).type('application/octet-stream').send(Buffer.from(bytes))

@@ -1,5 +1,11 @@
 import { createHash } from 'node:crypto'
-import type { ReadingDecision, ReadingRow, ReadingRowQuery, SeriesCreated, SeriesInput } from '#shared/contracts/reading-series.ts'
+import type {
+  ReadingDecision,
+  ReadingRow,
+  ReadingRowQuery,
+  SeriesCreated,
+  SeriesInput,
+} from '#shared/contracts/reading-series.ts'
 import type { Viewer } from '#shared/contracts/permissions.ts'
 import type { LogReading, Refusal } from '#shared/readings/model.ts'
 import { readingIssueText } from '#shared/words/readings.ts'
@@ -26,11 +32,19 @@ export interface LogFile {
   bytes: Uint8Array
 }
 
-export function createReadingSeriesService(deps: Deps, { pumpingTests, markInputsChanged, hasSubmitted }: ReadingSeriesNeeds) {
+export function createReadingSeriesService(
+  deps: Deps,
+  { pumpingTests, markInputsChanged, hasSubmitted }: ReadingSeriesNeeds,
+) {
   const { db } = deps.connection
   const { now, storage, workers } = deps
 
-  async function read(viewer: Viewer, testId: number, { bytes }: LogFile, { mapping }: SeriesInput): Promise<LogReading> {
+  async function read(
+    viewer: Viewer,
+    testId: number,
+    { bytes }: LogFile,
+    { mapping }: SeriesInput,
+  ): Promise<LogReading> {
     const { found, parts } = await pumpingTests.whole(db, viewer, testId)
     const start = { instant: found.test.startAt.toISOString(), zone: found.test.zone }
     const context = { start, events_s: parts.steps.map(({ startS }) => startS) }
@@ -60,13 +74,27 @@ export function createReadingSeriesService(deps: Deps, { pumpingTests, markInput
         if (!(await repository.findTestWell(tx, testId, input.testWellId))) throw notFound()
         const { testWellId, mapping } = input
         const counted = { rowCount: reading.rows.length, takenCount: reading.summary.taken }
-        const facts = { pumpingTestId: testId, testWellId, quantity: mapping.value.quantity, mapping, fileSha256, ...counted }
+        const facts = {
+          pumpingTestId: testId,
+          testWellId,
+          quantity: mapping.value.quantity,
+          mapping,
+          fileSha256,
+          ...counted,
+        }
         const row = { ...facts, fileName: file.name.slice(0, 200), createdBy: viewer.id, createdAt: now() }
         const id = await repository.insertSeries(tx, row)
         await repository.insertReadings(tx, readingRows(id, reading))
         await markInputsChanged(tx, testId)
         const details = { seriesId: id, fileName: row.fileName, ...counted }
-        await recordAudit(tx, { viewer, at: now(), action: 'readings/add', subject: 'pumping-test', subjectId: testId, details })
+        await recordAudit(tx, {
+          viewer,
+          at: now(),
+          action: 'readings/add',
+          subject: 'pumping-test',
+          subjectId: testId,
+          details,
+        })
         const series = await repository.findSeries(tx, id)
         return { series: seriesView(series!), counts: reading.summary.counts as Record<string, number> }
       })
@@ -78,7 +106,9 @@ export function createReadingSeriesService(deps: Deps, { pumpingTests, markInput
       const total = await repository.countRows(db, series.id, query.only)
       const seqs = rows.map(({ seq }) => seq)
       const decisions = await repository.listDecisions(db, series.id, seqs)
-      const newest = new Map(decisions.map(({ row, by }) => [row.seq, { action: row.action, reason: row.reason, by: by ?? '' }]))
+      const newest = new Map(
+        decisions.map(({ row, by }) => [row.seq, { action: row.action, reason: row.reason, by: by ?? '' }]),
+      )
       const items: ReadingRow[] = rows.map((row) => rowView(row, newest.get(row.seq) ?? null))
       return pageOf(items, total, query)
     },
@@ -104,7 +134,14 @@ export function createReadingSeriesService(deps: Deps, { pumpingTests, markInput
         )
         await markInputsChanged(tx, series.pumpingTestId)
         const details = { action, reason, count: wanted.length }
-        await recordAudit(tx, { viewer, at, action: 'readings/decide', subject: 'reading-series', subjectId: id, details })
+        await recordAudit(tx, {
+          viewer,
+          at,
+          action: 'readings/decide',
+          subject: 'reading-series',
+          subjectId: id,
+          details,
+        })
         return {}
       }),
 
@@ -116,7 +153,13 @@ export function createReadingSeriesService(deps: Deps, { pumpingTests, markInput
         if (await hasSubmitted(tx, series.pumpingTestId)) throw new AppError('pumping-test/in-use')
         if (!(await repository.endSeries(tx, id, rowVersion, now()))) throw new AppError('edit/conflict')
         await markInputsChanged(tx, series.pumpingTestId)
-        await recordAudit(tx, { viewer, at: now(), action: 'readings/delete', subject: 'reading-series', subjectId: id })
+        await recordAudit(tx, {
+          viewer,
+          at: now(),
+          action: 'readings/delete',
+          subject: 'reading-series',
+          subjectId: id,
+        })
         return {}
       }),
   }

@@ -14,7 +14,8 @@ const upload = multer({
 /** Takes the one file of a form into memory; refuses a larger one while it is still arriving. */
 export const takeLogFile: RequestHandler = (req, res, next) => {
   upload(req, res, (error: unknown) => {
-    if (error instanceof MulterError && error.code === 'LIMIT_FILE_SIZE') return next(new AppError('request/too-large', { limit: '40 MB' }))
+    if (error instanceof MulterError && error.code === 'LIMIT_FILE_SIZE')
+      return next(new AppError('request/too-large', { limit: '40 MB' }))
     if (error instanceof MulterError) return next(new AppError('request/malformed'))
     next(error)
   })

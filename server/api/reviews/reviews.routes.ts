@@ -19,7 +19,13 @@ export function reviewsRoutes({ reviews }: Services): Route[] {
       ({ viewer, query }) => reviews.queue(viewer, query),
     ),
     route(
-      { method: 'get', path: '/api/reviews/decided', action: 'reviews/read', summary: 'Latest decisions', response: decidedReviews },
+      {
+        method: 'get',
+        path: '/api/reviews/decided',
+        action: 'reviews/read',
+        summary: 'Latest decisions',
+        response: decidedReviews,
+      },
       ({ viewer }) => reviews.decided(viewer),
     ),
     route(

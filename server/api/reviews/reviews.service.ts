@@ -35,7 +35,7 @@ export function createReviewsService(deps: Deps, { analyses, adoptedValues }: Re
 
     async decided(viewer: Viewer) {
       const rows = await repository.listDecided(db, viewer, 50)
-      return { items: rows.map((row) => ({ ...row, reviewer: row.reviewer ?? '', createdAt: row.createdAt.toISOString() })) }
+      return { items: rows.map(decidedItem) }
     },
 
     /**
@@ -69,9 +69,24 @@ export function createReviewsService(deps: Deps, { analyses, adoptedValues }: Re
   }
 }
 
+const decidedItem = ({
+  method,
+  reviewer,
+  createdAt,
+  ...row
+}: Awaited<ReturnType<typeof repository.listDecided>>[number]) => ({
+  ...row,
+  method: method as ReviewQueueItem['method'],
+  reviewer: reviewer ?? '',
+  createdAt: createdAt.toISOString(),
+})
+
 type QueueRow = Awaited<ReturnType<typeof repository.listQueue>>[number]
 
-function queueItem(viewer: Viewer, { result, authorId, author, testStart, submittedAt, ...row }: QueueRow): ReviewQueueItem {
+function queueItem(
+  viewer: Viewer,
+  { result, authorId, author, testStart, submittedAt, ...row }: QueueRow,
+): ReviewQueueItem {
   const { T, S, storageClass } = analysisResult.parse(result)
   return {
     ...row,

@@ -1,5 +1,6 @@
 import type { LogContext, LogMapping, LogReading, Refusal } from '#shared/readings/model.ts'
-import { decodeLog, readLog } from '#shared/readings/index.ts'
+import { decodeBytes } from '#shared/readings/decode.ts'
+import { readLog } from '#shared/readings/read.ts'
 
 export interface ReadLogInput {
   bytes: Uint8Array
@@ -9,6 +10,6 @@ export interface ReadLogInput {
 
 /** Reads a field log away from the main thread: a long one takes a second. */
 export function readLogTask({ bytes, mapping, context }: ReadLogInput): LogReading | Refusal {
-  const decoded = decodeLog(bytes)
+  const decoded = decodeBytes(bytes)
   return decoded.ok ? readLog(decoded.text, mapping, context) : decoded
 }

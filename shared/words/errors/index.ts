@@ -1,9 +1,15 @@
+import { geodesyErrors } from '../geodesy.ts'
 import type { ErrorEntry, ErrorParams } from './catalogue.ts'
 import { clientErrors } from './client.ts'
 import { fieldErrors } from './fields.ts'
 import { jobErrors } from './jobs.ts'
 import { peopleErrors } from './people.ts'
 import { regionErrors } from './region.ts'
+import { adoptedValueErrors } from './adopted-values.ts'
+import { analysisErrors } from './analyses.ts'
+import { estimateErrors } from './estimates.ts'
+import { pumpingTestErrors } from './pumping-tests.ts'
+import { readingErrors } from './readings.ts'
 import { requestErrors } from './requests.ts'
 import { sessionErrors } from './sessions.ts'
 
@@ -12,6 +18,12 @@ export type { ErrorParams } from './catalogue.ts'
 /** Every error the program can answer with. To add an area, write its file and spread it here. */
 export const errorCatalogue = {
   ...requestErrors,
+  ...geodesyErrors,
+  ...readingErrors,
+  ...pumpingTestErrors,
+  ...estimateErrors,
+  ...analysisErrors,
+  ...adoptedValueErrors,
   ...fieldErrors,
   ...clientErrors,
   ...jobErrors,
