@@ -1,0 +1,27 @@
+import { describe, expect, it } from 'vitest'
+import { createCache } from '../../../server/tiles/tile-cache.ts'
+
+describe('the cache of enlarged tiles', () => {
+  it('makes a value once while it is kept', async () => {
+    const cached = createCache<number>(2)
+    let made = 0
+    const ask = () => cached('a', async () => ++made)
+    expect(await Promise.all([ask(), ask()])).toEqual([1, 1])
+  })
+
+  it('forgets the value that was used longest ago', async () => {
+    const cached = createCache<string>(2)
+    await cached('a', async () => 'first a')
+    await cached('b', async () => 'first b')
+    await cached('a', async () => 'second a')
+    await cached('c', async () => 'first c')
+    expect(await cached('a', async () => 'third a')).toBe('first a')
+    expect(await cached('b', async () => 'second b')).toBe('second b')
+  })
+
+  it('tries again after a failure', async () => {
+    const cached = createCache<string>(2)
+    await expect(cached('a', () => Promise.reject(new Error('disk')))).rejects.toThrow('disk')
+    expect(await cached('a', async () => 'read')).toBe('read')
+  })
+})
