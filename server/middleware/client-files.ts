@@ -20,9 +20,11 @@ Run <code>npm start</code>, which builds it, or <code>npm run build</code>, and 
 /** Addresses that belong to the server: a wrong one is an error, not a page. */
 const servedHere = /^\/(api|tiles|ogc|assets|healthz|readyz)(\/|$)/
 
+/** Browsers name HTML when a person goes to an address, and only then; pictures and scripts ask for "anything". */
 function isNavigation(req: Request): boolean {
   const asked = req.method === 'GET' || req.method === 'HEAD'
-  return asked && !servedHere.test(req.path) && req.accepts(['json', 'html']) === 'html'
+  const wantsPage = req.path === '/' || (req.get('accept') ?? '').includes('text/html')
+  return asked && wantsPage && !servedHere.test(req.path)
 }
 
 /** Reads the page once per build. */

@@ -1,5 +1,6 @@
 import { eq, sql } from 'drizzle-orm'
 import type { Executor } from '../db/client.ts'
+import { withRetry } from '../db/retry.ts'
 import { rateLimits } from '../db/schema/index.ts'
 
 export interface Counted {
@@ -7,21 +8,21 @@ export interface Counted {
   resetAt: Date
 }
 
-/** Counts one attempt under `id`, in one statement: processes that count at the same time cannot miss each other. */
+/**
+ * Counts one attempt under `id` and tells the number, in one statement: attempts at the same time, in any process,
+ * each get a number of their own.
+ */
 export async function countHit(executor: Executor, id: string, now: Date, windowMs: number): Promise<Counted> {
   const resetAt = new Date(now.getTime() + windowMs)
   // MariaDB assigns from left to right: `hits` still sees the old end of the window.
-  await executor
-    .insert(rateLimits)
-    .values({ id, hits: 1, resetAt })
-    .onDuplicateKeyUpdate({
-      set: {
-        hits: sql`if(${rateLimits.resetAt} <= ${now}, 1, ${rateLimits.hits} + 1)`,
-        resetAt: sql`if(${rateLimits.resetAt} <= ${now}, ${resetAt}, ${rateLimits.resetAt})`,
-      },
-    })
-  const [row] = await executor.select().from(rateLimits).where(eq(rateLimits.id, id))
-  return row ?? { hits: 1, resetAt }
+  const statement = sql`
+    insert into rate_limits (id, hits, reset_at) values (${id}, 1, ${resetAt})
+    on duplicate key update
+      hits = if(reset_at <= ${now}, 1, hits + 1),
+      reset_at = if(reset_at <= ${now}, ${resetAt}, reset_at)
+    returning hits, reset_at as resetAt`
+  const [rows] = (await withRetry(() => executor.execute(statement))) as unknown as [Counted[]]
+  return rows[0]!
 }
 
 export const takeBackHit = (executor: Executor, id: string) =>

@@ -1,4 +1,4 @@
-import { sql } from 'drizzle-orm'
+import { sql, type SQL } from 'drizzle-orm'
 import type { Executor } from '../../db/client.ts'
 
 /** The driver answers with the rows first. */
@@ -11,9 +11,14 @@ export async function newestMigration(executor: Executor): Promise<number | null
   return newest == null ? null : Number(newest)
 }
 
-/** Whether this node of a cluster takes writes; null outside a cluster. */
+async function shown(executor: Executor, query: SQL): Promise<string | null> {
+  const found = await executor.execute(query)
+  return rowsOf<{ Value: string }>(found)[0]?.Value ?? null
+}
+
+/** Whether this node of a cluster takes writes; null outside a cluster, where the server says OFF to both. */
 export async function clusterReady(executor: Executor): Promise<boolean | null> {
-  const found = await executor.execute(sql`show global status like 'wsrep_ready'`)
-  const row = rowsOf<{ Value: string }>(found)[0]
-  return row && row.Value !== '' ? row.Value === 'ON' : null
+  const clustered = await shown(executor, sql`show global variables like 'wsrep_on'`)
+  if (clustered !== 'ON') return null
+  return (await shown(executor, sql`show global status like 'wsrep_ready'`)) === 'ON'
 }

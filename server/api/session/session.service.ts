@@ -9,6 +9,7 @@ import { beginSession, endSession } from '../../middleware/sessions.ts'
 import { accountOf, mayEnter, setAccount, viewerOf } from '../../middleware/viewer.ts'
 import { findAccount, markSeen } from '../../middleware/viewer.repository.ts'
 import type { RegionService } from '../region/region.service.ts'
+import { basemapsOf } from './basemaps.ts'
 import { passwordFits } from './passwords.ts'
 import { findByEmail } from './session.repository.ts'
 
@@ -17,7 +18,11 @@ const attempts = { limit: 10, windowMs: 15 * 60_000 }
 
 const counterOf = (email: string) => `account:${createHash('sha256').update(email).digest('hex')}`
 
-export function createSessionService({ connection: { db }, config, now }: Deps, region: RegionService) {
+export function createSessionService(deps: Deps, region: RegionService) {
+  const { connection, config, now } = deps
+  const { db } = connection
+  const basemaps = basemapsOf(deps)
+
   /** Counted before the password is looked at, so that attempts at the same time cannot slip past the limit. */
   async function countAttempt(email: string): Promise<void> {
     const { hits, resetAt } = await countHit(db, counterOf(email), now(), attempts.windowMs)
@@ -34,6 +39,7 @@ export function createSessionService({ connection: { db }, config, now }: Deps, 
       csrfToken: account ? (req.session.csrfToken ?? null) : null,
       region: await region.get(),
       preferences: readPreferences(account?.preferences),
+      basemaps: await basemaps(),
     }
   }
 
