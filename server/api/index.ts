@@ -22,6 +22,7 @@ import { passwordRoutes } from './password/password.routes.ts'
 import { peopleRoutes } from './people/people.routes.ts'
 import { regionRoutes } from './region/region.routes.ts'
 import type { Route } from './registry.ts'
+import { visibilityRoutes } from './visibility/visibility.routes.ts'
 import { createServices, type Services } from './services.ts'
 import { sessionRoutes } from './session/session.routes.ts'
 
@@ -43,6 +44,7 @@ export function allRoutes(services: Services, deps: Deps): Route[] {
     ...reviewsRoutes(services),
     ...adoptedValuesRoutes(services),
     ...estimatesRoutes(services),
+    ...visibilityRoutes(services),
   ]
   return withDescription(routes, deps)
 }

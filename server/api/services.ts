@@ -16,6 +16,7 @@ import { createRegionService } from './region/region.service.ts'
 import { createReviewsService } from './reviews/reviews.service.ts'
 import { createSessionService } from './session/session.service.ts'
 import { createStreamsService } from './streams/streams.service.ts'
+import { createVisibilityService } from './visibility/visibility.service.ts'
 import { createWellsService } from './wells/wells.service.ts'
 
 /** All services, made once; a service that needs another resource is given its service here. */
@@ -48,6 +49,7 @@ export function createServices(deps: Deps) {
     reviews: createReviewsService(deps, { analyses, adoptedValues }),
     session: createSessionService(deps, region),
     streams,
+    visibility: createVisibilityService(deps, { adoptedValues }),
     wells,
   }
 }

@@ -12,6 +12,7 @@ import { pumpingTestErrors } from './pumping-tests.ts'
 import { readingErrors } from './readings.ts'
 import { requestErrors } from './requests.ts'
 import { sessionErrors } from './sessions.ts'
+import { visibilityErrors } from './visibility.ts'
 
 export type { ErrorParams } from './catalogue.ts'
 
@@ -30,6 +31,7 @@ export const errorCatalogue = {
   ...peopleErrors,
   ...regionErrors,
   ...sessionErrors,
+  ...visibilityErrors,
 }
 
 export type ErrorCode = keyof typeof errorCatalogue

@@ -1,0 +1,65 @@
+import type { Viewer } from '#shared/contracts/permissions.ts'
+import type { VisibilityInput } from '#shared/contracts/visibility.ts'
+import type { Executor } from '../../db/client.ts'
+import { inTransaction } from '../../db/transaction.ts'
+import type { Deps } from '../../deps.ts'
+import { AppError, fieldError, notFound } from '../../errors.ts'
+import type { createAdoptedValuesService } from '../adopted-values/adopted-values.service.ts'
+import { recordAudit } from '../audit-trail/record-audit.ts'
+import * as repository from './visibility.repository.ts'
+import type { Exposure, Subject } from './visibility.repository.ts'
+
+interface Needs {
+  adoptedValues: Pick<ReturnType<typeof createAdoptedValuesService>, 'changed'>
+}
+
+const openness = { private: 0, internal: 1, published: 2 }
+
+/** An embargo hides what is published: it is then as open as what is internal. */
+const degree = ({ visibility, embargoUntil }: Exposure) =>
+  visibility === 'published' && embargoUntil ? openness.internal : openness[visibility]
+
+export function createVisibilityService(deps: Deps, { adoptedValues }: Needs) {
+  const { now } = deps
+
+  /** A child is never more visible than its parent. */
+  async function checkFamily(executor: Executor, subject: Subject, id: number, wanted: Exposure) {
+    if (subject === 'pumping-test') {
+      const parent = await repository.exposureOfParent(executor, id)
+      if (degree(wanted) > degree(parent)) throw fieldError('visibility', 'pumping-test/more-visible-than-well')
+      return
+    }
+    const tests = await repository.exposuresOfTests(executor, id)
+    const count = tests.filter((test) => degree(test) > degree(wanted)).length
+    if (count > 0) throw new AppError('visibility/tests-more-visible', { count })
+  }
+
+  return {
+    /** Publishes, hides or embargoes a well or a test; estimates that used its values are made anew. */
+    set: (viewer: Viewer, subject: Subject, id: number, { rowVersion, visibility, embargoUntil }: VisibilityInput) =>
+      inTransaction(deps, async (tx) => {
+        if (!(await repository.lockSubject(tx, viewer, subject, id))) throw notFound()
+        const wanted = { visibility, embargoUntil: embargoUntil === null ? null : new Date(embargoUntil) }
+        await checkFamily(tx, subject, id, wanted)
+        const units = await repository.unitsWithValues(tx, subject, [id])
+        if (visibility === 'private' && units.length > 0) throw new AppError('visibility/has-values')
+        if (!(await repository.saveExposure(tx, subject, id, rowVersion, wanted))) throw new AppError('edit/conflict')
+        await adoptedValues.changed(tx, units)
+        const details = { visibility, embargoUntil }
+        await recordAudit(tx, { viewer, at: now(), action: 'visibility/edit', subject, subjectId: id, details })
+        return { visibility, embargoUntil, rowVersion: rowVersion + 1 }
+      }),
+
+    /** Ends embargoes whose time has come; the estimates of their units are made anew. */
+    liftEmbargoes: () =>
+      inTransaction(deps, async (tx) => {
+        for (const subject of ['well', 'pumping-test'] as const) {
+          const ids = await repository.liftEmbargoes(tx, subject, now())
+          await adoptedValues.changed(tx, await repository.unitsWithValues(tx, subject, ids))
+          for (const subjectId of ids) {
+            await recordAudit(tx, { viewer: null, at: now(), action: 'visibility/lift-embargo', subject, subjectId })
+          }
+        }
+      }),
+  }
+}
