@@ -1,6 +1,8 @@
+import { createHash } from 'node:crypto'
 import type { AnalysisInput, AnalysisUpdate, SubmissionInput } from '#shared/contracts/analyses.ts'
 import type { Viewer } from '#shared/contracts/permissions.ts'
-import { limitFindings } from '#shared/hydraulics/limits.ts'
+import { evidenceOf } from '#shared/hydraulics/evidence.ts'
+import { limitFindings, limitRules } from '#shared/hydraulics/limits.ts'
 import { defaultUnitSystemId, unitSystemById } from '#shared/quantities/systems.ts'
 import { findingText } from '#shared/words/findings.ts'
 import type { Executor } from '../../db/client.ts'
@@ -12,6 +14,7 @@ import * as repository from './analyses.repository.ts'
 import { adoptedRows } from './adoption.ts'
 import { calculate, checkExpected, checkRepeats } from './calculate.ts'
 import type { createInputsService } from './inputs.service.ts'
+import { reportedFacts, reportedResult, type ReportedValue } from './reported.ts'
 import { analysisView, mayChange } from './view.ts'
 
 /**
@@ -24,10 +27,14 @@ export function createAnalysesService(deps: Deps, inputs: ReturnType<typeof crea
   const { db } = deps.connection
   const { now } = deps
 
+  const siblingsOf = async (executor: Executor, testId: number) =>
+    (await repository.listAnalyses(executor, everything, testId)).map(({ row }) => row)
+
   async function view(executor: Executor, viewer: Viewer, id: number) {
     const found = await repository.findAnalysis(executor, viewer, id)
     if (!found) throw notFound()
-    return analysisView(viewer, found, await repository.listReviews(executor, [id]))
+    const reviews = await repository.listReviews(executor, [id])
+    return analysisView(viewer, found, await siblingsOf(executor, found.row.pumpingTestId), reviews)
   }
 
   async function compute(executor: Executor, testId: number, input: AnalysisInput) {
@@ -73,7 +80,8 @@ export function createAnalysesService(deps: Deps, inputs: ReturnType<typeof crea
         db,
         rows.map(({ row }) => row.id),
       )
-      return { items: rows.map((row) => analysisView(viewer, row, reviews)) }
+      const siblings = rows.map(({ row }) => row)
+      return { items: rows.map((row) => analysisView(viewer, row, siblings, reviews)) }
     },
 
     get: (viewer: Viewer, id: number, executor: Executor = db) => view(executor, viewer, id),
@@ -94,6 +102,45 @@ export function createAnalysesService(deps: Deps, inputs: ReturnType<typeof crea
           viewer,
           at: now(),
           action: 'analyses/create',
+          subject: 'analysis',
+          subjectId: id,
+          details: { testId },
+        })
+        return view(tx, viewer, id)
+      }),
+
+    /** Enters a value that came down without readings, submitted; it still needs a reviewer. */
+    report: (viewer: Viewer, testId: number, value: ReportedValue) =>
+      inTransaction(deps, async (tx) => {
+        if (!(await inputs.maySee(tx, viewer, testId))) throw notFound()
+        const { T: _T, S, storageClass, ...known } = value
+        const snapshot = { version: 1 as const, kind: 'reported' as const, ...known }
+        const result = reportedResult(value, evidenceOf(reportedFacts(known, S === null ? null : storageClass)))
+        checkAdoptable(
+          result,
+          // Nobody can be asked about a value that was measured long ago: the reviewer sees the question instead.
+          limitRules.map(({ code }) => code),
+        )
+        const at = now()
+        const id = await repository.insertAnalysis(tx, {
+          pumpingTestId: testId,
+          method: 'reported',
+          methodVersion: 1,
+          state: 'submitted',
+          inputs: snapshot,
+          inputsSha256: createHash('sha256').update(JSON.stringify(snapshot)).digest('hex'),
+          options: null,
+          result,
+          label: known.source.slice(0, 120),
+          rationale: known.source,
+          submittedAt: at,
+          createdBy: viewer.id,
+          createdAt: at,
+        })
+        await recordAudit(tx, {
+          viewer,
+          at,
+          action: 'analyses/report',
           subject: 'analysis',
           subjectId: id,
           details: { testId },
@@ -161,13 +208,15 @@ export function createAnalysesService(deps: Deps, inputs: ReturnType<typeof crea
       if (found.row.inputsChanged) throw new AppError('analysis/inputs-changed')
       checkRepeats(found.row)
       const test = await inputs.testOf(executor, everything, found.row.pumpingTestId)
-      return { pumpingTestId: found.row.pumpingTestId, values: adoptedRows(found.row, test) }
+      return {
+        pumpingTestId: found.row.pumpingTestId,
+        values: adoptedRows(found.row, await siblingsOf(executor, found.row.pumpingTestId), test),
+      }
     },
 
     /** Compares every analysis of a test with the test as it is now, and marks those that were made from other inputs. */
     async markInputsChanged(executor: Executor, testId: number) {
-      const rows = (await repository.listAnalyses(executor, everything, testId)).map(({ row }) => row)
-      const fitted = rows.filter(({ method }) => method !== 'reported')
+      const fitted = (await siblingsOf(executor, testId)).filter(({ method }) => method !== 'reported')
       if (fitted.length === 0) return
       const { sha256 } = await inputs.snapshot(executor, everything, testId)
       for (const row of fitted) {

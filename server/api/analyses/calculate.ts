@@ -2,6 +2,7 @@ import { fittedMethod, type AnalysisInput } from '#shared/contracts/analyses.ts'
 import { analysisInputs, analysisOptions, analysisResult } from '#shared/contracts/analysis-result.ts'
 import { AnalysisError, type AnalysisInputs, type AnalysisResult } from '#shared/hydraulics/analysis.ts'
 import { analyse } from '#shared/hydraulics/catalogue.ts'
+import { defaultUnitSystemId, unitSystemById } from '#shared/quantities/systems.ts'
 import { analysisErrorText } from '#shared/words/findings.ts'
 import { AppError } from '../../errors.ts'
 import type { AnalysisRow } from './analyses.repository.ts'
@@ -18,7 +19,7 @@ export function calculate(
     return analyse(method, inputs, options)
   } catch (error) {
     if (!(error instanceof AnalysisError)) throw error
-    throw new AppError('analysis/refused', { reason: analysisErrorText(error.code, error.params), code: error.code })
+    throw new AppError('analysis/refused', { reason: analysisErrorText(error.code, error.params, unitSystemById(defaultUnitSystemId)), code: error.code })
   }
 }
 

@@ -14,7 +14,13 @@ export const mayChange = (viewer: Viewer, { createdBy, state }: FoundAnalysis['r
 export const mayDecide = (viewer: Viewer, { createdBy, state }: FoundAnalysis['row']): boolean =>
   state === 'submitted' && can(viewer, 'reviews/decide') && createdBy !== viewer.id
 
-export function analysisView(viewer: Viewer, { row, authorName }: FoundAnalysis, reviews: ReviewRows): Analysis {
+/** `siblings` are the analyses of the same test: a recovery that agrees is evidence. */
+export function analysisView(
+  viewer: Viewer,
+  { row, authorName }: FoundAnalysis,
+  siblings: FoundAnalysis['row'][],
+  reviews: ReviewRows,
+): Analysis {
   const result = analysisResult.parse(row.result)
   const limits = limitFindings({
     T: result.T?.value ?? null,
@@ -27,11 +33,11 @@ export function analysisView(viewer: Viewer, { row, authorName }: FoundAnalysis,
     method: row.method as Analysis['method'],
     methodVersion: row.methodVersion,
     state: row.state,
-    options: row.options === null ? null : analysisOptions.parse(row.options),
+    options: row.method === 'reported' ? null : analysisOptions.parse(row.options),
     result,
     label: row.label,
     rationale: row.rationale,
-    adoption: adoptionOf(row, result),
+    adoption: adoptionOf(row, siblings),
     inputsChanged: row.inputsChanged,
     questions: limits.filter(({ severity }) => severity === 'caution'),
     refusals: limits.filter(({ severity }) => severity === 'bad'),

@@ -17,7 +17,7 @@ import { countPumpingTests, listPumpingTests, unitNames } from './list.repositor
 import * as repository from './pumping-tests.repository.ts'
 import { startTime } from './start-time.ts'
 import { testedInterval } from './tested-interval.ts'
-import { testWellRows, type WellForTest } from './test-wells.ts'
+import { pumpedWellRow, testWellRows, type WellForTest } from './test-wells.ts'
 import { mayEdit, pumpingTestView, summaryView } from './view.ts'
 
 export interface PumpingTestsNeeds {
@@ -25,6 +25,21 @@ export interface PumpingTestsNeeds {
   /** Compares every analysis of a test with the test as it is now. */
   markInputsChanged: (executor: Executor, testId: number) => Promise<void>
 }
+
+export type ReportedTest = Pick<
+  PumpingTestInput,
+  | 'wellId'
+  | 'startLocal'
+  | 'zone'
+  | 'aquifer'
+  | 'units'
+  | 'intervalBasis'
+  | 'intervalTopM'
+  | 'intervalBottomM'
+  | 'thicknessM'
+  | 'thicknessBasis'
+  | 'visibility'
+> & { source: string }
 
 export function createPumpingTestsService(deps: Deps, { wells, markInputsChanged }: PumpingTestsNeeds) {
   const { db } = deps.connection
@@ -114,6 +129,33 @@ export function createPumpingTestsService(deps: Deps, { wells, markInputsChanged
         })
         await write(tx, id, input, wellRows)
         await recordAudit(tx, { viewer, at, action: 'pumping-tests/create', subject: 'pumping-test', subjectId: id })
+        return { id }
+      }),
+
+    /** Enters a test of which only values came down to us. */
+    createReported: (viewer: Viewer, { wellId, startLocal, units, ...facts }: ReportedTest) =>
+      inTransaction(deps, async (tx) => {
+        const [well] = await repository.findWellsForTest(tx, viewer, [wellId])
+        if (!well) throw fieldError('wellId', 'pumping-test/unknown-well')
+        const start = startTime(startLocal, facts.zone, now())
+        const at = now()
+        const row = {
+          ...facts,
+          wellId,
+          startAt: start.at,
+          startPrecision: start.precision,
+          createdBy: viewer.id,
+          createdAt: at,
+        }
+        const id = await repository.insertPumpingTest(tx, {
+          ...row,
+          kind: 'reported',
+          thicknessError: 0.1,
+          rateError: 0.05,
+        })
+        await repository.replaceTestWells(tx, id, [pumpedWellRow(wellId, null)])
+        await repository.replaceUnits(tx, id, units)
+        await recordAudit(tx, { viewer, at, action: 'pumping-tests/report', subject: 'pumping-test', subjectId: id })
         return { id }
       }),
 

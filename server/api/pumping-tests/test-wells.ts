@@ -39,9 +39,18 @@ export function testWellRows(input: PumpingTestInput, known: Map<number, WellFor
       ...staticLevel(observation.staticLevelM),
     }
   })
-  const self = { distanceM: 0, distanceSdM: 0, distanceBasis: 'measured' as const, distanceReason: null }
-  return [{ wellId: pumped.id, role: 'pumped', ...self, ...staticLevel(input.staticLevelM) }, ...observed]
+  return [pumpedWellRow(pumped.id, input.staticLevelM), ...observed]
 }
+
+export const pumpedWellRow = (wellId: number, staticLevelM: number | null): NewTestWell => ({
+  wellId,
+  role: 'pumped',
+  distanceM: 0,
+  distanceSdM: 0,
+  distanceBasis: 'measured',
+  distanceReason: null,
+  ...staticLevel(staticLevelM),
+})
 
 function distance(observation: Observation, pumped: WellForTest, well: WellForTest, path: string) {
   const { distanceBasis, distanceM, reason } = observation

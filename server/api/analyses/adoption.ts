@@ -1,0 +1,162 @@
+import type { Analysis } from '#shared/contracts/analyses.ts'
+import {
+  analysisInputs,
+  analysisOptions,
+  analysisResult,
+  type StoredResult,
+} from '#shared/contracts/analysis-result.ts'
+import { agreementOf } from '#shared/hydraulics/agreement.ts'
+import type { AnalysisResult } from '#shared/hydraulics/analysis.ts'
+import { evidenceFacts } from '#shared/hydraulics/evidence-facts.ts'
+import { evidenceOf, type Evidence, type EvidenceFacts } from '#shared/hydraulics/evidence.ts'
+import type { NewValue } from '../adopted-values/adopted-values.service.ts'
+import type { TestParts } from '../pumping-tests/view.ts'
+import type { PumpingTestRow } from '../pumping-tests/pumping-tests.repository.ts'
+import type { AnalysisRow } from './analyses.repository.ts'
+import { reportedFacts, reportedInputs } from './reported.ts'
+
+/** Common practice: apportioning a composite value to its units leaves at least this error of log10. */
+const leastCompositeError = 0.35
+
+type Weighed = Pick<AnalysisRow, 'id' | 'method' | 'inputs' | 'options' | 'result' | 'state'>
+
+const resultOf = (row: Weighed): StoredResult => analysisResult.parse(row.result)
+
+function compared(row: Weighed) {
+  const { T } = resultOf(row)
+  const { wellIds } = analysisOptions.parse(row.options)
+  const phase = row.method === 'recovery' ? ('recovery' as const) : ('pumping' as const)
+  return T && { id: String(row.id), label: '', T, wellIds, phase, usesDistances: false }
+}
+
+/** Whether a recovery analysis of the same test, other than this one, gives the same transmissivity. */
+function recoveryAgrees(row: Weighed, siblings: Weighed[]): boolean {
+  const mine = compared(row)
+  return siblings.some((sibling) => {
+    if (sibling.id === row.id || sibling.method !== 'recovery' || sibling.state === 'withdrawn') return false
+    const other = compared(sibling)
+    return mine !== null && other !== null && agreementOf(mine, other).code !== 'disagree'
+  })
+}
+
+function factsOf(row: Weighed, siblings: Weighed[]): EvidenceFacts {
+  const result = resultOf(row)
+  if (row.method !== 'reported') {
+    const agrees = { recoveryAgrees: recoveryAgrees(row, siblings) }
+    return evidenceFacts(
+      analysisInputs.parse(row.inputs),
+      analysisOptions.parse(row.options),
+      result as AnalysisResult,
+      agrees,
+    )
+  }
+  return reportedFacts(reportedInputs.parse(row.inputs), result.S ? result.storageClass : null)
+}
+
+export interface Weight {
+  facts: EvidenceFacts
+  evidence: Evidence
+}
+
+export function weigh(row: Weighed, siblings: Weighed[]): Weight {
+  const facts = factsOf(row, siblings)
+  return { facts, evidence: evidenceOf(facts) }
+}
+
+/** What adopting the analysis would write into the regional table; null where it gives no transmissivity. */
+export function adoptionOf(row: Weighed, siblings: Weighed[]): Analysis['adoption'] {
+  if (!resultOf(row).T) return null
+  const { evidence: found } = weigh(row, siblings)
+  const { evidence, reason, logErrorT, storage } = found
+  return {
+    evidence,
+    log10ErrorT: logErrorT,
+    log10ErrorS: storage?.logError ?? null,
+    storageUsable: storage?.usable ?? false,
+    reasons: [reason, storage?.reason].flatMap((code) =>
+      code ? [{ code, severity: 'note' as const, params: {} }] : [],
+    ),
+  }
+}
+
+export interface AdoptedTest {
+  found: { test: PumpingTestRow }
+  parts: Pick<TestParts, 'units'>
+}
+
+const origins = {
+  'slug-test': 'slug-test',
+  'specific-capacity': 'pumped-well',
+  'legacy-number': 'other',
+  'legacy-reviewed': 'other',
+} as const
+
+function originOf({ origin, observationWell }: EvidenceFacts): NewValue['origin'] {
+  if (origin !== 'pumping-test') return origins[origin]
+  return observationWell ? 'observation-well' : 'pumped-well'
+}
+
+/**
+ * The rows of the regional table that an accepted analysis stands for: T, and S and K where it gives them, for each
+ * unit. A test of several units gives each its share of T, with the error that apportioning leaves, and no S or K.
+ */
+export function adoptedRows(
+  row: AnalysisRow,
+  siblings: Weighed[],
+  { found: { test }, parts: { units } }: AdoptedTest,
+): NewValue[] {
+  const { T, S, K, storageClass } = resultOf(row)
+  if (!T) return []
+  const { facts, evidence } = weigh(row, siblings)
+  const common = {
+    pumpingTestId: test.id,
+    analysisId: row.id,
+    wellId: test.wellId,
+    method: row.method,
+    origin: originOf(facts),
+    thicknessBasis: test.thicknessBasis,
+    testYear: test.startAt.getUTCFullYear(),
+  }
+  if (units.length > 1) {
+    const log10Error = Math.max(leastCompositeError, evidence.logErrorT)
+    return units.map(({ unitId, share }) => ({
+      ...common,
+      unitId,
+      quantity: 'T' as const,
+      log10Value: Math.log10(T.value * share),
+      log10Error,
+      evidence: 'slight' as const,
+      composite: true,
+    }))
+  }
+  const unitId = units[0]!.unitId
+  const grade = evidence.evidence
+  const rows: NewValue[] = [
+    {
+      ...common,
+      unitId,
+      quantity: 'T',
+      log10Value: Math.log10(T.value),
+      log10Error: evidence.logErrorT,
+      evidence: grade,
+    },
+  ]
+  if (S && storageClass && evidence.storage) {
+    const { logError: log10Error, usable, evidence: storageGrade } = evidence.storage
+    rows.push({
+      ...common,
+      unitId,
+      quantity: 'S',
+      storageClass,
+      log10Value: Math.log10(S.value),
+      log10Error,
+      usable,
+      evidence: storageGrade,
+    })
+  }
+  if (K) {
+    const log10Error = Math.hypot(evidence.logErrorT, test.thicknessError / Math.LN10)
+    rows.push({ ...common, unitId, quantity: 'K', log10Value: Math.log10(K.value), log10Error, evidence: grade })
+  }
+  return rows
+}
