@@ -21,8 +21,11 @@ export async function countHit(executor: Executor, id: string, now: Date, window
       hits = if(reset_at <= ${now}, 1, hits + 1),
       reset_at = if(reset_at <= ${now}, ${resetAt}, reset_at)
     returning hits, reset_at as resetAt`
-  const [rows] = (await withRetry(() => executor.execute(statement))) as unknown as [Counted[]]
-  return rows[0]!
+  const [rows] = (await withRetry(() => executor.execute(statement))) as unknown as [
+    { hits: number; resetAt: string }[],
+  ]
+  const { hits, resetAt: told } = rows[0]!
+  return { hits, resetAt: rateLimits.resetAt.mapFromDriverValue(told) as Date }
 }
 
 export const takeBackHit = (executor: Executor, id: string) =>

@@ -61,7 +61,7 @@ const makeConfig = (url: string, folder: string, overrides: Partial<Config> = {}
 })
 
 function makeDeps({ url, config, now = () => new Date() }: AppOverrides, folder: string, mails: Message[]): Deps {
-  const log = pino({ level: 'silent' })
+  const log = pino({ level: process.env.TEST_LOG ?? 'silent' })
   const connection = connect(url, 5)
   const mail = { send: async (message: Message) => void mails.push(message), close: async () => undefined }
   const jobs = createQueue({ db: connection.db, log, now })

@@ -1,4 +1,5 @@
 import { IANAZone } from 'luxon'
+import { crsByCode } from '#shared/geodesy/crs.ts'
 import type { RegionAccess, Viewer } from '#shared/contracts/permissions.ts'
 import type { Region, RegionEdit } from '#shared/contracts/region.ts'
 import { defaultUnitSystemId } from '#shared/quantities/systems.ts'
@@ -33,8 +34,9 @@ async function loadRegion(executor: Executor): Promise<Region> {
 async function checkEdit(executor: Executor, before: Region, edit: RegionEdit): Promise<void> {
   if (edit.zone !== undefined && !IANAZone.isValidZone(edit.zone))
     throw fieldError('zone', 'region/zone-unknown', { zone: edit.zone })
-  if (edit.epsg !== undefined && edit.epsg !== before.epsg && (await hasWells(executor)))
-    throw new AppError('region/system-fixed')
+  if (edit.epsg === undefined || edit.epsg === before.epsg) return
+  if (crsByCode(edit.epsg)?.kind !== 'projected') throw fieldError('epsg', 'region/system-unknown', { epsg: edit.epsg })
+  if (await hasWells(executor)) throw new AppError('region/system-fixed')
 }
 
 export function createRegionService(deps: Deps) {
