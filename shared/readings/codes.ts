@@ -58,6 +58,8 @@ export const reasonCodes = [
   'readings/guess-header',
   'readings/guess-kind',
   'readings/guess-rising',
+  'readings/guess-zero',
+  'readings/guess-unit',
   'readings/guess-counter',
   'readings/guess-left-over',
   'readings/guess-nothing',

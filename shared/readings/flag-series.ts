@@ -1,5 +1,5 @@
 import type { Params, ReadingFlag } from './codes.ts'
-import { runningMedian } from './running-median.ts'
+import { centredMedian, localMedian } from './running-median.ts'
 
 export interface FlagOptions {
   /** Smallest step the logger shows, m; floor of the MAD (default: the smallest difference between two values). */
@@ -28,6 +28,11 @@ export const sentinels = [-999, -999.9, -999.99, -999.999, -9999, -9999.9, -9999
 export const MAD_TO_SIGMA = 1.4826022185056018
 /** Steps before a reading that tell how often the logger reads. */
 const STEPS_BEFORE = 9
+/**
+ * Positions on each side whose deviations make the MAD: enough of them that pure noise does not exceed
+ * five scaled MADs by a chance small MAD (with eleven deviations it does some times in a thousand).
+ */
+const MAD_REACH = 25
 /** Nearest positions to the middle in a window that a spike test needs on each side. */
 const LEAST_REACH = 2
 
@@ -57,16 +62,16 @@ const medianOf = (values: number[]) => {
 }
 
 /**
- * A gap is long beside the steps before it and beside the step that follows:
+ * A gap is long beside the steps before it and beside the step that follows (the longest before, for the last one):
  * readings taken ever more seldom, as in every hand-read test, are no gaps.
  */
 function flagGaps(times: ArrayLike<number>, factor: number): SeriesFlag[] {
   const steps = Array.from({ length: Math.max(0, times.length - 1) }, (_, i) => (times[i + 1] ?? 0) - (times[i] ?? 0))
+  const stepsBefore = (i: number) => steps.slice(Math.max(0, i - STEPS_BEFORE), i).filter((step) => step > 0)
   return steps.flatMap((gap_s, i): SeriesFlag[] => {
-    const next = steps[i + 1] ?? 0
+    const next = steps[i + 1] ?? Math.max(...stepsBefore(i))
     if (gap_s <= factor * next) return []
-    const before = steps.slice(Math.max(0, i - STEPS_BEFORE), i).filter((step) => step > 0)
-    const usual = medianOf(before)
+    const usual = medianOf(stepsBefore(i))
     return gap_s > factor * usual
       ? [{ index: i + 1, code: 'readings/gap-before', params: { gap_s, usual_s: usual } }]
       : []
@@ -89,14 +94,14 @@ function straddles(times: number[], i: number, half: number, events: number[]): 
 
 function flagSpikes(times: number[], values: number[], indices: number[], options: FlagOptions): SeriesFlag[] {
   const { spikeFactor = 5, halfWindow = 5, events_s = [0], resolution_m = smallestStep(values) } = options
-  const windows = runningMedian(values, halfWindow)
-  return windows.flatMap(({ median, mad }, i): SeriesFlag[] => {
+  const usual = centredMedian(values, halfWindow)
+  const deviations = Float64Array.from(values, (value, i) => Math.abs(value - (usual[i] ?? NaN)))
+  const mads = localMedian(deviations, MAD_REACH)
+  return values.flatMap((value_m, i): SeriesFlag[] => {
     if (i < LEAST_REACH || i >= values.length - LEAST_REACH) return []
-    const deviation = Math.abs((values[i] ?? 0) - median)
-    const limit = spikeFactor * Math.max(MAD_TO_SIGMA * mad, resolution_m)
-    if (deviation <= limit || straddles(times, i, halfWindow, events_s)) return []
-    const params = { value_m: values[i] ?? 0, median_m: median }
-    return [{ index: indices[i] ?? i, code: 'readings/spike', params }]
+    const limit = spikeFactor * Math.max(MAD_TO_SIGMA * (mads[i] ?? 0), resolution_m)
+    if ((deviations[i] ?? 0) <= limit || straddles(times, i, halfWindow, events_s)) return []
+    return [{ index: indices[i] ?? i, code: 'readings/spike', params: { value_m, median_m: usual[i] ?? NaN } }]
   })
 }
 

@@ -3,26 +3,22 @@ import type { Dimension } from '#shared/quantities/units.ts'
 import { isClean, kindOf } from './cells.ts'
 
 /** A datum behind a length: "m bgl", "ft btoc", "masl", "m AHD". */
-const WITH_DATUM = /^(m|ft|cm|mm)[\s_.-]*(?:b[a-z]*|a[a-z]*|rl|nn|wg)$/i
+const WITH_DATUM = /^(m|ft|cm|mm)[\s_-]*(?:b(?:g[ls]?|toc|mp|m)|a(?:msl|sl|hd|od|gl)|msl|rl|nn|nap)$/i
 const BRACKETS = /[([{]([^)\]}]+)[)\]}]/g
 
 function unitOfText(text: string, dimension: Dimension): string | null {
   const found = recogniseUnit(text, dimension)
   if ('unit' in found) return found.unit.id
-  const datum = dimension === 'length' ? WITH_DATUM.exec(text.trim()) : null
+  const datum = dimension === 'length' ? WITH_DATUM.exec(text.replaceAll('.', '').trim()) : null
   return datum?.[1] ? unitOfText(datum[1], dimension) : null
 }
 
 /** The unit that a column's name gives: in brackets, or as its last word; a longer word ("minutes") anywhere. */
 export function unitInName(name: string, dimension: 'length' | 'time'): string | null {
   const bracketed = [...name.matchAll(BRACKETS)].map((match) => match[1] ?? '')
-  const words = name
-    .replace(BRACKETS, ' ')
-    .split(/[\s_,/:;-]+/)
-    .filter((word) => word !== '')
-  const [last = '', ...others] = words.reverse()
-  const tries = [...bracketed, ...(words.length > 1 || others.length > 0 ? [last] : []), ...others, last]
-  const candidates = tries.filter((text, i) => i <= bracketed.length || text.length > 2)
+  const words = name.replace(BRACKETS, ' ').split(/[\s_,/:;-]+/)
+  const [last = '', ...others] = words.filter((word) => word !== '').reverse()
+  const candidates = [...bracketed, last, ...others.filter((word) => word.length > 2)]
   return candidates.map((text) => unitOfText(text, dimension)).find((unit) => unit !== null) ?? null
 }
 

@@ -15,22 +15,25 @@ export function sampleOf(lines: string[]): string[] {
 
 const cleanCount = (cells: string[]) => cells.filter((cell) => isClean(kindOf(cell))).length
 
-/** Share of cells that are numbers, dates or times, in lines that have two of them at least. */
-function share(lines: string[], delimiter: Delimiter): number {
+/** Share of cells that are numbers, dates or times, in lines that have `least` of them among two cells or more. */
+function share(lines: string[], delimiter: Delimiter, least: number): number {
   let total = 0
   for (const cells of cellsOf(lines, delimiter)) {
     const clean = cleanCount(cells)
     const filled = cells.filter((cell) => cell !== '').length
-    if (clean >= 2) total += clean / filled
+    if (clean >= least && cells.length >= 2) total += clean / filled
   }
   return total / lines.length
 }
 
 /** The delimiter under which most cells make sense; a comma when none does. */
 export function guessDelimiter(sample: string[]): Delimiter {
-  const scored = delimiters.map((delimiter) => ({ delimiter, score: share(sample, delimiter) }))
-  const best = scored.reduce((a, b) => (b.score > a.score + 1e-9 ? b : a))
-  return best.score > 0 ? best.delimiter : ','
+  for (const least of [2, 1]) {
+    const scored = delimiters.map((delimiter) => ({ delimiter, score: share(sample, delimiter, least) }))
+    const best = scored.reduce((a, b) => (b.score > a.score + 1e-9 ? b : a))
+    if (best.score > 0) return best.delimiter
+  }
+  return ','
 }
 
 const votes: { pattern: RegExp; mark: DecimalMark }[] = [
@@ -53,7 +56,7 @@ export function guessDecimalMark(cells: string[]): { mark: DecimalMark; doubtful
 
 /** What each column holds in most of the lines that have readings. */
 export function columnKinds(rows: string[][]): CellKind[] {
-  const readings = rows.filter((cells) => cleanCount(cells) >= 1 && cells.length >= 2)
+  const readings = rows.filter((cells) => cleanCount(cells) >= 1)
   const width = Math.max(0, ...readings.map((cells) => cells.length))
   return Array.from({ length: width }, (_, column) => {
     const counts = new Map<CellKind, number>()
@@ -77,9 +80,10 @@ const firstClean = (kinds: CellKind[]) =>
  */
 export function firstReading(rows: string[][], kinds: CellKind[]): number {
   const fits = (cells: string[], column: number) => kindOf(cells[column] ?? '') === kinds[column]
+  const least = Math.min(2, kinds.filter(isClean).length)
   const agrees = (cells: string[]) =>
     kinds.every((kind, column) => !isClean(kind) || cells[column] === '' || fits(cells, column)) &&
-    cleanCount(cells) >= 2
+    cleanCount(cells) >= least
   const leading = firstClean(kinds)
   let first = rows.findIndex(agrees)
   if (first < 0) first = rows.findIndex((cells) => fits(cells, leading) && cells.length === kinds.length)

@@ -28,18 +28,26 @@ const plainName = (name: string) =>
 function fromName({ name, kind }: Column): Guess | null {
   const plain = plainName(name)
   if (plain === '') return null
-  const entry = vocabulary.find(({ kinds, words }) => kinds.includes(kind) && words.test(plain))
+  const whole = name.toLowerCase()
+  const entry = vocabulary.find(
+    ({ kinds, words, withUnit }) => kinds.includes(kind) && (words.test(plain) || withUnit?.test(whole)),
+  )
   return entry ? { role: entry.role, reason: { code: 'readings/guess-header', params: { name } } } : null
 }
 
-function fromKind({ kind, cells }: Column): Guess | null {
+function fromKind({ kind }: Column): Guess | null {
   const role = byKind[kind]
-  if (!role) return null
-  const startsAtZero = kind === 'time' && parseSpan(cells[0] ?? '', 'h:m:s') === 0
-  return {
-    role: startsAtZero ? 'elapsed' : role,
-    reason: { code: 'readings/guess-kind', params: { kind } },
-  }
+  return role ? { role, reason: { code: 'readings/guess-kind', params: { kind } } } : null
+}
+
+/** Times that start at 0:00 without any date beside them count from the start of something. */
+function countFromZero(columns: Column[], guesses: (Guess | null)[]): (Guess | null)[] {
+  if (guesses.some((guess) => guess?.role === 'date')) return guesses
+  const isZero = ({ kind, cells }: Column) => kind === 'time' && parseSpan(cells[0] ?? '', 'h:m:s') === 0
+  return guesses.map((guess, i) => {
+    const column = columns[i]
+    return guess && column && isZero(column) ? withReason('elapsed', 'readings/guess-zero') : guess
+  })
 }
 
 function numbersOf(column: Column, mark: DecimalMark): number[] {
@@ -62,24 +70,33 @@ const isTime = (role: ColumnRole) => role === 'elapsed' || role === 'clock'
 const nothing = (): Guess => ({ role: 'ignored', reason: { code: 'readings/guess-nothing', params: {} } })
 const withReason = (role: ColumnRole, code: Reason['code']): Guess => ({ role, reason: { code, params: {} } })
 
-/** Roles from numbers alone: a rising column is time when there is no other, a counter is ignored, a value column remains. */
-function fillGaps(columns: Column[], guesses: (Guess | null)[], mark: DecimalMark): Guess[] {
+type Change = (column: Column, guesses: (Guess | null)[]) => Guess | null
+
+/** Gives roles to columns of numbers that have none yet, one column after the other. */
+function fill(columns: Column[], guesses: (Guess | null)[], change: Change): (Guess | null)[] {
   const filled = [...guesses]
-  const has = (test: (role: ColumnRole) => boolean) => filled.some((guess) => guess && test(guess.role))
-  const open = () => columns.filter(({ index, kind }) => filled[index] === null && kind === 'number')
-  if (has(isTime) || open().length > 2) {
-    for (const column of open())
-      if (counts(numbersOf(column, mark)) && open().length > 1)
-        filled[column.index] = withReason('ignored', 'readings/guess-counter')
-  }
-  if (!has(isTime)) {
-    const rising = open().find((column) => rises(numbersOf(column, mark)))
-    if (rising) filled[rising.index] = withReason('elapsed', 'readings/guess-rising')
-  }
-  if (!has(isValue)) {
-    const [rest] = open()
-    if (rest) filled[rest.index] = withReason('depth', 'readings/guess-left-over')
-  }
+  for (const column of columns)
+    if (filled[column.index] === null && column.kind === 'number') filled[column.index] = change(column, filled)
+  return filled
+}
+
+const has = (guesses: (Guess | null)[], test: (role: ColumnRole) => boolean) =>
+  guesses.some((guess) => guess !== null && test(guess.role))
+
+/** Roles from numbers alone: counters are ignored, lengths are water levels, a rising column is time, the last is a level. */
+function fillGaps(columns: Column[], guesses: (Guess | null)[], mark: DecimalMark): Guess[] {
+  const open = (filled: (Guess | null)[]) => columns.filter(({ index, kind }) => !filled[index] && kind === 'number')
+  const changes: Change[] = [
+    ({ name }) => (unitInName(name, 'length') ? withReason('depth', 'readings/guess-unit') : null),
+    (column, filled) => {
+      const spare = has(filled, isTime) || open(filled).length > 2
+      return spare && counts(numbersOf(column, mark)) ? withReason('ignored', 'readings/guess-counter') : null
+    },
+    (column, filled) =>
+      !has(filled, isTime) && rises(numbersOf(column, mark)) ? withReason('elapsed', 'readings/guess-rising') : null,
+    (_, filled) => (has(filled, isValue) ? null : withReason('depth', 'readings/guess-left-over')),
+  ]
+  const filled = changes.reduce((before, change) => fill(columns, before, change), guesses)
   return filled.map((guess) => guess ?? nothing())
 }
 
@@ -91,7 +108,10 @@ function unitOf({ name, kind }: Column, role: ColumnRole): string | null {
 
 /** What each column seems to be, its unit, and why. */
 export function guessColumns(columns: Column[], mark: DecimalMark): ColumnGuess[] {
-  const first = columns.map((column) => fromName(column) ?? fromKind(column))
+  const first = countFromZero(
+    columns,
+    columns.map((column) => fromName(column) ?? fromKind(column)),
+  )
   const guesses = fillGaps(columns, first, mark)
   return columns.map((column, i) => {
     const { role, reason } = guesses[i] ?? nothing()

@@ -1,5 +1,5 @@
-/** Copies `values[from..to]` into `into`, sorted (insertion sort: a window has some ten values). */
-function sortedWindow(values: ArrayLike<number>, from: number, to: number, into: Float64Array): number {
+/** Copies `values[from..to]` into `into`, sorted (insertion sort: a window has some ten values). Returns their number. */
+function sortWindow(values: ArrayLike<number>, from: number, to: number, into: Float64Array): number {
   let n = 0
   for (let i = from; i <= to; i++) {
     const value = values[i] ?? NaN
@@ -16,25 +16,25 @@ function sortedWindow(values: ArrayLike<number>, from: number, to: number, into:
 const middle = (sorted: Float64Array, n: number) =>
   n % 2 === 1 ? (sorted[n >> 1] ?? NaN) : ((sorted[n / 2 - 1] ?? NaN) + (sorted[n / 2] ?? NaN)) / 2
 
-export interface Window {
-  median: number
-  /** Median of the absolute deviations from the median, in the same window. */
-  mad: number
+function medians(n: number, half: number, values: ArrayLike<number>, window: (i: number) => [number, number]) {
+  const sorted = new Float64Array(2 * half + 1)
+  return Float64Array.from({ length: n }, (_, i) => middle(sorted, sortWindow(values, ...window(i), sorted)))
 }
 
 /**
- * Median and MAD of the window of `half` values on each side of every value, window and value alike in file order.
- * Towards the ends the window shrinks on both sides, so that the slope of a curve is never taken for an outlier.
+ * Median of `half` values on each side of every value and itself. Towards the ends the window shrinks on both sides,
+ * so that on a curve that only rises or only falls the median is the value.
  */
-export function runningMedian(values: ArrayLike<number>, half: number): Window[] {
-  const sorted = new Float64Array(2 * half + 1)
-  const deviations = new Float64Array(2 * half + 1)
-  return Array.from({ length: values.length }, (_, i) => {
-    const reach = Math.min(half, i, values.length - 1 - i)
-    const n = sortedWindow(values, i - reach, i + reach, sorted)
-    const median = middle(sorted, n)
-    for (let k = 0; k < n; k++) deviations[k] = Math.abs((sorted[k] ?? NaN) - median)
-    const m = sortedWindow(deviations.slice(0, n), 0, n - 1, sorted)
-    return { median, mad: middle(sorted, m) }
+export function centredMedian(values: ArrayLike<number>, half: number): Float64Array {
+  const last = values.length - 1
+  return medians(values.length, half, values, (i) => {
+    const reach = Math.min(half, i, last - i)
+    return [i - reach, i + reach]
   })
+}
+
+/** Median of the values within `half` positions; at the ends, of those there are. For values without a trend. */
+export function localMedian(values: ArrayLike<number>, half: number): Float64Array {
+  const last = values.length - 1
+  return medians(values.length, half, values, (i) => [Math.max(0, i - half), Math.min(last, i + half)])
 }
