@@ -5,7 +5,12 @@ import { aliases, mdi } from 'vuetify/iconsets/mdi-svg'
 import { cspNonce } from './csp-nonce.ts'
 import { themes } from './theme.ts'
 
-const field = { variant: 'outlined', density: 'comfortable', color: 'primary', hideDetails: 'auto' } as const
+const field = {
+  variant: 'outlined',
+  density: 'comfortable',
+  color: 'primary',
+  hideDetails: 'auto',
+} as const
 const table = { density: 'compact', hover: true } as const
 
 /** What a component looks like when nobody says otherwise: comfortable forms, compact tables, quiet buttons. */
@@ -30,6 +35,7 @@ const defaults = {
   VDataTableVirtual: table,
   VList: { density: 'comfortable' },
   VMenu: { offset: 6 },
+  VPagination: { variant: 'text', activeColor: 'primary', rounded: 'lg' },
   VTooltip: { openDelay: 400 },
 } as const
 

@@ -13,8 +13,8 @@ const wait = (ms: number) => new Promise((resolve) => setTimeout(resolve, ms))
 /** Who reads, what they may do, and in which region they are. */
 export const useSession = defineStore('session', () => {
   const current = shallowRef<Session | null>(null)
-  /** The first question could not be answered; it is asked again until it can. */
-  const unreachable = ref(false)
+  /** Why the first question could not be answered; it is asked again until it can. */
+  const trouble = ref('')
   let loading: Promise<void> | null = null
 
   const viewer = computed<Viewer>(() => current.value?.viewer ?? visitor)
@@ -35,10 +35,10 @@ export const useSession = defineStore('session', () => {
     for (;;) {
       try {
         enter(await fetchSession())
-        unreachable.value = false
+        trouble.value = ''
         return
-      } catch {
-        unreachable.value = true
+      } catch (error) {
+        trouble.value = (error as Error).message
         await wait(RETRY_MS)
       }
     }
@@ -64,7 +64,7 @@ export const useSession = defineStore('session', () => {
     email,
     region,
     signedIn,
-    unreachable,
+    trouble,
     can,
     known,
     signInWith,
