@@ -1,4 +1,4 @@
-import { exponentialIntegral } from '#shared/numerics/exponential-integral.ts'
+import { exponentialIntegral, exponentialIntegralDerivative } from '#shared/numerics/exponential-integral.ts'
 import type { ParameterEstimate } from './analysis.ts'
 import { parameterEstimate } from './parameter-estimate.ts'
 import { theisU } from './small-u.ts'
@@ -37,8 +37,8 @@ export function wellEfficiency(state: PumpedState, T: ParameterEstimate, S: Para
   const measured = state.drawdown_m - (state.penetrationExcess_m ?? 0)
   if (!(measured > 0)) throw new RangeError(`No drawdown to compare: ${measured} m`)
   const u = theisU(T.value, S.value, state.wellRadius_m, state.time_s)
-  // d ln s/d ln S = -e^-u/W, and d ln s/d ln T = -1 minus that.
-  const byS = -Math.exp(-u) / exponentialIntegral(u)
+  // d ln s/d ln S = u·W'/W, and d ln s/d ln T = -1 minus that.
+  const byS = (u * exponentialIntegralDerivative(u)) / exponentialIntegral(u)
   const otherSd = Math.LN10 * Math.hypot((1 + byS) * T.logSd, byS * S.logSd)
   const efficiency = expectedDrawdown(state, T.value, S.value) / measured
   return parameterEstimate(efficiency, { fitSd: 0, freedom: NORMAL, otherSd }, WIDEST_EFFICIENCY)

@@ -37,7 +37,7 @@ export function numericJacobian(
   const below = new Float64Array(count)
   unknowns.forEach((unknown, k) => {
     const centre = toScale(parameters[k] as number, unknown)
-    const step = DIFFERENCE_STEP * Math.max(1, unknown.scale === 'log' ? 1 : Math.abs(centre))
+    const step = DIFFERENCE_STEP * (unknown.scale === 'log' ? 1 : Math.abs(centre) || 1)
     const high = Math.min(centre + step, toScale(unknown.high, unknown))
     const low = Math.max(centre - step, toScale(unknown.low, unknown))
     problem.residuals(replaced(parameters, k, fromScale(high, unknown)), above)

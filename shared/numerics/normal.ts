@@ -42,27 +42,6 @@ export function normalQuantile(probability: number): number {
   return Math.sign(q) * (r <= 5 ? ratio(SHOULDER, r - 1.6) : ratio(TAIL, r - 5))
 }
 
-/** Standard normal distribution function, relative error about 1e-13 in either tail down to underflow. */
-export function normalCdf(z: number): number {
-  if (Number.isNaN(z)) throw new RangeError('No probability at NaN')
-  const tail = upperTail(Math.abs(z))
-  return z > 0 ? 1 - tail : tail
-}
-
-/** Upper tail probability for z ≥ 0: series near the centre, Laplace's continued fraction beyond. */
-function upperTail(z: number): number {
-  const density = Math.exp(-0.5 * z * z) / Math.sqrt(2 * Math.PI)
-  if (z > 3) {
-    let fraction = z
-    for (let k = 120; k >= 1; k--) fraction = z + k / fraction
-    return density / fraction
-  }
-  let term = z
-  let sum = z
-  for (let k = 1; term > 1e-17 * sum; k++) sum += term *= (z * z) / (2 * k + 1)
-  return 0.5 - density * sum
-}
-
 function ratio({ p, q }: { p: number[]; q: number[] }, x: number): number {
   return horner(p, x) / horner(q, x)
 }

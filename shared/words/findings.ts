@@ -1,7 +1,7 @@
 import type { AnalysisErrorCode, Finding } from '#shared/hydraulics/analysis.ts'
 import { formatElapsed } from '#shared/quantities/elapsed.ts'
 import { formatNumber, formatQuantity } from '#shared/quantities/format.ts'
-import type { UnitSystem } from '#shared/quantities/systems.ts'
+import { defaultUnitSystemId, unitSystemById, type UnitSystem } from '#shared/quantities/systems.ts'
 
 /** Reads params as text in the reader's units. */
 interface Words {
@@ -138,12 +138,13 @@ export function findingText(finding: Pick<Finding, 'code' | 'params'>, units: Un
   return sentence(wordsOf(finding.params, units))
 }
 
-/** Why an analysis was refused, as a sentence in the reader's units. */
+/** Why an analysis was refused, as a sentence in the reader's units (the default system where none is known). */
 export function analysisErrorText(
-  error: { code: AnalysisErrorCode; params: Finding['params'] },
-  units: UnitSystem,
+  code: AnalysisErrorCode,
+  params: Finding['params'],
+  units: UnitSystem = unitSystemById(defaultUnitSystemId),
 ): string {
-  return refusals[error.code](wordsOf(error.params, units))
+  return refusals[code](wordsOf(params, units))
 }
 
 /** Codes that have a sentence, for tests and menus. */

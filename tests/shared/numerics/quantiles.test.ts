@@ -1,0 +1,56 @@
+import fc from 'fast-check'
+import { describe, expect, it } from 'vitest'
+import { incompleteBeta, logGamma } from '#shared/numerics/gamma-beta.ts'
+import { normalQuantile } from '#shared/numerics/normal.ts'
+import { studentCdf, studentQuantile } from '#shared/numerics/student.ts'
+import reference from '../../reference/numerics-functions.json'
+
+const near = (value: number, expected: number, tolerance: number) =>
+  expect(Math.abs(value - expected)).toBeLessThanOrEqual(tolerance * Math.max(1, Math.abs(expected)))
+
+const probability = fc.double({ min: 1e-6, max: 1 - 1e-6, noNaN: true })
+const freedom = fc.double({ min: 0.8, max: 500, noNaN: true })
+
+describe('quantiles and the functions under them', () => {
+  it('equal mpmath', () => {
+    for (const { x, value } of reference.logGamma) near(logGamma(x), value, 1e-13)
+    for (const { x, a, b, value } of reference.incompleteBeta) near(incompleteBeta(x, a, b) / value, 1, 1e-11)
+    for (const { p, value } of reference.normalQuantile) near(normalQuantile(p), value, 1e-13)
+    for (const { p, freedom: f, value } of reference.studentQuantile) near(studentQuantile(p, f) / value, 1, 1e-10)
+  })
+
+  it("give the normal quantile as the limit of Student's", () => {
+    fc.assert(
+      fc.property(probability, (p) => {
+        near(studentQuantile(p, 1e8), normalQuantile(p), 1e-6)
+      }),
+    )
+  })
+
+  it('give the Cauchy distribution, known in closed form, at one degree of freedom', () => {
+    fc.assert(
+      fc.property(fc.double({ min: -50, max: 50, noNaN: true }), (t) => {
+        near(studentCdf(t, 1), 0.5 + Math.atan(t) / Math.PI, 1e-13)
+      }),
+    )
+  })
+
+  it('are undone by the distribution function and are symmetric', () => {
+    fc.assert(
+      fc.property(probability, freedom, (p, f) => {
+        near(studentCdf(studentQuantile(p, f), f), p, 1e-11)
+        near(studentQuantile(1 - p, f), -studentQuantile(p, f), 1e-9)
+      }),
+    )
+  })
+
+  it('refuse what is no probability, and freedom that is not positive', () => {
+    for (const p of [0, 1, -0.1, NaN]) {
+      expect(() => normalQuantile(p)).toThrow(RangeError)
+      expect(() => studentQuantile(p, 3)).toThrow(RangeError)
+    }
+    expect(() => studentCdf(1, 0)).toThrow(RangeError)
+    expect(() => logGamma(0)).toThrow(RangeError)
+    expect(() => incompleteBeta(1.1, 1, 1)).toThrow(RangeError)
+  })
+})
