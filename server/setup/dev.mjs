@@ -1,4 +1,4 @@
-import { tryPort } from './free-port.mjs'
+import { checkedPort } from './free-port.mjs'
 import { aborted, runCommand } from './lifecycle.mjs'
 import { demoAccounts } from './demo-accounts.mjs'
 import { inRoot, root } from './places.mjs'
@@ -11,8 +11,8 @@ import { makeSteps } from './steps.mjs'
 await runCommand(async (life) => {
   const steps = makeSteps()
   const { settings, config, database, env } = await prepare(steps, life)
-  const apiPort = String(await tryPort(config.port, config.host))
-  const pagePort = String(await tryPort(Number(process.env.VITE_PORT ?? 5173)))
+  const apiPort = String(await checkedPort(config.port, config.host))
+  const pagePort = String(await checkedPort(Number(process.env.VITE_PORT ?? 5173), '127.0.0.1'))
   const page = `http://127.0.0.1:${pagePort}`
   // Links in mails and the check of a request's origin must name the address in the browser, which is Vite's.
   const publicUrl = process.env.PUBLIC_URL ?? page

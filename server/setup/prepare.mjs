@@ -1,6 +1,7 @@
 import { join } from 'node:path'
 import { installPackages, missingPackages } from './debian.mjs'
 import { openDatabase } from './databases.mjs'
+import { checkedPort } from './free-port.mjs'
 import { takeLock } from './locks.mjs'
 import { installNodePackages, nodePackagesMatch } from './node-packages.mjs'
 import { inRoot, root } from './places.mjs'
@@ -60,6 +61,7 @@ export async function prepare(steps, life) {
   await installMissing(debianPackages(settings), steps, life.stopping)
   const config = await checkedConfig(process.env, settings)
   for (const pid of processesWith(marker(settings.dataDir))) await endProcess(pid, 15_000)
+  await checkedPort(config.port, config.host) // better known now than after minutes of seeding
   const database = await startDatabase(settings, steps, life)
   const env = childEnvironment(process.env, settings, database.url)
   if (settings.demo) await steps.step('Filling in the demo region', () => seed(env, steps, life.stopping))

@@ -1,7 +1,7 @@
 import { setTimeout as delay } from 'node:timers/promises'
 import { buildClient, clientIsBuilt } from './client-build.mjs'
 import { demoAccounts } from './demo-accounts.mjs'
-import { tryPort } from './free-port.mjs'
+import { checkedPort } from './free-port.mjs'
 import { aborted, runCommand } from './lifecycle.mjs'
 import { inRoot, root } from './places.mjs'
 import { marker, prepare } from './prepare.mjs'
@@ -12,7 +12,7 @@ import { keepRunning } from './supervise.mjs'
 
 /** The application drains for 10 s. */
 const stopLimitMs = 15_000
-const readyLimitMs = 120_000
+const readyLimitMs = 60_000
 
 await runCommand(async (life) => {
   const begun = performance.now()
@@ -21,7 +21,7 @@ await runCommand(async (life) => {
   if (!clientIsBuilt(inRoot('dist'))) {
     await steps.step('Building the pages', () => buildClient(inRoot('dist'), life.stopping))
   }
-  const port = await tryPort(config.port, config.host)
+  const port = await checkedPort(config.port, config.host)
   const start = application({ ...env, PORT: String(port) }, settings.dataDir, life)
   const options = { stopping: life.stopping, say: steps.say }
   const running = Promise.race([
@@ -59,24 +59,30 @@ function application(env, dataDir, { onClose }) {
   }
 }
 
-/** An address at which this machine reaches a server that listens on `host`. */
-const localHost = (/** @type {string} */ host) => {
+/**
+ * An address at which this machine reaches a server that listens on `host`.
+ * @param {string} host
+ */
+function localHost(host) {
   if (host === '0.0.0.0') return '127.0.0.1'
   if (host === '::') return '[::1]'
   return host.includes(':') ? `[${host}]` : host
 }
 
 /**
+ * Waits until requests can be served; the process answers for itself before it answers for its database.
  * @param {string} address
  * @param {AbortSignal} stopping
  */
 async function ready(address, stopping) {
   const limit = performance.now() + readyLimitMs
+  let reason = 'It does not answer.'
   while (!stopping.aborted && performance.now() < limit) {
-    const answer = await fetch(`${address}/readyz`).catch(() => null)
+    const alive = await fetch(`${address}/healthz`).catch(() => null)
+    const answer = alive?.ok ? await fetch(`${address}/readyz`).catch(() => null) : null
     if (answer?.ok) return
-    await delay(100)
+    reason = answer ? await answer.text() : reason
+    await delay(answer ? 1_000 : 50)
   }
-  if (!stopping.aborted)
-    throw new SetupProblem(`The application does not become ready at ${address}. Its messages are above.`)
+  if (!stopping.aborted) throw new SetupProblem(`The application does not become ready at ${address}: ${reason}`)
 }
