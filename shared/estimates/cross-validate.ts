@@ -54,6 +54,8 @@ function residual(value: UsedValue, truth: readonly Component[]): Residual {
     y: value.y,
     observed: value.log10,
     predicted,
+    deviation: Math.sqrt(varianceOf(truth, predicted)),
+    error: value.error,
     standardised: (value.log10 - predicted) / Math.sqrt(varianceOf(shown, predicted)),
     probability: mixtureProbability(shown, value.log10),
     width80: width(0.1),

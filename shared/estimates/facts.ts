@@ -99,10 +99,10 @@ function nearnessOf({ place, values, context, model, carried }: Draft): Nearness
   }
 }
 
-/** Values nearer than the heaviest neighbours that a barrier keeps out. */
+/** Values no farther than the farthest neighbour that a barrier keeps out. */
 function hiddenBehindBarriers({ place, values, context, carried }: Draft): Facts['hidden'] {
   if (context.barriers.length === 0 || carried.length === 0) return { count: 0, nearest_m: Infinity }
-  const reach = Math.max(...carried.map((c) => c.contribution.distance_m))
+  const reach = Math.max(...carried.map((c) => c.contribution.distance_m)) * (1 + 1e-9)
   const hidden = values.neighbourhood
     .within(place, reach)
     .map((i) => values.used[i]!)

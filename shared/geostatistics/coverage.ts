@@ -8,6 +8,10 @@ export interface Residual {
   y: number
   observed: number
   predicted: number
+  /** Standard deviation of the forecast of the true value, σ_K. */
+  deviation: number
+  /** The value's own error, e. */
+  error: number
   /** (z − ẑ) / √(σ_K² + e²). */
   standardised: number
   /** Probability that the forecast gave to lying below the observed value; coverage is read from it. */
@@ -64,13 +68,19 @@ export const RESCALE_FROM = 30
 const SIGNIFICANT = 0.05
 const NARROWEST = 0.9
 
+/** Factor on σ_K at which a value would lie just at the end of its 95 % interval, its own error kept as it is. */
+function factorToReach(r: Residual): number {
+  const needed = ((r.observed - r.predicted) / 1.959964) ** 2 - r.error ** 2
+  return r.deviation > 0 ? Math.sqrt(Math.max(0, needed)) / r.deviation : 0
+}
+
 /**
  * Factor for the standard deviation of estimates: 1 unless at least 30 values were foretold and the 95 % interval
- * covered so many or so few that chance is unlikely (exact binomial p < 0.05). Widens freely, narrows by a tenth at most.
+ * covered so many or so few that chance is unlikely (exact binomial p < 0.05). Then 95 % of the values are reached;
+ * it widens freely and narrows by a tenth at most.
  */
 export function rescalingFactor(residuals: readonly Residual[]): number {
   if (residuals.length < RESCALE_FROM) return 1
   if (coverage(residuals, 0.95, (r) => r.width95).p >= SIGNIFICANT) return 1
-  const needed = quantileOf(rising(residuals.map((r) => Math.abs(r.standardised))), 0.95) / 1.959964
-  return Math.max(NARROWEST, needed)
+  return Math.max(NARROWEST, quantileOf(rising(residuals.map(factorToReach)), 0.95))
 }
