@@ -16,6 +16,12 @@ import { estimatesRoutes } from './estimates/estimates.routes.ts'
 import { pumpingTestsRoutes } from './pumping-tests/pumping-tests.routes.ts'
 import { readingSeriesRoutes } from './reading-series/reading-series.routes.ts'
 import { reviewsRoutes } from './reviews/reviews.routes.ts'
+import { aquiferUnitsRoutes } from './aquifer-units/aquifer-units.routes.ts'
+import { boundariesRoutes } from './boundaries/boundaries.routes.ts'
+import { mapRoutes } from './map/map.routes.ts'
+import { searchRoutes } from './search/search.routes.ts'
+import { streamsRoutes } from './streams/streams.routes.ts'
+import { wellsRoutes } from './wells/wells.routes.ts'
 import { mountRoutes } from './mount.ts'
 import { outboxRoutes } from './outbox/outbox.routes.ts'
 import { passwordRoutes } from './password/password.routes.ts'
@@ -38,6 +44,12 @@ export function allRoutes(services: Services, deps: Deps): Route[] {
     ...auditTrailRoutes(services),
     ...outboxRoutes(services),
     ...jobsRoutes(services, deps),
+    ...mapRoutes(services),
+    ...searchRoutes(services),
+    ...wellsRoutes(services),
+    ...streamsRoutes(services),
+    ...aquiferUnitsRoutes(services),
+    ...boundariesRoutes(services),
     ...pumpingTestsRoutes(services),
     ...readingSeriesRoutes(services),
     ...analysesRoutes(services),

@@ -3,10 +3,13 @@ import { createAccountService } from './account/account.service.ts'
 import { createAdoptedValuesService } from './adopted-values/adopted-values.service.ts'
 import { createAnalysesService, type AnalysesService } from './analyses/analyses.service.ts'
 import { createInputsService } from './analyses/inputs.service.ts'
+import { createAquiferUnitsService } from './aquifer-units/aquifer-units.service.ts'
 import { createAuditTrailService } from './audit-trail/audit-trail.service.ts'
+import { createBoundariesService } from './boundaries/boundaries.service.ts'
 import { createEstimatesService } from './estimates/estimates.service.ts'
 import { createHealthService } from './health/health.service.ts'
 import { createJobsService } from './jobs/jobs.service.ts'
+import { createMapService } from './map/map.service.ts'
 import { createOutboxService } from './outbox/outbox.service.ts'
 import { createPasswordService } from './password/password.service.ts'
 import { createPeopleService } from './people/people.service.ts'
@@ -14,32 +17,40 @@ import { createPumpingTestsService } from './pumping-tests/pumping-tests.service
 import { createReadingSeriesService } from './reading-series/reading-series.service.ts'
 import { createRegionService } from './region/region.service.ts'
 import { createReviewsService } from './reviews/reviews.service.ts'
+import { createSearchService } from './search/search.service.ts'
 import { createSessionService } from './session/session.service.ts'
 import { createStreamsService } from './streams/streams.service.ts'
 import { createVisibilityService } from './visibility/visibility.service.ts'
-import { createWellsService } from './wells/wells.service.ts'
+import { createWellsService, type WellsService } from './wells/wells.service.ts'
 
 /** All services, made once; a service that needs another resource is given its service here. */
 export function createServices(deps: Deps) {
   const region = createRegionService(deps)
   const streams = createStreamsService(deps)
-  const wells = createWellsService(deps)
   const adoptedValues = createAdoptedValuesService(deps)
+  const wells: WellsService = createWellsService(deps, {
+    region,
+    testsOf: (viewer, wellId) => pumpingTests.ofWell(viewer, wellId),
+    valuesOf: (viewer, wellId) => adoptedValues.ofWell(viewer, wellId),
+  })
   const pumpingTests = createPumpingTestsService(deps, {
     wells,
     markInputsChanged: (executor, testId) => analyses.markInputsChanged(executor, testId),
   })
-  // A change of a test concerns its analyses, which are made from the test: the one circle among the services.
+  // A well shows its tests, and a change of a test concerns its analyses: services that know each other have named types.
   const analyses: AnalysesService = createAnalysesService(deps, createInputsService({ pumpingTests, streams }))
   const { markInputsChanged, hasSubmitted } = analyses
   return {
     account: createAccountService(deps, region),
     adoptedValues,
     analyses,
+    aquiferUnits: createAquiferUnitsService(deps),
     auditTrail: createAuditTrailService(deps),
+    boundaries: createBoundariesService(deps),
     estimates: createEstimatesService(deps, { region, streams, adoptedValues }),
     health: createHealthService(deps),
     jobs: createJobsService(deps),
+    map: createMapService(deps),
     outbox: createOutboxService(deps),
     password: createPasswordService(deps),
     people: createPeopleService(deps, region),
@@ -47,6 +58,7 @@ export function createServices(deps: Deps) {
     readingSeries: createReadingSeriesService(deps, { pumpingTests, markInputsChanged, hasSubmitted }),
     region,
     reviews: createReviewsService(deps, { analyses, adoptedValues }),
+    search: createSearchService(deps),
     session: createSessionService(deps, region),
     streams,
     visibility: createVisibilityService(deps, { adoptedValues }),

@@ -1,8 +1,11 @@
 import { z } from 'zod'
 
 export const recordId = z.int().positive()
-/** A record id in an address or query string. */
-export const idInPath = z.coerce.number().int().positive()
+/** A record id in an address or query string: digits as a person would copy them, no other spelling of a number. */
+export const idInPath = z.coerce
+  .string()
+  .regex(/^[1-9]\d{0,14}$/)
+  .transform(Number)
 export const idParams = z.object({ id: idInPath })
 export const rowVersion = z.int().positive()
 export const instant = z.iso.datetime()

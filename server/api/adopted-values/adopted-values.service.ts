@@ -39,6 +39,9 @@ export function createAdoptedValuesService(deps: Deps) {
       return { ...pageOf(rows.map(adoptedValueView), logarithms.length, query), statistics: statisticsOf(logarithms) }
     },
 
+    ofWell: async (viewer: Viewer, wellId: number) =>
+      (await repository.listCurrent(db, viewer, { wellId })).map(adoptedValueView),
+
     async exportCsv(viewer: Viewer, filters: AdoptedValueFilters, unitSystem: string | undefined) {
       const rows = await repository.listCurrent(db, viewer, filters)
       return adoptedValuesCsv(rows.map(adoptedValueView), unitSystemById(unitSystem ?? ''))

@@ -19,7 +19,10 @@ export function calculate(
     return analyse(method, inputs, options)
   } catch (error) {
     if (!(error instanceof AnalysisError)) throw error
-    throw new AppError('analysis/refused', { reason: analysisErrorText(error.code, error.params, unitSystemById(defaultUnitSystemId)), code: error.code })
+    throw new AppError('analysis/refused', {
+      reason: analysisErrorText(error.code, error.params, unitSystemById(defaultUnitSystemId)),
+      code: error.code,
+    })
   }
 }
 

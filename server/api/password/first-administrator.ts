@@ -1,8 +1,8 @@
 import { isLoopback } from '../../config/loopback.ts'
 import { inTransaction } from '../../db/transaction.ts'
 import type { Deps } from '../../deps.ts'
-import { makeLink } from './links.ts'
-import { endTokensOf, findRecipient, hasAdministrator, insertPlaceholder } from './password.repository.ts'
+import { makeOnlyLink } from './links.ts'
+import { findRecipient, hasAdministrator, insertPlaceholder } from './password.repository.ts'
 
 /** Holds the place until somebody follows the link and gives an address; nobody can be mailed here. */
 export const placeholderEmail = 'first-administrator@basinbook.invalid'
@@ -24,7 +24,6 @@ export async function ensureFirstAdministratorLink(
       createdAt,
     })
     const { id } = (await findRecipient(tx, placeholderEmail))!
-    await endTokensOf(tx, id, createdAt)
-    return makeLink(tx, deps, id, 'first-administrator')
+    return makeOnlyLink(tx, deps, id, 'first-administrator')
   })
 }

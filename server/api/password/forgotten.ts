@@ -4,7 +4,7 @@ import { inTransaction } from '../../db/transaction.ts'
 import type { Deps } from '../../deps.ts'
 import type { JobHandler } from '../../jobs/jobs.ts'
 import { queueMail } from '../../mail/queue-mail.ts'
-import { findRegion } from '../region/region.repository.ts'
+import { createRegionService } from '../region/region.service.ts'
 import { makeLink } from './links.ts'
 import { countTokens, findRecipient } from './password.repository.ts'
 
@@ -17,6 +17,7 @@ const mailsPerHour = 5
  * gets the same answer whether or not the address is known.
  */
 export function mailResetLink(deps: Deps): JobHandler {
+  const region = createRegionService(deps)
   return async (input) => {
     const { email } = payload.parse(input)
     await inTransaction(deps, async (tx) => {
@@ -25,8 +26,8 @@ export function mailResetLink(deps: Deps): JobHandler {
       const since = new Date(deps.now().getTime() - hour)
       if ((await countTokens(tx, person.id, 'reset', since)) >= mailsPerHour) return
       const link = await makeLink(tx, deps, person.id, 'reset')
-      const region = (await findRegion(tx))?.name ?? 'Basinbook'
-      await queueMail(tx, deps, { to: person.email, ...resetMail({ region, name: person.name, link }) })
+      const { name: regionName } = await region.get(tx)
+      await queueMail(tx, deps, { to: person.email, ...resetMail({ region: regionName, name: person.name, link }) })
     })
   }
 }

@@ -2,7 +2,7 @@ import { createHash, randomBytes } from 'node:crypto'
 import type { LinkPurpose } from '#shared/contracts/password.ts'
 import type { Executor } from '../../db/client.ts'
 import type { Deps } from '../../deps.ts'
-import { insertToken } from './password.repository.ts'
+import { endTokensOf, insertToken } from './password.repository.ts'
 
 const hour = 3_600_000
 const lifetimes: Record<LinkPurpose, number> = {
@@ -25,4 +25,10 @@ export async function makeLink(
   const expiresAt = new Date(createdAt.getTime() + lifetimes[purpose])
   await insertToken(executor, { userId, purpose, tokenHash: hashOf(token), createdAt, expiresAt })
   return `${config.publicUrl}/set-password#${token}`
+}
+
+/** A link that makes the person's earlier ones useless. */
+export async function makeOnlyLink(...[executor, deps, userId, purpose]: Parameters<typeof makeLink>): Promise<string> {
+  await endTokensOf(executor, userId, deps.now())
+  return makeLink(executor, deps, userId, purpose)
 }

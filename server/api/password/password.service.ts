@@ -7,6 +7,7 @@ import { AppError, fieldError } from '../../errors.ts'
 import { endSessionsOf } from '../../middleware/session.repository.ts'
 import { checkPassword } from '../account/account.service.ts'
 import { recordAudit } from '../audit-trail/record-audit.ts'
+import { forgetAttempts } from '../session/attempts.ts'
 import { hashPassword } from '../session/passwords.ts'
 import { hashOf } from './links.ts'
 import { endTokensOf, findToken, savePerson, useToken } from './password.repository.ts'
@@ -62,6 +63,7 @@ export function createPasswordService(deps: Deps) {
         if (!(await useToken(tx, hashOf(setting.token), now()))) throw new AppError('password/link-ended')
         await endTokensOf(tx, id, now())
         await endSessionsOf(tx, id)
+        await forgetAttempts(tx, email)
         await saveOrRefuse(tx, id, { email, name, passwordHash })
         const who = { viewer: { id, name }, at: now(), subject: 'person', subjectId: id }
         await recordAudit(tx, { ...who, action: 'password/set', details: { by: link.purpose } })

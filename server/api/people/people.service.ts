@@ -10,8 +10,7 @@ import { queueMail } from '../../mail/queue-mail.ts'
 import { endSessionsOf } from '../../middleware/session.repository.ts'
 import { recordAudit } from '../audit-trail/record-audit.ts'
 import { pageOf } from '../page-of.ts'
-import { makeLink } from '../password/links.ts'
-import { endTokensOf } from '../password/password.repository.ts'
+import { makeOnlyLink } from '../password/links.ts'
 import type { RegionService } from '../region/region.service.ts'
 import { changesOf, checkRights, endsSessions, personOf, stopsAdministering } from './people.rules.ts'
 import * as repository from './people.repository.ts'
@@ -40,8 +39,7 @@ export function createPeopleService(deps: Deps, region: RegionService) {
     id: number,
     { email, name }: { email: string; name: string },
   ) {
-    await endTokensOf(tx, id, now())
-    const link = await makeLink(tx, deps, id, 'invitation')
+    const link = await makeOnlyLink(tx, deps, id, 'invitation')
     const words = invitationMail({ region: (await region.get(tx)).name, name, link, invitedBy: viewer.name })
     await queueMail(tx, deps, { to: email, ...words })
   }

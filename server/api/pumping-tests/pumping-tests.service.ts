@@ -91,6 +91,19 @@ export function createPumpingTestsService(deps: Deps, { wells, markInputsChanged
     return row
   }
 
+  async function list(viewer: Viewer, query: PumpingTestQuery) {
+    const [rows, total] = await Promise.all([listPumpingTests(db, viewer, query), countPumpingTests(db, viewer, query)])
+    const names = await unitNames(
+      db,
+      rows.map(({ test }) => test.id),
+    )
+    return pageOf(
+      rows.map((row) => summaryView(row, names)),
+      total,
+      query,
+    )
+  }
+
   return {
     get,
     whole,
@@ -101,21 +114,10 @@ export function createPumpingTestsService(deps: Deps, { wells, markInputsChanged
 
     lockForEdit,
 
-    async list(viewer: Viewer, query: PumpingTestQuery) {
-      const [rows, total] = await Promise.all([
-        listPumpingTests(db, viewer, query),
-        countPumpingTests(db, viewer, query),
-      ])
-      const names = await unitNames(
-        db,
-        rows.map(({ test }) => test.id),
-      )
-      return pageOf(
-        rows.map((row) => summaryView(row, names)),
-        total,
-        query,
-      )
-    },
+    ofWell: async (viewer: Viewer, wellId: number) =>
+      (await list(viewer, { wellId, sort: '-start', limit: 200, offset: 0 })).items,
+
+    list,
 
     create: (viewer: Viewer, input: PumpingTestInput) =>
       inTransaction(deps, async (tx) => {

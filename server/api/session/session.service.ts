@@ -1,35 +1,21 @@
-import { createHash } from 'node:crypto'
 import type { Request } from 'express'
 import { readPreferences } from '#shared/contracts/account.ts'
 import type { Session, SignIn } from '#shared/contracts/session.ts'
 import type { Deps } from '../../deps.ts'
 import { AppError } from '../../errors.ts'
-import { countHit, forgetHits } from '../../middleware/rate-limit.repository.ts'
 import { beginSession, endSession } from '../../middleware/sessions.ts'
 import { accountOf, mayEnter, setAccount, viewerOf } from '../../middleware/viewer.ts'
 import { findAccount, markSeen } from '../../middleware/viewer.repository.ts'
 import type { RegionService } from '../region/region.service.ts'
+import { countAttempt, forgetAttempts } from './attempts.ts'
 import { basemapsOf } from './basemaps.ts'
 import { passwordFits } from './passwords.ts'
 import { findByEmail } from './session.repository.ts'
-
-/** Wrong passwords for one account, from anywhere, before it rests. Known and unknown addresses are counted alike. */
-const attempts = { limit: 10, windowMs: 15 * 60_000 }
-
-const counterOf = (email: string) => `account:${createHash('sha256').update(email).digest('hex')}`
 
 export function createSessionService(deps: Deps, region: RegionService) {
   const { connection, config, now } = deps
   const { db } = connection
   const basemaps = basemapsOf(deps)
-
-  /** Counted before the password is looked at, so that attempts at the same time cannot slip past the limit. */
-  async function countAttempt(email: string): Promise<void> {
-    const { hits, resetAt } = await countHit(db, counterOf(email), now(), attempts.windowMs)
-    if (hits <= attempts.limit) return
-    const seconds = Math.max(1, Math.ceil((resetAt.getTime() - now().getTime()) / 1000))
-    throw new AppError('session/too-many-attempts', { seconds })
-  }
 
   /** The answer to "who am I", after whatever the request did. */
   async function describe(req: Request): Promise<Session> {
@@ -55,12 +41,12 @@ export function createSessionService(deps: Deps, region: RegionService) {
     begin,
 
     async signIn(req: Request, { email, password }: SignIn): Promise<Session> {
-      await countAttempt(email)
+      await countAttempt(db, email, now())
       const found = await findByEmail(db, email)
       const fits = await passwordFits(found?.passwordHash ?? null, password)
       if (!found || !fits || !found.active) throw new AppError('session/wrong')
       if (!mayEnter(found, config)) throw new AppError('session/demo-refused')
-      await forgetHits(db, counterOf(email))
+      await forgetAttempts(db, email)
       await markSeen(db, found.id, now())
       return begin(req, found.id)
     },

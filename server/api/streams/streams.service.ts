@@ -1,8 +1,10 @@
-import { lineString, point, pointToLineDistance } from '@turf/turf'
+import { length, lineString, point, pointToLineDistance } from '@turf/turf'
 import type { Executor } from '../../db/client.ts'
 import type { Position } from '../../db/spatial.ts'
 import type { Deps } from '../../deps.ts'
+import { notFound } from '../../errors.ts'
 import { connectedStreams } from './connected.repository.ts'
+import { findStream, listStreams, unitsOfStream } from './streams.repository.ts'
 
 export interface NearStream {
   id: number
@@ -10,7 +12,7 @@ export interface NearStream {
   distanceM: number
 }
 
-export function createStreamsService(_deps: Deps) {
+export function createStreamsService({ connection: { db } }: Deps) {
   /** Streams connected to any of the units, nearest first, with their distance in metres. */
   async function connected(executor: Executor, unitIds: number[], place: Position): Promise<NearStream[]> {
     return (await connectedStreams(executor, unitIds))
@@ -21,6 +23,17 @@ export function createStreamsService(_deps: Deps) {
   return {
     connected,
 
+    async list() {
+      return { items: (await listStreams(db)).map(streamView) }
+    },
+
+    async get(id: number) {
+      const row = await findStream(db, id)
+      if (!row) throw notFound()
+      const lengthM = length(lineString(row.path), { units: 'meters' })
+      return { ...streamView(row), lengthM, units: await unitsOfStream(db, id) }
+    },
+
     /** Null where no stream is connected to the units. */
     async nearestConnected(executor: Executor, unitIds: number[], place: Position): Promise<NearStream | null> {
       return (await connected(executor, unitIds, place))[0] ?? null
@@ -30,3 +43,10 @@ export function createStreamsService(_deps: Deps) {
 
 const distanceTo = (path: Position[], place: Position) =>
   pointToLineDistance(point(place), lineString(path), { units: 'meters', method: 'geodesic' })
+
+const streamView = ({ id, name, streamOrder, path }: Awaited<ReturnType<typeof listStreams>>[number]) => ({
+  id,
+  name,
+  streamOrder,
+  path,
+})

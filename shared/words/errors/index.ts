@@ -13,6 +13,7 @@ import { readingErrors } from './readings.ts'
 import { requestErrors } from './requests.ts'
 import { sessionErrors } from './sessions.ts'
 import { visibilityErrors } from './visibility.ts'
+import { wellErrors } from './wells.ts'
 
 export type { ErrorParams } from './catalogue.ts'
 
@@ -32,6 +33,7 @@ export const errorCatalogue = {
   ...regionErrors,
   ...sessionErrors,
   ...visibilityErrors,
+  ...wellErrors,
 }
 
 export type ErrorCode = keyof typeof errorCatalogue

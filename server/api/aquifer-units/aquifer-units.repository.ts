@@ -1,0 +1,37 @@
+import { and, asc, eq, isNull, sql } from 'drizzle-orm'
+import type { Viewer } from '#shared/contracts/permissions.ts'
+import type { Executor } from '../../db/client.ts'
+import { readable } from '../../db/readable.ts'
+import { adoptedValues, aquiferUnits, pumpingTests, streams, unitPicks, unitStreams } from '../../db/schema/index.ts'
+
+export const listUnits = (executor: Executor) =>
+  executor.select().from(aquiferUnits).orderBy(asc(aquiferUnits.depthOrder))
+
+export async function findUnit(executor: Executor, id: number) {
+  const [row] = await executor.select().from(aquiferUnits).where(eq(aquiferUnits.id, id))
+  return row ?? null
+}
+
+/** Current values per unit and quantity that the viewer may see. */
+export const countValues = (executor: Executor, viewer: Viewer) =>
+  executor
+    .select({
+      unitId: adoptedValues.unitId,
+      quantity: adoptedValues.quantity,
+      n: sql<number>`count(*)`.mapWith(Number),
+    })
+    .from(adoptedValues)
+    .innerJoin(pumpingTests, eq(pumpingTests.id, adoptedValues.pumpingTestId))
+    .where(and(isNull(adoptedValues.validTo), readable.pumpingTests(viewer)))
+    .groupBy(adoptedValues.unitId, adoptedValues.quantity)
+
+export const countPicks = (executor: Executor, unitId: number): Promise<number> =>
+  executor.$count(unitPicks, eq(unitPicks.unitId, unitId))
+
+export const streamsOfUnit = (executor: Executor, unitId: number) =>
+  executor
+    .select({ id: streams.id, name: streams.name })
+    .from(unitStreams)
+    .innerJoin(streams, eq(streams.id, unitStreams.streamId))
+    .where(eq(unitStreams.unitId, unitId))
+    .orderBy(asc(streams.streamOrder), asc(streams.name))

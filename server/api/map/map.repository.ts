@@ -1,0 +1,94 @@
+import { and, asc, eq, isNotNull, isNull, sql, type SQL } from 'drizzle-orm'
+import type { MapWellQuery } from '#shared/contracts/map.ts'
+import type { Viewer } from '#shared/contracts/permissions.ts'
+import { mercatorInts } from '#shared/geodesy/index.ts'
+import type { Executor } from '../../db/client.ts'
+import { readable } from '../../db/readable.ts'
+import { adoptedValues, pumpingTests, wells } from '../../db/schema/index.ts'
+
+/** Side of a cluster cell in pixels is 64 = 2^6; a pixel at zoom z is 2^(24 − 8 − z) of the Mercator integers. */
+const cellBits = (zoom: number) => Math.max(0, 24 - 8 - zoom + 6)
+
+/** Wells of a box, as a range of the Mercator index; a box across the date line wraps. */
+function inBox([west, south, east, north]: MapWellQuery['bbox']): SQL {
+  const a = mercatorInts(west, north)
+  const b = mercatorInts(east, south)
+  const x =
+    west <= east
+      ? sql`${wells.mx} between ${a.mx} and ${b.mx}`
+      : sql`(${wells.mx} >= ${a.mx} or ${wells.mx} <= ${b.mx})`
+  return sql`${x} and ${wells.my} between ${a.my} and ${b.my}`
+}
+
+/** The newest current value of each well in the chosen unit and quantity, from tests the viewer may see. */
+function valuesOf(executor: Executor, viewer: Viewer, { unitId, quantity, storageClass }: MapWellQuery) {
+  return executor
+    .select({
+      wellId: adoptedValues.wellId,
+      newest: sql<number>`max(${adoptedValues.id})`.as('newest'),
+    })
+    .from(adoptedValues)
+    .innerJoin(pumpingTests, eq(pumpingTests.id, adoptedValues.pumpingTestId))
+    .where(
+      and(
+        eq(adoptedValues.unitId, unitId ?? 0),
+        eq(adoptedValues.quantity, quantity),
+        isNull(adoptedValues.validTo),
+        storageClass ? eq(adoptedValues.storageClass, storageClass) : undefined,
+        readable.pumpingTests(viewer),
+      ),
+    )
+    .groupBy(adoptedValues.wellId)
+    .as('newest_values')
+}
+
+function filtered(executor: Executor, viewer: Viewer, query: MapWellQuery) {
+  const newest = valuesOf(executor, viewer, query)
+  const only: Record<NonNullable<MapWellQuery['only']>, SQL | undefined> = {
+    firm: eq(adoptedValues.evidence, 'firm'),
+    fair: eq(adoptedValues.evidence, 'fair'),
+    slight: eq(adoptedValues.evidence, 'slight'),
+    none: isNull(adoptedValues.id),
+    valued: isNotNull(adoptedValues.id),
+  }
+  const where = and(inBox(query.bbox), readable.wells(viewer), query.only ? only[query.only] : undefined)
+  return { newest, where }
+}
+
+/** Wells per grid cell, with their mean place and how many have a value: one grouped query, always fresh. */
+export function clusterWells(executor: Executor, viewer: Viewer, query: MapWellQuery) {
+  const { newest, where } = filtered(executor, viewer, query)
+  const bits = cellBits(query.zoom)
+  return executor
+    .select({
+      count: sql<number>`count(*)`.mapWith(Number),
+      valued: sql<number>`count(${adoptedValues.id})`.mapWith(Number),
+      mx: sql<number>`avg(${wells.mx})`.mapWith(Number),
+      my: sql<number>`avg(${wells.my})`.mapWith(Number),
+    })
+    .from(wells)
+    .leftJoin(newest, eq(newest.wellId, wells.id))
+    .leftJoin(adoptedValues, eq(adoptedValues.id, newest.newest))
+    .where(where)
+    .groupBy(sql`${wells.mx} >> ${bits}`, sql`${wells.my} >> ${bits}`)
+}
+
+/** Single wells, at most `limit` of them, those with a value first. */
+export function listMapWells(executor: Executor, viewer: Viewer, query: MapWellQuery, limit: number) {
+  const { newest, where } = filtered(executor, viewer, query)
+  return executor
+    .select({
+      id: wells.id,
+      code: wells.code,
+      kind: wells.kind,
+      position: wells.position,
+      log10: adoptedValues.log10Value,
+      evidence: adoptedValues.evidence,
+    })
+    .from(wells)
+    .leftJoin(newest, eq(newest.wellId, wells.id))
+    .leftJoin(adoptedValues, eq(adoptedValues.id, newest.newest))
+    .where(where)
+    .orderBy(asc(isNull(adoptedValues.id)), asc(wells.code))
+    .limit(limit)
+}

@@ -1,0 +1,31 @@
+import type { MapWellQuery, MapWells } from '#shared/contracts/map.ts'
+import type { Viewer } from '#shared/contracts/permissions.ts'
+import { fromMercatorInts } from '#shared/geodesy/index.ts'
+import type { Deps } from '../../deps.ts'
+import { clusterWells, listMapWells } from './map.repository.ts'
+
+/** Up to this many wells a view shows each of them; more are grouped. */
+const mostSingle = 600
+
+export function createMapService({ connection: { db } }: Deps) {
+  return {
+    async wells(viewer: Viewer, query: MapWellQuery): Promise<MapWells> {
+      const cells = await clusterWells(db, viewer, query)
+      const total = cells.reduce((sum, { count }) => sum + count, 0)
+      const valued = cells.reduce((sum, cell) => sum + cell.valued, 0)
+      if (total > mostSingle) return { wells: [], clusters: cells.map(clusterView), total, valued }
+      const rows = await listMapWells(db, viewer, query, mostSingle)
+      return { wells: rows.map(wellView), clusters: [], total, valued }
+    },
+  }
+}
+
+const clusterView = ({ mx, my, count, valued }: Awaited<ReturnType<typeof clusterWells>>[number]) => ({
+  ...fromMercatorInts({ mx, my }),
+  count,
+  valued,
+})
+
+function wellView({ position: [lon, lat], log10, ...well }: Awaited<ReturnType<typeof listMapWells>>[number]) {
+  return { ...well, lon, lat, value: log10 === null ? null : 10 ** log10 }
+}
