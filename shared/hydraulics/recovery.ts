@@ -35,7 +35,7 @@ export function recoveryAbscissa(history: RateHistory, options: AnalysisOptions,
     return Math.log10((pumped_s + since) / since)
   }
   return history.increments.reduce(
-    (sum, { start_s, change_m3_s }) => sum - (change_m3_s / lastRate_m3_s) * Math.log10(elapsed_s - start_s),
+    (sum, { start_s, change_m3_s }) => sum + (change_m3_s / lastRate_m3_s) * Math.log10(elapsed_s - start_s),
     0,
   )
 }
