@@ -40,13 +40,22 @@ interface Prepared {
   clock: Clock | null
 }
 
+/** A line that carries no reading by nature. */
+const furniture = (row: number, raw: string, flag: ReadingFlag): ReadingRow => ({
+  row,
+  raw,
+  elapsed_s: null,
+  value_m: null,
+  flags: [flag],
+  taken: false,
+})
+
 function readRows({ lines, cells, clock, startMs }: Prepared, mapping: LogMapping) {
   const issues: RowIssue[] = []
   const rows = lines.map((raw, i): ReadingRow => {
     const row = i + 1
-    const furniture = (flag: ReadingFlag) => ({ row, raw, elapsed_s: null, value_m: null, flags: [flag], taken: false })
-    if (raw.trim() === '') return furniture('readings/blank-line')
-    if (row < mapping.firstDataRow) return furniture('readings/preamble')
+    if (raw.trim() === '') return furniture(row, raw, 'readings/blank-line')
+    if (row < mapping.firstDataRow) return furniture(row, raw, 'readings/preamble')
     const { elapsed_s, value_m, found } = findings(cells[i] ?? [], mapping, clock, startMs)
     for (const { code, field, params } of found) issues.push({ row, code, field, params })
     const flags = found.map(({ code }) => code).filter(isFlag)

@@ -1,24 +1,49 @@
-/** Copies `values[from..to]` into `into`, sorted (insertion sort: a window has some ten values). Returns their number. */
-function sortWindow(values: ArrayLike<number>, from: number, to: number, into: Float64Array): number {
-  let n = 0
-  for (let i = from; i <= to; i++) {
-    const value = values[i] ?? NaN
-    let at = n++
-    while (at > 0 && (into[at - 1] ?? 0) > value) {
-      into[at] = into[at - 1] ?? 0
-      at--
-    }
-    into[at] = value
+/** Numbers in order, with room for a window: insertion and removal by bisection, O(log w) comparisons. */
+class SortedWindow {
+  private readonly sorted: Float64Array
+  private size = 0
+
+  constructor(capacity: number) {
+    this.sorted = new Float64Array(capacity)
   }
-  return n
+
+  private place(value: number): number {
+    let [low, high] = [0, this.size]
+    while (low < high) {
+      const middle = (low + high) >> 1
+      if ((this.sorted[middle] ?? NaN) < value) low = middle + 1
+      else high = middle
+    }
+    return low
+  }
+
+  add(value: number) {
+    const at = this.place(value)
+    this.sorted.copyWithin(at + 1, at, this.size++)
+    this.sorted[at] = value
+  }
+
+  remove(value: number) {
+    const at = this.place(value)
+    this.sorted.copyWithin(at, at + 1, this.size--)
+  }
+
+  median(): number {
+    const middle = this.size >> 1
+    const upper = this.sorted[middle] ?? NaN
+    return this.size % 2 === 1 ? upper : ((this.sorted[middle - 1] ?? NaN) + upper) / 2
+  }
 }
 
-const middle = (sorted: Float64Array, n: number) =>
-  n % 2 === 1 ? (sorted[n >> 1] ?? NaN) : ((sorted[n / 2 - 1] ?? NaN) + (sorted[n / 2] ?? NaN)) / 2
-
-function medians(n: number, half: number, values: ArrayLike<number>, window: (i: number) => [number, number]) {
-  const sorted = new Float64Array(2 * half + 1)
-  return Float64Array.from({ length: n }, (_, i) => middle(sorted, sortWindow(values, ...window(i), sorted)))
+/** Medians of windows whose ends `from(i)` and `to(i)` (both included) never go back. Values are finite. */
+function medians(values: ArrayLike<number>, width: number, from: (i: number) => number, to: (i: number) => number) {
+  const window = new SortedWindow(width)
+  let [first, next] = [0, 0]
+  return Float64Array.from({ length: values.length }, (_, i) => {
+    while (first < from(i)) window.remove(values[first++] ?? NaN)
+    while (next <= to(i)) window.add(values[next++] ?? NaN)
+    return window.median()
+  })
 }
 
 /**
@@ -27,14 +52,22 @@ function medians(n: number, half: number, values: ArrayLike<number>, window: (i:
  */
 export function centredMedian(values: ArrayLike<number>, half: number): Float64Array {
   const last = values.length - 1
-  return medians(values.length, half, values, (i) => {
-    const reach = Math.min(half, i, last - i)
-    return [i - reach, i + reach]
-  })
+  const reach = (i: number) => Math.min(half, i, last - i)
+  return medians(
+    values,
+    2 * half + 1,
+    (i) => i - reach(i),
+    (i) => i + reach(i),
+  )
 }
 
 /** Median of the values within `half` positions; at the ends, of those there are. For values without a trend. */
 export function localMedian(values: ArrayLike<number>, half: number): Float64Array {
   const last = values.length - 1
-  return medians(values.length, half, values, (i) => [Math.max(0, i - half), Math.min(last, i + half)])
+  return medians(
+    values,
+    2 * half + 1,
+    (i) => Math.max(0, i - half),
+    (i) => Math.min(last, i + half),
+  )
 }
