@@ -50,7 +50,7 @@ function trendLine(points: Point[]): StaticLine {
   return { value_m: v0 - slope * t0, slope_m_per_s: slope, readings: points.length }
 }
 
-/** A trend is carried through the whole test: it needs as long a record before it (methods §1). */
+/** A trend is carried through the whole test: it needs as long a record before it. */
 function shortRecord(before: Point[], all: Point[]): { code: DrawdownCode; params: Params }[] {
   const times = (points: Point[]) => points.map(({ t }) => t)
   const antecedent_s = -times(before).reduce((a, b) => Math.min(a, b), 0)
@@ -81,7 +81,7 @@ function staticLine(points: Point[], level: StaticLevel): Static {
 const sign: Record<Quantity, 1 | -1> = { depth: 1, level: -1, drawdown: 1 }
 
 /**
- * Drawdown of the readings that were taken, in file order: depth − static depth, or static level − level (methods §1).
+ * Drawdown of the readings that were taken, in file order: depth − static depth, or static level − level.
  * Readings that are drawdown already come back unchanged and need no static level.
  */
 export function toDrawdown(rows: Reading[], quantity: Quantity, level: StaticLevel): DrawdownResult {

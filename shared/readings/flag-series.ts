@@ -107,7 +107,7 @@ function flagSpikes(times: number[], values: number[], indices: number[], option
 
 /**
  * What looks wrong in a series, in file order: sentinels, times that repeat or step back, gaps, spikes
- * (further than 5 scaled MADs from a running median, the MAD not below the logger's resolution; methods §1).
+ * (further than 5 scaled MADs from a running median, the MAD not below the logger's resolution).
  * Nothing is removed. `elapsed_s` and `value_m` have one length; `index` counts in them.
  * @throws RangeError when the lengths differ
  */
