@@ -26,7 +26,7 @@ export function createWellsService(deps: Deps, { region, testsOf, valuesOf }: We
   const { now } = deps
 
   async function columns(executor: Executor, input: WellInput) {
-    const { screens, picks, confirmOutside: _, x: _x, y: _y, epsg: _epsg, ...facts } = input
+    const { screens: _screens, picks, confirmOutside: _, x: _x, y: _y, epsg: _epsg, ...facts } = input
     checkConstruction(input)
     const unitIds = picks.map(({ unitId }) => unitId)
     if ((await repository.countUnits(executor, unitIds)) !== new Set(unitIds).size)
