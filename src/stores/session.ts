@@ -26,6 +26,7 @@ export const useSession = defineStore('session', () => {
     return mayDo(viewer.value, action, { openToVisitors: region.value?.openToVisitors ?? false })
   }
 
+  /** Takes over what the server says about who reads. */
   function enter(session: Session) {
     current.value = session
     usePreferences().enter(session.preferences, session.region.unitSystem, session.viewer.id !== null)
@@ -67,6 +68,7 @@ export const useSession = defineStore('session', () => {
     trouble,
     can,
     known,
+    enter,
     signInWith,
     leave,
     changeOwnPassword,
