@@ -20,7 +20,7 @@ export function createApp(deps: Deps): Express {
   app.use(compression({ threshold: 1024 }))
   app.use('/tiles', tilesRouter(deps))
   app.use(apiRouter(deps))
-  app.use(clientFiles())
+  app.use(clientFiles(deps.config.clientDir))
   app.use(unknownAddress)
   app.use(sendProblem)
   return app

@@ -1,17 +1,14 @@
 import { readFile, stat } from 'node:fs/promises'
 import { join } from 'node:path'
-import { fileURLToPath } from 'node:url'
 import express, { Router, type Request, type RequestHandler, type Response } from 'express'
 import { cspNonce } from './security-headers.ts'
-
-export const builtClient = fileURLToPath(new URL('../../dist', import.meta.url))
 
 const notBuilt = `<!doctype html>
 <html lang="en">
 <head><meta charset="utf-8"><title>Basinbook</title></head>
 <body>
 <h1>The pages are not built yet</h1>
-<p>The server runs, but the browser application is missing from the folder <code>dist</code>.
+<p>The server runs, but the browser application is missing from its folder.
 Run <code>npm start</code>, which builds it, or <code>npm run build</code>, and load this page again.</p>
 </body>
 </html>
@@ -54,7 +51,7 @@ function page(folder: string): RequestHandler {
 }
 
 /** The built client: files under a content hash for ever, the rest asked for again, every page address the same page. */
-export function clientFiles(folder = builtClient): Router {
+export function clientFiles(folder: string): Router {
   const router = Router()
   const common = { index: false, redirect: false, fallthrough: true }
   router.use('/assets', express.static(join(folder, 'assets'), { ...common, immutable: true, maxAge: '365d' }))

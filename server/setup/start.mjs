@@ -18,8 +18,8 @@ await runCommand(async (life) => {
   const begun = performance.now()
   const steps = makeSteps()
   const { settings, config, database, env } = await prepare(steps, life)
-  if (!clientIsBuilt(inRoot('dist'))) {
-    await steps.step('Building the pages', () => buildClient(inRoot('dist'), life.stopping))
+  if (!clientIsBuilt(config.clientDir)) {
+    await steps.step('Building the pages', () => buildClient(config.clientDir, life.stopping))
   }
   const port = await checkedPort(config.port, config.host)
   const start = application({ ...env, PORT: String(port) }, settings.dataDir, life)
