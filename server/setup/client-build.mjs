@@ -1,8 +1,9 @@
-import { existsSync, mkdirSync, readFileSync, renameSync, rmSync, writeFileSync } from 'node:fs'
+import { existsSync, mkdirSync, readdirSync, readFileSync, renameSync, rmSync, writeFileSync } from 'node:fs'
 import { dirname, join } from 'node:path'
 import { contentHash } from './content-hash.mjs'
 import { waitForLock } from './locks.mjs'
 import { inRoot, root } from './places.mjs'
+import { SetupProblem } from './problem.mjs'
 import { run } from './processes.mjs'
 
 const sources = ['src', 'shared', 'index.html', 'vite.config.ts', 'package-lock.json']
@@ -16,6 +17,16 @@ const stampOf = (/** @type {string} */ folder) => join(folder, '.sources')
  */
 export function clientIsBuilt(folder, hash = contentHash(root, sources)) {
   return existsSync(stampOf(folder)) && readFileSync(stampOf(folder), 'utf8') === hash
+}
+
+/**
+ * The folder is somebody's choice: one that holds anything but earlier pages is not replaced.
+ * @param {string} folder
+ */
+function refuseForeign(folder) {
+  const names = existsSync(folder) ? readdirSync(folder) : []
+  if (names.length === 0 || (names.includes('index.html') && names.includes('assets'))) return
+  throw new SetupProblem(`CLIENT_DIR is ${folder}, which holds other things than built pages. Choose an empty folder.`)
 }
 
 /**
@@ -34,6 +45,7 @@ export async function buildClient(folder, signal) {
     await run(process.execPath, [vite, 'build', '--outDir', made, '--emptyOutDir'], { cwd: root, env, signal })
     writeFileSync(stampOf(made), hash)
     mkdirSync(dirname(folder), { recursive: true })
+    refuseForeign(folder)
     rmSync(folder, { recursive: true, force: true })
     renameSync(made, folder)
   } finally {
