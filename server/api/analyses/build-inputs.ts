@@ -1,8 +1,7 @@
 import type { AnalysisInputs, Series } from '#shared/hydraulics/analysis.ts'
 import { toDrawdown, type StaticLevel } from '#shared/readings/drawdown.ts'
 import type { Quantity } from '#shared/readings/model.ts'
-import type { PumpingTestRow } from '../pumping-tests/pumping-tests.repository.ts'
-import type { TestParts, TestWellRow } from '../pumping-tests/view.ts'
+import type { PumpingTestRow, TestParts, TestWellRow } from '../pumping-tests/view.ts'
 import type { listEdits, ReadingRow } from './inputs.repository.ts'
 
 export interface InputParts extends TestParts {

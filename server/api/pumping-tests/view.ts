@@ -12,6 +12,7 @@ import type {
 import { localStart } from './start-time.ts'
 
 type Rows<F extends (...args: never[]) => unknown> = Awaited<ReturnType<F>>
+export type { PumpingTestRow }
 export type FoundTest = NonNullable<Rows<typeof findPumpingTest>>
 export type TestWellRow = Rows<typeof listTestWells>[number]
 export type Total = Rows<typeof countPumpingTests>
