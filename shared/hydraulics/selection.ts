@@ -64,7 +64,10 @@ export function chosenSeries(inputs: AnalysisInputs, { wellIds }: AnalysisOption
   })
 }
 
-/** Chooses the readings to fit and accounts for every one that is left out. */
+/**
+ * Chooses the readings to fit and accounts for every one that is left out.
+ * @throws AnalysisError when all readings of a well have one time
+ */
 export function selectReadings(inputs: AnalysisInputs, options: AnalysisOptions, rule: SelectionRule): Selection {
   const wells: Selected[] = []
   const leftOut: LeftOut[] = []
@@ -72,6 +75,7 @@ export function selectReadings(inputs: AnalysisInputs, options: AnalysisOptions,
     const counts = new Map<LeftOutReason, number>()
     const kept = sortedIndices(series, rule, counts)
     const times = kept.map((i) => (series.elapsed_s[i] as number) - rule.origin_s)
+    if (times.length > 1 && times[0] === times.at(-1)) throw new AnalysisError('analysis/times-equal')
     const thinned = thinLogarithmically(times, perCycle(options))
     if (thinned.length < kept.length) counts.set('thinned', kept.length - thinned.length)
     const indices = thinned.map((i) => kept[i] as number)

@@ -52,7 +52,7 @@ describe('Cooper–Jacob time–drawdown', () => {
     expect(relative(valueOf(line.T), valueOf(curve.T))).toBeLessThan(Number(shown?.params.slopeError))
   })
 
-  it('shows errors of 2.0 % and 4.9 % at u = 0.05, of 0.25 % and 1.0 % at 0.01 (methods.md §2)', () => {
+  it('shows errors of 2.0 % and 4.9 % at u = 0.05, of 0.25 % and 1.0 % at 0.01', () => {
     expect(straightLineErrors(0.05)).toEqual({ drawdown: expect.closeTo(0.02, 3), slope: expect.closeTo(0.0488, 4) })
     expect(straightLineErrors(0.01)).toEqual({ drawdown: expect.closeTo(0.0025, 4), slope: expect.closeTo(0.00995, 5) })
   })
