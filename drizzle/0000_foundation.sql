@@ -309,16 +309,6 @@ CREATE TABLE `data_versions` (
 	CONSTRAINT `data_versions_unit_id` PRIMARY KEY(`unit_id`)
 );
 --> statement-breakpoint
-CREATE TABLE `demo_truth` (
-	`id` bigint unsigned AUTO_INCREMENT NOT NULL,
-	`unit_code` varchar(20) NOT NULL,
-	`quantity` varchar(4) NOT NULL,
-	`lon` double NOT NULL,
-	`lat` double NOT NULL,
-	`log10_value` double NOT NULL,
-	CONSTRAINT `demo_truth_id` PRIMARY KEY(`id`)
-);
---> statement-breakpoint
 CREATE TABLE `reviews` (
 	`id` bigint unsigned AUTO_INCREMENT NOT NULL,
 	`analysis_id` bigint unsigned NOT NULL,
@@ -426,7 +416,6 @@ CREATE INDEX `adopted_values_well` ON `adopted_values` (`well_id`,`valid_to`);--
 CREATE INDEX `adopted_values_analysis` ON `adopted_values` (`analysis_id`);--> statement-breakpoint
 CREATE INDEX `analyses_test` ON `analyses` (`pumping_test_id`);--> statement-breakpoint
 CREATE INDEX `analyses_state` ON `analyses` (`state`);--> statement-breakpoint
-CREATE INDEX `demo_truth_unit` ON `demo_truth` (`unit_code`,`quantity`);--> statement-breakpoint
 CREATE INDEX `reviews_analysis` ON `reviews` (`analysis_id`);--> statement-breakpoint
 CREATE INDEX `audit_trail_at` ON `audit_trail` (`at`);--> statement-breakpoint
 CREATE INDEX `audit_trail_subject` ON `audit_trail` (`subject`,`subject_id`);--> statement-breakpoint

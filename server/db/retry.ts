@@ -1,7 +1,12 @@
 import { setTimeout as pause } from 'node:timers/promises'
 
 /** Deadlock (also a cluster's certification failure), lock wait, node not ready, connection lost: the work may simply be done again. */
-const passing = new Set(['ER_LOCK_DEADLOCK', 'ER_LOCK_WAIT_TIMEOUT', 'ER_UNKNOWN_COM_ERROR', 'PROTOCOL_CONNECTION_LOST'])
+const passing = new Set([
+  'ER_LOCK_DEADLOCK',
+  'ER_LOCK_WAIT_TIMEOUT',
+  'ER_UNKNOWN_COM_ERROR',
+  'PROTOCOL_CONNECTION_LOST',
+])
 /** The database cannot be reached at all. */
 const unreachable = new Set([
   'ECONNREFUSED',

@@ -129,6 +129,9 @@ export function adoptedRows(
     }))
   }
   const unitId = units[0]!.unitId
+  const withThickness = Math.hypot(evidence.logErrorT, test.thicknessError / Math.LN10)
+  // A slug test measures K, and its T is derived with the thickness; a pumping test the other way round.
+  const measuresK = facts.origin === 'slug-test'
   const grade = evidence.evidence
   const rows: NewValue[] = [
     {
@@ -136,7 +139,7 @@ export function adoptedRows(
       unitId,
       quantity: 'T',
       log10Value: Math.log10(T.value),
-      log10Error: evidence.logErrorT,
+      log10Error: measuresK ? withThickness : evidence.logErrorT,
       evidence: grade,
     },
   ]
@@ -154,7 +157,7 @@ export function adoptedRows(
     })
   }
   if (K) {
-    const log10Error = Math.hypot(evidence.logErrorT, test.thicknessError / Math.LN10)
+    const log10Error = measuresK ? evidence.logErrorT : withThickness
     rows.push({ ...common, unitId, quantity: 'K', log10Value: Math.log10(K.value), log10Error, evidence: grade })
   }
   return rows

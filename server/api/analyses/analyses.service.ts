@@ -113,7 +113,7 @@ export function createAnalysesService(deps: Deps, inputs: ReturnType<typeof crea
     report: (viewer: Viewer, testId: number, value: ReportedValue) =>
       inTransaction(deps, async (tx) => {
         if (!(await inputs.maySee(tx, viewer, testId))) throw notFound()
-        const { T: _T, S, storageClass, ...known } = value
+        const { T: _T, K: _K, S, storageClass, ...known } = value
         const snapshot = { version: 1 as const, kind: 'reported' as const, ...known }
         const result = reportedResult(value, evidenceOf(reportedFacts(known, S === null ? null : storageClass)))
         checkAdoptable(

@@ -14,9 +14,10 @@ export const reportedInputs = z.object({
 export type ReportedInputs = z.infer<typeof reportedInputs>
 
 export interface ReportedValue extends Omit<ReportedInputs, 'version' | 'kind'> {
-  /** SI: m²/s and 1. */
+  /** SI: m²/s, 1, m/s. */
   T: number
   S: number | null
+  K: number | null
   storageClass: StoredResult['storageClass']
 }
 
@@ -28,14 +29,17 @@ function estimate(value: number, logSd: number): StoredResult['T'] {
 }
 
 /** There is nothing to calculate: the interval is that of values with this evidence. */
-export function reportedResult({ T, S, storageClass }: ReportedValue, { logErrorT, storage }: Evidence): StoredResult {
+export function reportedResult(
+  { T, S, K, storageClass }: ReportedValue,
+  { logErrorT, storage }: Evidence,
+): StoredResult {
   return {
     version: 1,
     method: 'reported',
     methodVersion: 1,
     T: estimate(T, logErrorT),
     S: S === null ? null : estimate(S, storage?.logError ?? logErrorT),
-    K: null,
+    K: K === null ? null : estimate(K, logErrorT),
     storageClass: S === null ? null : storageClass,
     extras: {},
     residuals: [],

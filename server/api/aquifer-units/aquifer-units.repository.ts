@@ -35,3 +35,11 @@ export const streamsOfUnit = (executor: Executor, unitId: number) =>
     .innerJoin(streams, eq(streams.id, unitStreams.streamId))
     .where(eq(unitStreams.unitId, unitId))
     .orderBy(asc(streams.streamOrder), asc(streams.name))
+
+export async function insertUnit(executor: Executor, row: typeof aquiferUnits.$inferInsert): Promise<number> {
+  const [inserted] = await executor.insert(aquiferUnits).values(row).$returningId()
+  return inserted!.id
+}
+
+export const connectStreams = (executor: Executor, unitId: number, streamIds: number[]) =>
+  executor.insert(unitStreams).values(streamIds.map((streamId) => ({ unitId, streamId })))

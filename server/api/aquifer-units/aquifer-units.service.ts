@@ -1,15 +1,42 @@
 import { area, polygon } from '@turf/turf'
 import type { AquiferUnit } from '#shared/contracts/map.ts'
 import type { Viewer } from '#shared/contracts/permissions.ts'
+import { inTransaction } from '../../db/transaction.ts'
 import type { Deps } from '../../deps.ts'
 import { notFound } from '../../errors.ts'
+import { recordAudit } from '../audit-trail/record-audit.ts'
 import * as repository from './aquifer-units.repository.ts'
 
 type UnitRow = NonNullable<Awaited<ReturnType<typeof repository.findUnit>>>
 type Counts = Awaited<ReturnType<typeof repository.countValues>>
 
-export function createAquiferUnitsService({ connection: { db } }: Deps) {
+export interface NewAquiferUnit extends Pick<
+  UnitRow,
+  'code' | 'name' | 'kind' | 'depthOrder' | 'outline' | 'description'
+> {
+  /** Streams that exchange water with the unit. */
+  streamIds: number[]
+}
+
+export function createAquiferUnitsService(deps: Deps) {
+  const { db } = deps.connection
+  const { now } = deps
+
   return {
+    create: (viewer: Viewer, { streamIds, ...row }: NewAquiferUnit) =>
+      inTransaction(deps, async (tx) => {
+        const id = await repository.insertUnit(tx, row)
+        if (streamIds.length > 0) await repository.connectStreams(tx, id, streamIds)
+        await recordAudit(tx, {
+          viewer,
+          at: now(),
+          action: 'aquifer-units/create',
+          subject: 'aquifer-unit',
+          subjectId: id,
+        })
+        return { id }
+      }),
+
     async list(viewer: Viewer) {
       const [units, counts] = await Promise.all([repository.listUnits(db), repository.countValues(db, viewer)])
       return { items: units.map((unit) => unitView(unit, counts)) }

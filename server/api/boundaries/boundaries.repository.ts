@@ -4,3 +4,14 @@ import { boundaries, boundaryUnits } from '../../db/schema/index.ts'
 
 export const listBoundaries = (executor: Executor) => executor.select().from(boundaries).orderBy(asc(boundaries.id))
 export const listBoundaryUnits = (executor: Executor) => executor.select().from(boundaryUnits)
+
+export async function insertBoundary(
+  executor: Executor,
+  row: typeof boundaries.$inferInsert,
+  unitIds: number[],
+): Promise<number> {
+  const [inserted] = await executor.insert(boundaries).values(row).$returningId()
+  const boundaryId = inserted!.id
+  await executor.insert(boundaryUnits).values(unitIds.map((unitId) => ({ boundaryId, unitId })))
+  return boundaryId
+}

@@ -1,8 +1,30 @@
+import type { Viewer } from '#shared/contracts/permissions.ts'
+import type { Position } from '../../db/spatial.ts'
+import { inTransaction } from '../../db/transaction.ts'
 import type { Deps } from '../../deps.ts'
-import { listBoundaries, listBoundaryUnits } from './boundaries.repository.ts'
+import { recordAudit } from '../audit-trail/record-audit.ts'
+import { insertBoundary, listBoundaries, listBoundaryUnits } from './boundaries.repository.ts'
 
-export function createBoundariesService({ connection: { db } }: Deps) {
+export interface NewBoundary {
+  name: string
+  kind: 'fault' | 'barrier' | 'coast' | 'constant-head'
+  path: Position[]
+  /** Units it affects, at least one. */
+  unitIds: number[]
+}
+
+export function createBoundariesService(deps: Deps) {
+  const { db } = deps.connection
+  const { now } = deps
+
   return {
+    create: (viewer: Viewer, { unitIds, ...row }: NewBoundary) =>
+      inTransaction(deps, async (tx) => {
+        const id = await insertBoundary(tx, row, unitIds)
+        await recordAudit(tx, { viewer, at: now(), action: 'boundaries/create', subject: 'boundary', subjectId: id })
+        return { id }
+      }),
+
     async list() {
       const [rows, units] = await Promise.all([listBoundaries(db), listBoundaryUnits(db)])
       const unitIds = (id: number) => units.filter(({ boundaryId }) => boundaryId === id).map(({ unitId }) => unitId)

@@ -1,24 +1,29 @@
-import { and, asc, eq, isNotNull, isNull, sql, type SQL } from 'drizzle-orm'
+import { and, asc, eq, gte, isNotNull, isNull, lt, sql, type SQL } from 'drizzle-orm'
 import type { MapWellQuery } from '#shared/contracts/map.ts'
 import type { Viewer } from '#shared/contracts/permissions.ts'
-import { mercatorInts } from '#shared/geodesy/index.ts'
+import { mercatorBits, mercatorInts } from '#shared/geodesy/index.ts'
 import type { Executor } from '../../db/client.ts'
 import { readable } from '../../db/readable.ts'
 import { adoptedValues, pumpingTests, wells } from '../../db/schema/index.ts'
 
 /** Side of a cluster cell in pixels is 64 = 2^6; a pixel at zoom z is 2^(24 − 8 − z) of the Mercator integers. */
-const cellBits = (zoom: number) => Math.max(0, 24 - 8 - zoom + 6)
+const cellBits = (zoom: number) => Math.max(0, mercatorBits - 8 - zoom + 6)
 
 /** Wells of a box, as a range of the Mercator index; a box across the date line wraps. */
 function inBox([west, south, east, north]: MapWellQuery['bbox']): SQL {
   const a = mercatorInts(west, north)
   const b = mercatorInts(east, south)
+  // The date line as the eastern edge is the end of the map, not its beginning.
+  const last = east === 180 ? 2 ** mercatorBits - 1 : b.mx
   const x =
     west <= east
-      ? sql`${wells.mx} between ${a.mx} and ${b.mx}`
-      : sql`(${wells.mx} >= ${a.mx} or ${wells.mx} <= ${b.mx})`
+      ? sql`${wells.mx} between ${a.mx} and ${last}`
+      : sql`(${wells.mx} >= ${a.mx} or ${wells.mx} <= ${last})`
   return sql`${x} and ${wells.my} between ${a.my} and ${b.my}`
 }
+
+const log10 = (value: number | undefined, within: (log: number) => SQL) =>
+  value === undefined ? undefined : within(Math.log10(value))
 
 /** The newest current value of each well in the chosen unit and quantity, from tests the viewer may see. */
 function valuesOf(executor: Executor, viewer: Viewer, { unitId, quantity, storageClass }: MapWellQuery) {
@@ -51,7 +56,13 @@ function filtered(executor: Executor, viewer: Viewer, query: MapWellQuery) {
     none: isNull(adoptedValues.id),
     valued: isNotNull(adoptedValues.id),
   }
-  const where = and(inBox(query.bbox), readable.wells(viewer), query.only ? only[query.only] : undefined)
+  const where = and(
+    inBox(query.bbox),
+    readable.wells(viewer),
+    query.only ? only[query.only] : undefined,
+    log10(query.from, (log) => gte(adoptedValues.log10Value, log)),
+    log10(query.below, (log) => lt(adoptedValues.log10Value, log)),
+  )
   return { newest, where }
 }
 

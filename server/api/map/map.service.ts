@@ -5,7 +5,9 @@ import type { Deps } from '../../deps.ts'
 import { clusterWells, listMapWells } from './map.repository.ts'
 
 /** Up to this many wells a view shows each of them; more are grouped. */
-const mostSingle = 600
+const mostSingle = 1_200
+/** Discs in a cell of 64 pixels before they hide each other: then they are grouped too. */
+const mostInCell = 14
 
 export function createMapService({ connection: { db } }: Deps) {
   return {
@@ -13,11 +15,20 @@ export function createMapService({ connection: { db } }: Deps) {
       const cells = await clusterWells(db, viewer, query)
       const total = cells.reduce((sum, { count }) => sum + count, 0)
       const valued = cells.reduce((sum, cell) => sum + cell.valued, 0)
-      if (total > mostSingle) return { wells: [], clusters: cells.map(clusterView), total, valued }
+      if (total > mostSingle || tooDense(cells, query.zoom))
+        return { wells: [], clusters: cells.map(clusterView), total, valued }
       const rows = await listMapWells(db, viewer, query, mostSingle)
       return { wells: rows.map(wellView), clusters: [], total, valued }
     },
   }
+}
+
+/** Half of the wells stand closer than can be told apart; further in than street level nothing would be gained. */
+function tooDense(cells: { count: number }[], zoom: number): boolean {
+  const crowded = cells.filter(({ count }) => count > mostInCell)
+  const inCrowds = crowded.reduce((sum, { count }) => sum + count, 0)
+  const total = cells.reduce((sum, { count }) => sum + count, 0)
+  return zoom < 15 && inCrowds > total / 2
 }
 
 const clusterView = ({ mx, my, count, valued }: Awaited<ReturnType<typeof clusterWells>>[number]) => ({

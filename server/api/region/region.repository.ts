@@ -28,7 +28,10 @@ export async function updateRegion(executor: Executor, rowVersion: number, set: 
   return changed.affectedRows === 1
 }
 
-/** Whether distances were ever computed in the region's system; says nothing about any single well. */
+/**
+ * Whether distances were ever computed in the region's system.
+ * @everyRow Counts hidden wells too, and says nothing about any single one.
+ */
 export async function hasWells(executor: Executor): Promise<boolean> {
   return (await executor.$count(wells)) > 0
 }

@@ -17,3 +17,8 @@ export const unitsOfStream = (executor: Executor, streamId: number) =>
     .innerJoin(aquiferUnits, eq(aquiferUnits.id, unitStreams.unitId))
     .where(eq(unitStreams.streamId, streamId))
     .orderBy(asc(aquiferUnits.depthOrder))
+
+export async function insertStream(executor: Executor, row: typeof streams.$inferInsert): Promise<number> {
+  const [inserted] = await executor.insert(streams).values(row).$returningId()
+  return inserted!.id
+}

@@ -1,10 +1,13 @@
 import { length, lineString, point, pointToLineDistance } from '@turf/turf'
+import type { Viewer } from '#shared/contracts/permissions.ts'
 import type { Executor } from '../../db/client.ts'
 import type { Position } from '../../db/spatial.ts'
+import { inTransaction } from '../../db/transaction.ts'
 import type { Deps } from '../../deps.ts'
 import { notFound } from '../../errors.ts'
+import { recordAudit } from '../audit-trail/record-audit.ts'
 import { connectedStreams } from './connected.repository.ts'
-import { findStream, listStreams, unitsOfStream } from './streams.repository.ts'
+import { findStream, insertStream, listStreams, unitsOfStream } from './streams.repository.ts'
 
 export interface NearStream {
   id: number
@@ -12,7 +15,17 @@ export interface NearStream {
   distanceM: number
 }
 
-export function createStreamsService({ connection: { db } }: Deps) {
+export interface NewStream {
+  name: string
+  /** 1 is the main river. */
+  streamOrder: number
+  path: Position[]
+}
+
+export function createStreamsService(deps: Deps) {
+  const { db } = deps.connection
+  const { now } = deps
+
   /** Streams connected to any of the units, nearest first, with their distance in metres. */
   async function connected(executor: Executor, unitIds: number[], place: Position): Promise<NearStream[]> {
     return (await connectedStreams(executor, unitIds))
@@ -22,6 +35,13 @@ export function createStreamsService({ connection: { db } }: Deps) {
 
   return {
     connected,
+
+    create: (viewer: Viewer, stream: NewStream) =>
+      inTransaction(deps, async (tx) => {
+        const id = await insertStream(tx, { ...stream, createdAt: now() })
+        await recordAudit(tx, { viewer, at: now(), action: 'streams/create', subject: 'stream', subjectId: id })
+        return { id }
+      }),
 
     async list() {
       return { items: (await listStreams(db)).map(streamView) }

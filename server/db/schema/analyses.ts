@@ -99,17 +99,3 @@ export const variogramModels = mysqlTable(
   },
   (table) => [uniqueIndex('variogram_models_key').on(table.unitId, table.quantity, table.scope, table.dataVersion)],
 )
-
-/** What the demo region was drawn from, so that its estimates can be compared with the truth. */
-export const demoTruth = mysqlTable(
-  'demo_truth',
-  {
-    id: id(),
-    unitCode: varchar({ length: 20 }).notNull(),
-    quantity: varchar({ length: 4 }).notNull(),
-    lon: double().notNull(),
-    lat: double().notNull(),
-    log10Value: double().notNull(),
-  },
-  (table) => [index('demo_truth_unit').on(table.unitCode, table.quantity)],
-)

@@ -16,7 +16,7 @@ export const fault: { code: string; name: string; kind: 'fault'; units: readonly
   units: ['FL', 'BS'],
   line: smoothLine(
     Array.from({ length: 17 }, (_, i): Point => [faultX(-13_500 + i * 1_750), -13_500 + i * 1_750]),
-    6,
+    2,
   ),
 }
 

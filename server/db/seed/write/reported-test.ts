@@ -1,0 +1,45 @@
+import type { Services } from '../../../api/services.ts'
+import type { DemoReportedTest, ReportBasis } from '../records/types.ts'
+import type { UnitIds } from './geography.ts'
+import type { Cast } from './people.ts'
+
+const origins = {
+  'specific-capacity': 'specific-capacity',
+  'slug-test': 'slug-test',
+  'checked-report': 'legacy-reviewed',
+  'bare-number': 'legacy-number',
+} as const satisfies Record<ReportBasis, string>
+
+/** T as reported, or K times the thickness where a slug test gave K. */
+function valuesOf({ values, thicknessM }: DemoReportedTest) {
+  const of = (quantity: 'T' | 'S' | 'K') => values.find((value) => value.quantity === quantity)
+  const K = of('K')?.value ?? null
+  const T = of('T')?.value ?? K! * thicknessM
+  return { T, K, S: of('S')?.value ?? null, storageClass: of('S')?.storageClass ?? null }
+}
+
+/** A test of which only values came down, entered by the steward and accepted by the reviewer. */
+export async function writeReportedTest(
+  services: Services,
+  cast: Cast,
+  test: DemoReportedTest,
+  wellIds: Map<string, number>,
+  unitIds: UnitIds,
+) {
+  const { startLocal, zone, aquifer, thicknessM, thicknessBasis, visibility, source } = test
+  const { id } = await services.pumpingTests.createReported(cast.steward, {
+    ...{ startLocal, zone, aquifer, thicknessM, thicknessBasis, visibility, source },
+    wellId: wellIds.get(test.wellCode)!,
+    intervalBasis: 'unknown',
+    intervalTopM: null,
+    intervalBottomM: null,
+    units: [{ unitId: unitIds.get(test.unit)!, share: 1, basis: 'single-unit' }],
+  })
+  const known = { origin: origins[test.basis], observationWell: false, aquifer, source }
+  const analysis = await services.analyses.report(cast.steward, id, { ...known, ...valuesOf(test) })
+  await services.reviews.decide(cast.reviewer, analysis.id, {
+    rowVersion: analysis.rowVersion,
+    decision: 'accepted',
+    comment: null,
+  })
+}

@@ -1,0 +1,71 @@
+import { createServices } from '../../../api/services.ts'
+import type { Deps } from '../../../deps.ts'
+import type { JobContext, JobHandler } from '../../../jobs/jobs.ts'
+import type { Executor } from '../../client.ts'
+import { pumpingTests, wells } from '../../schema/index.ts'
+import { seedAccounts } from '../accounts.ts'
+import { demoRecords } from '../records/index.ts'
+import type { DemoTest } from '../records/types.ts'
+import { localStart } from '../../../api/pumping-tests/start-time.ts'
+import { writeFullTest } from './full-test.ts'
+import { writeGeography } from './geography.ts'
+import { castOf } from './people.ts'
+import { writeReportedTest } from './reported-test.ts'
+import { writeWell } from './wells.ts'
+
+/** The demo region is always drawn from this seed. */
+export const demoSeed = 1
+/** Records that are written in one transaction: each is there whole, or not at all. */
+const recordsPerTransaction = 10
+
+type Write = (tx: Executor) => Promise<void>
+
+/** Services whose own transactions are parts of one larger. */
+const servicesIn = (deps: Deps, tx: Executor) =>
+  createServices({ ...deps, connection: { ...deps.connection, db: tx as Deps['connection']['db'] } })
+
+async function inBatches(deps: Deps, context: JobContext, what: string, writes: Write[]) {
+  for (let start = 0; start < writes.length; start += recordsPerTransaction) {
+    await context.checkCancelled()
+    await context.report({ done: start, total: writes.length, message: what })
+    await deps.connection.db.transaction(async (tx) => {
+      for (const write of writes.slice(start, start + recordsPerTransaction)) await write(tx)
+    })
+  }
+  await context.report({ done: writes.length, total: writes.length, message: what })
+}
+
+const keyOf = (wellId: number, startLocal: string) => `${wellId} ${startLocal.slice(0, 16)}`
+
+/** Tests that are there already, by well and start: what makes the seed go on where it was interrupted. */
+async function knownTests(executor: Executor): Promise<Set<string>> {
+  const rows = await executor.select().from(pumpingTests)
+  return new Set(rows.map((row) => keyOf(row.wellId, localStart(row.startAt, row.zone, row.startPrecision))))
+}
+
+/** Fills an empty region with the Isle of Veldray, through the program's own services; repeating it changes nothing. */
+export function seedDemo(deps: Deps): JobHandler {
+  const { db } = deps.connection
+  return async (_payload, context) => {
+    await seedAccounts(deps, db)
+    const cast = await castOf(db)
+    const records = demoRecords(demoSeed)
+    const unitIds = await writeGeography(createServices(deps), cast, db, records)
+
+    const wellIds = new Map((await db.select().from(wells)).map(({ code, id }) => [code, id]))
+    const missingWells = records.wells.filter(({ code }) => !wellIds.has(code))
+    const writeWells = missingWells.map((well): Write => async (tx) => {
+      wellIds.set(well.code, await writeWell(servicesIn(deps, tx), cast, records, well, unitIds))
+    })
+    await inBatches(deps, context, 'wells', writeWells)
+
+    const known = await knownTests(db)
+    const isMissing = ({ wellCode, startLocal }: DemoTest) => !known.has(keyOf(wellIds.get(wellCode)!, startLocal))
+    const writeTests = records.tests.filter(isMissing).map((test): Write => (tx) => {
+      const services = servicesIn(deps, tx)
+      if (test.kind === 'reported') return writeReportedTest(services, cast, test, wellIds, unitIds)
+      return writeFullTest(services, cast, test, wellIds, unitIds)
+    })
+    await inBatches(deps, context, 'tests', writeTests)
+  }
+}
