@@ -14,8 +14,8 @@ export const analyses = mysqlTable(
     inputsSha256: varchar({ length: 64 }).notNull(),
     /** Readings, rates or distances of the test are no longer those of the snapshot. */
     inputsChanged: boolean().notNull().default(false),
-    evidence: mysqlEnum(['firm', 'fair', 'slight']),
-    options: json().$type<unknown>().notNull(),
+    /** Empty for a reported value. */
+    options: json().$type<unknown>(),
     result: json().$type<unknown>().notNull(),
     label: varchar({ length: 120 }),
     rationale: text(),
