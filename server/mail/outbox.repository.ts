@@ -16,8 +16,9 @@ export async function findMail(executor: Executor, id: number) {
   return row ?? null
 }
 
-export const markSent = (executor: Executor, id: number, now: Date) =>
-  executor.update(mailOutbox).set({ state: 'sent', sentAt: now, error: null }).where(eq(mailOutbox.id, id))
+/** `body` is what the outbox goes on showing. */
+export const markSent = (executor: Executor, id: number, now: Date, body: string) =>
+  executor.update(mailOutbox).set({ state: 'sent', sentAt: now, error: null, body }).where(eq(mailOutbox.id, id))
 
 export const markFailed = (executor: Executor, id: number, error: string) =>
   executor.update(mailOutbox).set({ state: 'failed', error }).where(eq(mailOutbox.id, id))

@@ -60,6 +60,17 @@ describe('wrong passwords', () => {
     }
   })
 
+  it('are forgotten once a new password was set by link', async () => {
+    const { email } = await first.makePerson()
+    await fail(first, email, 10)
+    await request(first.app).post('/api/password/forgotten').send({ email }).expect(202)
+    await first.deps.jobs.drain()
+    const token = /#([\w-]+)/.exec(first.mails.at(-1)!.text)![1]
+    const password = 'chosen after the lock'
+    await request(first.app).post('/api/password/setting').send({ token, password }).expect(200)
+    await attempt(second, email, password).expect(200)
+  })
+
   it('cannot slip past the limit by coming all at once', async () => {
     clock.forward(20 * minutes)
     const { email } = await first.makePerson()
