@@ -143,7 +143,7 @@ const counted = (carried: Carried): Facts['counts'] => ({
 const cornersOf = (context: EstimateContext): Point[] => context.unit.outline.flat().map(([x, y]) => ({ x, y }))
 
 function spread(draft: Draft): Pick<Facts, 'clusterShare' | 'clusterExtent_m'> {
-  const clusterExtent_m = extent(draft.values.used)
+  const clusterExtent_m = draft.values.extent_m()
   const whole = extent(cornersOf(draft.context))
   return { clusterExtent_m, clusterShare: whole > 0 ? clusterExtent_m / whole : 1 }
 }

@@ -1,6 +1,6 @@
 import { convexHull } from '#shared/geostatistics/hull.ts'
 import { createNeighbourhood, type Neighbourhood } from '#shared/geostatistics/neighbourhood.ts'
-import type { Polyline } from '#shared/geostatistics/planar.ts'
+import { extent, type Polyline } from '#shared/geostatistics/planar.ts'
 import { independentSites } from './independent-sites.ts'
 import { selectValues } from './select-values.ts'
 import type { Exclusion, Quantity, SiteValue, UsedValue } from './types.ts'
@@ -14,6 +14,8 @@ export interface PreparedValues {
   /** Worked out when first asked for. */
   readonly sites: () => readonly UsedValue[]
   readonly hull: () => Polyline
+  /** Diagonal of the rectangle around the values, metres. */
+  readonly extent_m: () => number
 }
 
 function once<V>(make: () => V): () => V {
@@ -31,5 +33,6 @@ export function prepareValues(values: readonly SiteValue[], quantity: Quantity):
     neighbourhood: createNeighbourhood(used),
     sites: once(() => independentSites(used)),
     hull: once(() => convexHull(used)),
+    extent_m: once(() => extent(used)),
   }
 }

@@ -28,7 +28,8 @@ function weightedMean(group: readonly SiteValue[]): { mean: number; weight: numb
 /** Values of one test share its rate and its aquifer, so that their mean is no surer than the best of them. */
 function poolTest(group: SiteValue[]): UsedValue {
   const chosen = best(group)
-  return { ...chosen, log10: weightedMean(group).mean, memberIds: group.map((v) => v.id), testIds: [chosen.testId] }
+  const log10 = group.length === 1 ? chosen.log10 : weightedMean(group).mean
+  return { ...chosen, log10, memberIds: group.map((v) => v.id), testIds: [chosen.testId] }
 }
 
 /** Repeated tests at a well are independent measurements of one value; where they differ more than their errors say, the scatter counts. */

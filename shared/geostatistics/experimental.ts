@@ -43,9 +43,11 @@ const ESTIMATORS: Record<Estimator, { term: (d: number) => number; gamma: (mean:
   },
 }
 
-function diagonalOf(data: KrigingData): number {
+/** Diagonal of the rectangle around the data. */
+export function diagonalOf(data: Pick<KrigingData, 'x' | 'y'>): number {
   const span = (v: ArrayLike<number>): number => {
-    let [low, high] = [Infinity, -Infinity]
+    let low = Infinity
+    let high = -Infinity
     for (let i = 0; i < v.length; i++) {
       low = Math.min(low, v[i]!)
       high = Math.max(high, v[i]!)

@@ -84,7 +84,8 @@ export function krigeGeometry(
   const exact = options.exact ?? false
   const l = observationCovariance(geometry, v, errorVariance, exact)
   if (!choleskyInPlace(l, n)) throw new GeostatisticsError('singular', 'coincident values without error or nugget')
-  const c = Float64Array.from(to, (h) => structureCovariance(v, h) + (exact && h === 0 ? v.nugget : 0))
+  const c = new Float64Array(n)
+  for (let i = 0; i < n; i++) c[i] = structureCovariance(v, to[i]!) + (exact && to[i] === 0 ? v.nugget : 0)
   const one = new Float64Array(n).fill(1)
   forwardSolve(l, n, c)
   forwardSolve(l, n, one)
@@ -92,9 +93,11 @@ export function krigeGeometry(
   const c1 = dot(c, one, n)
   const oneOne = dot(one, one, n)
   const lagrange = (1 - c1) / oneOne
-  const weights = c.map((value, i) => value + lagrange * one[i]!)
+  const weights = new Float64Array(n)
+  for (let i = 0; i < n; i++) weights[i] = c[i]! + lagrange * one[i]!
   backSolve(l, n, weights)
-  const mean = weights.reduce((sum, w, i) => sum + w * z[i]!, 0)
+  let mean = 0
+  for (let i = 0; i < n; i++) mean += weights[i]! * z[i]!
   return { mean, variance: Math.max(0, totalSill(v) - cc + (1 - c1) * lagrange), weights }
 }
 

@@ -46,7 +46,8 @@ export function createNeighbourhood(points: readonly Point[]): Neighbourhood {
   for (const { x, y } of points) index.add(x, y)
   index.finish()
   const diagonal = extent(points)
-  const squared = (place: Point, i: number): number => (points[i]!.x - place.x) ** 2 + (points[i]!.y - place.y) ** 2
+  // Squared distances of the search under way, by index: sorting on them needs no other bookkeeping.
+  const squared = new Float64Array(points.length)
 
   const within = (place: Point, radius: number): number[] => index.within(place.x, place.y, radius)
 
@@ -56,8 +57,8 @@ export function createNeighbourhood(points: readonly Point[]): Neighbourhood {
       const raw = within(place, radius)
       const found = raw.filter(keep)
       if (found.length >= wanted || raw.length === points.length) {
-        const by = new Map(found.map((i) => [i, squared(place, i)]))
-        return found.sort((a, b) => by.get(a)! - by.get(b)! || a - b)
+        for (const i of found) squared[i] = (points[i]!.x - place.x) ** 2 + (points[i]!.y - place.y) ** 2
+        return found.sort((a, b) => squared[a]! - squared[b]! || a - b)
       }
       radius *= 2
     }

@@ -71,7 +71,10 @@ export const closeRings = (rings: readonly Polyline[]): Polyline[] =>
 
 /** Diagonal of the smallest upright rectangle around the points; 0 for none. */
 export function extent(points: readonly Point[]): number {
-  let [west, east, south, north] = [Infinity, -Infinity, Infinity, -Infinity]
+  let west = Infinity
+  let east = -Infinity
+  let south = Infinity
+  let north = -Infinity
   for (const { x, y } of points) {
     west = Math.min(west, x)
     east = Math.max(east, x)

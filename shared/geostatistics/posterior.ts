@@ -1,5 +1,6 @@
 import { VARIOGRAM_MODEL_IDS, type VariogramModelId } from './catalogue.ts'
 import { GeostatisticsError } from './errors.ts'
+import { diagonalOf } from './experimental.ts'
 import type { KrigingData } from './kriging.ts'
 import { exactLikelihood, vecchiaLikelihood, type LogLikelihood } from './likelihood.ts'
 import { compassSearch, widthOfPeak, type Scored } from './search.ts'
@@ -122,7 +123,7 @@ function spacesFor(data: KrigingData, options: PosteriorOptions): Space[] {
   const scatter = z.reduce((sum, value) => sum + (value - mean) ** 2, 0) / (n - 1)
   const errors = Array.from({ length: n }, (_, i) => data.errorVariance?.[i] ?? 0).reduce((a, b) => a + b, 0) / n
   if (!(scatter > 0)) throw new GeostatisticsError('bad-input', 'all values are equal')
-  const diagonal = Math.hypot(spanOf(data.x), spanOf(data.y))
+  const diagonal = diagonalOf(data)
   if (!(diagonal > 0)) throw new GeostatisticsError('bad-input', 'all values lie at one place')
   const exact = n <= (options.exactUpTo ?? 250) && !options.pair
   const likelihood = exact
@@ -136,15 +137,6 @@ function spacesFor(data: KrigingData, options: PosteriorOptions): Space[] {
     typicalLogSill: Math.log(Math.max(scatter - errors, 0.1 * scatter)),
     likelihood,
   }))
-}
-
-function spanOf(values: ArrayLike<number>): number {
-  let [low, high] = [Infinity, -Infinity]
-  for (let i = 0; i < values.length; i++) {
-    low = Math.min(low, values[i]!)
-    high = Math.max(high, values[i]!)
-  }
-  return high - low
 }
 
 /**

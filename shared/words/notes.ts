@@ -20,7 +20,7 @@ type Nearness = NoteParams['values-near']
 const nearest = ({ nearest_m, bearing_deg }: Nearness, distance: Length): string =>
   `nearest ${distance(nearest_m)} ${compassPoint(bearing_deg)}`
 
-const within: Sentence<'values-near'> = (p, distance) =>
+const within = (p: Nearness, distance: Length): string =>
   `${count(p.within, 'test')} within the ${distance(p.range_m)} range, ${nearest(p, distance)}; ${p.firm} of them firm.`
 
 /** One sentence per note. Numbers come with the reader's units; nothing here decides anything. */

@@ -81,6 +81,12 @@ describe('hull', () => {
     )
   })
 
+  it('of many points is that of the few on its edge', () => {
+    const inner = Array.from({ length: 500 }, (_, i) => ({ x: 1 + ((i * 7) % 80) / 10, y: 1 + ((i * 13) % 80) / 10 }))
+    const corners = square.map(([x, y]) => ({ x, y }))
+    expect(convexHull([...inner, ...corners])).toEqual(square)
+  })
+
   it('of one point is that point, of none is empty', () => {
     expect(convexHull([{ x: 1, y: 2 }])).toEqual([[1, 2]])
     expect(convexHull([])).toEqual([])
