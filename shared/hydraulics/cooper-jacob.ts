@@ -24,7 +24,7 @@ import { proposedWindow } from './proposed-window.ts'
 import { meanRate, rateHistory, type RateHistory } from './rates.ts'
 import { largest, pumpingPhase, requireReadings, selectReadings, type Selected } from './selection.ts'
 import { LARGEST_U, smallUFinding, STRAIGHT_LINE_CONSTANT, theisU, timeOfU } from './small-u.ts'
-import { slopeSd, storageSd, straightLine, zeroAbscissa, type StraightLine } from './straight-line.ts'
+import { lineResiduals, slopeSd, storageSd, straightLine, zeroAbscissa, type StraightLine } from './straight-line.ts'
 import { drawnDrawdown, thinningFactor, thinningFindings, thinningGuard } from './unconfined.ts'
 import { distanceError, radiusOf } from './wells.ts'
 
@@ -55,11 +55,7 @@ function run(inputs: AnalysisInputs, options: AnalysisOptions): MethodOutcome {
     S: well.series.role === 'pumped' ? null : S,
     storageClass: well.series.role === 'pumped' ? null : storageClassOf(inputs, options, last_s),
     extras: extrasOf(line, rate, well),
-    residuals: well.elapsed_s.map((elapsed_s, i) => ({
-      wellId: well.series.wellId,
-      elapsed_s,
-      residual_m: line.residuals[i] as number,
-    })),
+    residuals: lineResiduals(line, well),
     fit: line.summary,
     findings: findingsOf(inputs, options, { history, well, line, T, S }),
     leftOut: selection.leftOut,

@@ -1,13 +1,5 @@
 import { linearRegression } from '#shared/numerics/linear-regression.ts'
-import {
-  AnalysisError,
-  type AnalysisInputs,
-  type AnalysisOptions,
-  type Finding,
-  type FittedCurve,
-  type LeftOut,
-  type MethodOutcome,
-} from './analysis.ts'
+import type { AnalysisInputs, AnalysisOptions, Finding, FittedCurve, MethodOutcome } from './analysis.ts'
 import {
   aquiferFindings,
   determinationFindings,
@@ -18,14 +10,21 @@ import {
 } from './findings.ts'
 import { sharedOptions, storativity, transmissivity, type Method } from './method.ts'
 import { parameterEstimate, scaledEstimate, UNDETERMINED_FACTOR, type LogUncertainty } from './parameter-estimate.ts'
-import { meanRate, rateHistory, type RateHistory } from './rates.ts'
-import { largest, pumpingPhase, selectReadings, type Selected } from './selection.ts'
+import {
+  drawdowns,
+  logDistances,
+  observationWells,
+  takeSnapshot,
+  type Point,
+  type Snapshot,
+} from './distance-snapshot.ts'
+import { rateHistory } from './rates.ts'
+import { largest, pumpingPhase, selectReadings } from './selection.ts'
 import { LARGEST_U, smallUFinding, STRAIGHT_LINE_CONSTANT, theisU, timeOfU } from './small-u.ts'
-import { slopeSd, storageSd, straightLine, zeroAbscissa, type StraightLine } from './straight-line.ts'
+import { slopeSd, storageSd, zeroAbscissa, type StraightLine } from './straight-line.ts'
 import { drawnDrawdown, thinningFactor, thinningFindings, thinningGuard } from './unconfined.ts'
 import { distanceError, radiusOf } from './wells.ts'
 
-const FEWEST_WELLS = 3
 /** Step in log10 of a distance for its effect on the line. */
 const DISTANCE_STEP = 1e-5
 
@@ -37,21 +36,6 @@ export const transmissivityFromDistanceSlope = (rate_m3_s: number, slope_m: numb
 export const storativityFromDistance = (T: number, time_s: number, zero_m: number) =>
   (STRAIGHT_LINE_CONSTANT * T * time_s) / zero_m ** 2
 
-/** One well at the moment compared. */
-interface Point {
-  well: Selected
-  distance_m: number
-  drawdown_m: number
-  measured_m: number
-}
-
-interface Snapshot {
-  points: Point[]
-  time_s: number
-  rate: number
-  line: StraightLine
-}
-
 function run(inputs: AnalysisInputs, options: AnalysisOptions): MethodOutcome {
   const history = rateHistory(inputs.rates)
   const selection = selectReadings(
@@ -59,7 +43,7 @@ function run(inputs: AnalysisInputs, options: AnalysisOptions): MethodOutcome {
     { ...options, readingsPerCycle: null },
     pumpingPhase(history, options.window),
   )
-  const { wells, leftOut } = usable(selection.wells)
+  const { wells, leftOut } = observationWells(selection.wells)
   const snapshot = takeSnapshot(wells, history, options)
   thinningGuard(options, snapshot.time_s)
   const { T, S } = estimates(snapshot, inputs, options)
@@ -86,59 +70,6 @@ function run(inputs: AnalysisInputs, options: AnalysisOptions): MethodOutcome {
     ],
     leftOut: [...selection.leftOut, ...leftOut],
   }
-}
-
-/** Observation wells with readings; the pumped well is left out because its well loss does not lie on the line. */
-function usable(selected: Selected[]): { wells: Selected[]; leftOut: LeftOut[] } {
-  const pumped = selected.filter(({ series }) => series.role === 'pumped')
-  const wells = selected.filter(({ series, time_s }) => series.role === 'observation' && time_s.length > 0)
-  if (wells.length < FEWEST_WELLS) {
-    throw new AnalysisError('analysis/too-few-wells', { needed: FEWEST_WELLS, found: wells.length })
-  }
-  const distances = wells.map(({ series }) => radiusOf(series))
-  if (distances.every((distance) => distance === distances[0])) throw new AnalysisError('analysis/distances-equal')
-  return {
-    wells,
-    leftOut: pumped.map(({ series, time_s }) => ({
-      wellId: series.wellId,
-      count: time_s.length,
-      reason: 'pumped-well' as const,
-    })),
-  }
-}
-
-function takeSnapshot(wells: Selected[], history: RateHistory, options: AnalysisOptions): Snapshot {
-  const from = largest(wells.map((well) => well.time_s[0] as number))
-  const to = Math.min(...wells.map((well) => well.time_s.at(-1) as number))
-  const time_s = options.time_s == null ? to : options.time_s - history.start_s
-  if (!(time_s >= from && time_s <= to)) {
-    throw new AnalysisError('analysis/no-common-time', { from_s: from, to_s: to, time_s })
-  }
-  const points = wells.map((well) => ({
-    well,
-    distance_m: radiusOf(well.series),
-    drawdown_m: interpolated(well.time_s, well.drawdown_m, time_s),
-    measured_m: interpolated(well.time_s, well.measured_m, time_s),
-  }))
-  const line = straightLine(logDistances(points), drawdowns(points), {
-    hand: options.line ?? null,
-    rising: false,
-  })
-  return { points, time_s, rate: meanRate(history, history.start_s + time_s), line }
-}
-
-const logDistances = (points: Point[]) => points.map((point) => Math.log10(point.distance_m))
-const drawdowns = (points: Point[]) => points.map((point) => point.drawdown_m)
-
-/** Drawdown at a moment between two readings, linear in the logarithm of time. */
-function interpolated(time_s: number[], drawdown_m: number[], at: number): number {
-  const right = time_s.findIndex((time) => time >= at)
-  const t1 = time_s[right] as number
-  const s1 = drawdown_m[right] as number
-  if (t1 === at || right === 0) return s1
-  const t0 = time_s[right - 1] as number
-  const s0 = drawdown_m[right - 1] as number
-  return s0 + ((s1 - s0) * Math.log(at / t0)) / Math.log(t1 / t0)
 }
 
 function estimates({ points, time_s, rate, line }: Snapshot, inputs: AnalysisInputs, options: AnalysisOptions) {

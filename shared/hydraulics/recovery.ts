@@ -1,4 +1,3 @@
-import { studentQuantile } from '#shared/numerics/student.ts'
 import type {
   AnalysisInputs,
   AnalysisOptions,
@@ -13,32 +12,12 @@ import { determinationFindings, fitFindings, handLineFinding } from './findings.
 import { sharedOptions, transmissivity, type Method } from './method.ts'
 import { parameterEstimate, UNDETERMINED_FACTOR } from './parameter-estimate.ts'
 import { lateWindow, straightLineStart } from './proposed-window.ts'
-import { meanRate, rateHistory, volumeUntil, type RateHistory } from './rates.ts'
+import { meanRate, rateHistory, type RateHistory } from './rates.ts'
+import { ratioFinding, recoveryAbscissa, storageRatio, type StorageRatio } from './recovery-line.ts'
 import { largest, pumpingPhase, recoveryPhase, requireReadings, selectReadings, type Selected } from './selection.ts'
 import { LARGEST_U, smallUFinding } from './small-u.ts'
-import { slopeSd, straightLine, zeroAbscissa, zeroSd, type StraightLine } from './straight-line.ts'
+import { lineResiduals, slopeSd, straightLine, type StraightLine } from './straight-line.ts'
 import { drawnDrawdown, thinningFindings, thinningGuard } from './unconfined.ts'
-
-/** S/S' between these is near enough to 1 to need no explanation (common practice). */
-const RATIO_RANGE = { low: 0.5, high: 2 }
-
-/**
- * Abscissa of the recovery plot. For one constant rate it is log10(t/t'); for a varying rate the superposition of the
- * logarithms of every step, scaled by the last rate, so that slope and formula stay the same.
- * Source: Theis 1935; ASTM D5269; superposition of the logarithmic approximation.
- */
-export function recoveryAbscissa(history: RateHistory, options: AnalysisOptions, elapsed_s: number): number {
-  const { stop_s, lastRate_m3_s } = history
-  const since = elapsed_s - (stop_s as number)
-  if (options.rateHistory === 'equivalent') {
-    const pumped_s = volumeUntil(history, stop_s as number) / lastRate_m3_s
-    return Math.log10((pumped_s + since) / since)
-  }
-  return history.increments.reduce(
-    (sum, { start_s, change_m3_s }) => sum + (change_m3_s / lastRate_m3_s) * Math.log10(elapsed_s - start_s),
-    0,
-  )
-}
 
 function run(inputs: AnalysisInputs, options: AnalysisOptions): MethodOutcome {
   const history = rateHistory(inputs.rates)
@@ -64,11 +43,7 @@ function run(inputs: AnalysisInputs, options: AnalysisOptions): MethodOutcome {
     S: null,
     storageClass: null,
     extras: extrasOf(line, ratio, history, well),
-    residuals: well.elapsed_s.map((elapsed_s, i) => ({
-      wellId: well.series.wellId,
-      elapsed_s,
-      residual_m: line.residuals[i] as number,
-    })),
+    residuals: lineResiduals(line, well),
     fit: line.summary,
     findings: [
       ...ageFindings(inputs, options, history, well, T),
@@ -80,26 +55,6 @@ function run(inputs: AnalysisInputs, options: AnalysisOptions): MethodOutcome {
     ],
     leftOut: selection.leftOut,
   }
-}
-
-interface StorageRatio {
-  value: number
-  low: number
-  high: number
-}
-
-/** t/t' at which the line reaches zero: S/S', 1 where storage came back as it went. Source: Theis 1935; ASTM D5269. */
-function storageRatio(line: StraightLine): StorageRatio {
-  const log = zeroAbscissa(line) * Math.LN10
-  const half = Math.min(studentQuantile(0.975, line.freedom) * zeroSd(line), Math.log(1e30))
-  return { value: Math.exp(log), low: Math.exp(log - half), high: Math.exp(log + half) }
-}
-
-function ratioFinding({ value, low, high }: StorageRatio): Finding {
-  const params = { ratio: value, low, high }
-  if (value > RATIO_RANGE.high && low > 1) return { code: 'recovery-ratio-high', severity: 'caution', params }
-  if (value < RATIO_RANGE.low && high < 1) return { code: 'recovery-ratio-low', severity: 'caution', params }
-  return { code: 'recovery-ratio-near-one', severity: 'good', params }
 }
 
 /** Late recovery at an observation well (u' ≤ 0.05), recovery after casing storage at the pumped well. */

@@ -2,7 +2,8 @@ import { lagOneAutocorrelation } from '#shared/numerics/autocorrelation.ts'
 import { correlatedCovariance } from '#shared/numerics/correlated-residuals.ts'
 import { describeLine, lineFreedom, linearRegression, type LineFit } from '#shared/numerics/linear-regression.ts'
 import { invertSymmetric } from '#shared/numerics/small-matrix.ts'
-import { AnalysisError, type FitSummary, type HandLine } from './analysis.ts'
+import { AnalysisError, type FitSummary, type HandLine, type Residual } from './analysis.ts'
+import type { Selected } from './selection.ts'
 
 /** A line of drawdown on a logarithmic axis, with its covariance widened for residuals that are not independent. */
 export interface StraightLine {
@@ -71,6 +72,15 @@ function lineCovariance(x: number[], residuals: number[], time_s: number[] | und
   ])
   const axes = time_s ? [time_s, time_s.map(Math.log)] : []
   return correlatedCovariance([{ residuals, jacobian, axes }], inverse)
+}
+
+/** Residuals of a line through the readings of one well. */
+export function lineResiduals({ residuals }: StraightLine, { series, elapsed_s }: Selected): Residual[] {
+  return elapsed_s.map((elapsed, i) => ({
+    wellId: series.wellId,
+    elapsed_s: elapsed,
+    residual_m: residuals[i] as number,
+  }))
 }
 
 /** Abscissa at which the line reaches zero drawdown, as log10. */

@@ -1,11 +1,6 @@
-import {
-  fromScale,
-  numericJacobian,
-  toScale,
-  type FitUnknown,
-  type LeastSquaresProblem,
-} from './least-squares-problem.ts'
-import { invertSymmetric, solveSymmetric } from './small-matrix.ts'
+import { fromScale, toScale, type LeastSquaresProblem } from './least-squares-problem.ts'
+import { dampedStep, evaluate, normalEquations, project, unknownAt, type State } from './marquardt-step.ts'
+import { invertSymmetric } from './small-matrix.ts'
 
 export interface LeastSquaresOptions {
   /** Starting points in natural parameters; each is followed to its end and the lowest objective wins. */
@@ -41,13 +36,6 @@ export interface LeastSquaresFit {
 const SAME_MINIMUM = 1e-6
 /** Once a step promises a smaller relative reduction than this, rounding decides whether the objective falls. */
 const ROUNDING_FLOOR = 1e-12
-
-interface State {
-  x: number[]
-  residuals: Float64Array
-  jacobian: Float64Array
-  objective: number
-}
 
 interface Path extends State {
   iterations: number
@@ -85,7 +73,7 @@ function follow(problem: LeastSquaresProblem, start: number[], mostIterations: n
   let growth = 2
   let lastStep = Infinity
   for (let iteration = 1; iteration <= mostIterations && Number.isFinite(state.objective); iteration++) {
-    const move = step(problem, state, damping)
+    const move = dampedStep(problem, state, damping)
     if (move && move.length <= tolerance) return { ...state, iterations: iteration, converged: true }
     const next = move && evaluate(problem, move.x)
     const gain = next ? state.objective - next.objective : NaN
@@ -104,84 +92,6 @@ function follow(problem: LeastSquaresProblem, start: number[], mostIterations: n
     }
   }
   return { ...state, iterations: mostIterations, converged: false }
-}
-
-/** The damped step inside the bounds; null when the system is too ill to solve, so that damping grows. */
-function step(problem: LeastSquaresProblem, state: State, damping: number) {
-  const { gradient, normal } = normalEquations(state, problem.unknowns.length)
-  const free = state.x
-    .map((_, k) => k)
-    .filter((k) => !pushedOut(state.x[k] as number, gradient[k] as number, unknownAt(problem, k)))
-  // A direction without information must still be damped, else the system is singular exactly where help is needed.
-  const largest = Math.max(...normal.map((row, k) => row[k] as number), Number.MIN_VALUE)
-  const matrix = free.map((i) =>
-    free.map((j) => {
-      const value = (normal[i] as number[])[j] as number
-      return i === j ? value + damping * Math.max(value, 1e-12 * largest) : value
-    }),
-  )
-  const solved =
-    free.length > 0
-      ? solveSymmetric(
-          matrix,
-          free.map((k) => -(gradient[k] as number)),
-        )
-      : []
-  const target = [...state.x]
-  if (!solved) return null
-  free.forEach((k, i) => (target[k] = (target[k] as number) + (solved[i] as number)))
-  const x = project(target, problem)
-  const delta = x.map((value, k) => value - (state.x[k] as number))
-  const promised = delta.reduce((sum, d, i) => {
-    const curved = delta.reduce((inner, e, j) => inner + ((normal[i] as number[])[j] as number) * e, 0)
-    return sum - d * (2 * (gradient[i] as number) + curved)
-  }, 0)
-  return { x, promised, length: Math.max(0, ...delta.map(Math.abs)) }
-}
-
-function normalEquations({ residuals, jacobian }: State, size: number) {
-  const gradient = new Array<number>(size).fill(0)
-  const normal = Array.from({ length: size }, () => new Array<number>(size).fill(0))
-  for (let j = 0; j < size; j++) {
-    let sum = 0
-    for (let i = 0, at = j; i < residuals.length; i++, at += size)
-      sum += (residuals[i] as number) * (jacobian[at] as number)
-    gradient[j] = sum
-    for (let k = 0; k <= j; k++) {
-      let product = 0
-      for (let at = 0; at < jacobian.length; at += size)
-        product += (jacobian[at + j] as number) * (jacobian[at + k] as number)
-      ;(normal[j] as number[])[k] = product
-      ;(normal[k] as number[])[j] = product
-    }
-  }
-  return { gradient, normal }
-}
-
-function evaluate(problem: LeastSquaresProblem, x: number[]): State {
-  const residuals = new Float64Array(problem.count)
-  const jacobian = new Float64Array(problem.count * x.length)
-  const parameters = x.map((value, k) => fromScale(value, unknownAt(problem, k)))
-  if (problem.jacobian) problem.jacobian(parameters, residuals, jacobian)
-  else numericJacobian(problem, parameters, residuals, jacobian)
-  let objective = 0
-  for (let i = 0; i < residuals.length; i++) objective += (residuals[i] as number) ** 2
-  return { x, residuals, jacobian, objective }
-}
-
-function project(x: number[], problem: LeastSquaresProblem): number[] {
-  return x.map((value, k) => {
-    const unknown = unknownAt(problem, k)
-    return Math.min(toScale(unknown.high, unknown), Math.max(toScale(unknown.low, unknown), value))
-  })
-}
-
-/** Descent follows the negative gradient; on a bound that leads outwards the parameter is held. */
-function pushedOut(value: number, gradient: number, unknown: FitUnknown): boolean {
-  return (
-    (value <= toScale(unknown.low, unknown) && gradient > 0) ||
-    (value >= toScale(unknown.high, unknown) && gradient < 0)
-  )
 }
 
 function describe(problem: LeastSquaresProblem, best: Path, paths: Path[]): LeastSquaresFit {
@@ -213,10 +123,4 @@ function describe(problem: LeastSquaresProblem, best: Path, paths: Path[]): Leas
     atBound,
     warnings,
   }
-}
-
-function unknownAt(problem: LeastSquaresProblem, index: number): FitUnknown {
-  const unknown = problem.unknowns[index]
-  if (!unknown) throw new RangeError(`The model has no unknown number ${index + 1}`)
-  return unknown
 }

@@ -1,7 +1,9 @@
-import { describe, expect, it } from 'vitest'
+import { describe, expect, it, vi } from 'vitest'
 import { AnalysisError, type AnalysisInputs } from '#shared/hydraulics/analysis.ts'
 import { analyse, fittedCurve, methodIds, methods, type MethodId } from '#shared/hydraulics/catalogue.ts'
 import { DAY, logSpaced, makeInputs, makeOptions, makeSeries, makeTheisSeries } from './make-inputs.ts'
+
+vi.setConfig({ testTimeout: 60_000 })
 
 const rates = [
   { start_s: 0, rate_m3_s: 0.01 },

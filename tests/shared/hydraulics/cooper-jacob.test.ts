@@ -1,5 +1,5 @@
 import fc from 'fast-check'
-import { describe, expect, it } from 'vitest'
+import { describe, expect, it, vi } from 'vitest'
 import { EULER_GAMMA } from '#shared/numerics/exponential-integral.ts'
 import { analyse, fittedCurve } from '#shared/hydraulics/catalogue.ts'
 import { straightLineErrors } from '#shared/hydraulics/small-u.ts'
@@ -14,6 +14,8 @@ import {
   relative,
   valueOf,
 } from './make-inputs.ts'
+
+vi.setConfig({ testTimeout: 60_000 })
 
 const truth = { T: 5e-3, S: 2e-4 }
 

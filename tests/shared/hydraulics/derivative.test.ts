@@ -1,11 +1,13 @@
 import fc from 'fast-check'
-import { describe, expect, it } from 'vitest'
+import { describe, expect, it, vi } from 'vitest'
 import { logDerivative } from '#shared/hydraulics/derivative.ts'
 import { radialFlowSpan } from '#shared/hydraulics/radial-flow.ts'
 import { theisU } from '#shared/hydraulics/small-u.ts'
 import { theisDrawdown } from '#shared/hydraulics/theis.ts'
 import { makeNoise } from '../numerics/make-noise.ts'
 import { DAY, logSpaced } from './make-inputs.ts'
+
+vi.setConfig({ testTimeout: 60_000 })
 
 const times = logSpaced(200, 10, 10 * DAY)
 

@@ -1,18 +1,21 @@
-import { describe, expect, it } from 'vitest'
+import { describe, expect, it, vi } from 'vitest'
 import { analyse } from '#shared/hydraulics/catalogue.ts'
 import type { ParameterEstimate } from '#shared/hydraulics/analysis.ts'
 import type { MethodId } from '#shared/hydraulics/catalogue.ts'
 import { makeNoise } from '../numerics/make-noise.ts'
 import { DAY, logSpaced, makeInputs, makeOptions, makeTheisSeries } from './make-inputs.ts'
 
+// Hundreds of fits: slow on a machine that does other things too.
+vi.setConfig({ testTimeout: 120_000 })
+
 const truth = { T: 5e-3, S: 2e-4 }
-const SEEDS = 150
+const SEEDS = 100
 const minutes = Array.from({ length: 3 * 1440 }, (_, i) => 60 * (i + 1))
 
 const holds = (estimate: ParameterEstimate | null, value: number) =>
   estimate !== null && estimate.low <= value && value <= estimate.high
 
-/** Share of seeds 1…150 whose 95 % interval of T holds the truth. */
+/** Share of seeds 1…100 whose 95 % interval of T holds the truth. */
 function coverage(method: MethodId, elapsed_s: number[], phi: number, from_s: number | null = null): number {
   let covered = 0
   for (let seed = 1; seed <= SEEDS; seed++) {
@@ -24,7 +27,7 @@ function coverage(method: MethodId, elapsed_s: number[], phi: number, from_s: nu
   return covered / SEEDS
 }
 
-/** Limits leave room for 150 seeds (binomial sd 1.8 %) below, and for caution above. */
+/** Limits leave room for 100 seeds (binomial sd 2.2 %) below, and for caution above. */
 const LOW = 0.9
 
 describe('95 % intervals of T', () => {

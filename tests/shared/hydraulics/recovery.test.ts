@@ -1,7 +1,7 @@
 import fc from 'fast-check'
 import { describe, expect, it } from 'vitest'
 import { analyse, fittedCurve } from '#shared/hydraulics/catalogue.ts'
-import { recoveryAbscissa } from '#shared/hydraulics/recovery.ts'
+import { recoveryAbscissa } from '#shared/hydraulics/recovery-line.ts'
 import { rateHistory } from '#shared/hydraulics/rates.ts'
 import { drawdownHistory } from '#shared/hydraulics/superposition.ts'
 import { theisDrawdown, theisResponse } from '#shared/hydraulics/theis.ts'

@@ -1,5 +1,5 @@
 import fc from 'fast-check'
-import { describe, expect, it } from 'vitest'
+import { describe, expect, it, vi } from 'vitest'
 import { analyse, fittedCurve } from '#shared/hydraulics/catalogue.ts'
 import { theisDrawdown, theisResponse } from '#shared/hydraulics/theis.ts'
 import reference from '../../reference/hydraulics-fits.json'
@@ -13,6 +13,8 @@ import {
   relative,
   valueOf,
 } from './make-inputs.ts'
+
+vi.setConfig({ testTimeout: 60_000 })
 
 const T = fc.double({ min: Math.log(1e-5), max: Math.log(0.1), noNaN: true }).map(Math.exp)
 const S = fc.double({ min: Math.log(1e-5), max: Math.log(0.2), noNaN: true }).map(Math.exp)

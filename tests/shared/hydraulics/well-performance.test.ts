@@ -1,5 +1,6 @@
 import { describe, expect, it } from 'vitest'
 import type { ParameterEstimate } from '#shared/hydraulics/analysis.ts'
+import { wellPerformanceAt } from '#shared/hydraulics/well-performance-at.ts'
 import { casingStorageTimes } from '#shared/hydraulics/casing-storage.ts'
 import { theisDrawdown } from '#shared/hydraulics/theis.ts'
 import {
@@ -9,7 +10,7 @@ import {
   steadySpecificCapacity,
   wellEfficiency,
 } from '#shared/hydraulics/well-performance.ts'
-import { DAY } from './make-inputs.ts'
+import { DAY, makeInputs, makeTheisSeries } from './make-inputs.ts'
 
 function makeEstimate(value: number, logSd = 0): ParameterEstimate {
   return { value, low: value, high: value, logSd, determined: true }
@@ -93,5 +94,52 @@ describe('well performance', () => {
     })
     expect(casingStorageTimes(0.01, 0.2, { riserRadius_m: 0.1 }).drawdown_s).toBeCloseTo(75, 9)
     expect(() => casingStorageTimes(0.01, 0.1, { riserRadius_m: 0.1 })).toThrow(RangeError)
+  })
+})
+
+describe('well performance from a test', () => {
+  const rates = [{ start_s: 0, rate_m3_s: 0.02 }]
+  const pumped = makeTheisSeries({ T, S }, { wellId: 'p', role: 'pumped', wellRadius_m: 0.15, rates })
+  const lossy = { ...pumped, drawdown_m: pumped.drawdown_m.map((value) => value / 0.8) }
+  const inputs = makeInputs({ rates, series: [lossy], streamDistance_m: 80 })
+  const known = { T: makeEstimate(T, 0.05), S: makeEstimate(S, 0.1) }
+
+  it('reads drawdown and rate at the time asked for, or at the last reading', () => {
+    const last = wellPerformanceAt(inputs, known, { wellId: 'p' })
+    expect(last.time_s).toBeCloseTo(DAY, 6)
+    expect(last.specificCapacity).toBeCloseTo(0.02 / (lossy.drawdown_m.at(-1) as number), 12)
+    const noon = wellPerformanceAt(inputs, known, { wellId: 'p', time_s: DAY / 2 })
+    expect(noon.efficiency?.value).toBeCloseTo(0.8, 4)
+    expect(noon.specificCapacity).toBeGreaterThan(last.specificCapacity)
+  })
+
+  it('gives efficiency, skin and both steady capacities beside the stream', () => {
+    const { efficiency, skin: found, steadyIdeal, steadyReal } = wellPerformanceAt(inputs, known, { wellId: 'p' })
+    expect(efficiency?.value).toBeCloseTo(0.8, 10)
+    expect(found).toBeGreaterThan(0)
+    expect((steadyReal?.value ?? NaN) / (steadyIdeal?.value ?? NaN)).toBeCloseTo(0.8, 10)
+  })
+
+  it('leaves out what cannot be known', () => {
+    const nothing = wellPerformanceAt({ ...inputs, streamDistance_m: null }, { T: null, S: null }, { wellId: 'p' })
+    expect(nothing).toMatchObject({ efficiency: null, skin: null, steadyIdeal: null, steadyReal: null })
+  })
+
+  it('compares the drawdown corrected for thinning in an unconfined aquifer', () => {
+    const s = lossy.drawdown_m.at(-1) as number
+    const unconfined = wellPerformanceAt({ ...inputs, aquifer: 'unconfined', thickness_m: 4 * s }, known, {
+      wellId: 'p',
+    })
+    expect(unconfined.efficiency?.value).toBeCloseTo(0.8 / (1 - 1 / 8), 10)
+    expect(unconfined.drawdown_m).toBe(s)
+  })
+
+  it('refuses a time without readings, and a well without any', () => {
+    expect(() => wellPerformanceAt(inputs, known, { wellId: 'p', time_s: 2 * DAY })).toThrow('analysis/no-common-time')
+    expect(() => wellPerformanceAt(inputs, known, { wellId: 'x' })).toThrow('analysis/unknown-well')
+    const rising = { ...lossy, drawdown_m: lossy.drawdown_m.map((value) => -value) }
+    expect(() => wellPerformanceAt({ ...inputs, series: [rising] }, known, { wellId: 'p' })).toThrow(
+      'analysis/no-drawdown',
+    )
   })
 })
