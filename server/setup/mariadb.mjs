@@ -68,16 +68,17 @@ const throwawayOptions = [
  * Starts the server of a folder, making it on the first start. A server that still runs on it (its parent was killed)
  * is stopped and replaced.
  * @param {string} folder
- * @param {{ throwaway?: boolean }} [options] throwaway: faster, for tests
+ * @param {{ throwaway?: boolean }} [options] throwaway: a new folder is for tests, fast rather than safe
  * @returns {Promise<Mariadb>}
  */
-export async function startMariadb(folder, { throwaway = false } = {}) {
+export async function startMariadb(folder, { throwaway: wanted = false } = {}) {
   makeFolder(folder)
   const place = realpathSync(folder)
+  const access = readAccess(place) ?? { ...newAccess(), throwaway: wanted }
+  const { throwaway = false } = access
   const options = [...serverOptions, ...(throwaway ? throwawayOptions : [])]
   await replaceRunning(place)
   await initialise(place, throwaway)
-  const access = readAccess(place) ?? newAccess()
   const server = await launchAnywhere(place, access, options)
   await settleAccounts(server, place, access)
   return server
@@ -104,6 +105,7 @@ async function initialise(folder, throwaway) {
     '--no-defaults',
     ...asRoot,
     `--datadir=${data}.new`,
+    temporaryTables(folder),
     '--auth-root-authentication-method=socket',
     `--auth-root-socket-user=${superuser}`,
     '--skip-test-db',
@@ -138,7 +140,7 @@ async function launch(folder, access, options) {
   const socket = socketFor(folder)
   turnLog(folder)
   const log = openSync(filesOf(folder).log, 'a', 0o600)
-  const own = [dataArgument(folder), `--port=${port}`, `--socket=${socket.path}`]
+  const own = [dataArgument(folder), temporaryTables(folder), `--port=${port}`, `--socket=${socket.path}`]
   const child = startChild(serverProgram(), ['--no-defaults', ...asRoot, ...own, ...options], {
     stdio: ['ignore', log, log],
   })
@@ -148,6 +150,13 @@ async function launch(folder, access, options) {
   Object.assign(access, { port, socket: socket.path })
   return handle(/** @type {number} */ (child.pid), access, port, socket.path, end)
 }
+
+/**
+ * In the folder itself: a starting server clears its place for temporary tables, and in one that servers share those
+ * of the others would go too.
+ * @param {string} folder
+ */
+const temporaryTables = (folder) => `--tmpdir=${folder}`
 
 /** Debian keeps the server in /usr/sbin, which is not on everybody's path. */
 const serverProgram = () => (existsSync('/usr/sbin/mariadbd') ? '/usr/sbin/mariadbd' : 'mariadbd')

@@ -5,10 +5,10 @@ import { waitingTime } from '#shared/words/durations.ts'
 const codes = Object.keys(errorCatalogue) as ErrorCode[]
 
 describe('the sentences of errors', () => {
-  it('are plain: they end with a full stop and shout at nobody', () => {
+  it('are plain: they end with a full stop, or with what was typed, and shout at nobody', () => {
     for (const code of codes) {
       const text = errorText(code)
-      expect(text, code).toMatch(/[.?]$/)
+      expect(text, code).toMatch(/([.?]|: undefined)$/)
       expect(text, code).not.toContain('!')
     }
   })
