@@ -8,7 +8,7 @@ describe('the sentences of errors', () => {
   it('are plain: they end with a full stop, or with what was typed, and shout at nobody', () => {
     for (const code of codes) {
       const text = errorText(code)
-      expect(text, code).toMatch(/([.?]|: undefined)$/)
+      expect(text, code).toMatch(/([.?]|undefined)$/)
       expect(text, code).not.toContain('!')
     }
   })
