@@ -1,4 +1,4 @@
-import { and, desc, eq } from 'drizzle-orm'
+import { and, desc, eq, ne } from 'drizzle-orm'
 import { parseConfig } from '../../config/config.ts'
 import { createDeps } from '../../create-deps.ts'
 import { registerHandlers } from '../../jobs/handlers.ts'
@@ -15,6 +15,11 @@ async function main() {
     if ((await db.$count(jobs, and(eq(jobs.kind, kind), eq(jobs.state, 'done')))) > 0) return
     deps.jobs.handle(kind, seedDemo(deps))
     registerHandlers(deps)
+    // An interrupted run left its job behind; this one goes on where it ended.
+    await db
+      .update(jobs)
+      .set({ state: 'cancelled', uniqueKey: null })
+      .where(and(eq(jobs.kind, kind), ne(jobs.state, 'done')))
     await deps.jobs.enqueue(db, kind, { uniqueKey: kind })
     const stop = followProgress(deps)
     await deps.jobs.drain()
