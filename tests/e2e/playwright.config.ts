@@ -1,0 +1,39 @@
+import { defineConfig } from '@playwright/test'
+
+/**
+ * Browser tests run against one started application over the seeded demo region; Debian's Chromium drives it.
+ * BASE_URL points them at one that runs already.
+ */
+export default defineConfig({
+  testDir: '.',
+  testMatch: '**/*.spec.ts',
+  outputDir: '../../test-results',
+  globalSetup: './support/global-setup.ts',
+  fullyParallel: true,
+  workers: 2,
+  retries: 0,
+  // Generous, because the machine that runs them may be busy; no test waits for a time.
+  timeout: 120_000,
+  expect: { timeout: 10_000 },
+  use: {
+    viewport: { width: 1440, height: 900 },
+    locale: 'en-GB',
+    timezoneId: 'UTC',
+    // Animations are the design's; tests look at what stands after them.
+    contextOptions: { reducedMotion: 'reduce' },
+    screenshot: 'only-on-failure',
+    trace: 'retain-on-failure',
+    launchOptions: {
+      executablePath: '/usr/bin/chromium',
+      args: [
+        '--no-sandbox',
+        '--disable-gpu',
+        '--disable-background-networking',
+        '--disable-component-update',
+        '--disable-default-apps',
+        '--disable-sync',
+        '--no-first-run',
+      ],
+    },
+  },
+})

@@ -1,0 +1,37 @@
+import { AxeBuilder } from '@axe-core/playwright'
+import { expect, type Page } from '@playwright/test'
+
+const TAGS = ['wcag2a', 'wcag2aa', 'wcag21a', 'wcag21aa', 'wcag22aa', 'best-practice']
+
+/**
+ * Popups (lists of choices, menus) hang in a container of Vuetify's outside all landmarks. They are reached through
+ * the control that opens them, so the best practice of landmarks does not serve anybody there.
+ */
+const inPopup = (rule: string, targets: string[]) =>
+  rule === 'region' && targets.every((target) => target.includes('.v-overlay'))
+
+/** axe finds nothing on the page as it stands; what it found is listed with its elements. */
+export async function expectAccessible(page: Page) {
+  const { violations } = await new AxeBuilder({ page }).withTags(TAGS).analyze()
+  const relevant = violations.filter(
+    ({ id, nodes }) =>
+      !inPopup(
+        id,
+        nodes.map(({ target }) => target.join(' ')),
+      ),
+  )
+  const found = relevant.map(({ id, help, nodes }) => ({
+    rule: `${id}: ${help}`,
+    where: nodes.map(({ target, failureSummary }) => `${target.join(' ')} – ${failureSummary?.split('\n')[1]?.trim()}`),
+  }))
+  expect(found).toEqual([])
+}
+
+/** Nothing sticks out of the window sideways. */
+export async function expectNoSidewaysScroll(page: Page) {
+  const { wide, window } = await page.evaluate(() => ({
+    wide: document.documentElement.scrollWidth,
+    window: document.documentElement.clientWidth,
+  }))
+  expect(wide).toBeLessThanOrEqual(window)
+}
