@@ -61,6 +61,9 @@ const coordinateText = /^[\d\s.,;:+\-−°º˚'’′‵"”“″NSEW]+$/i
 const looksMeant = /[.,;°º'′"″]|[-+−]\s*\d|\d\s*[NSEW]\b|\b[NSEW]\s*\d/i
 const projectedNumber = /^[-+−]?\d{5,}/
 
+/** Longer texts are no coordinates, and matching them would take time. */
+const longest = 120
+
 type Letters = 'en' | 'ne' | 'ws' | 'sw' | null
 
 /** `482540 E`: the number, and the letter behind or before it. */
@@ -128,6 +131,7 @@ function inDegrees(text: string, options: PlaceOptions): PlaceResult {
  * Reads the table of coordinate systems: load lazily in the browser.
  */
 export function parsePlace(text: string, options: PlaceOptions = {}): PlaceResult {
+  if (text.length > longest) return none
   const coded = withCode.exec(text)
   if (coded?.[1]) return inSystem(Number(coded[1]), coded[2] ?? '', options)
   const bare = withBareCode.exec(text)

@@ -61,8 +61,8 @@ function candidates(system: Crs, point: PlanarPoint): Candidate[] {
  * Coordinates of an EPSG system as longitude and latitude on WGS 84.
  * `x` is the easting or longitude and `y` the northing or latitude, whatever order the system lists its axes in;
  * for a system of axis order `ws` they are westing and southing.
- * Where several operations of the registry hold, the most accurate is used, and the stated accuracy is no better than
- * their disagreement.
+ * Where several operations of the registry hold, the most accurate is used; where another contradicts it by more than
+ * that other's accuracy, the stated accuracy grows by it.
  * @throws CrsError unknown or refused system, result not finite, place outside the area of use
  */
 export function toWgs84(epsg: number, x: number, y: number): Wgs84Position {
@@ -71,10 +71,11 @@ export function toWgs84(epsg: number, x: number, y: number): Wgs84Position {
   if (system.kind === 'geographic' && Math.abs(y) > 90) throw outside(system, x, y)
   const [best, ...others] = candidates(system, { x, y })
   if (!best) throw outside(system, x, y)
-  const apart = others.map(({ place }) => geodesicDistance(best.place, place))
+  // Another operation that differs within its own accuracy agrees; what is beyond is doubt about the better one.
+  const doubt = others.map(({ operation, place }) => geodesicDistance(best.place, place) - operation.accuracy_m)
   return {
     ...best.place,
-    accuracy_m: Math.max(best.operation.accuracy_m, ...apart),
+    accuracy_m: Math.max(best.operation.accuracy_m, ...doubt),
     operation: best.operation.name,
     insideArea: inBox(best.place, system.box),
   }
