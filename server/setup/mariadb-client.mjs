@@ -35,7 +35,7 @@ export const bySocket = (socket, database, user) => ({
 export function byAddress(address) {
   const url = new URL(address)
   const args = ['--no-defaults', '--protocol=tcp', `--host=${url.hostname.replace(/^\[|\]$/g, '')}`]
-  args.push(`--port=${url.port || 3306}`, `--user=${decodeURIComponent(url.username)}`, '--connect-timeout=10')
+  args.push(`--port=${url.port || 3306}`, `--user=${decodeURIComponent(url.username)}`)
   const ssl = url.searchParams.get('ssl')
   if (ssl) args.push('--ssl', ...(/"?rejectUnauthorized"?\s*:\s*false/.test(ssl) ? [] : ['--ssl-verify-server-cert']))
   const env = { ...process.env, MYSQL_PWD: decodeURIComponent(url.password) }
@@ -50,8 +50,14 @@ export function byAddress(address) {
  * @returns {Promise<string[][]>}
  */
 export async function query(reach, sql, { database = reach.database } = {}) {
-  const args = [...reach.args, '--default-character-set=utf8mb4', '--batch', '--skip-column-names', database]
-  const out = await run('mariadb', args.filter(Boolean), { env: reach.env, input: sql })
+  const args = [
+    ...reach.args,
+    '--default-character-set=utf8mb4',
+    '--batch',
+    '--skip-column-names',
+    '--connect-timeout=10',
+  ]
+  const out = await run('mariadb', database ? [...args, database] : args, { env: reach.env, input: sql })
   return out
     .split('\n')
     .filter((line) => line !== '')

@@ -11,6 +11,7 @@ import { join } from 'node:path'
  * @property {string} database
  * @property {number} [port] The port of the last start, asked for again at the next one.
  * @property {string} [socket]
+ * @property {boolean} [throwaway] Made for tests: fast rather than safe, at every start.
  * @property {string} [serverVersion] The version that wrote the system tables, such as 10.11.
  */
 

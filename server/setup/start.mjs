@@ -32,7 +32,8 @@ await runCommand(async (life) => {
   const address = `http://${localHost(config.host)}:${port}`
   await steps.step('Starting the application', () => Promise.race([running, ready(address, life.stopping)]))
   if (life.stopping.aborted) return
-  steps.say(`\nBasinbook is ready at ${config.publicUrl} after ${seconds(performance.now() - begun)}. Ctrl-C stops it.`)
+  const shown = process.env.PUBLIC_URL?.trim() || address
+  steps.say(`\nBasinbook is ready at ${shown} after ${seconds(performance.now() - begun)}. Ctrl-C stops it.`)
   if (settings.demo) steps.say(demoAccounts())
   await running
 })

@@ -1,6 +1,7 @@
-import { cpSync, existsSync, mkdirSync, readdirSync, renameSync, rmSync, statSync, utimesSync } from 'node:fs'
+import { cpSync, existsSync, readdirSync, renameSync, rmSync, statSync, utimesSync } from 'node:fs'
 import { join } from 'node:path'
 import { contentHash } from '../../server/setup/content-hash.mjs'
+import { waitForLock } from '../../server/setup/locks.mjs'
 import { startMariadb, type Mariadb } from '../../server/setup/mariadb.mjs'
 import { inRoot, root } from '../../server/setup/places.mjs'
 import { run } from '../../server/setup/processes.mjs'
@@ -23,7 +24,7 @@ const templatesKept = 2
  */
 export async function copyOfTemplate(template: Template): Promise<string> {
   const kept = inRoot(`.cache/databases/${template.name}-${await keyOf(template)}`)
-  if (!existsSync(kept)) await makeTemplate(template, kept)
+  if (!existsSync(kept)) await makeOnce(template, kept)
   utimesSync(kept, new Date(), new Date())
   const folder = temporaryFolder()
   cpSync(kept, folder, { recursive: true })
@@ -35,21 +36,26 @@ async function keyOf({ sources }: Template): Promise<string> {
   return contentHash(root, [...sources, 'server/setup/mariadb.mjs'], [version]).slice(0, 16)
 }
 
-/** Made elsewhere and renamed: several test runs may make the same one at the same time. */
+/** Several test runs may want the same one at the same time: one makes it and the others wait. */
+async function makeOnce(template: Template, kept: string): Promise<void> {
+  const release = await waitForLock(inRoot(`.cache/databases/${template.name}.lock`))
+  try {
+    if (!existsSync(kept)) await makeTemplate(template, kept)
+  } finally {
+    release()
+  }
+}
+
+/** Made elsewhere and renamed, so that what is kept is always whole. */
 async function makeTemplate(template: Template, kept: string): Promise<void> {
   const folder = temporaryFolder()
   try {
     const server = await startMariadb(folder, { throwaway: true })
-    try {
-      await template.fill(server, folder)
-    } finally {
-      await server.stop()
-    }
-    mkdirSync(inRoot('.cache/databases'), { recursive: true })
-    const beside = `${kept}.${process.pid}`
+    await template.fill(server, folder).finally(server.stop)
+    const beside = `${kept}.part`
+    rmSync(beside, { recursive: true, force: true })
     cpSync(folder, beside, { recursive: true })
-    if (existsSync(kept)) rmSync(beside, { recursive: true })
-    else renameSync(beside, kept)
+    renameSync(beside, kept)
     removeOlder(template.name)
   } finally {
     rmSync(folder, { recursive: true, force: true })
