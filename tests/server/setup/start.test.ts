@@ -1,6 +1,6 @@
 import { existsSync, rmSync } from 'node:fs'
 import { join } from 'node:path'
-import { afterAll, describe, expect, it } from 'vitest'
+import { afterAll, beforeAll, describe, expect, it } from 'vitest'
 import { filesOf } from '../../../server/setup/mariadb-files.mjs'
 import { databaseFolder } from '../../../server/setup/databases.mjs'
 import { marker } from '../../../server/setup/prepare.mjs'
@@ -15,10 +15,19 @@ const dataDir = join(place, 'data')
 let running: Installation
 
 const applications = () => processesWith(marker(dataDir))
+/** Never 0, which would mean the tests themselves. */
+const single = (pids: number[]): number => {
+  const [pid] = pids
+  if (!pid || pids.length > 1) throw new Error(`One process was expected, found ${pids.length}`)
+  return pid
+}
 const databases = () => processesWith(`--datadir=${filesOf(databaseFolder(dataDir)).data}`)
 const [ready, unavailable] = [200, 503]
 const answers = (status: number) => eventually(async () => (await running.status('/readyz')) === status)
 
+beforeAll(async () => {
+  running = await startInstallation(dataDir)
+}, 120_000)
 afterAll(async () => {
   await stopInstallation(running)
   rmSync(place, { recursive: true })
@@ -26,7 +35,6 @@ afterAll(async () => {
 
 describe('a first start', () => {
   it('makes the database, brings it up to date, serves the pages, and says how long each took', async () => {
-    running = await startInstallation(dataDir)
     expect(running.output()).toMatch(/Starting the database … \d+\.\d s/)
     expect(running.output()).toMatch(/Bringing the database up to date … \d+\.\d s/)
     expect(await running.status('/readyz')).toBe(ready)
@@ -52,7 +60,7 @@ describe('a first start', () => {
 
 describe('a running installation', () => {
   it('starts the application again when it crashes', async () => {
-    const [pid = 0] = applications()
+    const pid = single(applications())
     process.kill(pid, 'SIGKILL')
     await eventually(async () => applications().some((other) => other !== pid))
     await answers(ready)
@@ -60,7 +68,7 @@ describe('a running installation', () => {
   })
 
   it('answers 503 while its database is gone, and recovers by itself', async () => {
-    const [pid = 0] = databases()
+    const pid = single(databases())
     const refused = answers(unavailable)
     process.kill(pid, 'SIGKILL')
     await refused

@@ -62,9 +62,11 @@ describe('a data folder made by the first migration', () => {
       dataDir,
       say: () => {},
     })
-    const schemaOf = (database: string) =>
-      run('mariadb-dump', [...server.reach.args, '--no-data', '--compact', database])
-    const upgraded = (await schemaOf('basinbook')).replace(/ AUTO_INCREMENT=\d+/g, '')
+    const schemaOf = async (database: string) => {
+      const text = await run('mariadb-dump', [...server.reach.args, '--no-data', '--compact', database])
+      return text.replace(/ AUTO_INCREMENT=\d+/g, '')
+    }
+    const upgraded = await schemaOf('basinbook')
     expect(upgraded).toContain('SPATIAL KEY')
     expect(upgraded).toBe(await schemaOf('basinbook_new'))
   })
