@@ -1,3 +1,4 @@
+import type { Page } from '@playwright/test'
 import { demoAccount, fillSignInForm, signIn } from './support/sign-in.ts'
 import { expect, test } from './support/test.ts'
 
@@ -39,37 +40,42 @@ test('An address that leads nowhere says so', async ({ page }) => {
   await expect(page.getByRole('heading', { name: 'Nothing here' })).toBeVisible()
 })
 
+/** A person of the test's own, so that the demo accounts stay as they are for other tests. */
+async function invite(page: Page, name: string): Promise<string> {
+  const email = `${name.toLowerCase().replaceAll(' ', '-')}-${Date.now()}@veldray.example`
+  await page.goto('/settings/people')
+  await page.getByRole('button', { name: 'Invite a person' }).click()
+  await page.getByRole('dialog').getByLabel('Name').fill(name)
+  await page.getByRole('dialog').getByLabel('E-mail address').fill(email)
+  await page.getByRole('button', { name: 'Send the invitation' }).click()
+  await expect(page.getByText(`${name} is invited`)).toBeVisible()
+  return email
+}
+
 test('An edit survives an expired session: the same person signs in over the page and it is saved', async ({
   page,
   watch,
 }) => {
   watch.expect(/401/)
   await signIn(page, 'administrator')
-  await page.goto('/settings/people')
-  await page.getByRole('row', { name: /consultant/i }).click()
-  const name = `Consultant ${Date.now()}`
-  await page.getByLabel('Name', { exact: true }).fill(name)
+  const email = await invite(page, 'Surveyor')
+  await page.getByLabel('Name or address').fill(email)
+  await page.getByRole('row', { name: email }).click()
+  await page.getByLabel('Name', { exact: true }).fill('Land surveyor')
   await page.context().clearCookies()
   await page.getByRole('button', { name: 'Save' }).click()
   const dialog = page.getByRole('dialog', { name: 'Sign in again to go on' })
   await dialog.getByLabel('Password').fill(demoAccount('administrator').password)
   await dialog.getByRole('button', { name: 'Sign in' }).click()
-  await expect(page.getByRole('cell', { name })).toBeVisible()
+  await expect(page.getByRole('row', { name: email })).toContainText('Land surveyor')
 })
 
-test('An administrator invites a person, who sets a password by the mailed link and signs in', async ({
+test('An invited person sets a password by the mailed link, signs in, and keeps a choice of units', async ({
   page,
   browser,
 }) => {
-  const email = `newcomer-${Date.now()}@veldray.example`
   await signIn(page, 'administrator')
-  await page.goto('/settings/people')
-  await page.getByRole('button', { name: 'Invite a person' }).click()
-  await page.getByRole('dialog').getByLabel('Name').fill('Newcomer')
-  await page.getByRole('dialog').getByLabel('E-mail address').fill(email)
-  await page.getByRole('button', { name: 'Send the invitation' }).click()
-  await expect(page.getByText('Newcomer is invited')).toBeVisible()
-
+  const email = await invite(page, 'Newcomer')
   await page.goto('/settings/outbox')
   await page.getByRole('row', { name: email }).click()
   const text = await page.getByLabel('Text of the mail').textContent()
@@ -84,17 +90,31 @@ test('An administrator invites a person, who sets a password by the mailed link 
   await expect(theirs.getByLabel('E-mail address')).toHaveValue(email)
   await fillSignInForm(theirs, { email, password: 'gravel under the old mill' })
   await expect(theirs.getByRole('button', { name: 'Newcomer: your menu' })).toBeVisible()
+
+  await theirs.getByRole('button', { name: /^Units:/ }).click()
+  await theirs.getByRole('option', { name: 'm²/s · m³/s · m' }).click()
+  const chosen = theirs.getByRole('button', { name: 'Units: m²/s · m³/s · m. Change' })
+  await expect(chosen).toBeVisible()
+  await theirs.evaluate(() => localStorage.clear())
+  await theirs.reload()
+  await expect(chosen).toBeVisible()
   await other.close()
 })
 
-test('A choice of units is kept on the account', async ({ page }) => {
-  await signIn(page, 'steward')
-  await page.getByRole('button', { name: /^Units:/ }).click()
-  await page.getByRole('option', { name: 'm²/s · m³/s · m' }).click()
-  await expect(page.getByRole('button', { name: 'Units: m²/s · m³/s · m. Change' })).toBeVisible()
-  await page.evaluate(() => localStorage.clear())
-  await page.reload()
-  await expect(page.getByRole('button', { name: 'Units: m²/s · m³/s · m. Change' })).toBeVisible()
+test('A database that goes away is told, and the page comes back by itself when it answers again', async ({
+  page,
+  watch,
+}) => {
+  watch.expect(/503/)
+  await signIn(page, 'administrator')
+  const problem = { type: 'about:blank', title: '', status: 503, code: 'server/unavailable', params: {}, fields: [] }
+  const body = JSON.stringify({ ...problem, detail: 'The database does not answer.', requestId: 'r-1' })
+  const answer = { status: 503, contentType: 'application/problem+json', body }
+  await page.route('**/api/people?*', (route) => route.fulfill(answer), { times: 1 })
+  await page.goto('/settings/people')
+  await expect(page.getByText('The server does not answer at the moment')).toBeVisible()
+  await expect(page.getByRole('row', { name: demoAccount('reader').email })).toBeVisible({ timeout: 20_000 })
+  await expect(page.getByText('The server does not answer at the moment')).toBeHidden()
 })
 
 test('The list of keys opens with "?" and Esc gives the focus back to the page', async ({ page }) => {
