@@ -1,6 +1,6 @@
 import { existsSync, mkdirSync, readFileSync, rmSync, statSync, writeFileSync } from 'node:fs'
 import { join } from 'node:path'
-import { afterAll, beforeAll, describe, expect, it } from 'vitest'
+import { afterAll, beforeAll, describe, expect, it, vi } from 'vitest'
 import { databaseFolder } from '../../../server/setup/databases.mjs'
 import { takeLock } from '../../../server/setup/locks.mjs'
 import { startMariadb } from '../../../server/setup/mariadb.mjs'
@@ -11,6 +11,9 @@ import { createDatabase } from '../../support/database.ts'
 import { migrated } from '../../support/database.migrated.ts'
 import { copyOfTemplate } from '../../support/database.template.ts'
 import { temporaryFolder } from '../../support/temporary.ts'
+
+// Servers start and stop here, beside whatever else the machine does.
+vi.setConfig({ testTimeout: 120_000, hookTimeout: 180_000 })
 
 const place = temporaryFolder()
 const archive = join(place, 'archive.tar.gz')

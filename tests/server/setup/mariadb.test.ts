@@ -3,11 +3,14 @@ import { existsSync, mkdirSync, rmSync, statSync } from 'node:fs'
 import { createServer } from 'node:net'
 import { dirname, join } from 'node:path'
 import mysql from 'mysql2/promise'
-import { afterAll, beforeAll, describe, expect, it } from 'vitest'
+import { afterAll, beforeAll, describe, expect, it, vi } from 'vitest'
 import { readAccess } from '../../../server/setup/mariadb-files.mjs'
 import { startMariadb, type Mariadb } from '../../../server/setup/mariadb.mjs'
 import { isAlive } from '../../../server/setup/processes.mjs'
 import { temporaryFolder } from '../../support/temporary.ts'
+
+// Servers start and stop here, beside whatever else the machine does.
+vi.setConfig({ testTimeout: 120_000, hookTimeout: 180_000 })
 
 const place = temporaryFolder()
 const folder = join(place, 'database')

@@ -1,6 +1,6 @@
 import { existsSync, rmSync } from 'node:fs'
 import { join } from 'node:path'
-import { afterAll, beforeAll, describe, expect, it } from 'vitest'
+import { afterAll, beforeAll, describe, expect, it, vi } from 'vitest'
 import { filesOf } from '../../../server/setup/mariadb-files.mjs'
 import { databaseFolder } from '../../../server/setup/databases.mjs'
 import { marker } from '../../../server/setup/prepare.mjs'
@@ -9,6 +9,9 @@ import { eventually, runCommand, startCommand } from '../../support/commands.ts'
 import { createDatabase } from '../../support/database.ts'
 import { startInstallation, stopInstallation, type Installation } from '../../support/installation.ts'
 import { temporaryFolder } from '../../support/temporary.ts'
+
+// Servers start and stop here, beside whatever else the machine does.
+vi.setConfig({ testTimeout: 120_000, hookTimeout: 180_000 })
 
 const place = temporaryFolder()
 const dataDir = join(place, 'data')
@@ -27,7 +30,7 @@ const answers = (status: number) => eventually(async () => (await running.status
 
 beforeAll(async () => {
   running = await startInstallation(dataDir)
-}, 120_000)
+})
 afterAll(async () => {
   await stopInstallation(running)
   rmSync(place, { recursive: true })

@@ -1,7 +1,7 @@
 import { cpSync, mkdirSync, readFileSync, readdirSync, rmSync, writeFileSync } from 'node:fs'
 import { join } from 'node:path'
 import { migrate } from 'drizzle-orm/mysql2/migrator'
-import { afterAll, beforeAll, describe, expect, it } from 'vitest'
+import { afterAll, beforeAll, describe, expect, it, vi } from 'vitest'
 import { connect } from '../../../server/db/client.ts'
 import { databaseFolder } from '../../../server/setup/databases.mjs'
 import { startMariadb, type Mariadb } from '../../../server/setup/mariadb.mjs'
@@ -9,6 +9,9 @@ import { inRoot } from '../../../server/setup/places.mjs'
 import { run } from '../../../server/setup/processes.mjs'
 import { bringUpToDate, knownMigrations, pendingMigrations } from '../../../server/setup/schema.mjs'
 import { temporaryFolder } from '../../support/temporary.ts'
+
+// Servers start and stop here, beside whatever else the machine does.
+vi.setConfig({ testTimeout: 120_000, hookTimeout: 180_000 })
 
 const dataDir = temporaryFolder()
 let server: Mariadb
