@@ -14,6 +14,9 @@ export const mapWellQuery = z.object({
   storageClass: storageClass.optional(),
   /** Only wells whose value has this evidence, or that have none. */
   only: z.enum(['firm', 'fair', 'slight', 'none', 'valued']).optional(),
+  /** Only wells whose value is at least / less than this, SI; an entry of the legend. */
+  from: z.coerce.number().positive().optional(),
+  below: z.coerce.number().positive().optional(),
 })
 export type MapWellQuery = z.infer<typeof mapWellQuery>
 
@@ -76,6 +79,7 @@ export const boundary = z.object({
   path: z.array(position),
   unitIds: z.array(recordId),
 })
+export type Boundary = z.infer<typeof boundary>
 export const boundaryList = z.object({ items: z.array(boundary) })
 
 export const searchQuery = z.object({ text: z.string().trim().min(1).max(100) })

@@ -20,3 +20,39 @@ export const toRegionSettings = (): Link => named('region-settings')
 export const toJobs = (): Link => named('jobs')
 export const toOutbox = (): Link => named('outbox')
 export const toAuditTrail = (): Link => named('audit-trail')
+
+export const toMap = (): Link => named('map')
+export const toWell = (id: number): Link => named('well', { id })
+export const toEditWell = (id: number): Link => named('edit-well', { id })
+/** A well entered at a place of the map, or with coordinates still to be given. */
+export const toNewWell = (at?: { lon: number; lat: number }): Link => ({
+  name: 'new-well',
+  query: at ? { at: placeText(at) } : {},
+})
+export const toStream = (id: number): Link => named('stream', { id })
+export const toAquiferUnit = (id: number): Link => named('aquifer-unit', { id })
+
+/** Latitude first, as coordinates are typed; six decimals are a tenth of a metre. */
+const placeText = ({ lat, lon }: { lat: number; lon: number }) => `${lat.toFixed(6)},${lon.toFixed(6)}`
+
+/** The estimate at a place, for the unit with this id. */
+export const toPlace = (place: { lat: number; lon: number }, unitId: number | null = null): Link => ({
+  name: 'place',
+  params: { place: placeText(place) },
+  query: unitId === null ? {} : { unit: String(unitId) },
+})
+
+export const toPumpingTests = (): Link => named('pumping-tests')
+/** With the pumped well filled in. */
+export const toNewPumpingTest = (wellId: number | null = null): Link => ({
+  name: 'new-pumping-test',
+  query: wellId === null ? {} : { well: String(wellId) },
+})
+/** With one of its analyses open. */
+export const toPumpingTest = (id: number, analysisId: number | null = null): Link => ({
+  name: 'pumping-test',
+  params: { id },
+  query: analysisId === null ? {} : { analysis: String(analysisId) },
+})
+export const toEditPumpingTest = (id: number): Link => named('edit-pumping-test', { id })
+export const toReadings = (id: number): Link => named('readings', { id })

@@ -1,6 +1,16 @@
-import { mdiCogOutline } from '@mdi/js'
+import { mdiCogOutline, mdiMapOutline, mdiChartBellCurveCumulative } from '@mdi/js'
 import type { Action } from '#shared/contracts/permissions.ts'
-import { toAuditTrail, toJobs, toOutbox, toPeople, toRegionSettings, toSettings, type Link } from './links.ts'
+import {
+  toAuditTrail,
+  toJobs,
+  toMap,
+  toOutbox,
+  toPeople,
+  toPumpingTests,
+  toRegionSettings,
+  toSettings,
+  type Link,
+} from './links.ts'
 
 export interface NavigationEntry {
   title: string
@@ -28,6 +38,14 @@ export const settingsPages: readonly NavigationEntry[] = [
 
 /** The rail. The first entry that a reader may open is their home. One line per subject; Settings stays last. */
 export const navigation: readonly MainEntry[] = [
+  { title: 'Map', to: toMap(), icon: mdiMapOutline, paths: ['/map'], action: 'map/read', key: 'm' },
+  {
+    title: 'Tests',
+    to: toPumpingTests(),
+    icon: mdiChartBellCurveCumulative,
+    paths: ['/pumping-tests'],
+    action: 'pumping-tests/read',
+  },
   {
     title: 'Settings',
     to: toSettings(),

@@ -1,0 +1,8 @@
+import { aquiferUnitDetail, aquiferUnitList } from '#shared/contracts/map.ts'
+import { api } from './client.ts'
+
+export const fetchAquiferUnits = (signal?: AbortSignal) =>
+  api.get('/api/aquifer-units', { response: aquiferUnitList, signal })
+
+export const fetchAquiferUnit = (id: number, signal?: AbortSignal) =>
+  api.get(`/api/aquifer-units/${id}`, { response: aquiferUnitDetail, signal })
