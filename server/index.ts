@@ -1,9 +1,11 @@
 import { once } from 'node:events'
 import { createServer, type Server } from 'node:http'
 import { setTimeout as pause } from 'node:timers/promises'
+import { ensureFirstAdministratorLink } from './api/password/first-administrator.ts'
 import { createApp } from './app.ts'
 import { ConfigError, parseConfig } from './config/config.ts'
 import { createDeps } from './create-deps.ts'
+import type { Deps } from './deps.ts'
 import { startBackgroundWork } from './jobs/background.ts'
 
 const drainMs = 10_000
@@ -19,6 +21,13 @@ async function close(server: Server) {
   server.closeIdleConnections()
   await Promise.race([closed, pause(drainMs, undefined, { ref: false })])
   server.closeAllConnections()
+}
+
+/** Tells whoever starts an installation without an administrator how to become the first. */
+async function greetFirstAdministrator(deps: Deps) {
+  const link = await ensureFirstAdministratorLink(deps)
+  if (link)
+    process.stdout.write(`\nThere is no administrator yet. This link works once and makes you the first:\n${link}\n`)
 }
 
 async function main() {
@@ -41,9 +50,14 @@ async function main() {
     process.exit(0)
   }
   for (const signal of ['SIGINT', 'SIGTERM', 'SIGHUP'] as const) process.on(signal, () => void end())
+  await greetFirstAdministrator(deps).catch((err: unknown) =>
+    deps.log.error({ err }, 'no link for a first administrator'),
+  )
 }
 
 main().catch((error: unknown) => {
-  process.stderr.write(`${error instanceof ConfigError ? error.message : String(error instanceof Error ? error.stack : error)}\n`)
+  process.stderr.write(
+    `${error instanceof ConfigError ? error.message : String(error instanceof Error ? error.stack : error)}\n`,
+  )
   process.exit(error instanceof ConfigError ? 78 : 1)
 })

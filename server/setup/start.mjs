@@ -22,7 +22,7 @@ await runCommand(async (life) => {
     await steps.step('Building the pages', () => buildClient(config.clientDir, life.stopping))
   }
   const port = await checkedPort(config.port, config.host)
-  const start = application({ ...env, PORT: String(port) }, settings.dataDir, life)
+  const start = application({ LOG_LEVEL: 'warn', ...env, PORT: String(port) }, settings.dataDir, life)
   const options = { stopping: life.stopping, say: steps.say }
   const running = Promise.race([
     aborted(life.stopping),

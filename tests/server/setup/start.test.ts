@@ -45,6 +45,12 @@ describe('a first start', () => {
     expect(await page.text()).toContain('<div id="app"')
   })
 
+  it('prints a link that makes the first administrator, where there is none', async () => {
+    const { origin, href } = new URL(await eventually(async () => /^http\S+$/m.exec(running.output())?.[0]))
+    expect(origin).toBe(running.address)
+    expect((await fetch(href, { headers: { accept: 'text/html' } })).status).toBe(ready)
+  })
+
   it('refuses a second start on its data folder, naming the process', async () => {
     const second = await runCommand('start', [], { DATA_DIR: dataDir, DEMO: '0', PORT: '0' })
     expect(second.status).toBe(1)
