@@ -18,7 +18,7 @@ export function useRowFocus(count: MaybeRefOrGetter<number>) {
     if (!step || !onRow || !(body instanceof HTMLElement)) return
     event.preventDefault()
     focused.value = step(focused.value, toValue(count) - 1)
-    void nextTick(() => body.querySelectorAll<HTMLElement>('tr')[focused.value]?.focus())
+    void nextTick(() => body.querySelectorAll<HTMLElement>('tr[tabindex]')[focused.value]?.focus())
   }
 
   return { focused, onKeydown }
