@@ -25,6 +25,9 @@ export type ReviewQueueItem = z.infer<typeof reviewQueueItem>
 export const reviewQueue = listOf(reviewQueueItem)
 
 export const decidedReview = z.object({
+  /** Of the decision: an analysis that was returned may be decided about once more. */
+  reviewId: recordId,
+  /** Of the analysis. */
   id: recordId,
   pumpingTestId: recordId,
   wellCode: z.string(),
@@ -34,4 +37,6 @@ export const decidedReview = z.object({
   reviewer: z.string(),
   createdAt: instant,
 })
+export type DecidedReview = z.infer<typeof decidedReview>
+
 export const decidedReviews = z.object({ items: z.array(decidedReview) })

@@ -1,6 +1,7 @@
 import { z } from 'zod'
 import {
   adoptedHistory,
+  adoptedValue,
   adoptedValueExportQuery,
   adoptedValueList,
   adoptedValueQuery,
@@ -39,6 +40,17 @@ export function adoptedValuesRoutes({ adoptedValues }: Services): Route[] {
         const csv = await adoptedValues.exportCsv(viewer, filters, unitSystem)
         res.attachment('regional-table.csv').type('text/csv').send(csv)
       },
+    ),
+    route(
+      {
+        method: 'get',
+        path: '/api/adopted-values/:id',
+        action: 'adopted-values/read',
+        summary: 'An adopted value, also one that was replaced or withdrawn',
+        params,
+        response: adoptedValue,
+      },
+      ({ viewer, params: { id } }) => adoptedValues.get(viewer, id),
     ),
     route(
       {

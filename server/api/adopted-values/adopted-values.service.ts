@@ -39,6 +39,12 @@ export function createAdoptedValuesService(deps: Deps) {
       return { ...pageOf(rows.map(adoptedValueView), logarithms.length, query), statistics: statisticsOf(logarithms) }
     },
 
+    async get(viewer: Viewer, id: number) {
+      const found = await repository.findValue(db, viewer, id)
+      if (!found) throw notFound()
+      return adoptedValueView(found)
+    },
+
     ofWell: async (viewer: Viewer, wellId: number) =>
       (await repository.listCurrent(db, viewer, { wellId })).map(adoptedValueView),
 

@@ -81,15 +81,18 @@ export async function newestModel(executor: Executor, unitId: number, quantity: 
     )
     .orderBy(desc(variogramModels.dataVersion))
     .limit(1)
-  return row ? { dataVersion: row.dataVersion, model: row.model as UnitModel } : null
+  return row ? { dataVersion: row.dataVersion, model: row.model as StoredModel } : null
 }
+
+/** With a hash of the values and barriers that it was fitted to. */
+export type StoredModel = UnitModel & { fingerprint?: string }
 
 interface NewModel {
   unitId: number
   quantity: EstimateQuantity
   scope: Scope
   dataVersion: number
-  model: UnitModel
+  model: StoredModel
   createdAt: Date
 }
 

@@ -1,3 +1,4 @@
+import { createHash } from 'node:crypto'
 import { estimateQuantity, type EstimateQuantity } from '#shared/contracts/estimates.ts'
 import type { UnitModel } from '#shared/estimates/types.ts'
 import type { Scope } from '../../db/readable.ts'
@@ -8,7 +9,13 @@ import type { EstimatesNeeds } from './estimates.service.ts'
 import * as repository from './estimates.repository.ts'
 import { loadUnitData, type UnitData } from './unit-data.ts'
 
+type Newest = NonNullable<Awaited<ReturnType<typeof repository.newestModel>>>
+
 const scopes: Scope[] = ['published', 'internal']
+/** A model is known by what it was fitted to: a change that its scope cannot see leaves it as it is. */
+const fingerprintOf = ({ siteValues, barriers }: UnitData): string =>
+  createHash('sha256').update(JSON.stringify({ siteValues, barriers })).digest('hex')
+
 /** Units times quantities times scopes of a large region; the oldest go first. */
 const mostKept = 64
 
@@ -37,9 +44,13 @@ export function createModels(deps: Deps, adoptedValues: EstimatesNeeds['adoptedV
   ): Promise<UnitModel> {
     const input: FitModelInput = { values: data.siteValues, options: { quantity, barriers: data.barriers } }
     const model = await deps.workers.run<UnitModel>('fit-model', input)
-    await repository.saveModel(db, { unitId, quantity, scope, dataVersion, model, createdAt: deps.now() })
+    const stored = { ...model, fingerprint: fingerprintOf(data) }
+    await repository.saveModel(db, { unitId, quantity, scope, dataVersion, model: stored, createdAt: deps.now() })
     return model
   }
+
+  const fits = (newest: Newest, dataVersion: number, data: UnitData) =>
+    newest.dataVersion === dataVersion || newest.model.fingerprint === fingerprintOf(data)
 
   return {
     /** The unit's values as they are now, with the newest model; the first estimate ever waits for a fit. */
@@ -48,8 +59,11 @@ export function createModels(deps: Deps, adoptedValues: EstimatesNeeds['adoptedV
       const data = await dataOf(unitId, quantity, scope, epsg, dataVersion)
       if (!data) throw new AppError('estimate/unknown-unit')
       const newest = await repository.newestModel(db, unitId, quantity, scope)
-      const model = newest?.model ?? (await fit(unitId, quantity, scope, dataVersion, data))
-      return { data, model, dataVersion, outdated: newest !== null && newest.dataVersion !== dataVersion }
+      if (!newest)
+        return { data, model: await fit(unitId, quantity, scope, dataVersion, data), dataVersion, outdated: false }
+      // The version that the answer names is that of the last change its reader could see.
+      if (fits(newest, dataVersion, data)) return { data, ...newest, outdated: false }
+      return { data, model: newest.model, dataVersion, outdated: true }
     },
 
     /** Fits every quantity and scope of a unit whose values have moved on since its newest model. */
@@ -58,10 +72,10 @@ export function createModels(deps: Deps, adoptedValues: EstimatesNeeds['adoptedV
       for (const [i, { scope, quantity }] of work.entries()) {
         await report(i, work.length)
         const dataVersion = await adoptedValues.dataVersion(db, unitId)
-        const newest = await repository.newestModel(db, unitId, quantity, scope)
-        if (newest?.dataVersion === dataVersion) continue
         const data = await dataOf(unitId, quantity, scope, epsg, dataVersion)
-        if (data) await fit(unitId, quantity, scope, dataVersion, data)
+        const newest = await repository.newestModel(db, unitId, quantity, scope)
+        if (!data || (newest && fits(newest, dataVersion, data))) continue
+        await fit(unitId, quantity, scope, dataVersion, data)
       }
       await report(work.length, work.length)
     },

@@ -50,6 +50,7 @@ export async function insertReview(executor: Executor, row: typeof reviews.$infe
 export const listDecided = (executor: Executor, viewer: Viewer, limit: number) =>
   executor
     .select({
+      reviewId: reviews.id,
       id: analyses.id,
       pumpingTestId: analyses.pumpingTestId,
       decision: reviews.decision,
