@@ -1,3 +1,4 @@
+import type { UnitSystem } from '#shared/quantities/systems.ts'
 import { computed, type ComputedRef } from 'vue'
 import { formatInterval, formatNumber, formatQuantity, type NumberFormat } from '#shared/quantities/format.ts'
 import { fromSI, toSI, unitById, type Dimension } from '#shared/quantities/units.ts'
@@ -20,7 +21,7 @@ export interface Units {
 }
 
 /** Formatters in the reader's units; what uses them in a template or computed follows a switch of units at once. */
-export function useUnits(): Units & { system: ComputedRef<{ id: string; label: string }> } {
+export function useUnits(): Units & { system: ComputedRef<UnitSystem> } {
   const preferences = usePreferences()
   const system = computed(() => preferences.unitSystem)
   const id = (dimension: Dimension) => system.value[dimension]
