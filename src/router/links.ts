@@ -56,3 +56,8 @@ export const toPumpingTest = (id: number, analysisId: number | null = null): Lin
 })
 export const toEditPumpingTest = (id: number): Link => named('edit-pumping-test', { id })
 export const toReadings = (id: number): Link => named('readings', { id })
+
+export const toRegionalTable = (): Link => named('regional-table')
+/** A value of the regional table, with the way back to its readings. */
+export const toAdoptedValue = (id: number): Link => named('adopted-value', { id })
+export const toReviews = (): Link => named('reviews')

@@ -1,4 +1,4 @@
-import { mdiCogOutline, mdiMapOutline, mdiChartBellCurveCumulative } from '@mdi/js'
+import { mdiCheckDecagramOutline, mdiCogOutline, mdiMapOutline, mdiTable, mdiChartBellCurveCumulative } from '@mdi/js'
 import type { Action } from '#shared/contracts/permissions.ts'
 import {
   toAuditTrail,
@@ -7,7 +7,9 @@ import {
   toOutbox,
   toPeople,
   toPumpingTests,
+  toRegionalTable,
   toRegionSettings,
+  toReviews,
   toSettings,
   type Link,
 } from './links.ts'
@@ -40,12 +42,20 @@ export const settingsPages: readonly NavigationEntry[] = [
 export const navigation: readonly MainEntry[] = [
   { title: 'Map', to: toMap(), icon: mdiMapOutline, paths: ['/map'], action: 'map/read', key: 'm' },
   {
+    title: 'Regional table',
+    to: toRegionalTable(),
+    icon: mdiTable,
+    paths: ['/regional-table'],
+    action: 'adopted-values/read',
+  },
+  {
     title: 'Tests',
     to: toPumpingTests(),
     icon: mdiChartBellCurveCumulative,
     paths: ['/pumping-tests'],
     action: 'pumping-tests/read',
   },
+  { title: 'Reviews', to: toReviews(), icon: mdiCheckDecagramOutline, paths: ['/reviews'], action: 'reviews/read' },
   {
     title: 'Settings',
     to: toSettings(),

@@ -1,0 +1,190 @@
+import type { SeriesOption } from 'echarts'
+import { CHART_FONT_SIZE, faded, type ChartTheme } from './chart-theme.ts'
+import type { Band, FitDrawing } from './fit-drawing.ts'
+import { symbolOf, type PlotWell, type XY } from './plot-wells.ts'
+
+/** The part of a chart that follows the mouse: series with fixed ids, whose data alone are replaced. */
+export interface SeriesFrame {
+  wells: readonly PlotWell[]
+  theme: ChartTheme
+  /** Axis indices of the strip of residuals; null without one. */
+  withStrip: boolean
+}
+
+const NO_FIT: FitDrawing = {
+  inside: [],
+  fitted: [],
+  bands: [],
+  span: null,
+  shade: null,
+  marks: null,
+  residuals: { inside: [], outside: [], unit: '' },
+}
+
+const quiet = { silent: true, animation: false, emphasis: { disabled: true } } as const
+export const DOT = 7
+
+export function fitSeries({ wells, theme, withStrip }: SeriesFrame, given: FitDrawing | null): SeriesOption[] {
+  const drawing = given ?? NO_FIT
+  return [
+    areas(drawing, theme),
+    ...wells.map((_, i) => band(drawing.bands[i] ?? null, i, theme)),
+    ...wells.map((_, i) => inside(drawing.inside[i] ?? [], i, theme)),
+    ...wells.map((_, i) => fitted(drawing.fitted[i] ?? [], i, theme)),
+    cycle(drawing, theme),
+    marks(drawing, theme),
+    ...(withStrip ? strip(drawing, theme) : []),
+  ]
+}
+
+/** Window and shade as areas behind everything. */
+function areas({ span, shade }: FitDrawing, theme: ChartTheme): SeriesOption {
+  const data = [
+    ...(shade ? [area(shade.from, shade.to, faded(theme.ochre, 0.07), shade.label, theme.ochre)] : []),
+    ...(span ? [area(span[0], span[1], faded(theme.deepWater, 0.07), '', theme.deepWater)] : []),
+  ]
+  return {
+    ...quiet,
+    id: 'areas',
+    type: 'line',
+    z: 0,
+    data: [],
+    markArea: { silent: true, animation: false, data },
+  } as SeriesOption
+}
+
+const area = (from: number, to: number, color: string, label: string, labelColor: string) => [
+  {
+    xAxis: from,
+    itemStyle: { color },
+    label: {
+      show: label !== '',
+      formatter: label,
+      position: 'insideBottomLeft',
+      distance: 8,
+      color: labelColor,
+      fontSize: CHART_FONT_SIZE,
+    },
+  },
+  { xAxis: to },
+]
+
+/** The band as one closed outline: along its upper edge and back along the lower one. */
+function band(given: Band | null, i: number, theme: ChartTheme): SeriesOption {
+  const outline = given ? [...given.high, ...[...given.low].reverse()] : []
+  return {
+    ...quiet,
+    id: `band-${i}`,
+    type: 'custom',
+    z: 1,
+    data: outline.length > 2 ? [outline.flat()] : [],
+    encode: { x: [], y: [] },
+    clip: true,
+    renderItem: (_params, api) => ({
+      type: 'polygon',
+      shape: { points: outline.map((point) => api.coord(point) as [number, number]) },
+      style: { fill: faded(theme.deepWater, 0.18) },
+      silent: true,
+    }),
+  } as SeriesOption
+}
+
+const inside = (data: XY[], i: number, theme: ChartTheme): SeriesOption => ({
+  ...quiet,
+  id: `inside-${i}`,
+  type: 'scatter',
+  z: 4,
+  symbol: symbolOf(i),
+  symbolSize: DOT,
+  itemStyle: { color: theme.ink },
+  data,
+})
+
+const fitted = (data: XY[], i: number, theme: ChartTheme): SeriesOption => ({
+  ...quiet,
+  id: `fitted-${i}`,
+  type: 'line',
+  z: 5,
+  showSymbol: false,
+  lineStyle: { color: theme.deepWater, width: 1.75 },
+  data,
+})
+
+const cycle = ({ marks: found }: FitDrawing, theme: ChartTheme): SeriesOption => ({
+  ...quiet,
+  id: 'cycle',
+  type: 'line',
+  z: 3,
+  showSymbol: false,
+  lineStyle: { color: theme.inkSoft, width: 1, type: [3, 3] },
+  data: found?.cycle?.corner ?? [],
+})
+
+/** Words beside the line: where it meets zero, and its fall in one factor of ten. */
+function marks({ marks: found }: FitDrawing, theme: ChartTheme): SeriesOption {
+  const label = (formatter: string, position: string, color: string) => ({
+    show: true,
+    formatter,
+    position,
+    color,
+    fontSize: CHART_FONT_SIZE,
+    distance: 7,
+    backgroundColor: faded(theme.sheet, 0.8),
+    padding: [2, 3],
+  })
+  const zero = found?.zero && {
+    value: found.zero.at,
+    symbolSize: 10,
+    itemStyle: { color: theme.sheet, borderColor: theme.deepWater, borderWidth: 2 },
+    label: label(found.zero.label, 'right', theme.deepWater),
+  }
+  const [from, to] = found?.cycle ? horizontal(found.cycle.corner) : [null, null]
+  const fall = found?.cycle &&
+    from &&
+    to && {
+      value: [Math.sqrt(from[0] * to[0]), from[1]],
+      symbolSize: 0,
+      label: label(found.cycle.label, 'top', theme.ink),
+    }
+  return {
+    ...quiet,
+    id: 'marks',
+    type: 'scatter',
+    z: 6,
+    clip: false,
+    data: [zero, fall].filter(Boolean),
+  } as SeriesOption
+}
+
+const horizontal = ([a, b, c]: [XY, XY, XY]): [XY, XY] => (a[1] === b[1] ? [a, b] : [b, c])
+
+/** Residuals as one broken line each: a stroke from zero for every reading. */
+function strip({ residuals }: FitDrawing, theme: ChartTheme): SeriesOption[] {
+  const stroke = (id: string, points: XY[], color: string): SeriesOption => ({
+    ...quiet,
+    id,
+    type: 'line',
+    xAxisIndex: 1,
+    yAxisIndex: 1,
+    showSymbol: false,
+    connectNulls: false,
+    lineStyle: { color, width: 2, cap: 'butt' },
+    data: points.flatMap(([x, y]): (XY | ['-', '-'])[] => [
+      [x, 0],
+      [x, y],
+      ['-', '-'],
+    ]),
+  })
+  return [
+    stroke('residuals-outside', residuals.outside, faded(theme.inkSoft, 0.35)),
+    stroke('residuals-inside', residuals.inside, theme.deepWater),
+  ]
+}
+
+/** The round number that holds the residuals of the window, for the strip's axis. */
+export function residualLimit(drawing: FitDrawing | null): number {
+  const most = (drawing?.residuals.inside ?? []).reduce((largest, [, y]) => Math.max(largest, Math.abs(y)), 0)
+  if (!(most > 0)) return 1
+  const power = 10 ** Math.floor(Math.log10(most))
+  return ([1, 2, 5, 10].find((step) => step * power >= most) ?? 10) * power
+}

@@ -1,0 +1,71 @@
+import type { AnalysisInputs, AnalysisOptions } from '#shared/hydraulics/analysis.ts'
+import { unitById } from '#shared/quantities/units.ts'
+import { extentOf, linearAxis, logAxis, type Axis } from './axis.ts'
+import { plotClock, type PlotClock } from './plot-clock.ts'
+import type { PlotKind } from './plot-kinds.ts'
+import { plotWells, type PlotWell } from './plot-wells.ts'
+
+/** Unit ids in which a plot is drawn. */
+export interface PlotUnits {
+  time: string
+  length: string
+}
+
+export interface TimePlotRequest {
+  kind: Exclude<PlotKind, 'distance'>
+  inputs: AnalysisInputs
+  wellIds: readonly string[]
+  options: Pick<AnalysisOptions, 'phase' | 'rateHistory'>
+  units: PlotUnits
+  /** Which way drawdown points; a log–log plot always grows upwards. */
+  direction: 'down' | 'up'
+  /** Of the derivative, factors of ten in time to either side. */
+  smoothing?: number
+}
+
+/** A plot against time before any analysis is drawn on it. */
+export interface TimePlot {
+  kind: TimePlotRequest['kind']
+  x: Axis
+  y: Axis
+  clock: PlotClock
+  wells: PlotWell[]
+  units: PlotUnits
+}
+
+export function timePlot(request: TimePlotRequest): TimePlot {
+  const { kind, inputs, wellIds, options, units, direction, smoothing } = request
+  const clock = plotClock(kind, inputs, options, unitById(units.time).toSI)
+  const length_m = unitById(units.length).toSI
+  const wells = plotWells({ kind, inputs, wellIds, clock, length_m, ...(smoothing === undefined ? {} : { smoothing }) })
+  return { kind, clock, wells, units, x: timeAxis(kind, wells, units), y: drawdownAxis(kind, wells, units, direction) }
+}
+
+const xs = (wells: PlotWell[]) => wells.flatMap(({ points }) => points.map(({ x }) => x))
+const measured = (wells: PlotWell[]) => wells.flatMap(({ points }) => points.map(({ y }) => y))
+const ys = (wells: PlotWell[]) => [
+  ...measured(wells),
+  ...wells.flatMap(({ derivative }) => derivative.map(([, y]) => y)),
+]
+
+function timeAxis(kind: TimePlot['kind'], wells: PlotWell[], units: PlotUnits): Axis {
+  const unit = unitById(units.time).label
+  if (kind === 'linear') return linearAxis(xs(wells), `time since pumping began, ${unit}`, { parts: 8 })
+  if (kind === 'recovery') return ratioAxis(xs(wells))
+  return logAxis(xs(wells), `time since pumping began, ${unit}`)
+}
+
+/** From 1, where recovery ends, outwards. */
+function ratioAxis(ratios: number[]): Axis {
+  const [, most] = extentOf(ratios) ?? [1, 100]
+  const axis = logAxis([1, most], "t/t', time since pumping began over time since it stopped")
+  return { ...axis, min: 1 }
+}
+
+/** Readings set the scale: stray derivatives of a noisy log must not flatten the plot. */
+function drawdownAxis(kind: TimePlot['kind'], wells: PlotWell[], units: PlotUnits, direction: 'down' | 'up'): Axis {
+  const unit = unitById(units.length).label
+  if (kind === 'log-log') return logAxis(ys(wells), `drawdown and its derivative, ${unit}`)
+  const title = kind === 'recovery' ? `residual drawdown, ${unit}` : `drawdown, ${unit}`
+  return linearAxis(measured(wells), title, { inverse: direction === 'down' })
+}

@@ -1,0 +1,21 @@
+import {
+  created,
+  pumpingTest,
+  pumpingTestList,
+  type PumpingTestInput,
+  type PumpingTestQuery,
+  type PumpingTestUpdate,
+} from '#shared/contracts/pumping-tests.ts'
+import { api } from './client.ts'
+
+export const fetchPumpingTests = (query: PumpingTestQuery, signal?: AbortSignal) =>
+  api.get('/api/pumping-tests', { query, response: pumpingTestList, signal })
+
+export const fetchPumpingTest = (id: number, signal?: AbortSignal) =>
+  api.get(`/api/pumping-tests/${id}`, { response: pumpingTest, signal })
+
+export const createPumpingTest = (body: PumpingTestInput, idempotencyKey: string) =>
+  api.post('/api/pumping-tests', { body, response: created, idempotencyKey })
+
+export const updatePumpingTest = (id: number, body: PumpingTestUpdate) =>
+  api.put(`/api/pumping-tests/${id}`, { body, response: pumpingTest })

@@ -1,0 +1,73 @@
+import type { Analysis } from '#shared/contracts/analyses.ts'
+import type { UnitSystem } from '#shared/quantities/systems.ts'
+import {
+  AnalysisError,
+  type AnalysisInputs,
+  type AnalysisOptions,
+  type AnalysisResult,
+  type Finding,
+} from '#shared/hydraulics/analysis.ts'
+import { agreementOf, type ComparedAnalysis } from '#shared/hydraulics/agreement.ts'
+import { analyse, methods, type MethodId } from '#shared/hydraulics/catalogue.ts'
+import { evidenceFacts } from '#shared/hydraulics/evidence-facts.ts'
+import { evidenceOf, type Evidence } from '#shared/hydraulics/evidence.ts'
+import { analysisErrorText } from '#shared/words/findings.ts'
+
+/** What a calculation gave: a result, or why there is none. */
+export type Outcome = { result: AnalysisResult } | { error: AnalysisError }
+
+export function outcomeOf(method: MethodId, inputs: AnalysisInputs, options: AnalysisOptions): Outcome {
+  try {
+    return { result: analyse(method, inputs, options) }
+  } catch (error) {
+    if (error instanceof AnalysisError) return { error }
+    throw error
+  }
+}
+
+export const resultOf = (outcome: Outcome | null): AnalysisResult | null =>
+  outcome && 'result' in outcome ? outcome.result : null
+
+export const refusalText = (outcome: Outcome | null, units: UnitSystem): string =>
+  outcome && 'error' in outcome ? analysisErrorText(outcome.error.code, outcome.error.params, units) : ''
+
+/** What agreement needs to know; null where there is no transmissivity. */
+export function comparedOf(
+  id: string,
+  label: string,
+  { method, wellIds, result }: { method: MethodId; wellIds: string[]; result: Pick<AnalysisResult, 'T'> },
+): ComparedAnalysis | null {
+  if (!result.T) return null
+  const { phase, wells } = methods[method].needs
+  const usesDistances = wells.least > 1 || wellIds.length > 1
+  return { id, label, T: result.T, wellIds, phase, usesDistances }
+}
+
+export const isFitted = (analysis: Analysis): analysis is Analysis & { method: MethodId; options: AnalysisOptions } =>
+  analysis.method !== 'reported' && analysis.options !== null
+
+/** Evidence that a result would have beside the kept analyses of its test, by the rules that the server adopts by. */
+export function evidencePreview(
+  inputs: AnalysisInputs,
+  work: { id: number | null; method: MethodId; options: AnalysisOptions; result: AnalysisResult },
+  kept: readonly Analysis[],
+): Evidence | null {
+  const mine = comparedOf('', '', { ...work, wellIds: work.options.wellIds })
+  if (!mine) return null
+  const recoveryAgrees = kept.some((other) => {
+    if (other.id === work.id || other.method !== 'recovery' || other.state === 'withdrawn' || !isFitted(other))
+      return false
+    const theirs = comparedOf('', '', {
+      ...other,
+      wellIds: other.options.wellIds,
+      result: other.result as AnalysisResult,
+    })
+    return theirs !== null && agreementOf(mine, theirs).code !== 'disagree'
+  })
+  return evidenceOf(evidenceFacts(inputs, work.options, work.result, { recoveryAgrees }))
+}
+
+const order: Record<Finding['severity'], number> = { bad: 0, caution: 1, note: 2, good: 3 }
+/** Worst first. */
+export const bySeverity = (findings: readonly Finding[]) =>
+  [...findings].sort((a, b) => order[a.severity] - order[b.severity])
