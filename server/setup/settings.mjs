@@ -55,13 +55,12 @@ export async function checkedConfig(env, settings) {
   }
 }
 
-const leastFree = 500e6
-
 /**
  * Makes the data folder, which must be writable and have room.
  * @param {string} dataDir
+ * @param {number} leastFree bytes
  */
-export function prepareDataFolder(dataDir) {
+export function prepareDataFolder(dataDir, leastFree = 500e6) {
   mkdirSync(dataDir, { recursive: true, mode: 0o700 })
   const { bavail, bsize } = statfsSync(dataDir)
   const free = bavail * bsize
