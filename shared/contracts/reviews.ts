@@ -7,7 +7,8 @@ export const reviewQueueItem = z.object({
   id: recordId,
   pumpingTestId: recordId,
   wellCode: z.string(),
-  testStart: instant,
+  /** Wall-clock time where the test was made; the day or the year alone where no more is known. */
+  startLocal: z.string(),
   method: analysisMethod,
   label: z.string().nullable(),
   rationale: z.string().nullable(),

@@ -51,8 +51,11 @@ function pairTest(data: KrigingData, barriers: readonly Polyline[]): PairTest | 
 
 type Fit = Pick<UnitModel, 'variogram' | 'nodes' | 'leastSquares' | 'experimental' | 'robust' | 'errorsExceedScatter'>
 
+/** Values that all stand at one place, as nested wells do, tell nothing of distances. */
+const allAtOnePlace = ({ x, y }: KrigingData): boolean => x.every((east, i) => east === x[0] && y[i] === y[0])
+
 const lagsOf = (data: KrigingData, options: ExperimentalOptions): Lag[] =>
-  data.z.length < 2 ? [] : experimentalVariogram(data, options)
+  allAtOnePlace(data) ? [] : experimentalVariogram(data, options)
 
 function experimentalOf(data: KrigingData, pair: PairTest | null): Omit<Fit, 'variogram' | 'nodes'> {
   const options = pair ? { pair } : {}

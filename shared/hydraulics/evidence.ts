@@ -105,7 +105,8 @@ function storageReason({ origin, observationWell, storageClass }: EvidenceFacts)
   if (origin === 'slug-test') return 'storage-slug'
   if (storageClass === 'unclassified') return 'storage-unclassified'
   if (storageClass === 'apparent') return 'storage-apparent'
-  return origin === 'pumping-test' && !observationWell ? 'storage-pumped-well' : 'storage-usable'
+  const pumpedWellAlone = origin === 'specific-capacity' || (origin === 'pumping-test' && !observationWell)
+  return pumpedWellAlone ? 'storage-pumped-well' : 'storage-usable'
 }
 
 const shown = ({ radialFlowShown, conditionsHold }: EvidenceFacts) => radialFlowShown && conditionsHold

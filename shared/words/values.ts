@@ -44,6 +44,6 @@ export const quantityDimension = ({ quantity }: Pick<Valued, 'quantity'>) => par
 export const thicknessBases = {
   aquifer: 'whole unit',
   screen: 'screened part',
-  saturated: 'saturated at the test',
+  saturated: 'saturated part',
   unknown: 'unknown',
 } as const

@@ -11,11 +11,16 @@ import * as repository from './adopted-values.repository.ts'
 import { bumpDataVersions, dataVersion } from './data-versions.repository.ts'
 import { adoptedValuesCsv } from './export-csv.ts'
 import { statisticsOf } from './statistics.ts'
+import { countCurrentOf, unitsWithValues, type Subject } from './units-with-values.repository.ts'
 import { adoptedValueView } from './view.ts'
 
 export type NewValue = Omit<repository.NewAdoptedValue, 'validFrom' | 'validTo' | 'replacedBy'>
 
-export function createAdoptedValuesService(deps: Deps) {
+export interface AdoptedValuesNeeds {
+  withdrawAnalysis: (executor: Executor, analysisId: number) => Promise<unknown>
+}
+
+export function createAdoptedValuesService(deps: Deps, { withdrawAnalysis }: AdoptedValuesNeeds) {
   const { db } = deps.connection
   const { now, jobs } = deps
 
@@ -30,6 +35,11 @@ export function createAdoptedValuesService(deps: Deps) {
   return {
     changed,
     dataVersion,
+    unitsWithValues,
+
+    /** A well or test is another now: estimates that use its values are made anew. */
+    changedAt: async (executor: Executor, subject: Subject, id: number) =>
+      changed(executor, await unitsWithValues(executor, subject, [id])),
 
     async list(viewer: Viewer, query: AdoptedValueQuery) {
       const [rows, logarithms] = await Promise.all([
@@ -83,6 +93,7 @@ export function createAdoptedValuesService(deps: Deps) {
         const row = current.find((candidate) => candidate.id === id)
         if (!row) throw new AppError('adopted-value/not-current')
         await repository.endValues(tx, [id], now(), null)
+        if ((await countCurrentOf(tx, row.analysisId)) === 0) await withdrawAnalysis(tx, row.analysisId)
         await changed(tx, [row.unitId])
         const details = { reason, quantity: row.quantity, pumpingTestId: row.pumpingTestId }
         await recordAudit(tx, {

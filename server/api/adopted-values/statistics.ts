@@ -15,8 +15,12 @@ export function statisticsOf(values: Logarithm[]): AdoptedStatistics[] {
     groups.set(key, groups.get(key) ?? [])
     groups.get(key)!.push(value)
   }
-  return [...groups.values()].map(summarise)
+  return [...groups.values()].map(summarise).sort((a, b) => rank(a) - rank(b))
 }
+
+const order = ['T', 'S elastic', 'S specific-yield', 'S apparent', 'S unclassified', 'K']
+const rank = ({ quantity, storageClass }: AdoptedStatistics) =>
+  order.indexOf([quantity, storageClass].filter(Boolean).join(' '))
 
 function summarise(group: Logarithm[]): AdoptedStatistics {
   const logs = rising(group.map(({ log10 }) => log10))

@@ -10,6 +10,7 @@ import type { AnalysisResult } from '#shared/hydraulics/analysis.ts'
 import { evidenceFacts } from '#shared/hydraulics/evidence-facts.ts'
 import { evidenceOf, type Evidence, type EvidenceFacts } from '#shared/hydraulics/evidence.ts'
 import type { NewValue } from '../adopted-values/adopted-values.service.ts'
+import { localStart } from '../pumping-tests/start-time.ts'
 import type { PumpingTestRow, TestParts } from '../pumping-tests/view.ts'
 import type { AnalysisRow } from './analyses.repository.ts'
 import { reportedFacts, reportedInputs } from './reported.ts'
@@ -28,11 +29,14 @@ function compared(row: Weighed) {
   return T && { id: String(row.id), label: '', T, wellIds, phase, usesDistances: false }
 }
 
+/** An analysis that a reviewer sent back, or whose value was withdrawn, is evidence of nothing. */
+const refused = new Set<Weighed['state']>(['returned', 'withdrawn'])
+
 /** Whether a recovery analysis of the same test, other than this one, gives the same transmissivity. */
 function recoveryAgrees(row: Weighed, siblings: Weighed[]): boolean {
   const mine = compared(row)
   return siblings.some((sibling) => {
-    if (sibling.id === row.id || sibling.method !== 'recovery' || sibling.state === 'withdrawn') return false
+    if (sibling.id === row.id || sibling.method !== 'recovery' || refused.has(sibling.state)) return false
     const other = compared(sibling)
     return mine !== null && other !== null && agreementOf(mine, other).code !== 'disagree'
   })
@@ -114,7 +118,7 @@ export function adoptedRows(
     method: row.method,
     origin: originOf(facts),
     thicknessBasis: test.thicknessBasis,
-    testYear: test.startAt.getUTCFullYear(),
+    testYear: Number(localStart(test.startAt, test.zone, 'year')),
   }
   if (units.length > 1) {
     const log10Error = Math.max(leastCompositeError, evidence.logErrorT)

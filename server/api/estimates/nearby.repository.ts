@@ -24,6 +24,7 @@ export async function testsInBox(executor: Executor, viewer: Viewer, box: Box, u
       wellCode: wells.code,
       position: wells.position,
       startAt: pumpingTests.startAt,
+      zone: pumpingTests.zone,
       unitId: aquiferUnits.id,
       unitName: aquiferUnits.name,
     })

@@ -2,6 +2,7 @@ import type { NearbyQuery, NearbyTest } from '#shared/contracts/estimates.ts'
 import type { Viewer } from '#shared/contracts/permissions.ts'
 import { bearing, destination, geodesicDistance } from '#shared/geodesy/index.ts'
 import type { Executor } from '../../db/client.ts'
+import { localStart } from '../pumping-tests/start-time.ts'
 import { testsInBox, valuesOfTests, type Box } from './nearby.repository.ts'
 
 /** More than a page can show; the answer says when there were more. */
@@ -11,7 +12,10 @@ type Row = Awaited<ReturnType<typeof testsInBox>>[number]
 
 function boxAround({ lon, lat, radiusM }: NearbyQuery): Box {
   const reach = (degrees: number) => destination({ lon, lat }, degrees, radiusM)
-  return { southWest: [reach(270).lon, reach(180).lat], northEast: [reach(90).lon, reach(0).lat] }
+  const [west, east] = [reach(270).lon, reach(90).lon]
+  // A box across the date line would turn inside out: there the distance alone decides.
+  const [from, to] = west <= east ? [west, east] : [-180, 180]
+  return { southWest: [from, reach(180).lat], northEast: [to, reach(0).lat] }
 }
 
 const lonLat = ({ position: [lon, lat] }: Row) => ({ lon, lat })
@@ -40,7 +44,7 @@ export async function nearbyTests(executor: Executor, viewer: Viewer, query: Nea
       distanceM,
       bearingDeg: bearing(place, lonLat(first)),
       startAt: first.startAt.toISOString(),
-      year: first.startAt.getUTCFullYear(),
+      year: Number(localStart(first.startAt, first.zone, 'year')),
       unitNames: group.map(({ unitName }) => unitName),
       values: values.filter(({ pumpingTestId }) => pumpingTestId === first.pumpingTestId).map(valueView),
     }

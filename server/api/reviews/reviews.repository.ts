@@ -20,7 +20,9 @@ export const listQueue = (executor: Executor, viewer: Viewer, limit: number, off
       authorId: analyses.createdBy,
       author: users.name,
       wellCode: wells.code,
-      testStart: pumpingTests.startAt,
+      startAt: pumpingTests.startAt,
+      zone: pumpingTests.zone,
+      startPrecision: pumpingTests.startPrecision,
       inputsChanged: analyses.inputsChanged,
     })
     .from(analyses)

@@ -11,6 +11,7 @@ import type { createAdoptedValuesService } from '../adopted-values/adopted-value
 import type { createAnalysesService } from '../analyses/analyses.service.ts'
 import { recordAudit } from '../audit-trail/record-audit.ts'
 import { pageOf } from '../page-of.ts'
+import { localStart } from '../pumping-tests/start-time.ts'
 import * as repository from './reviews.repository.ts'
 
 export interface ReviewsNeeds {
@@ -85,7 +86,7 @@ type QueueRow = Awaited<ReturnType<typeof repository.listQueue>>[number]
 
 function queueItem(
   viewer: Viewer,
-  { result, authorId, author, testStart, submittedAt, ...row }: QueueRow,
+  { result, authorId, author, startAt, zone, startPrecision, submittedAt, ...row }: QueueRow,
 ): ReviewQueueItem {
   const { T, S, storageClass } = analysisResult.parse(result)
   return {
@@ -95,8 +96,8 @@ function queueItem(
     storageClass,
     method: row.method as ReviewQueueItem['method'],
     author: author ?? '',
-    testStart: testStart.toISOString(),
-    submittedAt: (submittedAt ?? testStart).toISOString(),
+    startLocal: localStart(startAt, zone, startPrecision),
+    submittedAt: (submittedAt ?? startAt).toISOString(),
     mayReview: can(viewer, 'reviews/decide') && authorId !== viewer.id,
   }
 }
