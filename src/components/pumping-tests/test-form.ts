@@ -1,0 +1,159 @@
+import type { PumpingTest, PumpingTestInput } from '#shared/contracts/pumping-tests.ts'
+import type { Well } from '#shared/contracts/wells.ts'
+
+type Input = PumpingTestInput
+export type Precision = PumpingTest['startPrecision']
+
+export interface StepForm {
+  startS: number | null
+  value: number | null
+  unit: string | null
+}
+
+export interface ObservationForm {
+  wellId: number | null
+  distanceBasis: Input['observationWells'][number]['distanceBasis']
+  distanceM: number | null
+  reason: string
+  staticLevelM: number | null
+}
+
+export interface ShareForm {
+  unitId: number | null
+  share: number | null
+  basis: Input['units'][number]['basis']
+}
+
+/** A test as it is typed: what is not yet known is null. */
+export interface TestForm extends Pick<
+  Input,
+  'zone' | 'aquifer' | 'intervalBasis' | 'thicknessBasis' | 'visibility' | 'intervalTopM' | 'intervalBottomM'
+> {
+  wellId: number | null
+  precision: Precision
+  date: string
+  time: string
+  year: string
+  units: ShareForm[]
+  thicknessM: number | null
+  thicknessError: number | null
+  rateError: number | null
+  rateSteps: StepForm[]
+  observationWells: ObservationForm[]
+  staticLevelM: number | null
+  conditions: string
+}
+
+export const emptyForm = (zone: string, dischargeUnit: string): TestForm => ({
+  wellId: null,
+  precision: 'instant',
+  date: '',
+  time: '',
+  year: '',
+  zone,
+  aquifer: 'confined',
+  intervalBasis: 'screens',
+  intervalTopM: null,
+  intervalBottomM: null,
+  units: [{ unitId: null, share: 1, basis: 'single-unit' }],
+  thicknessM: null,
+  thicknessBasis: 'aquifer',
+  thicknessError: 0.1,
+  rateError: 0.05,
+  rateSteps: [{ startS: 0, value: null, unit: dischargeUnit }],
+  observationWells: [],
+  staticLevelM: null,
+  conditions: '',
+  visibility: 'internal',
+})
+
+const starts: Record<Precision, (form: TestForm) => string> = {
+  instant: ({ date, time }) => `${date}T${time}`,
+  day: ({ date }) => date,
+  year: ({ year }) => year,
+}
+
+/**
+ * What is sent. Fields left empty go as null, so that the server names every one of them at once, each under its own
+ * path; the types say otherwise only until it has answered.
+ */
+export function inputOf(form: TestForm): Input {
+  const { precision: _p, date: _d, time: _t, year: _y, conditions, units, rateSteps, observationWells, ...rest } = form
+  return {
+    ...rest,
+    startLocal: starts[form.precision](form),
+    units: units.length === 1 ? [{ ...units[0], share: 1 }] : units,
+    rateSteps: rateSteps.map(({ startS, value, unit }) => ({ startS, rate: { value, unit } })),
+    observationWells: observationWells.map(({ reason, ...well }) => ({
+      ...well,
+      distanceM: well.distanceBasis === 'map' ? null : well.distanceM,
+      reason: reason.trim() || null,
+    })),
+    conditions: conditions.trim() || null,
+  } as Input
+}
+
+function startOf({ startLocal, startPrecision }: PumpingTest) {
+  return {
+    precision: startPrecision,
+    date: startPrecision === 'year' ? '' : startLocal.slice(0, 10),
+    time: startLocal.slice(11, 19).replace(/:00$/, ''),
+    year: startLocal.slice(0, 4),
+  }
+}
+
+/** A saved test, to be changed. */
+export function formOf(test: PumpingTest): TestForm {
+  const { zone, aquifer, intervalBasis, intervalTopM, intervalBottomM, wellId } = test
+  const { thicknessM, thicknessBasis, thicknessError, rateError, visibility } = test
+  return {
+    ...{ wellId, zone, aquifer, intervalBasis, intervalTopM, intervalBottomM },
+    ...{ thicknessM, thicknessBasis, thicknessError, rateError, visibility },
+    ...startOf(test),
+    units: test.units.map(({ unitId, share, basis }) => ({ unitId, share, basis })),
+    rateSteps: test.rateSteps.map(({ startS, enteredValue, enteredUnit }) => ({
+      startS,
+      value: enteredValue,
+      unit: enteredUnit,
+    })),
+    observationWells: test.wells
+      .filter(({ role }) => role === 'observation')
+      .map((well) => ({
+        wellId: well.wellId,
+        distanceBasis: well.distanceBasis,
+        distanceM: well.distanceM,
+        reason: well.distanceReason ?? '',
+        staticLevelM: well.staticLevelM,
+      })),
+    staticLevelM: test.wells.find(({ role }) => role === 'pumped')?.staticLevelM ?? null,
+    conditions: test.conditions ?? '',
+  }
+}
+
+const kinds = ['confined', 'leaky', 'unconfined'] as const
+const isAquifer = (kind: string): kind is TestForm['aquifer'] => (kinds as readonly string[]).includes(kind)
+
+export interface UnitFacts {
+  id: number
+  kind: string
+}
+
+/** What the pumped well suggests: the unit that its screens are open to, that unit's thickness and kind, who may see it. */
+export function suggestionsOf(well: Well, units: readonly UnitFacts[]): Partial<TestForm> {
+  const top = Math.min(...well.screens.map(({ topM }) => topM))
+  const bottom = Math.max(...well.screens.map(({ bottomM }) => bottomM))
+  const open = well.picks.find(
+    (pick) =>
+      pick.topM < bottom &&
+      (pick.bottomM ?? Infinity) > top &&
+      units.some(({ id, kind }) => id === pick.unitId && isAquifer(kind)),
+  )
+  const kind = units.find(({ id }) => id === open?.unitId)?.kind
+  return {
+    intervalBasis: well.screens.length > 0 ? 'screens' : 'unknown',
+    visibility: well.visibility,
+    ...(open ? { units: [{ unitId: open.unitId, share: 1, basis: 'single-unit' as const }] } : {}),
+    ...(open?.bottomM != null ? { thicknessM: open.bottomM - open.topM, thicknessBasis: 'aquifer' as const } : {}),
+    ...(kind && isAquifer(kind) ? { aquifer: kind } : {}),
+  }
+}
