@@ -23,10 +23,11 @@ const rules: { [Code in Issue['code']]?: (issue: Extract<Issue, { code: Code }>)
   invalid_type: ({ input }) => ({ code: input === undefined ? 'field/required' : 'field/invalid', params: {} }),
 }
 
-/** A refinement may name one of our codes as its message, with parameters beside it. */
+/** A refinement or a bound may name one of our codes as its message, a refinement with parameters beside it. */
 function own(issue: Issue): Omit<FieldProblem, 'path'> | null {
-  if (issue.code !== 'custom' || !isErrorCode(issue.message)) return null
-  return { code: issue.message, params: (issue.params ?? {}) as FieldProblem['params'] }
+  if (!isErrorCode(issue.message)) return null
+  const params = issue.code === 'custom' ? (issue.params ?? {}) : {}
+  return { code: issue.message, params: params as FieldProblem['params'] }
 }
 
 /** What zod found, as fields with codes; `prefix` tells the address and the query string apart from the body. */
