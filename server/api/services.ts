@@ -27,19 +27,27 @@ import { createWellsService, type WellsService } from './wells/wells.service.ts'
 export function createServices(deps: Deps) {
   const region = createRegionService(deps)
   const streams = createStreamsService(deps)
-  const adoptedValues = createAdoptedValuesService(deps)
+  const adoptedValues = createAdoptedValuesService(deps, {
+    withdrawAnalysis: (executor, id) => analyses.withdraw(executor, id),
+  })
   const wells: WellsService = createWellsService(deps, {
     region,
     testsOf: (viewer, wellId) => pumpingTests.ofWell(viewer, wellId),
     valuesOf: (viewer, wellId) => adoptedValues.ofWell(viewer, wellId),
+    async wellChanged(executor, wellId) {
+      for (const testId of await analyses.testsOfWell(executor, wellId))
+        await analyses.markInputsChanged(executor, testId)
+      await adoptedValues.changedAt(executor, 'well', wellId)
+    },
   })
   const pumpingTests = createPumpingTestsService(deps, {
     wells,
     markInputsChanged: (executor, testId) => analyses.markInputsChanged(executor, testId),
+    valuesChanged: (executor, testId) => adoptedValues.changedAt(executor, 'pumping-test', testId),
   })
   // A well shows its tests, and a change of a test concerns its analyses: services that know each other have named types.
   const analyses: AnalysesService = createAnalysesService(deps, createInputsService({ pumpingTests, streams }))
-  const { markInputsChanged, hasSubmitted } = analyses
+  const { markInputsChanged, isInUse } = analyses
   return {
     account: createAccountService(deps, region),
     adoptedValues,
@@ -55,7 +63,7 @@ export function createServices(deps: Deps) {
     password: createPasswordService(deps),
     people: createPeopleService(deps, region),
     pumpingTests,
-    readingSeries: createReadingSeriesService(deps, { pumpingTests, markInputsChanged, hasSubmitted }),
+    readingSeries: createReadingSeriesService(deps, { pumpingTests, markInputsChanged, isInUse }),
     region,
     reviews: createReviewsService(deps, { analyses, adoptedValues }),
     search: createSearchService(deps),

@@ -21,6 +21,8 @@ const isZone = (zone: string) => {
 }
 
 export const zone = z.string().max(60).refine(isZone, 'pumping-test/unknown-zone')
+/** Level before pumping, m: a depth to water, negative in a flowing well, or a height, as the log has it. */
+const staticLevel = z.number().min(-10_000).max(10_000).nullable()
 const ids = (dimension: 'discharge') => z.enum(unitsOf(dimension).map(({ id }) => id) as [string, ...string[]])
 
 /** The rate is kept as typed; the server converts it, so that a wrong unit can be seen and corrected later. */
@@ -37,7 +39,7 @@ export const observationWellInput = z
     distanceM: z.number().positive('pumping-test/zero-distance').max(50_000).nullable(),
     /** Needed when a distance replaces the measured one or the map's. */
     reason: z.string().trim().max(300).nullable(),
-    staticLevelM: z.number().nullable(),
+    staticLevelM: staticLevel,
   })
   .superRefine((well, context) => {
     if (well.distanceBasis !== 'map' && well.distanceM === null) {
@@ -48,7 +50,7 @@ export const observationWellInput = z
     }
   })
 
-export const unitShareInput = z.object({ unitId: recordId, share: z.number().positive().max(1), basis: shareBasis })
+export const unitShareInput = z.object({ unitId: recordId, share: z.number().min(0.001).max(1), basis: shareBasis })
 
 const rising = (steps: { startS: number }[]) => steps.every((step, i) => i === 0 || step.startS > steps[i - 1]!.startS)
 const total = (units: { share: number }[]) => units.reduce((sum, { share }) => sum + share, 0)
@@ -76,7 +78,7 @@ export const pumpingTestInput = z.object({
   rateSteps: z.array(rateStepInput).min(1).max(2_000).refine(rising, 'pumping-test/steps-order'),
   observationWells: z.array(observationWellInput).max(60),
   /** Depth to water in the pumped well before pumping, m. Null: the mean of the readings before pumping. */
-  staticLevelM: z.number().nullable(),
+  staticLevelM: staticLevel,
   conditions: z.string().trim().max(5_000).nullable(),
   visibility: visibility.default('internal'),
 })

@@ -16,7 +16,7 @@ export const logMapping = z.object({
       kind: z.literal('elapsed'),
       column,
       unit: z.enum(['s', 'min', 'h', 'd', 'h:m:s', 'm:s']),
-      zero_s: z.number(),
+      zero_s: z.number().min(-1e10).max(1e10),
     }),
     z.object({
       kind: z.literal('clock'),

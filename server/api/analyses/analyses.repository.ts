@@ -1,8 +1,8 @@
-import { and, asc, desc, eq, inArray } from 'drizzle-orm'
-import type { Viewer } from '#shared/contracts/permissions.ts'
+import { and, asc, desc, eq, inArray, isNull, ne, sql } from 'drizzle-orm'
+import { atLeast, type Viewer } from '#shared/contracts/permissions.ts'
 import type { Executor } from '../../db/client.ts'
 import { readable } from '../../db/readable.ts'
-import { analyses, pumpingTests, reviews, users } from '../../db/schema/index.ts'
+import { adoptedValues, analyses, pumpingTests, reviews, testWells, users } from '../../db/schema/index.ts'
 
 export type AnalysisRow = typeof analyses.$inferSelect
 export type NewAnalysis = typeof analyses.$inferInsert
@@ -16,20 +16,53 @@ const withAuthor = (executor: Executor) =>
 
 export type FoundAnalysis = Awaited<ReturnType<typeof listAnalyses>>[number]
 
+/** What is not decided yet, or was returned, is the business of those who analyse. */
+const shown = (viewer: Viewer) =>
+  and(
+    readable.pumpingTests(viewer),
+    atLeast(viewer, 'analyst') ? undefined : inArray(analyses.state, ['accepted', 'withdrawn']),
+  )
+
 /** Analyses of one test that the viewer may see, oldest first. */
 export const listAnalyses = (executor: Executor, viewer: Viewer, testId: number) =>
   withAuthor(executor)
-    .where(and(eq(analyses.pumpingTestId, testId), readable.pumpingTests(viewer)))
+    .where(and(eq(analyses.pumpingTestId, testId), shown(viewer)))
     .orderBy(asc(analyses.id))
 
 export async function findAnalysis(executor: Executor, viewer: Viewer, id: number): Promise<FoundAnalysis | null> {
-  const [found] = await withAuthor(executor).where(and(eq(analyses.id, id), readable.pumpingTests(viewer)))
+  const [found] = await withAuthor(executor).where(and(eq(analyses.id, id), shown(viewer)))
   return found ?? null
 }
 
-export async function lockAnalysis(executor: Executor, id: number): Promise<AnalysisRow | null> {
-  const [row] = await executor.select().from(analyses).where(eq(analyses.id, id)).for('update')
-  return row ?? null
+/**
+ * Locks an analysis with its test, so that neither is changed before the transaction ends. It comes first in a
+ * transaction: what is read without a lock afterwards is then as new as what is locked.
+ */
+export async function lockAnalysis(executor: Executor, viewer: Viewer, id: number): Promise<AnalysisRow | null> {
+  const [found] = await executor
+    .select({ row: analyses })
+    .from(analyses)
+    .innerJoin(pumpingTests, eq(pumpingTests.id, analyses.pumpingTestId))
+    .where(and(eq(analyses.id, id), shown(viewer)))
+    .for('update')
+  return found?.row ?? null
+}
+
+/** What tells whether fitted analyses of a test were made from its inputs as they are. */
+export const listHashes = (executor: Executor, testId: number) =>
+  executor
+    .select({ id: analyses.id, inputsSha256: analyses.inputsSha256, inputsChanged: analyses.inputsChanged })
+    .from(analyses)
+    .where(and(eq(analyses.pumpingTestId, testId), ne(analyses.method, 'reported')))
+
+/** Tests with analyses that a well takes part in. */
+export async function analysedTestsOf(executor: Executor, wellId: number): Promise<number[]> {
+  const rows = await executor
+    .selectDistinct({ testId: testWells.pumpingTestId })
+    .from(testWells)
+    .innerJoin(analyses, eq(analyses.pumpingTestId, testWells.pumpingTestId))
+    .where(eq(testWells.wellId, wellId))
+  return rows.map(({ testId }) => testId)
 }
 
 export async function insertAnalysis(executor: Executor, row: NewAnalysis): Promise<number> {
@@ -50,13 +83,19 @@ export async function updateAnalysis(executor: Executor, id: number, version: nu
 export const setInputsChanged = (executor: Executor, id: number, inputsChanged: boolean) =>
   executor.update(analyses).set({ inputsChanged }).where(eq(analyses.id, id))
 
+export const setWithdrawn = (executor: Executor, id: number) =>
+  executor
+    .update(analyses)
+    .set({ state: 'withdrawn', rowVersion: sql`${analyses.rowVersion} + 1` })
+    .where(and(eq(analyses.id, id), eq(analyses.state, 'accepted')))
+
 export const deleteAnalysis = (executor: Executor, id: number) => executor.delete(analyses).where(eq(analyses.id, id))
 
-/** Whether anything submitted or accepted rests on the test's inputs. */
-export async function hasSubmitted(executor: Executor, testId: number): Promise<boolean> {
-  const states = ['submitted', 'accepted'] as const
-  const where = and(eq(analyses.pumpingTestId, testId), inArray(analyses.state, [...states]))
-  return (await executor.$count(analyses, where)) > 0
+/** Whether an analysis that waits for review, or a value of the regional table, rests on the test's inputs. */
+export async function isInUse(executor: Executor, testId: number): Promise<boolean> {
+  const waiting = and(eq(analyses.pumpingTestId, testId), eq(analyses.state, 'submitted'))
+  const current = and(eq(adoptedValues.pumpingTestId, testId), isNull(adoptedValues.validTo))
+  return (await executor.$count(analyses, waiting)) > 0 || (await executor.$count(adoptedValues, current)) > 0
 }
 
 export const listReviews = (executor: Executor, analysisIds: number[]) =>

@@ -8,6 +8,8 @@ import {
   workbenchInputs,
 } from '#shared/contracts/analyses.ts'
 import { idInPath, nothing } from '#shared/contracts/common.ts'
+import type { Deps } from '../../deps.ts'
+import { onceOf } from '../idempotency/once.ts'
 import { route, type Route } from '../registry.ts'
 import type { Services } from '../services.ts'
 
@@ -15,7 +17,7 @@ const params = z.object({ id: idInPath })
 const ofTest = '/api/pumping-tests/:id/analyses'
 const one = '/api/analyses/:id'
 
-export function analysesRoutes({ analyses }: Services): Route[] {
+export function analysesRoutes({ analyses }: Services, deps: Deps): Route[] {
   return [
     route(
       {
@@ -51,7 +53,7 @@ export function analysesRoutes({ analyses }: Services): Route[] {
         status: 201,
         limit: 'heavy',
       },
-      ({ viewer, params: { id }, body }) => analyses.create(viewer, id, body),
+      (call) => analyses.create(call.viewer, call.params.id, call.body, onceOf(deps, call)),
     ),
     route(
       { method: 'get', path: one, action: 'analyses/read', summary: 'An analysis', params, response: analysis },

@@ -2,20 +2,20 @@ import { createHash } from 'node:crypto'
 import type { AnalysisInput, AnalysisUpdate, SubmissionInput } from '#shared/contracts/analyses.ts'
 import type { Viewer } from '#shared/contracts/permissions.ts'
 import { evidenceOf } from '#shared/hydraulics/evidence.ts'
-import { limitFindings, limitRules } from '#shared/hydraulics/limits.ts'
-import { defaultUnitSystemId, unitSystemById } from '#shared/quantities/systems.ts'
-import { findingText } from '#shared/words/findings.ts'
+import { limitRules } from '#shared/hydraulics/limits.ts'
 import type { Executor } from '../../db/client.ts'
-import { inTransaction } from '../../db/transaction.ts'
+import { inTransaction, transactionOf, type Transaction } from '../../db/transaction.ts'
 import type { Deps } from '../../deps.ts'
 import { AppError, notFound } from '../../errors.ts'
 import { recordAudit } from '../audit-trail/record-audit.ts'
 import * as repository from './analyses.repository.ts'
 import { adoptedRows } from './adoption.ts'
 import { calculate, checkExpected, checkRepeats } from './calculate.ts'
+import { checkAdoptable } from './check-adoptable.ts'
 import type { createInputsService } from './inputs.service.ts'
 import { reportedFacts, reportedResult, type ReportedValue } from './reported.ts'
 import { analysisView, mayChange } from './view.ts'
+import { withoutHiddenWells } from './without-hidden-wells.ts'
 
 /**
  * Analyses are calculated from all wells of a test, whoever saves: a test that is not private has no private wells,
@@ -34,7 +34,9 @@ export function createAnalysesService(deps: Deps, inputs: ReturnType<typeof crea
     const found = await repository.findAnalysis(executor, viewer, id)
     if (!found) throw notFound()
     const reviews = await repository.listReviews(executor, [id])
-    return analysisView(viewer, found, await siblingsOf(executor, found.row.pumpingTestId), reviews)
+    const { pumpingTestId } = found.row
+    const shown = analysisView(viewer, found, await siblingsOf(executor, pumpingTestId), reviews)
+    return withoutHiddenWells(shown, found.row, await inputs.wellsSeen(executor, viewer, pumpingTestId))
   }
 
   async function compute(executor: Executor, testId: number, input: AnalysisInput) {
@@ -50,7 +52,7 @@ export function createAnalysesService(deps: Deps, inputs: ReturnType<typeof crea
       options,
       label,
       result,
-      inputs: snapshot.inputs,
+      inputs: { ...snapshot.inputs, setting: snapshot.setting },
       inputsSha256: snapshot.sha256,
       inputsChanged: false,
     }
@@ -58,8 +60,7 @@ export function createAnalysesService(deps: Deps, inputs: ReturnType<typeof crea
 
   /** The locked draft, when the viewer may change it. */
   async function lockDraft(executor: Executor, viewer: Viewer, id: number) {
-    const found = await repository.findAnalysis(executor, viewer, id)
-    const row = found && (await repository.lockAnalysis(executor, id))
+    const row = await repository.lockAnalysis(executor, viewer, id)
     if (!row) throw notFound()
     if (row.state !== 'draft') throw new AppError('analysis/not-draft')
     if (!mayChange(viewer, row)) throw new AppError('analysis/not-yours')
@@ -67,7 +68,7 @@ export function createAnalysesService(deps: Deps, inputs: ReturnType<typeof crea
   }
 
   return {
-    hasSubmitted: repository.hasSubmitted,
+    isInUse: repository.isInUse,
 
     async workbench(viewer: Viewer, testId: number) {
       const { inputs: built, sha256, readings, problems } = await inputs.snapshot(db, viewer, testId)
@@ -80,15 +81,19 @@ export function createAnalysesService(deps: Deps, inputs: ReturnType<typeof crea
         db,
         rows.map(({ row }) => row.id),
       )
-      const siblings = rows.map(({ row }) => row)
-      return { items: rows.map((row) => analysisView(viewer, row, siblings, reviews)) }
+      if (rows.length === 0) return { items: [] }
+      const siblings = await siblingsOf(db, testId)
+      const seen = await inputs.wellsSeen(db, viewer, testId)
+      return {
+        items: rows.map((row) => withoutHiddenWells(analysisView(viewer, row, siblings, reviews), row.row, seen)),
+      }
     },
 
     get: (viewer: Viewer, id: number, executor: Executor = db) => view(executor, viewer, id),
 
-    create: (viewer: Viewer, testId: number, input: AnalysisInput) =>
-      inTransaction(deps, async (tx) => {
-        if (!(await inputs.maySee(tx, viewer, testId))) throw notFound()
+    create: (viewer: Viewer, testId: number, input: AnalysisInput, transaction: Transaction = transactionOf(deps)) =>
+      transaction(async (tx) => {
+        if (!(await inputs.hold(tx, viewer, testId))) throw notFound()
         const computed = await compute(tx, testId, input)
         const row = {
           ...computed,
@@ -190,8 +195,7 @@ export function createAnalysesService(deps: Deps, inputs: ReturnType<typeof crea
 
     /** The locked analysis that waits for review. */
     async lockSubmitted(executor: Executor, viewer: Viewer, id: number) {
-      const found = await repository.findAnalysis(executor, viewer, id)
-      const row = found && (await repository.lockAnalysis(executor, id))
+      const row = await repository.lockAnalysis(executor, viewer, id)
       if (!row) throw notFound()
       if (row.state !== 'submitted') throw new AppError('review/not-submitted')
       return row
@@ -208,6 +212,7 @@ export function createAnalysesService(deps: Deps, inputs: ReturnType<typeof crea
       if (found.row.inputsChanged) throw new AppError('analysis/inputs-changed')
       checkRepeats(found.row)
       const test = await inputs.testOf(executor, everything, found.row.pumpingTestId)
+      if (test.found.test.visibility === 'private') throw new AppError('analysis/private-test')
       return {
         pumpingTestId: found.row.pumpingTestId,
         values: adoptedRows(found.row, await siblingsOf(executor, found.row.pumpingTestId), test),
@@ -216,7 +221,7 @@ export function createAnalysesService(deps: Deps, inputs: ReturnType<typeof crea
 
     /** Compares every analysis of a test with the test as it is now, and marks those that were made from other inputs. */
     async markInputsChanged(executor: Executor, testId: number) {
-      const fitted = (await siblingsOf(executor, testId)).filter(({ method }) => method !== 'reported')
+      const fitted = await repository.listHashes(executor, testId)
       if (fitted.length === 0) return
       const { sha256 } = await inputs.snapshot(executor, everything, testId)
       for (const row of fitted) {
@@ -224,23 +229,12 @@ export function createAnalysesService(deps: Deps, inputs: ReturnType<typeof crea
         if (inputsChanged !== row.inputsChanged) await repository.setInputsChanged(executor, row.id, inputsChanged)
       }
     },
+
+    testsOfWell: repository.analysedTestsOf,
+
+    /** The last of its values left the regional table: nothing rests on it any more. */
+    withdraw: (executor: Executor, id: number) => repository.setWithdrawn(executor, id),
   }
 }
 
-function checkAdoptable(
-  result: {
-    T: { value: number } | null
-    S: { value: number } | null
-    storageClass: Parameters<typeof limitFindings>[0]['storageClass']
-  },
-  confirmed: string[],
-) {
-  if (!result.T) throw new AppError('analysis/no-transmissivity')
-  const units = unitSystemById(defaultUnitSystemId)
-  const limits = limitFindings({ T: result.T.value, S: result.S?.value ?? null, storageClass: result.storageClass })
-  const refused = limits.find(({ severity }) => severity === 'bad')
-  if (refused) throw new AppError('analysis/outside-limits', { reason: findingText(refused, units) })
-  const open = limits.find(({ code }) => !confirmed.includes(code))
-  if (open) throw new AppError('analysis/confirmation-needed', { reason: findingText(open, units), code: open.code })
-}
 export type AnalysesService = ReturnType<typeof createAnalysesService>

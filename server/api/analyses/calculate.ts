@@ -16,7 +16,8 @@ export function calculate(
   { method, options }: Pick<AnalysisInput, 'method' | 'options'>,
 ): AnalysisResult {
   try {
-    return analyse(method, inputs, options)
+    const result = analyse(method, inputs, options)
+    if (analysisResult.safeParse(result).success) return result
   } catch (error) {
     if (!(error instanceof AnalysisError)) throw error
     throw new AppError('analysis/refused', {
@@ -24,6 +25,8 @@ export function calculate(
       code: error.code,
     })
   }
+  // Readings far from anything a well can do: numbers that overflow are no result, and could not be stored.
+  throw new AppError('analysis/not-finite')
 }
 
 const differs = (a: number | null, b: number | null) =>

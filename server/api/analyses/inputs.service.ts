@@ -1,31 +1,37 @@
-import { createHash } from 'node:crypto'
-import type { AnalysisInputs } from '#shared/hydraulics/analysis.ts'
-import type { Viewer } from '#shared/contracts/permissions.ts'
+import { atLeast, type Viewer } from '#shared/contracts/permissions.ts'
 import type { Executor } from '../../db/client.ts'
 import type { createPumpingTestsService } from '../pumping-tests/pumping-tests.service.ts'
 import type { createStreamsService } from '../streams/streams.service.ts'
 import { buildInputs, type BuiltInputs } from './build-inputs.ts'
 import { listEdits, listReadings } from './inputs.repository.ts'
+import { settingOf, sha256Of, type Setting } from './setting.ts'
 
 export interface InputsNeeds {
-  pumpingTests: Pick<ReturnType<typeof createPumpingTestsService>, 'whole' | 'maySee'>
+  pumpingTests: Pick<ReturnType<typeof createPumpingTestsService>, 'whole' | 'maySee' | 'hold'>
   streams: Pick<ReturnType<typeof createStreamsService>, 'nearestConnected'>
 }
 
-export interface Snapshot extends BuiltInputs {
-  sha256: string
-  test: Awaited<ReturnType<InputsNeeds['pumpingTests']['whole']>>
-}
+type WholeTest = Awaited<ReturnType<InputsNeeds['pumpingTests']['whole']>>
 
-/** The inputs of an analysis are written field by field in a fixed order, so their JSON text identifies them. */
-export const sha256Of = (inputs: AnalysisInputs): string =>
-  createHash('sha256').update(JSON.stringify(inputs)).digest('hex')
+export interface Snapshot extends BuiltInputs {
+  setting: Setting
+  sha256: string
+  test: WholeTest
+}
 
 /** What analyses of a test are made from, as the viewer sees the test. */
 export function createInputsService({ pumpingTests, streams }: InputsNeeds) {
   return {
     maySee: pumpingTests.maySee,
+    hold: pumpingTests.hold,
     testOf: pumpingTests.whole,
+
+    /** Ids of the wells of a test that the viewer may see; null where all of them are, as for those who analyse. */
+    async wellsSeen(executor: Executor, viewer: Viewer, testId: number): Promise<Set<string> | null> {
+      if (atLeast(viewer, 'analyst')) return null
+      const { parts } = await pumpingTests.whole(executor, viewer, testId)
+      return new Set(parts.wells.map(({ row }) => String(row.wellId)))
+    },
 
     async snapshot(executor: Executor, viewer: Viewer, testId: number): Promise<Snapshot> {
       const test = await pumpingTests.whole(executor, viewer, testId)
@@ -43,7 +49,8 @@ export function createInputsService({ pumpingTests, streams }: InputsNeeds) {
         edits,
         streamDistanceM: stream?.distanceM ?? null,
       })
-      return { ...built, sha256: sha256Of(built.inputs), test }
+      const setting = settingOf(test)
+      return { ...built, setting, sha256: sha256Of(built.inputs, setting), test }
     },
   }
 }

@@ -3,7 +3,7 @@ import type { Request } from 'express'
 import type { Viewer } from '#shared/contracts/permissions.ts'
 import type { Executor } from '../../db/client.ts'
 import { isDuplicate } from '../../db/retry.ts'
-import { inTransaction } from '../../db/transaction.ts'
+import { inTransaction, type Transaction } from '../../db/transaction.ts'
 import type { Deps } from '../../deps.ts'
 import { AppError, fieldError } from '../../errors.ts'
 import { findKey, keepAnswer, takeKey } from './idempotency.repository.ts'
@@ -59,3 +59,9 @@ export async function once<Answer>(
     return first.response as Answer
   }
 }
+
+/** The transaction of a request that must not happen twice, for a service to work in. */
+export const onceOf =
+  (deps: Pick<Deps, 'connection' | 'now'>, asked: Asked): Transaction =>
+  (work) =>
+    once(deps, asked, work)

@@ -2,6 +2,7 @@ import { and, asc, desc, eq, exists, inArray, like, or, sql, type SQL } from 'dr
 import type { PumpingTestQuery } from '#shared/contracts/pumping-tests.ts'
 import type { Viewer } from '#shared/contracts/permissions.ts'
 import type { Executor } from '../../db/client.ts'
+import { containing } from '../../db/like.ts'
 import { readable } from '../../db/readable.ts'
 import {
   analyses,
@@ -12,8 +13,6 @@ import {
   testWells,
   wells,
 } from '../../db/schema/index.ts'
-
-const escapeLike = (text: string) => text.replace(/[\\%_]/g, '\\$&')
 
 /** The furthest that work on a test has come. */
 const state = sql<'no-readings' | 'open' | 'submitted' | 'returned' | 'accepted'>`(case
@@ -44,7 +43,7 @@ function filters(executor: Executor, viewer: Viewer, query: PumpingTestQuery): S
         .from(testUnits)
         .where(and(eq(testUnits.pumpingTestId, pumpingTests.id), eq(testUnits.unitId, unitId))),
     )
-  const pattern = query.text ? `%${escapeLike(query.text)}%` : null
+  const pattern = query.text ? containing(query.text) : null
   return and(
     readable.pumpingTests(viewer),
     pattern ? or(like(wells.code, pattern), like(wells.name, pattern), like(pumpingTests.source, pattern)) : undefined,

@@ -1,4 +1,4 @@
-import { and, asc, eq, inArray, isNull } from 'drizzle-orm'
+import { and, asc, eq, inArray, isNull, sql } from 'drizzle-orm'
 import type { Viewer } from '#shared/contracts/permissions.ts'
 import type { Executor } from '../../db/client.ts'
 import { readable } from '../../db/readable.ts'
@@ -93,6 +93,18 @@ export const listSeries = (executor: Executor, testId: number) =>
     .from(readingSeries)
     .where(and(eq(readingSeries.pumpingTestId, testId), isNull(readingSeries.deletedAt)))
     .orderBy(asc(readingSeries.id))
+
+/** Wells of a test that have readings, and whether their times came from a clock. */
+export const listLoggedWells = (executor: Executor, testId: number) =>
+  executor
+    .select({
+      wellId: testWells.wellId,
+      role: testWells.role,
+      timeKind: sql<string | null>`json_value(${readingSeries.mapping}, '$.time.kind')`,
+    })
+    .from(readingSeries)
+    .innerJoin(testWells, eq(testWells.id, readingSeries.testWellId))
+    .where(and(eq(readingSeries.pumpingTestId, testId), isNull(readingSeries.deletedAt)))
 
 /** Wells the viewer may see, with what a test needs of them. */
 export function findWellsForTest(executor: Executor, viewer: Viewer, ids: number[]) {

@@ -8,13 +8,15 @@ import {
   pumpingTestQuery,
   pumpingTestUpdate,
 } from '#shared/contracts/pumping-tests.ts'
+import type { Deps } from '../../deps.ts'
+import { onceOf } from '../idempotency/once.ts'
 import { route, type Route } from '../registry.ts'
 import type { Services } from '../services.ts'
 
 const params = z.object({ id: idInPath })
 const one = '/api/pumping-tests/:id'
 
-export function pumpingTestsRoutes({ pumpingTests }: Services): Route[] {
+export function pumpingTestsRoutes({ pumpingTests }: Services, deps: Deps): Route[] {
   return [
     route(
       {
@@ -37,7 +39,7 @@ export function pumpingTestsRoutes({ pumpingTests }: Services): Route[] {
         response: created,
         status: 201,
       },
-      ({ viewer, body }) => pumpingTests.create(viewer, body),
+      (call) => pumpingTests.create(call.viewer, call.body, onceOf(deps, call)),
     ),
     route(
       {

@@ -7,13 +7,14 @@ import type {
 import { toSI } from '#shared/quantities/units.ts'
 import type { Viewer } from '#shared/contracts/permissions.ts'
 import type { Executor } from '../../db/client.ts'
-import { inTransaction } from '../../db/transaction.ts'
+import { inTransaction, transactionOf, type Transaction } from '../../db/transaction.ts'
 import type { Deps } from '../../deps.ts'
 import { AppError, fieldError, notFound } from '../../errors.ts'
 import { recordAudit } from '../audit-trail/record-audit.ts'
 import { pageOf } from '../page-of.ts'
 import type { createWellsService } from '../wells/wells.service.ts'
 import { countPumpingTests, listPumpingTests, unitNames } from './list.repository.ts'
+import { checkLogs } from './check-logs.ts'
 import * as repository from './pumping-tests.repository.ts'
 import { startTime } from './start-time.ts'
 import { testedInterval } from './tested-interval.ts'
@@ -24,6 +25,8 @@ export interface PumpingTestsNeeds {
   wells: Pick<ReturnType<typeof createWellsService>, 'screensOf'>
   /** Compares every analysis of a test with the test as it is now. */
   markInputsChanged: (executor: Executor, testId: number) => Promise<void>
+  /** Says that estimates which use the test's values must be made anew. */
+  valuesChanged: (executor: Executor, testId: number) => Promise<void>
 }
 
 export type ReportedTest = Pick<
@@ -41,7 +44,7 @@ export type ReportedTest = Pick<
   | 'visibility'
 > & { source: string }
 
-export function createPumpingTestsService(deps: Deps, { wells, markInputsChanged }: PumpingTestsNeeds) {
+export function createPumpingTestsService(deps: Deps, { wells, markInputsChanged, valuesChanged }: PumpingTestsNeeds) {
   const { db } = deps.connection
   const { now } = deps
   /** Every check of an input against the database, and the rows to write. */
@@ -112,6 +115,11 @@ export function createPumpingTestsService(deps: Deps, { wells, markInputsChanged
       return (await repository.findPumpingTest(executor, viewer, id)) !== null
     },
 
+    /** Keeps a test that the viewer may see from being changed until the transaction ends; false where there is none. */
+    async hold(executor: Executor, viewer: Viewer, id: number): Promise<boolean> {
+      return (await repository.lockPumpingTest(executor, viewer, id)) !== null
+    },
+
     lockForEdit,
 
     ofWell: async (viewer: Viewer, wellId: number) =>
@@ -119,8 +127,8 @@ export function createPumpingTestsService(deps: Deps, { wells, markInputsChanged
 
     list,
 
-    create: (viewer: Viewer, input: PumpingTestInput) =>
-      inTransaction(deps, async (tx) => {
+    create: (viewer: Viewer, input: PumpingTestInput, transaction: Transaction = transactionOf(deps)) =>
+      transaction(async (tx) => {
         const { row, wellRows } = await resolve(tx, viewer, input)
         const at = now()
         const id = await repository.insertPumpingTest(tx, {
@@ -161,13 +169,17 @@ export function createPumpingTestsService(deps: Deps, { wells, markInputsChanged
         return { id }
       }),
 
-    update: (viewer: Viewer, id: number, { rowVersion, ...input }: PumpingTestUpdate) =>
+    /** Who may see the test stays as it is: showing and hiding is the stewards' business. */
+    update: (viewer: Viewer, id: number, { rowVersion, ...changed }: PumpingTestUpdate) =>
       inTransaction(deps, async (tx) => {
-        await lockForEdit(tx, viewer, id)
+        const before = await lockForEdit(tx, viewer, id)
+        const input = { ...changed, visibility: before.visibility }
         const { row, wellRows } = await resolve(tx, viewer, input)
         if (!(await repository.updatePumpingTest(tx, id, rowVersion, row))) throw new AppError('edit/conflict')
+        checkLogs(await repository.listLoggedWells(tx, id), before, row, wellRows)
         await write(tx, id, input, wellRows)
         await markInputsChanged(tx, id)
+        await valuesChanged(tx, id)
         await recordAudit(tx, {
           viewer,
           at: now(),

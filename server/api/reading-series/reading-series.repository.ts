@@ -87,8 +87,10 @@ export const listDecisions = (executor: Executor, seriesId: number, seqs: number
         .where(and(eq(readingEdits.seriesId, seriesId), inArray(readingEdits.seq, seqs)))
         .orderBy(asc(readingEdits.id))
 
-export const insertDecisions = (executor: Executor, rows: (typeof readingEdits.$inferInsert)[]) =>
-  executor.insert(readingEdits).values(rows)
+export async function insertDecisions(executor: Executor, rows: (typeof readingEdits.$inferInsert)[]) {
+  for (let start = 0; start < rows.length; start += rowsPerStatement)
+    await executor.insert(readingEdits).values(rows.slice(start, start + rowsPerStatement))
+}
 
 /** How many of the readings exist. */
 export const countReadings = (executor: Executor, seriesId: number, seqs: number[]): Promise<number> =>

@@ -8,7 +8,9 @@ import {
   seriesDeletion,
   seriesForm,
 } from '#shared/contracts/reading-series.ts'
+import type { Deps } from '../../deps.ts'
 import { fieldError } from '../../errors.ts'
+import { onceOf } from '../idempotency/once.ts'
 import { route, type Route } from '../registry.ts'
 import type { Services } from '../services.ts'
 import { takeLogFile } from './upload.ts'
@@ -16,7 +18,7 @@ import { takeLogFile } from './upload.ts'
 const params = z.object({ id: idInPath })
 const one = '/api/reading-series/:id'
 
-export function readingSeriesRoutes({ readingSeries }: Services): Route[] {
+export function readingSeriesRoutes({ readingSeries }: Services, deps: Deps): Route[] {
   return [
     route(
       {
@@ -31,9 +33,11 @@ export function readingSeriesRoutes({ readingSeries }: Services): Route[] {
         response: seriesCreated,
         status: 201,
       },
-      ({ viewer, params: { id }, body, req }) => {
+      ({ viewer, params: { id }, body: { request }, req }) => {
         if (!req.file) throw fieldError('file', 'field/required')
-        return readingSeries.create(viewer, id, { name: req.file.originalname, bytes: req.file.buffer }, body.request)
+        const { originalname: name, buffer: bytes, size } = req.file
+        const once = onceOf(deps, { viewer, req, body: { request, name, size } })
+        return readingSeries.create(viewer, id, { name, bytes }, request, once)
       },
     ),
     route(

@@ -10,21 +10,21 @@ import type { Viewer } from '#shared/contracts/permissions.ts'
 import type { LogReading, Refusal } from '#shared/readings/model.ts'
 import { readingIssueText } from '#shared/words/readings.ts'
 import type { Executor } from '../../db/client.ts'
-import { inTransaction } from '../../db/transaction.ts'
+import { inTransaction, transactionOf, type Transaction } from '../../db/transaction.ts'
 import type { Deps } from '../../deps.ts'
 import { AppError, notFound } from '../../errors.ts'
 import type { ReadLogInput } from '../../jobs/tasks/read-log.ts'
 import { recordAudit } from '../audit-trail/record-audit.ts'
 import { pageOf } from '../page-of.ts'
 import type { createPumpingTestsService } from '../pumping-tests/pumping-tests.service.ts'
-import { seriesView } from '../pumping-tests/view.ts'
+import { mayEdit, seriesView } from '../pumping-tests/view.ts'
 import * as repository from './reading-series.repository.ts'
 import { readingRows, rowView } from './rows.ts'
 
 export interface ReadingSeriesNeeds {
   pumpingTests: Pick<ReturnType<typeof createPumpingTestsService>, 'lockForEdit' | 'whole'>
   markInputsChanged: (executor: Executor, testId: number) => Promise<void>
-  hasSubmitted: (executor: Executor, testId: number) => Promise<boolean>
+  isInUse: (executor: Executor, testId: number) => Promise<boolean>
 }
 
 export interface LogFile {
@@ -34,23 +34,26 @@ export interface LogFile {
 
 export function createReadingSeriesService(
   deps: Deps,
-  { pumpingTests, markInputsChanged, hasSubmitted }: ReadingSeriesNeeds,
+  { pumpingTests, markInputsChanged, isInUse }: ReadingSeriesNeeds,
 ) {
   const { db } = deps.connection
   const { now, storage, workers } = deps
 
+  /** Asks for the right first: a file costs memory, a thread and room in the storage. */
   async function read(
     viewer: Viewer,
     testId: number,
     { bytes }: LogFile,
-    { mapping }: SeriesInput,
-  ): Promise<LogReading> {
+    { mapping, testWellId }: SeriesInput,
+  ): Promise<{ reading: LogReading; start: string }> {
     const { found, parts } = await pumpingTests.whole(db, viewer, testId)
+    if (!mayEdit(viewer, found.test)) throw new AppError('pumping-test/not-editable')
+    if (!parts.wells.some(({ row }) => row.id === testWellId)) throw notFound()
     const start = { instant: found.test.startAt.toISOString(), zone: found.test.zone }
     const context = { start, events_s: parts.steps.map(({ startS }) => startS) }
     const input: ReadLogInput = { bytes, mapping, context }
     const reading = await workers.run<LogReading | Refusal>('read-log', input)
-    if (reading.ok) return reading
+    if (reading.ok) return { reading, start: start.instant }
     throw new AppError('readings/refused', { reason: readingIssueText(reading.code, reading.params) })
   }
 
@@ -65,12 +68,19 @@ export function createReadingSeriesService(
 
   return {
     /** Reads the file, keeps it as it came, and stores every line with its fate. */
-    async create(viewer: Viewer, testId: number, file: LogFile, input: SeriesInput): Promise<SeriesCreated> {
-      const reading = await read(viewer, testId, file, input)
+    async create(
+      viewer: Viewer,
+      testId: number,
+      file: LogFile,
+      input: SeriesInput,
+      transaction: Transaction = transactionOf(deps),
+    ): Promise<SeriesCreated> {
+      const { reading, start } = await read(viewer, testId, file, input)
       const fileSha256 = createHash('sha256').update(file.bytes).digest('hex')
       await storage.put(`logs/${fileSha256}`, file.bytes)
-      return inTransaction(deps, async (tx) => {
-        await pumpingTests.lockForEdit(tx, viewer, testId)
+      return transaction(async (tx) => {
+        const test = await pumpingTests.lockForEdit(tx, viewer, testId)
+        if (test.startAt.toISOString() !== start) throw new AppError('edit/conflict')
         if (!(await repository.findTestWell(tx, testId, input.testWellId))) throw notFound()
         const { testWellId, mapping } = input
         const counted = { rowCount: reading.rows.length, takenCount: reading.summary.taken }
@@ -121,10 +131,12 @@ export function createReadingSeriesService(
     },
 
     /** Leaves readings out or takes them back, with a reason; the readings themselves stay as they came. */
-    decide: (viewer: Viewer, id: number, { seqs, action, reason }: ReadingDecision) =>
-      inTransaction(deps, async (tx) => {
-        const series = await findVisible(tx, viewer, id)
+    async decide(viewer: Viewer, id: number, { seqs, action, reason }: ReadingDecision) {
+      // Looked up before the transaction, which begins with its lock and so reads nothing older.
+      const series = await findVisible(db, viewer, id)
+      return inTransaction(deps, async (tx) => {
         await pumpingTests.lockForEdit(tx, viewer, series.pumpingTestId)
+        if (!(await repository.findSeries(tx, id))) throw notFound()
         const wanted = [...new Set(seqs)]
         if ((await repository.countReadings(tx, id, wanted)) !== wanted.length) throw notFound()
         const at = now()
@@ -143,14 +155,15 @@ export function createReadingSeriesService(
           details,
         })
         return {}
-      }),
+      })
+    },
 
     /** A series behind a submitted or adopted value cannot be deleted. */
-    remove: (viewer: Viewer, id: number, rowVersion: number) =>
-      inTransaction(deps, async (tx) => {
-        const series = await findVisible(tx, viewer, id)
+    async remove(viewer: Viewer, id: number, rowVersion: number) {
+      const series = await findVisible(db, viewer, id)
+      return inTransaction(deps, async (tx) => {
         await pumpingTests.lockForEdit(tx, viewer, series.pumpingTestId)
-        if (await hasSubmitted(tx, series.pumpingTestId)) throw new AppError('pumping-test/in-use')
+        if (await isInUse(tx, series.pumpingTestId)) throw new AppError('pumping-test/in-use')
         if (!(await repository.endSeries(tx, id, rowVersion, now()))) throw new AppError('edit/conflict')
         await markInputsChanged(tx, series.pumpingTestId)
         await recordAudit(tx, {
@@ -161,6 +174,7 @@ export function createReadingSeriesService(
           subjectId: id,
         })
         return {}
-      }),
+      })
+    },
   }
 }

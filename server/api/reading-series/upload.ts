@@ -16,7 +16,7 @@ export const takeLogFile: RequestHandler = (req, res, next) => {
   upload(req, res, (error: unknown) => {
     if (error instanceof MulterError && error.code === 'LIMIT_FILE_SIZE')
       return next(new AppError('request/too-large', { limit: '40 MB' }))
-    if (error instanceof MulterError) return next(new AppError('request/malformed'))
-    next(error)
+    // Everything else that can go wrong here is the form: cut off, without a boundary, a part too many.
+    next(error ? new AppError('request/malformed') : undefined)
   })
 }

@@ -1,7 +1,7 @@
-import { and, eq, inArray, isNotNull, isNull, lte } from 'drizzle-orm'
+import { and, eq, inArray, isNotNull, lte, ne, type SQL } from 'drizzle-orm'
 import type { Executor } from '../../db/client.ts'
 import { readable } from '../../db/readable.ts'
-import { adoptedValues, pumpingTests, wells } from '../../db/schema/index.ts'
+import { pumpingTests, testWells, wells } from '../../db/schema/index.ts'
 import type { Viewer } from '#shared/contracts/permissions.ts'
 
 export interface Exposure {
@@ -13,7 +13,6 @@ const tables = { well: wells, 'pumping-test': pumpingTests }
 export type Subject = keyof typeof tables
 
 const fragment = { well: readable.wells, 'pumping-test': readable.pumpingTests }
-const ofSubject = { well: adoptedValues.wellId, 'pumping-test': adoptedValues.pumpingTestId }
 
 export async function lockSubject(executor: Executor, viewer: Viewer, subject: Subject, id: number) {
   const table = tables[subject]
@@ -59,25 +58,44 @@ export const exposuresOfTests = (executor: Executor, wellId: number): Promise<Ex
     .from(pumpingTests)
     .where(and(eq(pumpingTests.wellId, wellId), readable.pumpingTests(steward)))
 
-/** Units whose estimates change when the subject is shown or hidden. */
-export async function unitsWithValues(executor: Executor, subject: Subject, ids: number[]): Promise<number[]> {
-  if (ids.length === 0) return []
-  const rows = await executor
-    .selectDistinct({ unitId: adoptedValues.unitId })
-    .from(adoptedValues)
-    .where(and(inArray(ofSubject[subject], ids), isNull(adoptedValues.validTo)))
-  return rows.map(({ unitId }) => unitId)
-}
+/** Tests that are not private and in which the well is observed: they would hold a private well. */
+export const countOpenTestsWith = (executor: Executor, wellId: number): Promise<number> =>
+  executor.$count(
+    pumpingTests,
+    and(
+      ne(pumpingTests.visibility, 'private'),
+      inArray(
+        pumpingTests.id,
+        executor.select({ id: testWells.pumpingTestId }).from(testWells).where(eq(testWells.wellId, wellId)),
+      ),
+      readable.pumpingTests(steward),
+    ),
+  )
 
-/** Ends the embargoes whose time has come, and says whose they were. */
+export const countPrivateWellsOf = (executor: Executor, testId: number): Promise<number> =>
+  executor.$count(
+    wells,
+    and(
+      eq(wells.visibility, 'private'),
+      inArray(
+        wells.id,
+        executor.select({ id: testWells.wellId }).from(testWells).where(eq(testWells.pumpingTestId, testId)),
+      ),
+      readable.wells(steward),
+    ),
+  )
+
+/**
+ * Ends the embargoes whose time has come, and says whose they were. Looking for them locks nothing: no index leads to
+ * the dates, and a locking search would hold every row of the table.
+ */
 export async function liftEmbargoes(executor: Executor, subject: Subject, now: Date): Promise<number[]> {
   const table = tables[subject]
-  const due = await executor
-    .select({ id: table.id })
-    .from(table)
-    .where(and(isNotNull(table.embargoUntil), lte(table.embargoUntil, now), fragment[subject](steward)))
-    .for('update')
-  const ids = due.map(({ id }) => id)
+  const isDue = and(isNotNull(table.embargoUntil), lte(table.embargoUntil, now), fragment[subject](steward))
+  const due = (where: SQL | undefined) => executor.select({ id: table.id }).from(table).where(where)
+  const found = (await due(isDue)).map(({ id }) => id)
+  if (found.length === 0) return []
+  const ids = (await due(and(inArray(table.id, found), isDue)).for('update')).map(({ id }) => id)
   if (ids.length > 0) await executor.update(table).set({ embargoUntil: null }).where(inArray(table.id, ids))
   return ids
 }

@@ -10,7 +10,7 @@ import * as repository from './visibility.repository.ts'
 import type { Exposure, Subject } from './visibility.repository.ts'
 
 interface Needs {
-  adoptedValues: Pick<ReturnType<typeof createAdoptedValuesService>, 'changed'>
+  adoptedValues: Pick<ReturnType<typeof createAdoptedValuesService>, 'changed' | 'unitsWithValues'>
 }
 
 const openness = { private: 0, internal: 1, published: 2 }
@@ -26,11 +26,14 @@ export function createVisibilityService(deps: Deps, { adoptedValues }: Needs) {
   async function checkFamily(executor: Executor, subject: Subject, id: number, wanted: Exposure) {
     if (subject === 'pumping-test') {
       const parent = await repository.exposureOfParent(executor, id)
-      if (degree(wanted) > degree(parent)) throw fieldError('visibility', 'pumping-test/more-visible-than-well')
+      const hidesWells = wanted.visibility !== 'private' && (await repository.countPrivateWellsOf(executor, id)) > 0
+      if (hidesWells || degree(wanted) > degree(parent))
+        throw fieldError('visibility', 'pumping-test/more-visible-than-well')
       return
     }
     const tests = await repository.exposuresOfTests(executor, id)
-    const count = tests.filter((test) => degree(test) > degree(wanted)).length
+    const observed = wanted.visibility === 'private' ? await repository.countOpenTestsWith(executor, id) : 0
+    const count = Math.max(observed, tests.filter((test) => degree(test) > degree(wanted)).length)
     if (count > 0) throw new AppError('visibility/tests-more-visible', { count })
   }
 
@@ -41,7 +44,7 @@ export function createVisibilityService(deps: Deps, { adoptedValues }: Needs) {
         if (!(await repository.lockSubject(tx, viewer, subject, id))) throw notFound()
         const wanted = { visibility, embargoUntil: embargoUntil === null ? null : new Date(embargoUntil) }
         await checkFamily(tx, subject, id, wanted)
-        const units = await repository.unitsWithValues(tx, subject, [id])
+        const units = await adoptedValues.unitsWithValues(tx, subject, [id])
         if (visibility === 'private' && units.length > 0) throw new AppError('visibility/has-values')
         if (!(await repository.saveExposure(tx, subject, id, rowVersion, wanted))) throw new AppError('edit/conflict')
         await adoptedValues.changed(tx, units)
@@ -55,7 +58,7 @@ export function createVisibilityService(deps: Deps, { adoptedValues }: Needs) {
       inTransaction(deps, async (tx) => {
         for (const subject of ['well', 'pumping-test'] as const) {
           const ids = await repository.liftEmbargoes(tx, subject, now())
-          await adoptedValues.changed(tx, await repository.unitsWithValues(tx, subject, ids))
+          await adoptedValues.changed(tx, await adoptedValues.unitsWithValues(tx, subject, ids))
           for (const subjectId of ids) {
             await recordAudit(tx, { viewer: null, at: now(), action: 'visibility/lift-embargo', subject, subjectId })
           }

@@ -2,13 +2,15 @@ import { z } from 'zod'
 import { idInPath } from '#shared/contracts/common.ts'
 import { created } from '#shared/contracts/pumping-tests.ts'
 import { well, wellInput, wellList, wellQuery, wellUpdate } from '#shared/contracts/wells.ts'
+import type { Deps } from '../../deps.ts'
+import { onceOf } from '../idempotency/once.ts'
 import { route, type Route } from '../registry.ts'
 import type { Services } from '../services.ts'
 
 const params = z.object({ id: idInPath })
 const one = '/api/wells/:id'
 
-export function wellsRoutes({ wells }: Services): Route[] {
+export function wellsRoutes({ wells }: Services, deps: Deps): Route[] {
   return [
     route(
       {
@@ -31,7 +33,7 @@ export function wellsRoutes({ wells }: Services): Route[] {
         response: created,
         status: 201,
       },
-      ({ viewer, body }) => wells.create(viewer, body),
+      (call) => wells.create(call.viewer, call.body, onceOf(deps, call)),
     ),
     route(
       {

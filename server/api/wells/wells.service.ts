@@ -4,7 +4,7 @@ import type { PumpingTestSummary } from '#shared/contracts/pumping-tests.ts'
 import type { Well, WellInput, WellQuery, WellUpdate } from '#shared/contracts/wells.ts'
 import type { Executor } from '../../db/client.ts'
 import { isDuplicate } from '../../db/retry.ts'
-import { inTransaction } from '../../db/transaction.ts'
+import { inTransaction, transactionOf, type Transaction } from '../../db/transaction.ts'
 import type { Deps } from '../../deps.ts'
 import { AppError, fieldError, notFound } from '../../errors.ts'
 import { recordAudit } from '../audit-trail/record-audit.ts'
@@ -19,9 +19,11 @@ export interface WellsNeeds {
   region: Pick<RegionService, 'get'>
   testsOf: (viewer: Viewer, wellId: number) => Promise<PumpingTestSummary[]>
   valuesOf: (viewer: Viewer, wellId: number) => Promise<AdoptedValue[]>
+  /** Says that analyses and estimates rest on another position or construction now. */
+  wellChanged: (executor: Executor, wellId: number) => Promise<void>
 }
 
-export function createWellsService(deps: Deps, { region, testsOf, valuesOf }: WellsNeeds) {
+export function createWellsService(deps: Deps, { region, testsOf, valuesOf, wellChanged }: WellsNeeds) {
   const { db } = deps.connection
   const { now } = deps
 
@@ -69,9 +71,9 @@ export function createWellsService(deps: Deps, { region, testsOf, valuesOf }: We
       return wellView(row, { screens, picks, tests, values, mayEdit: mayEdit(viewer, row) })
     },
 
-    create: (viewer: Viewer, input: WellInput) =>
+    create: (viewer: Viewer, input: WellInput, transaction: Transaction = transactionOf(deps)) =>
       refusingTakenCode(input, () =>
-        inTransaction(deps, async (tx) => {
+        transaction(async (tx) => {
           const row = { ...(await columns(tx, input)), createdBy: viewer.id, createdAt: now() }
           const id = await repository.insertWell(tx, row)
           await writeParts(tx, id, input)
@@ -94,8 +96,10 @@ export function createWellsService(deps: Deps, { region, testsOf, valuesOf }: We
           if (!before) throw notFound()
           if (!mayEdit(viewer, before)) throw new AppError('well/not-editable')
           const { visibility: _kept, ...change } = await columns(tx, input)
+          if (samePosition(input, before)) change.positionAccuracyM = before.positionAccuracyM
           if (!(await repository.updateWell(tx, id, rowVersion, change))) throw new AppError('edit/conflict')
           await writeParts(tx, id, input)
+          await wellChanged(tx, id)
           await recordAudit(tx, { viewer, at: now(), action: 'wells/edit', subject: 'well', subjectId: id })
           return { id }
         }),
@@ -111,6 +115,13 @@ async function refusingTakenCode<T>({ code }: WellInput, work: () => Promise<T>)
     throw error
   }
 }
+
+/** The error of the datum shift is in the kept accuracy already: saving again must not add it once more. */
+const samePosition = (input: WellInput, before: repository.WellRow) =>
+  input.x === before.originalX &&
+  input.y === before.originalY &&
+  input.epsg === before.originalEpsg &&
+  input.positionAccuracyM === before.positionAccuracyM
 
 /** @throws AppError naming the screen or unit that cannot be right. */
 function checkConstruction({ depthM, screens, picks }: WellInput): void {

@@ -2,6 +2,10 @@ import type { ErrorCatalogue } from './catalogue.ts'
 
 export const analysisErrors = {
   'analysis/refused': { status: 400, sentence: ({ reason }) => String(reason) },
+  'analysis/not-finite': {
+    status: 400,
+    sentence: () => 'The readings are so large or so small that no value comes out. Check their unit.',
+  },
   'analysis/result-differs': {
     status: 409,
     sentence: ({ quantity }) =>

@@ -26,6 +26,19 @@ export const pumpingTestErrors = {
     status: 400,
     sentence: ({ time, zone }) => `${time} did not exist in ${zone}: the clocks were put forward over it.`,
   },
+  'pumping-test/start-too-early': {
+    status: 400,
+    sentence: ({ year }) => `The test cannot have started before ${year}. Check the year.`,
+  },
+  'pumping-test/start-read': {
+    status: 400,
+    sentence: () =>
+      'Readings with clock times were read from the start as it is. Delete those logs, change the start, and upload them again.',
+  },
+  'pumping-test/well-has-readings': {
+    status: 400,
+    sentence: () => 'A well with readings cannot leave the test. Delete its readings first.',
+  },
   'pumping-test/start-in-future': { status: 400, sentence: () => 'The test cannot start in the future.' },
   'pumping-test/shares': { status: 400, sentence: () => 'The shares of the aquifer units must add up to 1.' },
   'pumping-test/steps-order': { status: 400, sentence: () => 'Each step must start later than the one before.' },

@@ -1,0 +1,34 @@
+import { createHash } from 'node:crypto'
+import type { AnalysisInputs } from '#shared/hydraulics/analysis.ts'
+import type { PumpingTestRow, TestParts } from '../pumping-tests/view.ts'
+
+/** What no method calculates with, and yet decides which values an accepted analysis stands for. */
+export interface Setting {
+  wellId: number
+  year: number
+  intervalTopM: number | null
+  intervalBottomM: number | null
+  units: { unitId: number; share: number }[]
+}
+
+interface WholeTest {
+  found: { test: PumpingTestRow }
+  parts: Pick<TestParts, 'units'>
+}
+
+export function settingOf({ found: { test }, parts: { units } }: WholeTest): Setting {
+  const { wellId, startAt, intervalTopM, intervalBottomM } = test
+  const shares = units.map(({ unitId, share }) => ({ unitId, share }))
+  return { wellId, year: startAt.getUTCFullYear(), intervalTopM, intervalBottomM, units: shares }
+}
+
+/**
+ * Inputs and setting are written field by field in a fixed order, so their JSON text identifies them. The code of a
+ * well is only its name: another one changes nothing.
+ */
+export function sha256Of({ series, ...inputs }: AnalysisInputs, setting: Setting): string {
+  const nameless = series.map(({ label: _, ...rest }) => rest)
+  return createHash('sha256')
+    .update(JSON.stringify([inputs, nameless, setting]))
+    .digest('hex')
+}

@@ -1,0 +1,30 @@
+import type { Analysis } from '#shared/contracts/analyses.ts'
+import { analysisInputs } from '#shared/contracts/analysis-result.ts'
+import type { AnalysisRow } from './analyses.repository.ts'
+
+/**
+ * An analysis rests on all wells of its test; its reader is told nothing of those that are hidden from them.
+ * @param seen ids of the test's wells that the reader may see; null for everything.
+ */
+export function withoutHiddenWells(
+  analysis: Analysis,
+  { method, inputs }: Pick<AnalysisRow, 'method' | 'inputs'>,
+  seen: Set<string> | null,
+): Analysis {
+  if (seen === null || method === 'reported') return analysis
+  const hidden = analysisInputs.parse(inputs).series.filter(({ wellId }) => !seen.has(wellId))
+  if (hidden.length === 0) return analysis
+  const codes = new Set<string | number>(hidden.map(({ label }) => label))
+  const { options, result } = analysis
+  const visible = ({ wellId }: { wellId: string }) => seen.has(wellId)
+  return {
+    ...analysis,
+    options: options && { ...options, wellIds: options.wellIds.filter((id) => seen.has(id)) },
+    result: {
+      ...result,
+      residuals: result.residuals.filter(visible),
+      leftOut: result.leftOut.filter(visible),
+      findings: result.findings.filter(({ params }) => params.well === undefined || !codes.has(params.well)),
+    },
+  }
+}
