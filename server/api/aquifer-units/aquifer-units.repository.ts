@@ -2,7 +2,15 @@ import { and, asc, eq, isNull, sql } from 'drizzle-orm'
 import type { Viewer } from '#shared/contracts/permissions.ts'
 import type { Executor } from '../../db/client.ts'
 import { readable } from '../../db/readable.ts'
-import { adoptedValues, aquiferUnits, pumpingTests, streams, unitPicks, unitStreams } from '../../db/schema/index.ts'
+import {
+  adoptedValues,
+  aquiferUnits,
+  pumpingTests,
+  streams,
+  unitPicks,
+  unitStreams,
+  wells,
+} from '../../db/schema/index.ts'
 
 export const listUnits = (executor: Executor) =>
   executor.select().from(aquiferUnits).orderBy(asc(aquiferUnits.depthOrder))
@@ -25,8 +33,15 @@ export const countValues = (executor: Executor, viewer: Viewer) =>
     .where(and(isNull(adoptedValues.validTo), readable.pumpingTests(viewer)))
     .groupBy(adoptedValues.unitId, adoptedValues.quantity)
 
-export const countPicks = (executor: Executor, unitId: number): Promise<number> =>
-  executor.$count(unitPicks, eq(unitPicks.unitId, unitId))
+/** Picks of the unit in wells that the viewer may see. */
+export async function countPicks(executor: Executor, viewer: Viewer, unitId: number): Promise<number> {
+  const [row] = await executor
+    .select({ n: sql<number>`count(*)`.mapWith(Number) })
+    .from(unitPicks)
+    .innerJoin(wells, eq(wells.id, unitPicks.wellId))
+    .where(and(eq(unitPicks.unitId, unitId), readable.wells(viewer)))
+  return row?.n ?? 0
+}
 
 export const streamsOfUnit = (executor: Executor, unitId: number) =>
   executor

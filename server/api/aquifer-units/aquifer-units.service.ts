@@ -47,7 +47,7 @@ export function createAquiferUnitsService(deps: Deps) {
       if (!row) throw notFound()
       const [counts, pickCount, streams] = await Promise.all([
         repository.countValues(db, viewer),
-        repository.countPicks(db, id),
+        repository.countPicks(db, viewer, id),
         repository.streamsOfUnit(db, id),
       ])
       return { ...unitView(row, counts), areaM2: area(polygon(row.outline)), pickCount, streams }

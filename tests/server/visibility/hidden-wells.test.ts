@@ -1,0 +1,108 @@
+import { beforeAll, describe, expect, it } from 'vitest'
+import type { Estimate } from '#shared/contracts/estimates.ts'
+import type { AquiferUnit } from '#shared/contracts/map.ts'
+import type { Problem } from '#shared/contracts/problem.ts'
+import type { Well } from '#shared/contracts/wells.ts'
+import { accept, enterTest, readTest, submitAnalysis } from '../../support/analysed-test.ts'
+import { useApp, type SignedIn } from '../../support/app.ts'
+import { createWell, islandMiddle, makeRegion, makeUnit, makeWellInput } from '../../support/domain.ts'
+
+let time = new Date('2024-05-31T23:30:00Z')
+const tested = useApp({ now: () => time })
+let analyst: SignedIn
+let reviewer: SignedIn
+let steward: SignedIn
+let reader: SignedIn
+
+beforeAll(async () => {
+  await makeRegion(tested)
+  analyst = await tested.signIn('analyst')
+  reviewer = await tested.signIn('analyst', { mayReview: true })
+  steward = await tested.signIn('steward')
+  reader = await tested.signIn('reader')
+})
+
+const [lon, lat] = islandMiddle
+const codeOf = (body: unknown) => (body as Problem).code
+const estimateOf = async (person: SignedIn, unitId: number) =>
+  (await person.get(`/api/estimates?lon=${lon}&lat=${lat}&unitId=${unitId}`).expect(200)).body as Estimate
+
+const hide = ({ id, rowVersion }: Well) =>
+  steward.put(`/api/wells/${id}/visibility`).send({ rowVersion, visibility: 'private', embargoUntil: null })
+const embargo = (id: number, rowVersion: number, embargoUntil: string) =>
+  steward.put(`/api/pumping-tests/${id}/visibility`).send({ rowVersion, visibility: 'published', embargoUntil })
+const wellOf = async (id: number) => (await steward.get(`/api/wells/${id}`).expect(200)).body as Well
+
+async function adopted(unitId: number) {
+  const entered = await enterTest(analyst, { unitId })
+  await accept(reviewer, await submitAnalysis(analyst, entered.id)).expect(200)
+  return entered
+}
+
+describe('a private well', () => {
+  it('is no observation well of a test that others see', async () => {
+    const { observation, id } = await enterTest(analyst, { unitId: await makeUnit(tested) })
+    const { body } = await hide(await wellOf(observation)).expect(409)
+    expect(codeOf(body)).toBe('visibility/tests-more-visible')
+    await analyst.get(`/api/pumping-tests/${id}/inputs`).expect(200)
+  })
+})
+
+describe('an estimate', () => {
+  it('moves with a well whose position is corrected', async () => {
+    const unitId = await makeUnit(tested)
+    const { pumped } = await adopted(unitId)
+    const before = (await estimateOf(reader, unitId)).contributions[0]!
+    const well = await wellOf(pumped)
+    const input = makeWellInput({ code: well.code, x: lon + 0.02, y: lat })
+    await analyst
+      .put(`/api/wells/${pumped}`)
+      .send({ ...input, rowVersion: well.rowVersion })
+      .expect(200)
+    const after = (await estimateOf(reader, unitId)).contributions[0]!
+    expect(before.distanceM).toBeLessThan(1)
+    expect(after.distanceM).toBeGreaterThan(1_500)
+  })
+
+  it('is without an embargoed test for a reader until the embargo was lifted', async () => {
+    const unitId = await makeUnit(tested)
+    const { id, test } = await adopted(unitId)
+    expect((await estimateOf(reader, unitId)).valueCount).toBe(1)
+    await embargo(id, test.rowVersion, '2024-06-01T00:00:00Z').expect(200)
+    expect((await estimateOf(reader, unitId)).valueCount).toBe(0)
+    expect((await estimateOf(analyst, unitId)).valueCount).toBe(1)
+
+    time = new Date('2024-06-01T00:00:01Z')
+    await tested.deps.jobs.enqueue(tested.deps.connection.db, 'lift-embargoes')
+    await tested.deps.jobs.drain()
+    expect((await estimateOf(reader, unitId)).valueCount).toBe(1)
+    expect((await readTest(steward, id)).embargoUntil).toBeNull()
+  })
+})
+
+describe('the picks of a unit', () => {
+  it('are counted without those of hidden wells', async () => {
+    const unitId = await makeUnit(tested)
+    const picks = [{ unitId, topM: 10, bottomM: 40, source: 'driller’s log' }]
+    await createWell(analyst, { picks })
+    await createWell(analyst, { picks, visibility: 'internal' })
+    const countFor = async (person: SignedIn) =>
+      ((await person.get(`/api/aquifer-units/${unitId}`).expect(200)).body as AquiferUnit & { pickCount: number })
+        .pickCount
+    expect([await countFor(reader), await countFor(analyst)]).toEqual([1, 2])
+  })
+})
+
+describe('nearby tests', () => {
+  it('are found on both sides of the date line', async () => {
+    const unitId = await makeUnit(tested)
+    const place = { x: 179.999, y: -38.4, confirmOutside: true }
+    const { id } = await enterTest(analyst, {
+      unitId,
+      pumped: place,
+      observation: { ...place, x: 179.998 },
+    })
+    const { body } = await reader.get('/api/nearby-tests?lon=-179.999&lat=-38.4&radiusM=5000').expect(200)
+    expect((body as { items: { pumpingTestId: number }[] }).items.map((item) => item.pumpingTestId)).toEqual([id])
+  })
+})
