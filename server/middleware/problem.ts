@@ -6,18 +6,17 @@ import { AppError } from '../errors.ts'
 
 export const requestId = (req: Request): string => String(req.id ?? '')
 
-/** Errors of Express and its body parsers, by the status they carry. */
-const bodyErrors: Record<number, ErrorCode> = {
-  400: 'request/malformed',
-  404: 'request/not-found',
-  413: 'request/too-large',
-}
+/** Errors of Express and its body parsers, by the status they carry; others of the 400s are malformed requests. */
+const bodyErrors: Record<number, ErrorCode> = { 404: 'request/not-found', 413: 'request/too-large' }
+
+const codeOf = (status: number): ErrorCode | undefined =>
+  status >= 400 && status < 500 ? (bodyErrors[status] ?? 'request/malformed') : undefined
 
 function toAppError(error: unknown, req: Request): AppError {
   if (error instanceof AppError) return error
   if (isUnreachable(error)) return new AppError('server/unavailable')
   const status = error instanceof Error && 'status' in error ? Number(error.status) : 500
-  const code = bodyErrors[status]
+  const code = codeOf(status)
   if (code) return new AppError(code, code === 'request/too-large' ? { limit: '1 MB' } : {})
   return new AppError('server/failed', { requestId: requestId(req) })
 }
