@@ -62,7 +62,7 @@ export function lateWindow(readings: LineReadings, rate: number, startFor: (T: n
   let from = Math.min(last / 10, latestStart)
   for (let round = 0; round < MOST_ROUNDS; round++) {
     const T = transmissivityAfter(readings, rate, from)
-    if (!(T > 0)) break
+    if (!(T > 0 && T < Infinity)) break
     const next = Math.min(startFor(T), latestStart)
     if (Math.abs(next - from) <= 1e-9 * last) break
     from = next

@@ -25,9 +25,20 @@ interface LineOptions {
   rising?: boolean
 }
 
+/** A rise along the line that is a smaller part of the drawdown than this is rounding: the log is level. */
+const LEAST_RISE = 1e-9
+
+function isLevel(x: number[], drawdown: number[], slope: number): boolean {
+  const span =
+    x.reduce((most, value) => Math.max(most, value), -Infinity) -
+    x.reduce((least, value) => Math.min(least, value), Infinity)
+  const largest = drawdown.reduce((most, value) => Math.max(most, Math.abs(value)), 0)
+  return Math.abs(slope) * span < LEAST_RISE * largest
+}
+
 /**
  * Regression of drawdown on x, or the description of a line drawn by hand over the same readings.
- * @throws AnalysisError when all x are equal, or when the slope has the wrong sign
+ * @throws AnalysisError when all x are equal, or when the line is level or slopes the wrong way
  */
 export function straightLine(
   x: number[],
@@ -39,7 +50,7 @@ export function straightLine(
     throw new AnalysisError('analysis/bad-option', { option: 'line' })
   }
   const fit = hand ? describeLine(x, drawdown, hand.slope, hand.intercept) : linearRegression(x, drawdown)
-  if (!(rising ? fit.slope > 0 : fit.slope < 0)) {
+  if (isLevel(x, drawdown, fit.slope) || !(rising ? fit.slope > 0 : fit.slope < 0)) {
     throw new AnalysisError('analysis/slope-not-positive', { slope: rising ? fit.slope : -fit.slope })
   }
   const { covariance, effectiveNumber } = lineCovariance(x, fit.residuals, time_s)
