@@ -1,6 +1,7 @@
-import type { RouteLocationNormalized } from 'vue-router'
+import type { RouteMeta, RouteRecordNameGeneric } from 'vue-router'
 import { useSession } from '../stores/session.ts'
 import { toHome, toSignIn, type Link } from './links.ts'
+import './meta.ts'
 import { entriesFor, navigation, settingsPages, type NavigationEntry } from './navigation.ts'
 
 type Session = ReturnType<typeof useSession>
@@ -14,8 +15,14 @@ const passages: Record<string, (session: Session) => Link | null> = {
   settings: (session) => firstOf(settingsPages, session),
 }
 
+interface Target {
+  name?: RouteRecordNameGeneric | null
+  meta: RouteMeta
+  fullPath: string
+}
+
 /** Sends a visitor to sign in and passes on from pages that only lead further; what a role may not see, App says. */
-export async function guard(to: RouteLocationNormalized): Promise<true | Link> {
+export async function guard(to: Target): Promise<true | Link> {
   const session = useSession()
   await session.known()
   const name = String(to.name)

@@ -2,7 +2,7 @@ import { PiniaColada } from '@pinia/colada'
 import { flushPromises, mount } from '@vue/test-utils'
 import { createPinia, setActivePinia } from 'pinia'
 import { afterEach, vi } from 'vitest'
-import { createApp, h, type Component, type EffectScope, effectScope } from 'vue'
+import { createApp, effectScope, h, type Component } from 'vue'
 import { createMemoryHistory, createRouter } from 'vue-router'
 import { VApp } from 'vuetify/components'
 import type { Session } from '#shared/contracts/session.ts'
@@ -53,11 +53,10 @@ function enter(session: Session) {
 }
 
 /** A component inside the application's plugins, for somebody who is signed in (an analyst unless told otherwise). */
-export async function mountWith(
-  component: Component,
-  { props = {}, slots = {}, session, path = '/' }: MountOptions = {},
-) {
+export async function mountWith(given: object, { props = {}, slots = {}, session, path = '/' }: MountOptions = {}) {
   standIns()
+  // A generic component is a function to the type checker.
+  const component = given as Component
   const { list, router } = plugins(session ?? makeSession())
   const host = document.createElement('div')
   document.body.append(host)
@@ -76,7 +75,7 @@ export function runWith<Result>(use: () => Result, session: Session = makeSessio
   const app = createApp({ render: () => null })
   for (const plugin of list) app.use(plugin as never)
   enter(session)
-  const scope: EffectScope = effectScope()
+  const scope = effectScope()
   unmounts.push(() => scope.stop())
   return app.runWithContext(() => scope.run(use)) as Result
 }
