@@ -15,6 +15,14 @@ const router = createRouter({ history: createMemoryHistory(), routes })
 const makeViewer = (overrides: Partial<Viewer>): Viewer => ({ ...visitor, id: 1, ...overrides })
 const everyPage = [...navigation, ...settingsPages]
 
+/** What a link builder is called with; ids unless it stands here. */
+const place = { lat: -38.4, lon: -21.2 }
+const argumentsOf: Record<string, unknown[]> = {
+  toNewWell: [place],
+  toPlace: [place, 3],
+  toSignInAs: ['ada@veldray.example'],
+}
+
 describe('the rail', () => {
   it.each(role.options)('shows a %s no entry whose page that role may not open', (given) => {
     const viewer = makeViewer({ role: given })
@@ -58,7 +66,8 @@ describe('a route', () => {
 
   it('is reached by every link builder', () => {
     for (const [name, build] of Object.entries(links)) {
-      const link = (build as (...args: unknown[]) => links.Link)(...[1, 2, 3].slice(0, build.length))
+      const given = argumentsOf[name] ?? [1, 2, 3].slice(0, build.length)
+      const link = (build as (...args: unknown[]) => links.Link)(...given)
       expect(router.resolve(link).name, name).not.toBe('not-found')
     }
   })
