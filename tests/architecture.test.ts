@@ -165,7 +165,10 @@ const cases: Record<string, { bad: Case[]; good: Case[] }> = {
       ['it', 'todo'],
       ['test', 'fixme'],
     ].map((call): Case => ['tests/shared/a.test.ts', `${call.join('.')}('fits', () => {})`]),
-    good: [['tests/shared/a.test.ts', "it.each([1])('fits', () => {})"]],
+    good: [
+      ['tests/shared/a.test.ts', "it.each([1])('fits', () => {})"],
+      ['tests/shared/a.test.ts', `const source = "${['it', 'skip'].join('.')}('is read', () => {})"`],
+    ],
   },
   'nothing refers to what is outside the project': {
     bad: [

@@ -149,7 +149,7 @@ def operations(system):
         # Wells stand on land, and an operation for the sea beside it often has the wider box.
         if SEA.search(data.get('area', '')) and not LAND.search(data.get('area', '')):
             continue
-        if float(accuracy[1]) >= 100:
+        if float(accuracy[1]) >= 100 or set(ids) & set(FAMILIES['operationsExcept']):
             continue
         yield {'name': ' + '.join(names), 'ids': ' + '.join(ids), 'accuracy': float(accuracy[1]),
                'bbox': box(data['bbox']) if 'bbox' in data else system['bbox'], 'grid': needs_grid, 'shift': shift(pipeline[1]), 'pipeline': native(pipeline[1])}
@@ -268,7 +268,8 @@ def examine(system):
     if not usable:
         return {**system, 'refused': 'grid' if any(op['grid'] for op in found) else 'operation'}
     chosen, reach = cover(system, usable)
-    if reach < 0.5:
+    # Places that no operation reaches are refused one by one when somebody asks for them.
+    if reach < 0.25:
         return {**system, 'refused': 'grid' if any(op['grid'] for op in found) else 'operation'}
     grids = [op['accuracy'] for op in found if op['grid'] and op['accuracy'] < min(o['accuracy'] for o in chosen)]
     system['grid'] = min(grids) if grids else None

@@ -1,6 +1,7 @@
 import { createHash } from 'node:crypto'
 import { readFileSync } from 'node:fs'
 import { describe, expect, it } from 'vitest'
+import { inBox } from '#shared/geodesy/box.ts'
 import { converterOf } from '#shared/geodesy/converter.ts'
 import table from '#shared/geodesy/crs-table.json' with { type: 'json' }
 import { crsTable } from '#shared/geodesy/crs-table.ts'
@@ -66,6 +67,20 @@ describe('every offered coordinate system', () => {
     const off = rows.filter((row) => row[8]! > centimetre)
     expect(rows.length).toBeGreaterThan(3_000)
     expect(off).toEqual([])
+  })
+
+  // Common practice: shifts between old and new datums are known to tens of metres everywhere.
+  it('has no two operations that contradict each other by more than 100 m where both hold', () => {
+    const contradictions = systems.flatMap((system) =>
+      (pointsOf.get(system.epsg) ?? []).flatMap(([epsg, , lon, lat, x, y]) => {
+        const holding = system.operations.filter(({ area }) => area === null || inBox({ lon, lat }, area))
+        const places = holding.flatMap((operation) => converterOf(system, operation).toWgs84({ x, y }) ?? [])
+        const apart = places.flatMap((a) => places.map((b) => geodesicDistance(a, b)))
+        const most = Math.max(0, ...apart)
+        return most > 100 ? [{ epsg, lon, lat, most }] : []
+      }),
+    )
+    expect(contradictions).toEqual([])
   })
 
   it('states an area, an accuracy and a unit', () => {

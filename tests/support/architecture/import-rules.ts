@@ -69,11 +69,14 @@ export const clientAndServerApart: Rule = eachImport(
   },
 )
 
-/** The route table and the link builders are for everybody; what is mounted from the top is for the top alone. */
+/** Routes with their link builders, and the colours of the theme, are for everybody. */
+const forEverybody = (path: string) => path.startsWith('src/router/') || path === 'src/plugins/tokens.ts'
+
+/** What is mounted from the top is for the top alone. */
 export const clientDirection: Rule = eachImport(
   (path) => path.startsWith('src/') && parts(path).length > 2 && !path.startsWith('src/router/'),
   (path, { target, own }) => {
-    if (!own || !target.startsWith('src/') || target.startsWith('src/router/')) return null
+    if (!own || !target.startsWith('src/') || forEverybody(target)) return null
     const [, from = ''] = parts(path)
     const [, to = ''] = parts(target)
     if (parts(target).length === 2) return 'only index.html and tests start the application'

@@ -2,7 +2,8 @@ import { clientAndServerApart, clientDirection, serverLayers, sharedDirection } 
 import { sharedIsPure } from './purity-rules.ts'
 import type { Rule } from './source-file.ts'
 import { readsAreGuarded, sqlInRepositories } from './sql-rules.ts'
-import { everyTestRuns, filesAreShort, noHtmlStrings, noWorkplace, settingsInPlace } from './text-rules.ts'
+import { everyTestRuns } from './test-rules.ts'
+import { filesAreShort, noHtmlStrings, noWorkplace, settingsInPlace } from './text-rules.ts'
 
 /** Every rule over the files of the project, by the claim it makes. */
 export const rules: Record<string, Rule> = {

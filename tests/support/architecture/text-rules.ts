@@ -25,18 +25,6 @@ export const noHtmlStrings: Rule = (files) =>
     (found) => `uses ${found}: names come from users, and HTML must not`,
   )
 
-const halted = ['skip', 'only', 'todo', 'fixme', 'skipIf', 'runIf', 'fails', 'slow'].join('|')
-const haltedTest = new RegExp(
-  `(?<![.\\w])(?:(?:it|test|describe|suite|bench)(?:\\.\\w+)*\\.(?:${halted})\\b|x(?:it|test|describe)\\(|ctx\\.skip\\(|context\\.skip\\()`,
-)
-
-export const everyTestRuns: Rule = (files) =>
-  matching(
-    files.filter(({ path }) => /^tests\/.*\.ts$/.test(path)),
-    haltedTest,
-    (found) => `holds back a test with ${found}`,
-  )
-
 /** Written in pieces, so that this file does not say what it forbids. */
 const workplace = [
   `\\.\\./shared/${'design'}(?!\\w)`,
