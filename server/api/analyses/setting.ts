@@ -1,11 +1,13 @@
 import { createHash } from 'node:crypto'
 import type { AnalysisInputs } from '#shared/hydraulics/analysis.ts'
+import { localStart } from '../pumping-tests/start-time.ts'
 import type { PumpingTestRow, TestParts } from '../pumping-tests/view.ts'
 
 /** What no method calculates with, and yet decides which values an accepted analysis stands for. */
 export interface Setting {
   wellId: number
-  year: number
+  /** In the test's own zone. */
+  year: string
   intervalTopM: number | null
   intervalBottomM: number | null
   units: { unitId: number; share: number }[]
@@ -17,9 +19,9 @@ interface WholeTest {
 }
 
 export function settingOf({ found: { test }, parts: { units } }: WholeTest): Setting {
-  const { wellId, startAt, intervalTopM, intervalBottomM } = test
+  const { wellId, startAt, zone, intervalTopM, intervalBottomM } = test
   const shares = units.map(({ unitId, share }) => ({ unitId, share }))
-  return { wellId, year: startAt.getUTCFullYear(), intervalTopM, intervalBottomM, units: shares }
+  return { wellId, year: localStart(startAt, zone, 'year'), intervalTopM, intervalBottomM, units: shares }
 }
 
 /**
