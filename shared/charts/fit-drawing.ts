@@ -155,16 +155,23 @@ const shadeLabels: Record<string, string> = {
   'casing-storage-over': 'casing storage',
 }
 
+/** The part of the axis before the method holds: all of it when that moment lies beyond the axis. */
 function shadeOf({ plot: { x, clock }, fit }: Drawn, origin_s: number): Shade | null {
   const finding = fit.result.findings.find(({ code }) => code in shadeLabels)
-  const end = finding && Number(finding.params.validFrom_s ?? finding.params.over_s)
-  const edge = end ? clock.place(origin_s + end) : null
-  const early = clock.place(origin_s + (end ?? 0) / 2)
-  if (!finding || edge === null || early === null) return null
+  const end_s = origin_s + Number(finding?.params.validFrom_s ?? finding?.params.over_s ?? Number.NaN)
+  if (!finding || !Number.isFinite(end_s) || !showsPhase(x, clock, origin_s)) return null
   const label = shadeLabels[finding.code] as string
-  const [from, to] = early < edge ? [x.min, Math.min(edge, x.max)] : [Math.max(edge, x.min), x.max]
-  return shareOf(x, to) - shareOf(x, from) > 0.01 ? { from, to, label } : null
+  const rising = clock.elapsed(x.min) < clock.elapsed(x.max)
+  const [first, last] = rising ? [x.min, x.max] : [x.max, x.min]
+  const edge =
+    clock.elapsed(last) <= end_s ? last : clock.elapsed(first) >= end_s ? first : (clock.place(end_s) ?? last)
+  const [from, to] = [Math.min(first, edge), Math.max(first, edge)]
+  return Math.abs(shareOf(x, to) - shareOf(x, from)) > 0.01 ? { from, to, label } : null
 }
+
+/** Whether the method's clock runs along this axis. */
+const showsPhase = (x: TimePlot['x'], clock: TimePlot['clock'], origin_s: number) =>
+  clock.origin_s === origin_s && Number.isFinite(clock.elapsed(x.max))
 
 function residuals({ plot, fit, inWindow }: Drawn): FitDrawing['residuals'] {
   const unit = residualUnit(plot.units.length)

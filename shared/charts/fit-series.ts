@@ -7,8 +7,9 @@ import { symbolOf, type PlotWell, type XY } from './plot-wells.ts'
 export interface SeriesFrame {
   wells: readonly PlotWell[]
   theme: ChartTheme
-  /** Axis indices of the strip of residuals; null without one. */
   withStrip: boolean
+  /** Drawdown points down. */
+  inverse: boolean
 }
 
 const NO_FIT: FitDrawing = {
@@ -22,17 +23,19 @@ const NO_FIT: FitDrawing = {
 }
 
 const quiet = { silent: true, animation: false, emphasis: { disabled: true } } as const
-export const DOT = 7
+/** Many readings are smaller, so that they stay apart. */
+export const dotSize = (count: number) => (count > MANY ? 5 : 7)
+const MANY = 120
 
-export function fitSeries({ wells, theme, withStrip }: SeriesFrame, given: FitDrawing | null): SeriesOption[] {
+export function fitSeries({ wells, theme, withStrip, inverse }: SeriesFrame, given: FitDrawing | null): SeriesOption[] {
   const drawing = given ?? NO_FIT
   return [
     areas(drawing, theme),
     ...wells.map((_, i) => band(drawing.bands[i] ?? null, i, theme)),
-    ...wells.map((_, i) => inside(drawing.inside[i] ?? [], i, theme)),
+    ...wells.map(({ points }, i) => inside(drawing.inside[i] ?? [], i, theme, dotSize(points.length))),
     ...wells.map((_, i) => fitted(drawing.fitted[i] ?? [], i, theme)),
     cycle(drawing, theme),
-    marks(drawing, theme),
+    marks(drawing, theme, inverse),
     ...(withStrip ? strip(drawing, theme) : []),
   ]
 }
@@ -89,13 +92,14 @@ function band(given: Band | null, i: number, theme: ChartTheme): SeriesOption {
   } as SeriesOption
 }
 
-const inside = (data: XY[], i: number, theme: ChartTheme): SeriesOption => ({
+const inside = (data: XY[], i: number, theme: ChartTheme, symbolSize: number): SeriesOption => ({
   ...quiet,
   id: `inside-${i}`,
   type: 'scatter',
   z: 4,
   symbol: symbolOf(i),
-  symbolSize: DOT,
+  symbolSize,
+  clip: false,
   itemStyle: { color: theme.ink },
   data,
 })
@@ -121,7 +125,7 @@ const cycle = ({ marks: found }: FitDrawing, theme: ChartTheme): SeriesOption =>
 })
 
 /** Words beside the line: where it meets zero, and its fall in one factor of ten. */
-function marks({ marks: found }: FitDrawing, theme: ChartTheme): SeriesOption {
+function marks({ marks: found }: FitDrawing, theme: ChartTheme, inverse: boolean): SeriesOption {
   const label = (formatter: string, position: string, color: string) => ({
     show: true,
     formatter,
@@ -144,7 +148,7 @@ function marks({ marks: found }: FitDrawing, theme: ChartTheme): SeriesOption {
     to && {
       value: [Math.sqrt(from[0] * to[0]), from[1]],
       symbolSize: 0,
-      label: label(found.cycle.label, 'top', theme.ink),
+      label: label(found.cycle.label, inverse ? 'bottom' : 'top', theme.ink),
     }
   return {
     ...quiet,
@@ -159,7 +163,9 @@ function marks({ marks: found }: FitDrawing, theme: ChartTheme): SeriesOption {
 const horizontal = ([a, b, c]: [XY, XY, XY]): [XY, XY] => (a[1] === b[1] ? [a, b] : [b, c])
 
 /** Residuals as one broken line each: a stroke from zero for every reading. */
-function strip({ residuals }: FitDrawing, theme: ChartTheme): SeriesOption[] {
+function strip(drawing: FitDrawing, theme: ChartTheme): SeriesOption[] {
+  const { residuals } = drawing
+  const limit = residualLimit(drawing)
   const stroke = (id: string, points: XY[], color: string): SeriesOption => ({
     ...quiet,
     id,
@@ -176,7 +182,11 @@ function strip({ residuals }: FitDrawing, theme: ChartTheme): SeriesOption[] {
     ]),
   })
   return [
-    stroke('residuals-outside', residuals.outside, faded(theme.inkSoft, 0.35)),
+    stroke(
+      'residuals-outside',
+      residuals.outside.filter(([, y]) => Math.abs(y) <= limit),
+      faded(theme.inkSoft, 0.35),
+    ),
     stroke('residuals-inside', residuals.inside, theme.deepWater),
   ]
 }

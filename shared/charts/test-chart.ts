@@ -5,7 +5,7 @@ import { stripAxes, xAxisOption, yAxisOption } from './axis-option.ts'
 import { CHART_FONT, CHART_FONT_SIZE, faded, type ChartTheme } from './chart-theme.ts'
 import type { DistancePlot } from './distance-plot.ts'
 import type { FitDrawing } from './fit-drawing.ts'
-import { DOT, fitSeries, residualLimit } from './fit-series.ts'
+import { dotSize, fitSeries, residualLimit } from './fit-series.ts'
 import type { PlotFrame } from './plot-frame.ts'
 import { symbolOf, type PlotPoint, type PlotWell } from './plot-wells.ts'
 import type { TimePlot } from './time-plot.ts'
@@ -34,7 +34,7 @@ export function testChart(
     tooltip: tooltip(plot, theme),
     series: [
       ...wells.flatMap((well, i) => standing(well, i, theme, plot.kind === 'distance')),
-      ...fitSeries({ wells, theme, withStrip }, drawing),
+      ...fitSeries({ wells, theme, withStrip, inverse: y.inverse }, drawing),
     ],
   }
 }
@@ -45,7 +45,7 @@ export function liveChart(plot: TestPlot, drawing: FitDrawing | null, frame: Plo
   const limit = residualLimit(drawing)
   return {
     ...(withStrip ? { yAxis: [{ id: 'strip-y', min: -limit, max: limit, interval: limit }] } : {}),
-    series: fitSeries({ wells: plot.wells, theme, withStrip }, drawing),
+    series: fitSeries({ wells: plot.wells, theme, withStrip, inverse: plot.y.inverse }, drawing),
   } as EChartsOption
 }
 
@@ -55,7 +55,14 @@ function standing(
   theme: ChartTheme,
   named: boolean,
 ): SeriesOption[] {
-  const dots = { type: 'scatter', symbol: symbolOf(i), symbolSize: DOT, emphasis: { disabled: true } } as const
+  const dots = {
+    type: 'scatter',
+    symbol: symbolOf(i),
+    symbolSize: dotSize(points.length),
+    emphasis: { disabled: true },
+    // Noise about zero lies a little outside the axis and is drawn all the same.
+    clip: false,
+  } as const
   return [
     {
       ...dots,

@@ -62,10 +62,18 @@ function ratioAxis(ratios: number[]): Axis {
   return { ...axis, min: 1 }
 }
 
+/** Readings that scatter a little about zero before the level falls do not open a part of the axis below it. */
+const NOISE = 0.04
+
+function withoutNoise(values: number[]): number[] {
+  const [least, most] = extentOf(values) ?? [0, 1]
+  return least < 0 && -least <= NOISE * most ? values.filter((value) => value >= 0) : values
+}
+
 /** Readings set the scale: stray derivatives of a noisy log must not flatten the plot. */
 function drawdownAxis(kind: TimePlot['kind'], wells: PlotWell[], units: PlotUnits, direction: 'down' | 'up'): Axis {
   const unit = unitById(units.length).label
   if (kind === 'log-log') return logAxis(ys(wells), `drawdown and its derivative, ${unit}`)
   const title = kind === 'recovery' ? `residual drawdown, ${unit}` : `drawdown, ${unit}`
-  return linearAxis(measured(wells), title, { inverse: direction === 'down' })
+  return linearAxis(withoutNoise(measured(wells)), title, { inverse: direction === 'down' })
 }

@@ -1,4 +1,15 @@
-import { computed, inject, provide, ref, shallowRef, watch, type ComputedRef, type InjectionKey, type Ref } from 'vue'
+import {
+  computed,
+  inject,
+  onScopeDispose,
+  provide,
+  ref,
+  shallowRef,
+  watch,
+  type ComputedRef,
+  type InjectionKey,
+  type Ref,
+} from 'vue'
 import type { Analysis, WorkbenchInputs } from '#shared/contracts/analyses.ts'
 import type { PumpingTest } from '#shared/contracts/pumping-tests.ts'
 import type { AnalysisOptions, AnalysisResult } from '#shared/hydraulics/analysis.ts'
@@ -108,11 +119,7 @@ export function provideWorkbench(given: Given): Workbench {
     if (at === selected.value && at === NEW) select(firstKey(given, works.value))
   }
 
-  let timer: ReturnType<typeof setTimeout> | undefined
-  watch(works, (value) => {
-    clearTimeout(timer)
-    timer = setTimeout(() => keepWork(testId, value), KEEP_AFTER_MS)
-  })
+  keepWhileOpen(testId, works)
 
   const bench: Workbench = {
     test: computed(given.test),
@@ -140,6 +147,24 @@ export function provideWorkbench(given: Given): Workbench {
   if (selected.value !== null) select(selected.value)
   else if (mayCreate.value && canStart) start('cooper-jacob')
   return bench
+}
+
+/** Writes down unsaved work once it rests, and at the latest when the page goes. */
+function keepWhileOpen(testId: number, works: Ref<Record<string, Work>>) {
+  let timer: ReturnType<typeof setTimeout> | undefined
+  const keep = () => {
+    clearTimeout(timer)
+    keepWork(testId, works.value)
+  }
+  watch(works, () => {
+    clearTimeout(timer)
+    timer = setTimeout(keep, KEEP_AFTER_MS)
+  })
+  window.addEventListener('pagehide', keep)
+  onScopeDispose(() => {
+    window.removeEventListener('pagehide', keep)
+    keep()
+  })
 }
 
 /** The workbench around a component. @throws when used outside it */

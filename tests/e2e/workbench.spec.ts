@@ -1,0 +1,210 @@
+import { fileURLToPath } from 'node:url'
+import type { Page } from '@playwright/test'
+import { expectAccessible, expectNoSidewaysScroll } from './support/accessible.ts'
+import { signIn } from './support/sign-in.ts'
+import { expect, test } from './support/test.ts'
+
+const korendijk = fileURLToPath(new URL('../reference/oude-korendijk.csv', import.meta.url))
+
+/** Chooses a well by its code in a picker. */
+async function pickWell(page: Page, label: string, code: string) {
+  await page.getByRole('combobox', { name: label }).fill(code)
+  await page.getByRole('option', { name: code }).first().click()
+}
+
+/** Codes of wells of the demo region that have screens in a unit, so that a test can be made of them. */
+async function wellCodes(page: Page): Promise<[pumped: string, observation: string]> {
+  const codes = await page.evaluate(async () => {
+    const answer = await fetch('/api/pumping-tests?kind=constant-rate&limit=50&sort=start')
+    const { items } = (await answer.json()) as { items: { id: number; wellCount: number }[] }
+    const chosen = items.find(({ wellCount }) => wellCount >= 2)
+    const one = (await (await fetch(`/api/pumping-tests/${chosen?.id}`)).json()) as { wells: { code: string }[] }
+    return one.wells.map(({ code }) => code)
+  })
+  return [codes[0]!, codes[1]!]
+}
+
+async function enterTest(page: Page): Promise<string> {
+  const [pumped, observation] = await wellCodes(page)
+  await page.getByRole('link', { name: 'Tests' }).click()
+  await page.getByRole('link', { name: 'New test' }).click()
+  await pickWell(page, 'Pumped well', pumped)
+  await page.getByLabel('Date', { exact: true }).fill('2019-03-14')
+  await page.getByLabel('Pump on at').fill('09:00')
+  await page.getByLabel('Rate', { exact: true }).fill('788')
+  const unit = page.getByRole('combobox', { name: 'Unit', exact: true })
+  await unit.fill('gpm')
+  await unit.press('Enter')
+  await expect(page.getByText('can mean US gpm or imp gpm')).toBeVisible()
+  await unit.fill('m3/d')
+  await unit.press('Enter')
+  await page.getByRole('button', { name: 'Add an observation well' }).click()
+  await pickWell(page, 'Observation well', observation)
+  await page.getByLabel('From the pumped well').fill('0')
+  await page.getByRole('button', { name: 'Create the test' }).click()
+  await expect(page.getByText('must be greater than zero')).toBeVisible()
+  await page.getByLabel('From the pumped well').fill('30')
+  await page.getByRole('button', { name: 'Create the test' }).click()
+  await expect(page).toHaveURL(/\/pumping-tests\/\d+\/readings$/)
+  return observation
+}
+
+async function uploadReadings(page: Page, code: string) {
+  const panel = page.getByRole('region', { name: `Readings of ${code}`, exact: true }).first()
+  await panel.getByRole('button', { name: 'Add readings' }).click()
+  await panel.getByLabel('File with readings').setInputFiles(korendijk)
+  await expect(panel.getByText(/34 readings/)).toBeVisible()
+  await panel.getByRole('button', { name: 'Keep these readings' }).click()
+  await expect(panel.getByText(/34 of 37 rows taken/)).toBeVisible()
+  await panel.getByRole('button', { name: 'Show the rows' }).click()
+  await expect(panel.getByRole('cell', { name: '0.25,0.08' })).toBeVisible()
+  await expectAccessible(page)
+}
+
+/** The transmissivity that the open card shows, m²/d. */
+async function shownT(page: Page): Promise<number> {
+  const text = await page
+    .getByRole('article', { name: /Time–drawdown line/ })
+    .locator('dd strong')
+    .first()
+    .innerText()
+  return Number.parseFloat(text.replace(/\s/g, ''))
+}
+
+async function dragWindow(page: Page) {
+  const edge = page.getByRole('slider', { name: 'Window begins at' })
+  const before = await shownT(page)
+  const box = (await edge.boundingBox())!
+  await page.mouse.move(box.x + box.width / 2, box.y + box.height / 2)
+  await page.mouse.down()
+  await page.mouse.move(box.x - 180, box.y + 20, { steps: 12 })
+  await page.mouse.up()
+  await expect.poll(() => shownT(page)).not.toBe(before)
+  const dragged = Number(await edge.getAttribute('aria-valuenow'))
+  await edge.focus()
+  await page.keyboard.press('ArrowRight')
+  await expect.poll(async () => Number(await edge.getAttribute('aria-valuenow'))).toBeGreaterThan(dragged)
+}
+
+async function adopted(page: Page, testId: string) {
+  return page.evaluate(async (id) => {
+    const answer = await fetch(`/api/pumping-tests/${id}/adopted-values`)
+    const { items } = (await answer.json()) as { items: { quantity: string; value: number; validTo: string | null }[] }
+    return items
+      .filter(({ quantity, validTo }) => quantity === 'T' && validTo === null)
+      .map(({ value }) => value * 86_400)
+  }, testId)
+}
+
+test('A log becomes a value of the regional table, from the file to the reviewer', async ({
+  page,
+  browser,
+  baseURL,
+  watch,
+}) => {
+  test.setTimeout(120_000)
+  watch.expect(/400/)
+  await signIn(page, 'analyst')
+  const observation = await enterTest(page)
+  await uploadReadings(page, observation)
+  const testId = /pumping-tests\/(\d+)/.exec(page.url())![1]!
+  await page.getByRole('link', { name: 'Open the test' }).click()
+  await expect(page.getByRole('slider', { name: 'Window begins at' })).toBeVisible()
+  await dragWindow(page)
+
+  // By hand, as the handbook reads it: 1.4 to 18 min give 391 m²/d (Kruseman & de Ridder, ILRI 47; from memory).
+  const card = page.getByRole('article', { name: /Time–drawdown line/ })
+  await card.getByLabel('from', { exact: true }).fill('1.39')
+  await card.getByLabel('from', { exact: true }).press('Enter')
+  await card.getByLabel('to', { exact: true }).fill('18.01')
+  await card.getByLabel('to', { exact: true }).press('Enter')
+  await expect.poll(() => shownT(page)).toBe(391)
+
+  await page.reload()
+  await expect.poll(() => shownT(page)).toBe(391)
+  await card.getByRole('button', { name: 'Save this analysis' }).click()
+  await card.getByRole('button', { name: 'Submit for review' }).click()
+  const dialog = page.getByRole('dialog')
+  await dialog.getByRole('button', { name: 'Submit' }).click()
+  await expect(dialog.getByText('Say why this value stands for the test.')).toBeVisible()
+  await dialog.getByLabel('Why this value stands for the test').fill('The line follows the handbook.')
+  await dialog.getByRole('button', { name: 'Submit' }).click()
+  await expect(card.getByText('Waits for review')).toBeVisible()
+  await expect(card.getByRole('button', { name: 'Accept' })).toHaveCount(0)
+  await expectAccessible(page)
+
+  const theirs = await browser.newPage({ baseURL: baseURL! })
+  await signIn(theirs, 'reviewer')
+  await theirs.goto(`/pumping-tests/${testId}`)
+  await expect(theirs.getByText('the same numbers')).toBeVisible()
+  await theirs.getByRole('button', { name: 'Accept' }).click()
+  await expect(theirs.getByRole('heading', { name: 'In the regional table' })).toBeVisible()
+  expect((await adopted(theirs, testId)).map(Math.round)).toEqual([391])
+  await theirs.close()
+})
+
+test('The line is drawn by hand with the keyboard, and goes back to least squares', async ({ page }) => {
+  await signIn(page, 'analyst')
+  await openTest(page)
+  const end = page.getByRole('slider', { name: /^Line at/ }).last()
+  await end.focus()
+  await page.keyboard.press('Shift+ArrowDown')
+  await expect(page.getByText('Line drawn by hand', { exact: true })).toBeVisible()
+  await expect(page.getByText(/The line was drawn by hand/)).toBeVisible()
+  await page.getByRole('button', { name: 'Back to least squares' }).click()
+  await expect(page.getByText('Line by least squares')).toBeVisible()
+})
+
+/** A seeded test with readings and a stop, with a new straight line on it. */
+async function openTest(page: Page) {
+  const id = await page.evaluate(async () => {
+    const answer = await fetch('/api/pumping-tests?kind=constant-rate&state=accepted&limit=50')
+    const { items } = (await answer.json()) as { items: { id: number; wellCount: number }[] }
+    return items.find(({ wellCount }) => wellCount >= 4)?.id
+  })
+  await page.goto(`/pumping-tests/${id}`)
+  await page.getByRole('button', { name: 'New analysis' }).click()
+  await page.getByRole('listitem').filter({ hasText: 'Time–drawdown line' }).click()
+  await expect(page.getByRole('slider', { name: 'Window begins at' })).toBeVisible()
+}
+
+test('Every plot of a test is drawn, read as a table and saved', async ({ page }) => {
+  await signIn(page, 'analyst')
+  await openTest(page)
+  for (const kind of ['Linear', 'Log–log', 'Recovery', 'Distance', 'Semi-log']) {
+    await page.getByRole('button', { name: kind, exact: true }).click()
+    await expect(
+      page
+        .getByRole('img', { name: new RegExp(`^${kind} plot of drawdown`) })
+        .locator('svg path')
+        .nth(20),
+    ).toBeAttached()
+  }
+  await page.getByRole('button', { name: 'Read as a table' }).click()
+  await expect(page.getByRole('columnheader', { name: /time since pumping began, min/ })).toBeVisible()
+  await expectAccessible(page)
+  for (const [way, ending] of [
+    ['PNG picture', /\.png$/],
+    ['SVG drawing', /\.svg$/],
+    ['CSV table', /\.csv$/],
+  ] as const) {
+    await page.getByRole('button', { name: 'Save', exact: true }).click()
+    const [download] = await Promise.all([page.waitForEvent('download'), page.getByText(way).click()])
+    expect(download.suggestedFilename()).toMatch(ending)
+  }
+})
+
+test('The pages of a test fit the narrowest window and the dark theme', async ({ page }) => {
+  test.setTimeout(120_000)
+  await signIn(page, 'analyst')
+  await openTest(page)
+  const address = new URL(page.url()).pathname
+  await page.setViewportSize({ width: 320, height: 700 })
+  await page.emulateMedia({ colorScheme: 'dark' })
+  for (const path of ['/pumping-tests', '/pumping-tests/new', address, `${address}/readings`, `${address}/edit`]) {
+    await page.goto(path)
+    await expect(page.getByRole('heading', { level: 1 })).toBeVisible()
+    await expectNoSidewaysScroll(page)
+    await expectAccessible(page)
+  }
+})
