@@ -1,4 +1,4 @@
-import { and, asc, eq, gte, isNotNull, isNull, lt, sql, type SQL } from 'drizzle-orm'
+import { and, asc, eq, gte, inArray, isNotNull, isNull, lt, sql, type SQL } from 'drizzle-orm'
 import type { MapWellQuery } from '#shared/contracts/map.ts'
 import type { Viewer } from '#shared/contracts/permissions.ts'
 import { mercatorBits, mercatorInts } from '#shared/geodesy/index.ts'
@@ -76,6 +76,8 @@ export function clusterWells(executor: Executor, viewer: Viewer, query: MapWellQ
       valued: sql<number>`count(${adoptedValues.id})`.mapWith(Number),
       mx: sql<number>`avg(${wells.mx})`.mapWith(Number),
       my: sql<number>`avg(${wells.my})`.mapWith(Number),
+      /** One of its wells; the only one where the count is 1. */
+      wellId: sql<number>`min(${wells.id})`.mapWith(Number),
     })
     .from(wells)
     .leftJoin(newest, eq(newest.wellId, wells.id))
@@ -84,8 +86,8 @@ export function clusterWells(executor: Executor, viewer: Viewer, query: MapWellQ
     .groupBy(sql`${wells.mx} >> ${bits}`, sql`${wells.my} >> ${bits}`)
 }
 
-/** Single wells, at most `limit` of them, those with a value first. */
-export function listMapWells(executor: Executor, viewer: Viewer, query: MapWellQuery, limit: number) {
+/** Single wells, all or those with these ids; those with a value first. */
+export function listMapWells(executor: Executor, viewer: Viewer, query: MapWellQuery, ids?: number[]) {
   const { newest, where } = filtered(executor, viewer, query)
   return executor
     .select({
@@ -99,7 +101,6 @@ export function listMapWells(executor: Executor, viewer: Viewer, query: MapWellQ
     .from(wells)
     .leftJoin(newest, eq(newest.wellId, wells.id))
     .leftJoin(adoptedValues, eq(adoptedValues.id, newest.newest))
-    .where(where)
+    .where(and(where, ids && inArray(wells.id, ids)))
     .orderBy(asc(isNull(adoptedValues.id)), asc(wells.code))
-    .limit(limit)
 }

@@ -9,11 +9,13 @@ interface Options {
 
 /** Room around a place that is brought into view; in narrow windows the sheet covers the lower part. */
 function paddings(map: LeafletMap, wide: boolean): { paddingTopLeft: PointTuple; paddingBottomRight: PointTuple } {
-  const { x, y } = map.getSize()
+  const { x } = map.getSize()
   const side = Math.min(60, x / 8)
+  // As tall as a sheet from below (SheetPanel), and room for the symbol above it.
+  const sheet = Math.min(window.innerHeight * 0.46, 420) + 28
   return {
     paddingTopLeft: [wide && x > 900 ? 300 : side, side],
-    paddingBottomRight: [side, wide ? side : Math.min(y * 0.5, 420)],
+    paddingBottomRight: [side, wide ? side : sheet],
   }
 }
 
@@ -37,6 +39,6 @@ export function bringAllIntoView(
   if (!map || places.length === 0) return
   const middle = map.getCenter().lng
   const bounds = latLngBounds(places.map(([lon, lat]) => latLng(lat, nearestCopy(lon, middle))))
-  if (map.getBounds().contains(bounds)) return
+  if (wide && map.getBounds().contains(bounds)) return
   map.fitBounds(bounds, { ...paddings(map, wide), maxZoom: 13 })
 }

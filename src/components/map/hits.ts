@@ -24,19 +24,19 @@ const slackOf = { mouse: 3, touch: 12 }
 const LINE_REACH = { mouse: 5, touch: 10 }
 export type PointerKind = keyof typeof slackOf
 
-/** The nearest of those whose disc reaches the point. */
+/** The nearest of those whose disc reaches the point; `rank` is how many pixels nearer one counts. */
 function nearest<Item extends { lon: number; lat: number }>(
   items: readonly Item[],
   [x, y]: ScreenPoint,
   project: Project,
-  reach: (item: Item) => number,
+  { reach, rank = () => 0 }: { reach: (item: Item) => number; rank?: (item: Item) => number },
 ): Item | null {
   let found: Item | null = null
   let least = Infinity
   for (const item of items) {
     const [itemX, itemY] = project(item.lon, item.lat)
     const distance = Math.hypot(itemX - x, itemY - y)
-    if (distance <= reach(item) && distance < least) [found, least] = [item, distance]
+    if (distance <= reach(item) && distance - rank(item) < least) [found, least] = [item, distance - rank(item)]
   }
   return found
 }
@@ -62,14 +62,13 @@ export function hitAt(
 ): Hit | null {
   const slack = slackOf[pointer]
   const near = LINE_REACH[pointer]
-  const well = nearest(
-    wells,
-    point,
-    project,
-    ({ value }) => (value === null ? hollowRadius(zoom) : discRadius(zoom)) + slack,
-  )
+  const well = nearest(wells, point, project, {
+    reach: ({ value }) => (value === null ? hollowRadius(zoom) : discRadius(zoom)) + slack,
+    // Discs with a value lie above the others.
+    rank: ({ value }) => (value === null ? 0 : 4),
+  })
   if (well) return { kind: 'well', well }
-  const cluster = nearest(clusters, point, project, ({ count }) => clusterRadius(count) + slack)
+  const cluster = nearest(clusters, point, project, { reach: ({ count }) => clusterRadius(count) + slack })
   if (cluster) return { kind: 'cluster', cluster }
   const boundary = boundaries.find(({ path }) => along([path], point, project) <= near)
   if (boundary) return { kind: 'boundary', boundary }

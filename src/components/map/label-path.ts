@@ -30,10 +30,10 @@ function smoothed(points: readonly ScreenPoint[]): PathStep[] {
   return resample(soft, STEP)
 }
 
-const turn = (a: number, b: number) => Math.abs(Math.atan2(Math.sin(b - a), Math.cos(b - a)))
+const turnTo = (a: number, b: number) => Math.atan2(Math.sin(b - a), Math.cos(b - a))
 
 const bend = (steps: readonly PathStep[]) =>
-  steps.reduce((sum, { angle }, i) => sum + (i === 0 ? 0 : turn(steps[i - 1]!.angle, angle)), 0)
+  steps.reduce((sum, { angle }, i) => sum + (i === 0 ? 0 : Math.abs(turnTo(steps[i - 1]!.angle, angle))), 0)
 
 /** Whether a name would come too close to one that is written already. */
 const meets = (stretch: readonly PathStep[], taken: readonly PathStep[]) =>
@@ -74,5 +74,14 @@ export function calmStretch(
 }
 
 /** The place of a letter whose middle lies `along` pixels from the beginning of a stretch. */
-export const letterPlace = (stretch: readonly PathStep[], along: number): PathStep =>
-  stretch[Math.min(stretch.length - 1, Math.max(0, Math.round(along / STEP)))]!
+export function letterPlace(stretch: readonly PathStep[], along: number): PathStep {
+  const at = Math.min(stretch.length - 1, Math.max(0, along / STEP))
+  const before = stretch[Math.floor(at)]!
+  const after = stretch[Math.ceil(at)]!
+  const share = at - Math.floor(at)
+  return {
+    x: before.x + share * (after.x - before.x),
+    y: before.y + share * (after.y - before.y),
+    angle: before.angle + share * turnTo(before.angle, after.angle),
+  }
+}

@@ -1,7 +1,7 @@
 import type { Boundary } from '#shared/contracts/map.ts'
 import type { MapColours } from './map-colours.ts'
 import type { MapFrame } from './map-frame.ts'
-import { resample } from './screen-path.ts'
+import { resample, type ScreenPoint } from './screen-path.ts'
 
 type Kind = Boundary['kind']
 
@@ -29,7 +29,7 @@ export const boundaryNames: Record<Kind, string> = {
 }
 
 /** Pairs of short bars across the line, on alternating sides, so that it is no stream and no road without colour too. */
-function paintTicks(context: CanvasRenderingContext2D, points: readonly (readonly [number, number])[], every: number) {
+function paintTicks(context: CanvasRenderingContext2D, points: readonly ScreenPoint[], every: number) {
   context.beginPath()
   for (const [i, { x, y, angle }] of resample(points, every).entries()) {
     const side = i % 2 === 0 ? 1 : -1
@@ -37,6 +37,12 @@ function paintTicks(context: CanvasRenderingContext2D, points: readonly (readonl
     context.moveTo(x, y)
     context.lineTo(x + 5.5 * nx, y + 5.5 * ny)
   }
+  context.stroke()
+}
+
+function strokePoints(context: CanvasRenderingContext2D, points: readonly ScreenPoint[]) {
+  context.beginPath()
+  for (const [x, y] of points) context.lineTo(x, y)
   context.stroke()
 }
 
@@ -51,17 +57,13 @@ export function paintBoundaries(
   for (const { kind, path } of boundaries) {
     const { dash, width, colour, tickEvery } = boundaryStyles[kind]
     const points = path.map(([lon, lat]) => frame.project(lon, lat))
-    for (const [style, extra] of [
-      [colours.sheet, 2.5],
-      [colour(colours), 0],
-    ] as const) {
-      context.strokeStyle = style
-      context.lineWidth = width + extra
-      context.setLineDash(extra > 0 ? [] : dash)
-      context.beginPath()
-      for (const [i, [x, y]] of points.entries()) i === 0 ? context.moveTo(x, y) : context.lineTo(x, y)
-      context.stroke()
-    }
+    context.strokeStyle = colours.sheet
+    context.lineWidth = width + 2.5
+    strokePoints(context, points)
+    context.strokeStyle = colour(colours)
+    context.lineWidth = width
+    context.setLineDash(dash)
+    strokePoints(context, points)
     context.setLineDash([])
     if (tickEvery !== null) paintTicks(context, points, tickEvery)
   }

@@ -71,5 +71,5 @@ export function useMapWells(shown: ShallowRef<MapWindow | null>) {
   const wells = computed(() => latest.value?.wells ?? null)
   /** Of the wells that are drawn, which may be those of the choice before. */
   const drawnClasses = computed(() => classesOf(latest.value?.parameter ?? choice.parameter))
-  return { wells, classes, drawnClasses, error, isLoading, refetch }
+  return { wells, drawnClasses, error, isLoading, refetch }
 }

@@ -78,7 +78,7 @@ describe('the wells', () => {
         expect(bottomM).toBeLessThanOrEqual(well.depthM)
         if (pick) expect(topM).toBeGreaterThanOrEqual(pick.topM)
       }
-      expect(well.measuringPointM - well.staticDepthM).toBeCloseTo(headAt[well.unit](...at), 1)
+      expect(well.groundElevationM + well.measuringPointM - well.staticDepthM).toBeCloseTo(headAt[well.unit](...at), 1)
       expect(well.staticDepthM).toBeLessThan(well.depthM)
     }
   })

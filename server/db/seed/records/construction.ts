@@ -80,7 +80,7 @@ export function construct(stream: Draws, code: string, { unit, at, kind, year, w
     original: { epsg: EPSG, x: round(at[0] + CENTRE.easting, 1), y: round(at[1] + CENTRE.northing, 1) },
     positionAccuracyM: kind === 'piezometer' || year > 2000 ? stream.pick([0.5, 1, 2]) : stream.pick([5, 10, 25]),
     groundElevationM: ground,
-    measuringPointM: round(ground + stickUp, 2),
+    measuringPointM: stickUp,
     depthM: depth,
     wellRadiusM: radius,
     casingRadiusM: radius,

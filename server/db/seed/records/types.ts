@@ -70,6 +70,7 @@ export interface DemoWell {
   original: { epsg: number; x: number; y: number }
   positionAccuracyM: number
   groundElevationM: number
+  /** Above ground. */
   measuringPointM: number
   depthM: number
   wellRadiusM: number
