@@ -3,6 +3,7 @@ import { installPackages, missingPackages } from './debian.mjs'
 import { openDatabase } from './databases.mjs'
 import { checkedPort } from './free-port.mjs'
 import { takeLock } from './locks.mjs'
+import { query } from './mariadb-client.mjs'
 import { installNodePackages, nodePackagesMatch } from './node-packages.mjs'
 import { inRoot, root } from './places.mjs'
 import { SetupProblem } from './problem.mjs'
@@ -64,7 +65,9 @@ export async function prepare(steps, life) {
   await checkedPort(config.port, config.host) // better known now than after minutes of seeding
   const database = await startDatabase(settings, steps, life)
   const env = childEnvironment(process.env, settings, database.url)
-  if (settings.demo) await steps.step('Filling in the demo region', () => seed(env, steps, life.stopping))
+  if (settings.demo && !(await isSeeded(database.reach))) {
+    await steps.step('Filling in the demo region', () => seed(env, steps, life.stopping))
+  }
   return { settings, config, database, env }
 }
 
@@ -83,6 +86,14 @@ async function startDatabase(settings, { step, say }, { stopping, onClose }) {
     bringUpToDate(database.reach, database.url, { dataDir, say, signal: stopping }),
   )
   return database
+}
+
+/**
+ * Whether the seed's own record says that it is done: asked here, that takes a hundredth of the seed's start.
+ * @param {import('./mariadb-client.mjs').Reach} reach
+ */
+async function isSeeded(reach) {
+  return (await query(reach, "SELECT 1 FROM jobs WHERE kind = 'seed-demo' AND state = 'done' LIMIT 1")).length > 0
 }
 
 /**
