@@ -52,7 +52,8 @@ function pairTest(data: KrigingData, barriers: readonly Polyline[]): PairTest | 
 type Fit = Pick<UnitModel, 'variogram' | 'nodes' | 'leastSquares' | 'experimental' | 'robust' | 'errorsExceedScatter'>
 
 /** Values that all stand at one place, as nested wells do, tell nothing of distances. */
-const allAtOnePlace = ({ x, y }: KrigingData): boolean => x.every((east, i) => east === x[0] && y[i] === y[0])
+const allAtOnePlace = ({ x, y }: KrigingData): boolean =>
+  Array.from(x).every((east, i) => east === x[0] && y[i] === y[0])
 
 const lagsOf = (data: KrigingData, options: ExperimentalOptions): Lag[] =>
   allAtOnePlace(data) ? [] : experimentalVariogram(data, options)

@@ -125,13 +125,14 @@ describe('pages', () => {
 })
 
 describe('order', () => {
-  const keys = {
+  type Key = 'value' | 'year' | 'well'
+  const keys: Record<Key, (item: AdoptedValueList['items'][number]) => string | number> = {
     value: ({ value }) => value,
     year: ({ testYear }) => testYear,
     well: ({ wellCode }) => wellCode,
-  } satisfies Record<string, (item: AdoptedValueList['items'][number]) => string | number>
+  }
 
-  it.each(Object.keys(keys) as (keyof typeof keys)[])('rises and falls by %s', async (key) => {
+  it.each(Object.keys(keys) as Key[])('rises and falls by %s', async (key) => {
     const of = async (sort: AdoptedValueSort) => (await table(`sort=${sort}&quantity=T&text=A-`)).items.map(keys[key])
     const rising = await of(key)
     expect(rising).toEqual([...rising].sort((a, b) => (a < b ? -1 : a > b ? 1 : 0)))

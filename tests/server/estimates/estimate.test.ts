@@ -58,12 +58,16 @@ describe('where there is nothing to estimate from', () => {
     expect((await ask(reader, { unitId: 4_000_000 }).expect(400)).body).toMatchObject({ code: 'estimate/unknown-unit' })
   })
 
-  it.each([{ lat: 91 }, { lon: 'east' }, { quantity: 'B' }, { depthM: -1 }, { unitId: 'one' }])(
-    '%j is a bad request',
-    async (query) => {
-      await ask(reader, query as Record<string, string | number>).expect(400)
-    },
-  )
+  const badQueries: Record<string, string | number>[] = [
+    { lat: 91 },
+    { lon: 'east' },
+    { quantity: 'B' },
+    { depthM: -1 },
+    { unitId: 'one' },
+  ]
+  it.each(badQueries)('%j is a bad request', async (query) => {
+    await ask(reader, query).expect(400)
+  })
 
   it('an aquitard is named among the units and never chosen', async () => {
     const place: Position = [-20.99, -38.21]

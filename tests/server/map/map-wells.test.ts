@@ -86,7 +86,8 @@ describe('wells on the map', () => {
   })
 
   it('shows every well hollow without a unit, and for a unit without values', async () => {
-    for (const query of [{}, { unitId: otherUnitId }]) {
+    const queries: Record<string, number>[] = [{}, { unitId: otherUnitId }]
+    for (const query of queries) {
       const answer = await ask(steward, query)
       expect(answer.wells.every(({ value }) => value === null)).toBe(true)
       expect(answer.valued).toBe(0)
