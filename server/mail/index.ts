@@ -5,4 +5,6 @@ import type { Mail } from './mail.ts'
 import { smtpMail } from './smtp-mail.ts'
 
 export const createMail = (config: Config, now: () => Date): Mail =>
-  config.smtpUrl ? smtpMail(config.smtpUrl, config.mailFrom) : folderMail(join(config.dataDir, 'outbox'), config.mailFrom, now)
+  config.smtpUrl
+    ? smtpMail(config.smtpUrl, config.mailFrom)
+    : folderMail(join(config.dataDir, 'outbox'), config.mailFrom, now)
