@@ -1,10 +1,11 @@
 import { z } from 'zod'
 import { analysisMethod, evidence } from './analyses.ts'
 import { storageClass } from './analysis-result.ts'
+import { adoptedQuantity } from './kinds.ts'
 import { boundingBox, idInPath, instant, latitude, listOf, longitude, paging, recordId } from './common.ts'
 import { thicknessBasis } from './pumping-tests.ts'
 
-export const adoptedQuantity = z.enum(['T', 'S', 'K'])
+export { adoptedQuantity }
 
 export const adoptedValue = z.object({
   id: recordId,

@@ -2,12 +2,13 @@ import { z } from 'zod'
 import { methods } from '../hydraulics/catalogue.ts'
 import { analysisInputs, analysisOptions, analysisResult, finding, storageClass } from './analysis-result.ts'
 import { instant, recordId, rowVersion } from './common.ts'
+import { evidence } from './kinds.ts'
 
 /** Registering a method in the hydraulics catalogue is all that is needed for it to be accepted here. */
 export const fittedMethod = z.enum(Object.keys(methods) as [keyof typeof methods])
 export const analysisMethod = z.union([fittedMethod, z.literal('reported')])
 export const analysisState = z.enum(['draft', 'submitted', 'accepted', 'returned', 'withdrawn'])
-export const evidence = z.enum(['firm', 'fair', 'slight'])
+export { evidence }
 
 /** What the browser calculated; the server refuses to store when its own numbers differ. */
 export const expectedResult = z.object({

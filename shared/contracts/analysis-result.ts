@@ -1,4 +1,5 @@
 import { z } from 'zod'
+import { storageClass } from './kinds.ts'
 
 /** Stored analyses carry `version: 1`; a later shape brings its own literal and one upgrade from this one. */
 
@@ -16,7 +17,7 @@ export const finding = z.object({
   params: z.record(z.string(), z.union([z.string(), z.number()])),
 })
 
-export const storageClass = z.enum(['elastic', 'specific-yield', 'apparent', 'unclassified'])
+export { storageClass }
 
 const leftOutReason = z.enum([
   'excluded',

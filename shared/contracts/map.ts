@@ -1,9 +1,6 @@
 import { z } from 'zod'
-import { adoptedQuantity } from './adopted-values.ts'
-import { evidence } from './analyses.ts'
-import { storageClass } from './analysis-result.ts'
 import { boundingBox, idInPath, latitude, longitude, recordId } from './common.ts'
-import { wellKind } from './wells.ts'
+import { adoptedQuantity, evidence, storageClass, wellKind } from './kinds.ts'
 
 export const mapWellQuery = z.object({
   bbox: boundingBox,

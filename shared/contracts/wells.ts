@@ -1,9 +1,10 @@
 import { z } from 'zod'
 import { adoptedValue } from './adopted-values.ts'
 import { instant, latitude, listOf, longitude, paging, recordId, rowVersion } from './common.ts'
+import { wellKind } from './kinds.ts'
 import { pumpingTestSummary, visibility } from './pumping-tests.ts'
 
-export const wellKind = z.enum(['well', 'piezometer', 'planned'])
+export { wellKind }
 
 const depth = z.number().min(0).max(5_000)
 

@@ -17,6 +17,8 @@ export interface MapHandle {
   /** Leaflet's own map; null until it stands. */
   readonly map: ShallowRef<LeafletMap | null>
   readonly marks: ShallowRef<MapMarks | null>
+  /** Ringed on the map: the well that the open sheet is about. */
+  readonly selected: ShallowRef<LonLat | null>
   setMarks(marks: MapMarks | null): void
   /** Brings a place into view when it is not, as little as needed; `zoom` is the least it is shown at. */
   show(place: LonLat, zoom?: number): void
@@ -49,6 +51,13 @@ export function useMapMarks(marks: () => MapMarks | null) {
   onScopeDispose(() => setMarks(null))
 }
 
+/** Rings a place while the sheet about it is open. */
+export function useMapSelection(place: () => LonLat | null) {
+  const { selected } = useMap()
+  watchEffect(() => (selected.value = place()))
+  onScopeDispose(() => (selected.value = null))
+}
+
 /** Everything of the handle that does not need Leaflet. */
 export function createHandle(show: MapHandle['show'], showAll: MapHandle['showAll']): MapHandle {
   const marks = shallowRef<MapMarks | null>(null)
@@ -57,6 +66,7 @@ export function createHandle(show: MapHandle['show'], showAll: MapHandle['showAl
   const update = () => (clicks.value = takers.at(-1) ?? null)
   return {
     map: shallowRef(null),
+    selected: shallowRef(null),
     marks,
     clicks,
     show,
