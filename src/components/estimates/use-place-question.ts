@@ -21,6 +21,9 @@ export function placeOf(text: unknown): { lat: number; lon: number } | null {
   return possible && Math.abs(lat) <= 90 && Math.abs(lon) <= 180 ? { lat, lon } : null
 }
 
+/** Centimetres are enough in an address, which lengths typed in feet would fill with digits. */
+const short = (metres: number) => String(Number(metres.toFixed(2)))
+
 export type PlaceChange = Partial<Record<'unit' | 'quantity' | 'depth' | 'radius', string | number | null>>
 
 /** What is asked about a place. It stands in the address, so that a link and Back ask the same again. */
@@ -47,7 +50,9 @@ export function usePlaceQuestion() {
   /** Keeps the rest of the address. */
   const change = (changes: PlaceChange) => {
     const query = Object.fromEntries(
-      Object.entries({ ...route.query, ...changes }).filter(([, value]) => value !== null && value !== undefined),
+      Object.entries({ ...route.query, ...changes })
+        .filter(([, value]) => value !== null && value !== undefined)
+        .map(([name, value]) => [name, typeof value === 'number' ? short(value) : value]),
     )
     return router.replace({ params: route.params, query })
   }
