@@ -33,6 +33,8 @@ export default defineConfig({
     ),
   },
   test: {
+    // Vitest leaves one core to the terminal; a test run has them all.
+    maxWorkers: 2,
     projects: [
       {
         extends: true,
