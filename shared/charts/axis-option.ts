@@ -7,7 +7,7 @@ const MINOR = 0.45
 /** Ticks of a factor of ten: 1, 2 … 9. */
 const MINOR_TICKS = 9
 
-function common({ scale, min, max, title, inverse }: Axis, theme: ChartTheme) {
+function common({ scale, min, max, title, inverse, step }: Axis, theme: ChartTheme) {
   const line = { lineStyle: { color: theme.line, width: 1 } }
   const minor = { show: scale === 'log', splitNumber: MINOR_TICKS }
   return {
@@ -15,6 +15,7 @@ function common({ scale, min, max, title, inverse }: Axis, theme: ChartTheme) {
     min,
     max,
     inverse,
+    ...(step === undefined ? {} : { interval: step }),
     name: title,
     nameLocation: 'middle' as const,
     nameTextStyle: { color: theme.inkSoft, fontSize: CHART_FONT_SIZE },
@@ -57,6 +58,17 @@ export function yAxisOption(axis: Axis, theme: ChartTheme, nameGap: number): YAX
     axisLabel: { ...option.axisLabel, ...logLabels(axis) },
   } as YAXisComponentOption
 }
+
+/** An axis that only places things. */
+export const hiddenAxis = ({ scale, min, max, inverse }: Axis, id: string) => ({
+  id,
+  type: scale === 'log' ? ('log' as const) : ('value' as const),
+  gridIndex: 0,
+  show: false,
+  min,
+  max,
+  inverse,
+})
 
 /** The strip of residuals shares the abscissa of the plot above it. */
 export function stripAxes(axis: Axis, theme: ChartTheme, limit: number) {

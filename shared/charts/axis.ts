@@ -8,6 +8,8 @@ export interface Axis {
   title: string
   /** Values grow downwards (or to the left). */
   inverse: boolean
+  /** Between the ticks of a linear axis. */
+  step?: number
 }
 
 /** Extents of values; null when there is none. Spreads into Math.min would overflow the stack on long logs. */
@@ -33,15 +35,17 @@ function roundStep(span: number, parts: number): number {
 export function linearAxis(
   values: Iterable<number>,
   title: string,
-  { inverse = false, fromZero = true, parts = 6 } = {},
+  { inverse = false, fromZero = true, parts = 8 } = {},
 ): Axis {
   const [least, most] = extentOf(values) ?? [0, 1]
   const low = fromZero ? Math.min(0, least) : least
   const high = fromZero ? Math.max(0, most) : most
   const step = roundStep(high > low ? high - low : Math.abs(high) || 1, parts)
-  const min = Math.floor(low / step + 1e-9) * step
-  const max = Math.ceil(high / step - 1e-9) * step
-  return { scale: 'linear', min, max: max > min ? max : min + step, title, inverse }
+  // Products such as 7 × 0.2 are off in their last digit, which would show in the ticks.
+  const round = (value: number) => Number(value.toPrecision(12))
+  const min = round(Math.floor(low / step + 1e-9) * step)
+  const max = round(Math.ceil(high / step - 1e-9) * step)
+  return { scale: 'linear', min, max: max > min ? max : round(min + step), title, inverse, step }
 }
 
 /** A logarithmic axis over the positive values, with a little air at either end. */

@@ -63,22 +63,24 @@ function covariance(fit: Fit): number[][] {
   return invertSymmetric(normal).inverse.map((row) => row.map((value) => value * variance))
 }
 
+/** Half-widths (m) of the 95 % band of the fitted curve in one well, at elapsed times. */
+export type HalfWidths = (wellId: string, times_s: number[]) => number[]
+
 /**
- * Half-widths (m) of the 95 % band of the fitted curve in one well, by the curve's change with each parameter.
- * It shows the scatter of the readings alone: errors of rate and distance move the parameters, not the curve.
- * Null for a fit that has no band.
+ * The 95 % band of a fitted curve, by the curve's change with each parameter. It shows the scatter of the readings alone:
+ * errors of rate and distance move the parameters, not the curve. Null for a fit that has no band.
  * Source: first-order propagation (Seber & Wild 1989, from memory).
  */
-export function bandOf(fit: Fit, wellId: string, times_s: number[]): number[] | null {
+export function bandOf(fit: Fit): HalfWidths | null {
   if (!hasBand(fit)) return null
   const matrix = covariance(fit)
-  const freedom = Math.max(1, fit.result.fit.effectiveN - matrix.length)
-  const quantile = studentQuantile(TWO_SIDED, freedom)
-  return slopes(fit, wellId, times_s).map((row) => {
-    const spread = row.reduce(
-      (sum, a, i) => sum + row.reduce((inner, b, j) => inner + a * b * (matrix[i]?.[j] ?? 0), 0),
-      0,
-    )
-    return quantile * Math.sqrt(Math.max(0, spread))
-  })
+  const quantile = studentQuantile(TWO_SIDED, Math.max(1, fit.result.fit.effectiveN - matrix.length))
+  return (wellId, times_s) =>
+    slopes(fit, wellId, times_s).map((row) => {
+      const spread = row.reduce(
+        (sum, a, i) => sum + row.reduce((inner, b, j) => inner + a * b * (matrix[i]?.[j] ?? 0), 0),
+        0,
+      )
+      return quantile * Math.sqrt(Math.max(0, spread))
+    })
 }

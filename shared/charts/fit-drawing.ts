@@ -2,8 +2,8 @@ import type { AnalysisInputs, TimeWindow } from '#shared/hydraulics/analysis.ts'
 import { methods, type MethodId } from '#shared/hydraulics/catalogue.ts'
 import { rateHistory } from '#shared/hydraulics/rates.ts'
 import { unitById } from '#shared/quantities/units.ts'
-import { shareOf, valueAt } from './axis.ts'
-import { bandOf, modelled, type Fit } from './fit-band.ts'
+import { shareOf } from './axis.ts'
+import { bandOf, modelled, type Fit, type HalfWidths } from './fit-band.ts'
 import { lineMarks, type LineMarks } from './line-marks.ts'
 import type { PlotPoint, XY } from './plot-wells.ts'
 import type { TimePlot } from './time-plot.ts'
@@ -34,7 +34,6 @@ export interface FitDrawing {
   residuals: { inside: XY[]; outside: XY[]; unit: string }
 }
 
-const CURVE_POINTS = 100
 const WINDOW_FIGURES = 4
 const residualUnits: Record<string, string> = { m: 'mm', ft: 'in' }
 export const residualUnit = (lengthUnit: string) => residualUnits[lengthUnit] ?? lengthUnit
@@ -56,6 +55,7 @@ interface Drawn {
   plot: TimePlot
   fit: Fit
   inWindow: (elapsed_s: number) => boolean
+  halfWidths: HalfWidths | null
 }
 
 /** Draws an analysis on a plot against time. `withBand` can be left out while something is dragged. */
@@ -64,30 +64,20 @@ export function fitDrawing(plot: TimePlot, fit: Fit, { withBand = true } = {}): 
   const origin_s = methodOrigin(fit.inputs, fit.result.method)
   const inWindow = (elapsed_s: number) =>
     window === null || (elapsed_s - origin_s >= window.from_s && elapsed_s - origin_s <= window.to_s)
-  const drawn = { plot, fit, inWindow }
-  const times_s = curveTimes(plot)
+  const drawn = { plot, fit, inWindow, halfWidths: withBand ? bandOf(fit) : null }
+  const times_s = plot.curve_s
   const curves = plot.wells.map(({ wellId }) => modelled(fit, wellId, times_s))
   return {
     inside: plot.wells.map(({ points }) =>
       points.filter((point) => inWindow(point.elapsed_s)).map(({ x, y }) => [x, y]),
     ),
     fitted: curves.map((curve) => line(plot, times_s, curve)),
-    bands: plot.wells.map(({ wellId }, i) => (withBand ? band(drawn, wellId, times_s, curves[i] ?? []) : null)),
+    bands: plot.wells.map(({ wellId }, i) => band(drawn, wellId, times_s, curves[i] ?? [])),
     span: window && spanOf(plot, origin_s, window),
     shade: shadeOf(drawn, origin_s),
     marks: lineMarks(plot, fit),
     residuals: residuals(drawn),
   }
-}
-
-/** Times across the plot, evenly along its axis. */
-function curveTimes({ x, clock, kind }: TimePlot): number[] {
-  const even = Array.from({ length: CURVE_POINTS + 1 }, (_, i) => clock.elapsed(valueAt(x, i / CURVE_POINTS)))
-  if (kind !== 'linear') return even
-  // Drawdown bends most just after a change of rate, where even steps would cut the corner.
-  const first = x.max / 1e4
-  const early = Array.from({ length: CURVE_POINTS }, (_, i) => clock.elapsed(first * 1e4 ** (i / CURVE_POINTS)))
-  return [...even, ...early].sort((a, b) => a - b)
 }
 
 function line(plot: TimePlot, times_s: number[], curve: (number | null)[]): XY[] {
@@ -101,14 +91,14 @@ function line(plot: TimePlot, times_s: number[], curve: (number | null)[]): XY[]
 }
 
 function band(
-  { plot, fit, inWindow }: Drawn,
+  { plot, inWindow, halfWidths }: Drawn,
   wellId: string,
   times_s: number[],
   curve: (number | null)[],
 ): Band | null {
   const within = times_s.flatMap((time, i) => (inWindow(time) && curve[i] != null ? [i] : []))
   const times = within.map((i) => times_s[i] as number)
-  const half = times.length > 1 ? bandOf(fit, wellId, times) : null
+  const half = halfWidths && times.length > 1 ? halfWidths(wellId, times) : null
   if (!half) return null
   const edge = (sign: 1 | -1) =>
     line(

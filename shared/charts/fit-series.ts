@@ -1,7 +1,10 @@
 import type { SeriesOption } from 'echarts'
 import { CHART_FONT_SIZE, faded, type ChartTheme } from './chart-theme.ts'
+import { dotsPath } from './dots-path.ts'
 import type { Band, FitDrawing } from './fit-drawing.ts'
+import { cycle, marks } from './mark-series.ts'
 import { symbolOf, type PlotWell, type XY } from './plot-wells.ts'
+import { quiet } from './quiet.ts'
 
 /** The part of a chart that follows the mouse: series with fixed ids, whose data alone are replaced. */
 export interface SeriesFrame {
@@ -22,7 +25,9 @@ const NO_FIT: FitDrawing = {
   residuals: { inside: [], outside: [], unit: '' },
 }
 
-const quiet = { silent: true, animation: false, emphasis: { disabled: true } } as const
+/** Custom series draw one shape from what they close over: its points as data would each become a dimension. */
+const ONE_SHAPE = [[0, 0]]
+
 /** Many readings are smaller, so that they stay apart. */
 export const dotSize = (count: number) => (count > MANY ? 5 : 7)
 const MANY = 120
@@ -80,8 +85,7 @@ function band(given: Band | null, i: number, theme: ChartTheme): SeriesOption {
     id: `band-${i}`,
     type: 'custom',
     z: 1,
-    data: outline.length > 2 ? [outline.flat()] : [],
-    encode: { x: [], y: [] },
+    data: outline.length > 2 ? ONE_SHAPE : [],
     clip: true,
     renderItem: (_params, api) => ({
       type: 'polygon',
@@ -92,17 +96,29 @@ function band(given: Band | null, i: number, theme: ChartTheme): SeriesOption {
   } as SeriesOption
 }
 
-const inside = (data: XY[], i: number, theme: ChartTheme, symbolSize: number): SeriesOption => ({
-  ...quiet,
-  id: `inside-${i}`,
-  type: 'scatter',
-  z: 4,
-  symbol: symbolOf(i),
-  symbolSize,
-  clip: false,
-  itemStyle: { color: theme.ink },
-  data,
-})
+/** All readings of the window in one outline: hundreds of separate symbols would be too slow to follow a mouse. */
+function inside(data: XY[], i: number, theme: ChartTheme, size: number): SeriesOption {
+  return {
+    ...quiet,
+    id: `inside-${i}`,
+    type: 'custom',
+    z: 4,
+    clip: false,
+    data: data.length > 0 ? ONE_SHAPE : [],
+    renderItem: (_params, api) => ({
+      type: 'path',
+      shape: {
+        pathData: dotsPath(
+          data.map((point) => api.coord(point) as [number, number]),
+          symbolOf(i),
+          size,
+        ),
+      },
+      style: { fill: theme.ink },
+      silent: true,
+    }),
+  } as SeriesOption
+}
 
 const fitted = (data: XY[], i: number, theme: ChartTheme): SeriesOption => ({
   ...quiet,
@@ -113,54 +129,6 @@ const fitted = (data: XY[], i: number, theme: ChartTheme): SeriesOption => ({
   lineStyle: { color: theme.deepWater, width: 1.75 },
   data,
 })
-
-const cycle = ({ marks: found }: FitDrawing, theme: ChartTheme): SeriesOption => ({
-  ...quiet,
-  id: 'cycle',
-  type: 'line',
-  z: 3,
-  showSymbol: false,
-  lineStyle: { color: theme.inkSoft, width: 1, type: [3, 3] },
-  data: found?.cycle?.corner ?? [],
-})
-
-/** Words beside the line: where it meets zero, and its fall in one factor of ten. */
-function marks({ marks: found }: FitDrawing, theme: ChartTheme, inverse: boolean): SeriesOption {
-  const label = (formatter: string, position: string, color: string) => ({
-    show: true,
-    formatter,
-    position,
-    color,
-    fontSize: CHART_FONT_SIZE,
-    distance: 7,
-    backgroundColor: faded(theme.sheet, 0.8),
-    padding: [2, 3],
-  })
-  const zero = found?.zero && {
-    value: found.zero.at,
-    symbolSize: 10,
-    itemStyle: { color: theme.sheet, borderColor: theme.deepWater, borderWidth: 2 },
-    label: label(found.zero.label, 'right', theme.deepWater),
-  }
-  const [from, to] = found?.cycle ? horizontal(found.cycle.corner) : [null, null]
-  const fall = found?.cycle &&
-    from &&
-    to && {
-      value: [Math.sqrt(from[0] * to[0]), from[1]],
-      symbolSize: 0,
-      label: label(found.cycle.label, inverse ? 'bottom' : 'top', theme.ink),
-    }
-  return {
-    ...quiet,
-    id: 'marks',
-    type: 'scatter',
-    z: 6,
-    clip: false,
-    data: [zero, fall].filter(Boolean),
-  } as SeriesOption
-}
-
-const horizontal = ([a, b, c]: [XY, XY, XY]): [XY, XY] => (a[1] === b[1] ? [a, b] : [b, c])
 
 /** Residuals as one broken line each: a stroke from zero for every reading. */
 function strip(drawing: FitDrawing, theme: ChartTheme): SeriesOption[] {

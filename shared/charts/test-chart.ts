@@ -1,7 +1,7 @@
 import type { EChartsOption, SeriesOption } from 'echarts'
 import { formatNumber } from '#shared/quantities/format.ts'
 import { unitById } from '#shared/quantities/units.ts'
-import { stripAxes, xAxisOption, yAxisOption } from './axis-option.ts'
+import { hiddenAxis, stripAxes, xAxisOption, yAxisOption } from './axis-option.ts'
 import { CHART_FONT, CHART_FONT_SIZE, faded, type ChartTheme } from './chart-theme.ts'
 import type { DistancePlot } from './distance-plot.ts'
 import type { FitDrawing } from './fit-drawing.ts'
@@ -15,39 +15,88 @@ export type TestPlot = TimePlot | DistancePlot
 /** Paler outside the window, and before there is one. */
 const PALE = 0.38
 
-/** Everything of a chart: what stands, and the analysis on it. For the page, a PDF and saved pictures alike. */
+/** Everything of a chart, the analysis on it included: for a PDF and saved pictures. */
 export function testChart(
   plot: TestPlot,
   drawing: FitDrawing | null,
   frame: PlotFrame,
   theme: ChartTheme,
 ): EChartsOption {
-  const { wells, x, y } = plot
-  const withStrip = frame.strip !== null
-  const strip = stripAxes(x, theme, residualLimit(drawing))
+  const strip = stripOf(plot, drawing, frame, theme)
+  const alone = standingChart(plot, frame, theme)
   return {
-    animation: false,
-    textStyle: { fontFamily: CHART_FONT, fontSize: CHART_FONT_SIZE, color: theme.ink },
-    grid: [{ ...frame.plot, containLabel: false }, ...(frame.strip ? [{ ...frame.strip, containLabel: false }] : [])],
-    xAxis: [xAxisOption(x, theme), ...(withStrip ? [strip.x] : [])],
-    yAxis: [yAxisOption(y, theme, frame.plot.left - 18), ...(withStrip ? [strip.y] : [])],
-    tooltip: tooltip(plot, theme),
-    series: [
-      ...wells.flatMap((well, i) => standing(well, i, theme, plot.kind === 'distance')),
-      ...fitSeries({ wells, theme, withStrip, inverse: y.inverse }, drawing),
-    ],
+    ...alone,
+    grid: gridsOf(frame),
+    xAxis: [xAxisOption(plot.x, theme), ...strip.x],
+    yAxis: [yOption(plot, frame, theme), ...strip.y],
+    series: [...standingSeries(plot, theme), ...movingSeries(plot, drawing, frame, theme)],
   }
 }
 
-/** What changes while a window or line is dragged, to be merged into a chart that stands. */
-export function liveChart(plot: TestPlot, drawing: FitDrawing | null, frame: PlotFrame, theme: ChartTheme) {
-  const withStrip = frame.strip !== null
-  const limit = residualLimit(drawing)
+/** The plot before any analysis: on the page it is drawn once, under the layer that moves. */
+export function standingChart(plot: TestPlot, frame: PlotFrame, theme: ChartTheme): EChartsOption {
   return {
-    ...(withStrip ? { yAxis: [{ id: 'strip-y', min: -limit, max: limit, interval: limit }] } : {}),
-    series: fitSeries({ wells: plot.wells, theme, withStrip, inverse: plot.y.inverse }, drawing),
+    ...common(theme),
+    grid: [{ ...frame.plot, containLabel: false }],
+    xAxis: [xAxisOption(plot.x, theme)],
+    yAxis: [yOption(plot, frame, theme)],
+    tooltip: tooltip(plot, theme),
+    series: standingSeries(plot, theme),
+  }
+}
+
+/**
+ * The layer that follows the mouse: a few lines and outlines over the same frame, with no axes of its own but those of
+ * the strip, so that a move draws ten shapes and not every reading.
+ */
+export function movingChart(
+  plot: TestPlot,
+  drawing: FitDrawing | null,
+  frame: PlotFrame,
+  theme: ChartTheme,
+): EChartsOption {
+  const strip = stripOf(plot, drawing, frame, theme)
+  return {
+    ...common(theme),
+    grid: gridsOf(frame),
+    xAxis: [hiddenAxis(plot.x, 'x'), ...strip.x],
+    yAxis: [hiddenAxis(plot.y, 'y'), ...strip.y],
+    series: movingSeries(plot, drawing, frame, theme),
   } as EChartsOption
 }
+
+/** What changes in the moving layer from one position to the next, to be merged into it. */
+export function movedChart(plot: TestPlot, drawing: FitDrawing | null, frame: PlotFrame, theme: ChartTheme) {
+  const limit = residualLimit(drawing)
+  return {
+    ...(frame.strip ? { yAxis: [{ id: 'strip-y', min: -limit, max: limit, interval: limit }] } : {}),
+    series: movingSeries(plot, drawing, frame, theme),
+  } as EChartsOption
+}
+
+const common = (theme: ChartTheme) => ({
+  animation: false,
+  textStyle: { fontFamily: CHART_FONT, fontSize: CHART_FONT_SIZE, color: theme.ink },
+})
+
+const gridsOf = ({ plot, strip }: PlotFrame) => [
+  { ...plot, containLabel: false },
+  ...(strip ? [{ ...strip, containLabel: false }] : []),
+]
+
+const yOption = ({ y }: TestPlot, frame: PlotFrame, theme: ChartTheme) => yAxisOption(y, theme, frame.plot.left - 18)
+
+function stripOf({ x }: TestPlot, drawing: FitDrawing | null, frame: PlotFrame, theme: ChartTheme) {
+  if (!frame.strip) return { x: [], y: [] }
+  const axes = stripAxes(x, theme, residualLimit(drawing))
+  return { x: [axes.x], y: [axes.y] }
+}
+
+const standingSeries = ({ wells, kind }: TestPlot, theme: ChartTheme) =>
+  wells.flatMap((well, i) => standing(well, i, theme, kind === 'distance'))
+
+const movingSeries = ({ wells, y }: TestPlot, drawing: FitDrawing | null, frame: PlotFrame, theme: ChartTheme) =>
+  fitSeries({ wells, theme, withStrip: frame.strip !== null, inverse: y.inverse }, drawing)
 
 function standing(
   { points, leftOut, derivative, label }: PlotWell,
@@ -69,7 +118,7 @@ function standing(
       id: `points-${i}`,
       name: label,
       z: 2,
-      itemStyle: { color: faded(theme.ink, PALE) },
+      itemStyle: { color: faded(theme.ink, PALE), opacity: 1 },
       data: points.map(({ x, y }) => [x, y]),
       label: { show: named, formatter: label, position: 'right', color: theme.ink, fontSize: CHART_FONT_SIZE },
     },
@@ -78,7 +127,7 @@ function standing(
       id: `left-out-${i}`,
       name: `${label}, left out`,
       z: 2,
-      itemStyle: { color: 'transparent', borderColor: theme.inkSoft, borderWidth: 1 },
+      itemStyle: { color: 'transparent', borderColor: theme.inkSoft, borderWidth: 1, opacity: 1 },
       data: leftOut.map(({ x, y }: PlotPoint) => [x, y]),
     },
     {

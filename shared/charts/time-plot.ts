@@ -1,6 +1,6 @@
 import type { AnalysisInputs, AnalysisOptions } from '#shared/hydraulics/analysis.ts'
 import { unitById } from '#shared/quantities/units.ts'
-import { extentOf, linearAxis, logAxis, type Axis } from './axis.ts'
+import { extentOf, linearAxis, logAxis, valueAt, type Axis } from './axis.ts'
 import { plotClock, type PlotClock } from './plot-clock.ts'
 import type { PlotKind } from './plot-kinds.ts'
 import { plotWells, type PlotWell } from './plot-wells.ts'
@@ -31,6 +31,8 @@ export interface TimePlot {
   clock: PlotClock
   wells: PlotWell[]
   units: PlotUnits
+  /** Times at which a curve is drawn, elapsed seconds. */
+  curve_s: number[]
 }
 
 export function timePlot(request: TimePlotRequest): TimePlot {
@@ -38,10 +40,31 @@ export function timePlot(request: TimePlotRequest): TimePlot {
   const clock = plotClock(kind, inputs, options, unitById(units.time).toSI)
   const length_m = unitById(units.length).toSI
   const wells = plotWells({ kind, inputs, wellIds, clock, length_m, ...(smoothing === undefined ? {} : { smoothing }) })
-  return { kind, clock, wells, units, x: timeAxis(kind, wells, units), y: drawdownAxis(kind, wells, units, direction) }
+  const x = timeAxis(kind, wells, units)
+  return {
+    kind,
+    clock,
+    wells,
+    units,
+    x,
+    y: drawdownAxis(kind, wells, units, direction),
+    curve_s: curveTimes(kind, x, clock),
+  }
 }
 
 const xs = (wells: PlotWell[]) => wells.flatMap(({ points }) => points.map(({ x }) => x))
+const CURVE_POINTS = 100
+
+/** Times across the plot, evenly along its axis. */
+function curveTimes(kind: TimePlot['kind'], x: Axis, clock: PlotClock): number[] {
+  const even = Array.from({ length: CURVE_POINTS + 1 }, (_, i) => clock.elapsed(valueAt(x, i / CURVE_POINTS)))
+  if (kind !== 'linear') return even
+  // Drawdown bends most just after pumping begins, where even steps would cut the corner.
+  const first = x.max / 1e4
+  const early = Array.from({ length: CURVE_POINTS }, (_, i) => clock.elapsed(first * 1e4 ** (i / CURVE_POINTS)))
+  return [...even, ...early].sort((a, b) => a - b)
+}
+
 const measured = (wells: PlotWell[]) => wells.flatMap(({ points }) => points.map(({ y }) => y))
 const ys = (wells: PlotWell[]) => [
   ...measured(wells),

@@ -30,8 +30,16 @@ export function readingRows(seriesId: number, { rows, issues }: LogReading): Sto
   }))
 }
 
+/** Lines that carry no reading by nature have a flag and no issue; a reader asks why all the same. */
+const issuesOf = ({ issues, flags }: StoredRow): ReadingRow['issues'] =>
+  issues ??
+  flags
+    .split(',')
+    .filter(Boolean)
+    .map((code) => ({ code, field: 'row', params: {} }))
+
 export function rowView(row: StoredRow, decision: ReadingRow['decision']): ReadingRow {
-  const { seq, fileRow, raw, elapsedS, valueM, taken, issues } = row
+  const { seq, fileRow, raw, elapsedS, valueM, taken } = row
   const included = decision === null ? taken : decision.action === 'take' && elapsedS !== null && valueM !== null
-  return { seq, fileRow, raw, elapsedS, valueM, taken, included, issues: issues ?? [], decision }
+  return { seq, fileRow, raw, elapsedS, valueM, taken, included, issues: issuesOf(row), decision }
 }

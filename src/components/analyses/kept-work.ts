@@ -1,3 +1,4 @@
+import { onScopeDispose, watch, type Ref } from 'vue'
 import { z } from 'zod'
 import { fittedMethod } from '#shared/contracts/analyses.ts'
 import { analysisOptions } from '#shared/contracts/analysis-result.ts'
@@ -34,4 +35,24 @@ export function keepWork(testId: number, works: Record<string, Work>) {
   } catch {
     // A private window may forbid it: the work then holds until the page is closed.
   }
+}
+
+const KEEP_AFTER_MS = 300
+
+/** Writes down unsaved work once it rests, and at the latest when the page goes. */
+export function keepWhileOpen(testId: number, works: Ref<Record<string, Work>>) {
+  let timer: ReturnType<typeof setTimeout> | undefined
+  const keep = () => {
+    clearTimeout(timer)
+    keepWork(testId, works.value)
+  }
+  watch(works, () => {
+    clearTimeout(timer)
+    timer = setTimeout(keep, KEEP_AFTER_MS)
+  })
+  window.addEventListener('pagehide', keep)
+  onScopeDispose(() => {
+    window.removeEventListener('pagehide', keep)
+    keep()
+  })
 }

@@ -14,7 +14,7 @@ interface Candidate {
  * alone, else from the best kept one that does.
  */
 export function useAquifer() {
-  const { snapshot, analyses, present, result } = useWorkbench()
+  const { snapshot, analyses, present, resting } = useWorkbench()
 
   const observedOnly = ({ options }: Candidate) =>
     options.wellIds.every(
@@ -23,7 +23,7 @@ export function useAquifer() {
 
   return computed<AquiferKnown>(() => {
     const open: Candidate[] =
-      present.value && result.value ? [{ options: present.value.options, result: result.value }] : []
+      present.value && resting.value ? [{ options: present.value.options, result: resting.value }] : []
     const kept = analyses.value.filter(isFitted).filter(({ state }) => state !== 'withdrawn' && state !== 'returned')
     const accepted = kept.filter(({ state }) => state === 'accepted')
     const all = [...open, ...accepted, ...[...kept].reverse()].map(({ options, result: found }) => ({

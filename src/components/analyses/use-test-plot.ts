@@ -16,7 +16,7 @@ const sameText = <Value>(make: () => Value) => {
 
 /** The plot that stands, and the drawing that follows the mouse. The plot is made anew only when what it shows changes. */
 export function useTestPlot(smoothing: Ref<number>) {
-  const { snapshot, present, result, plotKind } = useWorkbench()
+  const { snapshot, present, result, moving, plotKind } = useWorkbench()
   const units = useUnits()
   const preferences = usePreferences()
 
@@ -47,7 +47,8 @@ export function useTestPlot(smoothing: Ref<number>) {
 
   const drawing = computed<FitDrawing | null>(() => {
     if (!fit.value) return null
-    return plot.value.kind === 'distance' ? distanceDrawing(plot.value, fit.value) : fitDrawing(plot.value, fit.value)
+    if (plot.value.kind === 'distance') return distanceDrawing(plot.value, fit.value)
+    return fitDrawing(plot.value, fit.value, { withBand: !moving.value })
   })
 
   return { plot, fit, drawing }

@@ -1,15 +1,4 @@
-import {
-  computed,
-  inject,
-  onScopeDispose,
-  provide,
-  ref,
-  shallowRef,
-  watch,
-  type ComputedRef,
-  type InjectionKey,
-  type Ref,
-} from 'vue'
+import { computed, inject, provide, ref, shallowRef, type ComputedRef, type InjectionKey, type Ref } from 'vue'
 import type { Analysis, WorkbenchInputs } from '#shared/contracts/analyses.ts'
 import type { PumpingTest } from '#shared/contracts/pumping-tests.ts'
 import type { AnalysisOptions, AnalysisResult } from '#shared/hydraulics/analysis.ts'
@@ -17,8 +6,9 @@ import { methods, type MethodId } from '#shared/hydraulics/catalogue.ts'
 import { plotOfMethod, type PlotKind } from '#shared/charts/plot-kinds.ts'
 import { useSession } from '../../stores/session.ts'
 import { firstOptions } from './first-options.ts'
-import { keepWork, readWork, type Work } from './kept-work.ts'
+import { keepWhileOpen, readWork, type Work } from './kept-work.ts'
 import { isFitted, outcomeOf, resultOf, type Outcome } from './outcome.ts'
+import { useResting } from './use-resting.ts'
 
 export interface Workbench {
   test: ComputedRef<PumpingTest>
@@ -35,6 +25,9 @@ export interface Workbench {
   editable: ComputedRef<boolean>
   outcome: ComputedRef<Outcome | null>
   result: ComputedRef<AnalysisResult | null>
+  /** The result while nothing moves: what takes longer, or stands aside, follows it and not the mouse. */
+  resting: Readonly<Ref<AnalysisResult | null>>
+  moving: ComputedRef<boolean>
   hasNew: ComputedRef<boolean>
   isChanged(key: string): boolean
   select(key: string | null): void
@@ -48,7 +41,6 @@ export interface Workbench {
 
 const key: InjectionKey<Workbench> = Symbol('workbench')
 const NEW = 'new'
-const KEEP_AFTER_MS = 300
 
 interface Given {
   test: () => PumpingTest
@@ -121,6 +113,9 @@ export function provideWorkbench(given: Given): Workbench {
 
   keepWhileOpen(testId, works)
 
+  const result = computed(() => resultOf(outcome.value))
+  const resting = useResting(result)
+
   const bench: Workbench = {
     test: computed(given.test),
     snapshot,
@@ -132,7 +127,9 @@ export function provideWorkbench(given: Given): Workbench {
     changed: computed(() => unsaved.value !== null),
     editable,
     outcome,
-    result: computed(() => resultOf(outcome.value)),
+    result,
+    resting,
+    moving: computed(() => resting.value !== result.value),
     hasNew: computed(() => NEW in works.value),
     isChanged: (at) => at in works.value,
     select,
@@ -147,24 +144,6 @@ export function provideWorkbench(given: Given): Workbench {
   if (selected.value !== null) select(selected.value)
   else if (mayCreate.value && canStart) start('cooper-jacob')
   return bench
-}
-
-/** Writes down unsaved work once it rests, and at the latest when the page goes. */
-function keepWhileOpen(testId: number, works: Ref<Record<string, Work>>) {
-  let timer: ReturnType<typeof setTimeout> | undefined
-  const keep = () => {
-    clearTimeout(timer)
-    keepWork(testId, works.value)
-  }
-  watch(works, () => {
-    clearTimeout(timer)
-    timer = setTimeout(keep, KEEP_AFTER_MS)
-  })
-  window.addEventListener('pagehide', keep)
-  onScopeDispose(() => {
-    window.removeEventListener('pagehide', keep)
-    keep()
-  })
 }
 
 /** The workbench around a component. @throws when used outside it */

@@ -78,6 +78,7 @@ describe('A log is read row by row and nothing is dropped', () => {
     expect(total).toBe(8)
     expect(items.map(({ taken }) => taken)).toEqual([false, true, false, false, false, false, true, true])
     const codes = items.map(({ issues }) => issues.map(({ code }) => code))
+    expect([codes[0], codes[4]]).toEqual([['readings/preamble'], ['readings/blank-line']])
     expect(codes[2]).toContain('readings/value-missing')
     expect(codes[3]).toContain('readings/time-unreadable')
     expect(codes[5]).toContain('readings/sentinel')
