@@ -14,6 +14,8 @@ export interface IntervalScale {
 }
 
 const PADDING = 0.06
+/** Decades that are shown at least: between 1, 2, 5 and 10 no gap is wider, so that there is always a tick. */
+const LEAST_SPAN = 0.45
 
 const decades = (low: number, high: number) => {
   const first = Math.floor(low)
@@ -39,7 +41,7 @@ const within = (low: number, high: number) => (value: number) => {
 export function intervalScale(values: readonly number[]): IntervalScale {
   const logs = values.map(Math.log10)
   const [least, most] = [Math.min(...logs), Math.max(...logs)]
-  const padding = Math.max(PADDING * (most - least), 0.1)
+  const padding = Math.max(PADDING * (most - least), (LEAST_SPAN - (most - least)) / 2)
   const [low, high] = [least - padding, most + padding]
   const nine = decades(low, high).flatMap((power) => [1, 2, 3, 4, 5, 6, 7, 8, 9].map((n) => Number(`${n}e${power}`)))
   return {

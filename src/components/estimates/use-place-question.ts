@@ -16,9 +16,9 @@ const read = <Value>(
 
 /** `-38.4172,-21.1840`: latitude first, as coordinates are typed. Null for anything else. */
 export function placeOf(text: unknown): { lat: number; lon: number } | null {
-  const [lat, lon, ...rest] = String(text).split(',').map(Number)
-  const possible = lat !== undefined && lon !== undefined && rest.length === 0
-  return possible && Math.abs(lat) <= 90 && Math.abs(lon) <= 180 ? { lat, lon } : null
+  const found = /^(-?\d+(?:\.\d+)?),(-?\d+(?:\.\d+)?)$/.exec(String(text))
+  const [lat, lon] = [Number(found?.[1]), Number(found?.[2])]
+  return Math.abs(lat) <= 90 && Math.abs(lon) <= 180 ? { lat, lon } : null
 }
 
 /** Centimetres are enough in an address, which lengths typed in feet would fill with digits. */

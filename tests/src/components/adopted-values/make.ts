@@ -1,0 +1,31 @@
+import type { AdoptedValue } from '#shared/contracts/adopted-values.ts'
+
+/** T of 1e-3 m²/s, which is 86.4 m²/d, with an error of 0.2 of the logarithm. */
+export const makeAdoptedValue = (overrides: Partial<AdoptedValue> = {}): AdoptedValue => ({
+  id: 5,
+  wellId: 21,
+  wellCode: 'V-0021',
+  lon: -21.2,
+  lat: -38.4,
+  unitId: 1,
+  unitName: 'Tarrow Gravels',
+  quantity: 'T',
+  storageClass: null,
+  value: 1e-3,
+  low: 3.98e-4,
+  high: 2.51e-3,
+  log10Error: 0.2,
+  evidence: 'fair',
+  method: 'theis',
+  thicknessBasis: 'aquifer',
+  composite: false,
+  usable: true,
+  testYear: 1996,
+  pumpingTestId: 66,
+  analysisId: 74,
+  inputsChanged: false,
+  validFrom: '2020-05-04T10:00:00.000Z',
+  validTo: null,
+  adoptedBy: 'Reviewing hydrogeologist',
+  ...overrides,
+})
