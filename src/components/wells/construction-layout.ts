@@ -31,7 +31,7 @@ export interface Layout {
 const LINE_PX = 15
 const GROUND_PX = 34
 
-/** A round step that gives four to eight marks down to the depth. `unit` is metres in one of the reader's units. */
+/** A round step that gives three to six marks down to the depth. `unit` is metres in one of the reader's units. */
 function tickStep(depthM: number, unit: number): number {
   const rough = depthM / unit / 5
   const power = 10 ** Math.floor(Math.log10(rough))
