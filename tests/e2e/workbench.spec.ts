@@ -102,7 +102,7 @@ test('A log becomes a value of the regional table, from the file to the reviewer
   baseURL,
   watch,
 }) => {
-  test.setTimeout(120_000)
+  test.setTimeout(180_000)
   watch.expect(/400/)
   await signIn(page, 'analyst')
   const observation = await enterTest(page)
@@ -155,14 +155,19 @@ test('The line is drawn by hand with the keyboard, and goes back to least square
   await expect(page.getByText('Line by least squares')).toBeVisible()
 })
 
-/** A seeded test with readings and a stop, with a new straight line on it. */
-async function openTest(page: Page) {
+/** A seeded test with three observation wells. */
+async function testAddress(page: Page): Promise<string> {
   const id = await page.evaluate(async () => {
     const answer = await fetch('/api/pumping-tests?kind=constant-rate&state=accepted&limit=50')
     const { items } = (await answer.json()) as { items: { id: number; wellCount: number }[] }
     return items.find(({ wellCount }) => wellCount >= 4)?.id
   })
-  await page.goto(`/pumping-tests/${id}`)
+  return `/pumping-tests/${id}`
+}
+
+/** Such a test with a new straight line on it. */
+async function openTest(page: Page) {
+  await page.goto(await testAddress(page))
   await page.getByRole('button', { name: 'New analysis' }).click()
   await page.getByRole('listitem').filter({ hasText: 'Time–drawdown line' }).click()
   await expect(page.getByRole('slider', { name: 'Window begins at' })).toBeVisible()
@@ -194,17 +199,22 @@ test('Every plot of a test is drawn, read as a table and saved', async ({ page }
   }
 })
 
-test('The pages of a test fit the narrowest window and the dark theme', async ({ page }) => {
-  test.setTimeout(120_000)
-  await signIn(page, 'analyst')
-  await openTest(page)
-  const address = new URL(page.url()).pathname
-  await page.setViewportSize({ width: 320, height: 700 })
-  await page.emulateMedia({ colorScheme: 'dark' })
-  for (const path of ['/pumping-tests', '/pumping-tests/new', address, `${address}/readings`, `${address}/edit`]) {
-    await page.goto(path)
+const pages: Record<string, (address: string) => string> = {
+  'list of tests': () => '/pumping-tests',
+  'form of a new test': () => '/pumping-tests/new',
+  'form of a test': (address) => `${address}/edit`,
+  'readings of a test': (address) => `${address}/readings`,
+  workbench: (address) => address,
+}
+
+for (const [name, pathOf] of Object.entries(pages)) {
+  test(`The ${name} fits the narrowest window in the dark theme`, async ({ page }) => {
+    await signIn(page, 'analyst')
+    await page.setViewportSize({ width: 320, height: 700 })
+    await page.emulateMedia({ colorScheme: 'dark' })
+    await page.goto(pathOf(await testAddress(page)))
     await expect(page.getByRole('heading', { level: 1 })).toBeVisible()
     await expectNoSidewaysScroll(page)
     await expectAccessible(page)
-  }
-})
+  })
+}
