@@ -13,7 +13,7 @@ export default defineConfig({
   workers: 2,
   retries: 0,
   // Generous, because the machine that runs them may be busy; no test waits for a time.
-  timeout: 120_000,
+  timeout: 300_000,
   expect: { timeout: 10_000 },
   use: {
     viewport: { width: 1440, height: 900 },

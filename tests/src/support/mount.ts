@@ -61,9 +61,10 @@ export async function mountWith(given: object, { props = {}, slots = {}, session
   const host = document.createElement('div')
   document.body.append(host)
   const root = { render: () => h(VApp, null, { default: () => h(component, props, slots as never) }) }
+  // As in the program: who is signed in is known before a page is set up.
+  enter(session ?? makeSession())
   const wrapper = mount(root, { attachTo: host, global: { plugins: list as never } })
   unmounts.push(() => wrapper.unmount())
-  enter(session ?? makeSession())
   await router.push(path)
   await flushPromises()
   return wrapper.findComponent(component)
