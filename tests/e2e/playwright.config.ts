@@ -14,7 +14,7 @@ export default defineConfig({
   retries: 0,
   // Generous, because the machine that runs them may be busy; no test waits for a time.
   timeout: 300_000,
-  expect: { timeout: 10_000 },
+  expect: { timeout: 30_000 },
   use: {
     viewport: { width: 1440, height: 900 },
     locale: 'en-GB',
