@@ -1,4 +1,4 @@
-import { resample, type PathStep, type ScreenPoint } from './screen-path.ts'
+import { resample, visibleRuns, type Box, type PathStep, type ScreenPoint } from './screen-path.ts'
 
 /** Distance between the places of letters, pixels. */
 const STEP = 4
@@ -8,32 +8,28 @@ const MOST_BEND = 1.1
 const FAR_PX = 700
 /** Names keep this far from each other. */
 const APART_PX = 34
+/** Steps to either side over which wiggles are smoothed. */
+const REACH = 8
 
-export interface Window {
-  left: number
-  top: number
-  right: number
-  bottom: number
+/** Sums of all that came before: the sum of any stretch is then one subtraction. */
+function runningSums(values: readonly number[]): number[] {
+  const sums = [0]
+  for (const value of values) sums.push(sums.at(-1)! + value)
+  return sums
 }
 
 /** The path without its small wiggles, so that letters do not dance. */
 function smoothed(points: readonly ScreenPoint[]): PathStep[] {
   const fine = resample(points, STEP)
-  const reach = 8
+  const [xs, ys] = [runningSums(fine.map(({ x }) => x)), runningSums(fine.map(({ y }) => y))]
   const soft = fine.map((_, i): ScreenPoint => {
-    const near = fine.slice(Math.max(0, i - reach), i + reach + 1)
-    return [
-      near.reduce((sum, { x }) => sum + x, 0) / near.length,
-      near.reduce((sum, { y }) => sum + y, 0) / near.length,
-    ]
+    const [from, to] = [Math.max(0, i - REACH), Math.min(fine.length, i + REACH + 1)]
+    return [(xs[to]! - xs[from]!) / (to - from), (ys[to]! - ys[from]!) / (to - from)]
   })
   return resample(soft, STEP)
 }
 
 const turnTo = (a: number, b: number) => Math.atan2(Math.sin(b - a), Math.cos(b - a))
-
-const bend = (steps: readonly PathStep[]) =>
-  steps.reduce((sum, { angle }, i) => sum + (i === 0 ? 0 : Math.abs(turnTo(steps[i - 1]!.angle, angle))), 0)
 
 /** Whether a name would come too close to one that is written already. */
 const meets = (stretch: readonly PathStep[], taken: readonly PathStep[]) =>
@@ -47,6 +43,27 @@ function upright(steps: PathStep[]): PathStep[] {
   return [...steps].reverse().map(({ x, y, angle }) => ({ x, y, angle: angle + Math.PI }))
 }
 
+interface Candidate {
+  stretch: PathStep[]
+  score: number
+}
+
+/** All stretches of a run that bend little enough, each with how far it is from straight and central. */
+function candidates(steps: readonly PathStep[], count: number, window: Box): Candidate[] {
+  const bends = runningSums(steps.map(({ angle }, i) => (i === 0 ? 0 : Math.abs(turnTo(steps[i - 1]!.angle, angle)))))
+  const middle = { x: (window.left + window.right) / 2, y: (window.top + window.bottom) / 2 }
+  const inside = ({ x, y }: PathStep) => x > window.left && x < window.right && y > window.top && y < window.bottom
+  const found: Candidate[] = []
+  for (let i = 0; i + count <= steps.length; i += 4) {
+    const bend = bends[i + count]! - bends[i + 1]!
+    if (bend > MOST_BEND || !inside(steps[i]!) || !inside(steps[i + count - 1]!)) continue
+    const { x, y } = steps[i + (count >> 1)]!
+    const score = bend + Math.hypot(x - middle.x, y - middle.y) / FAR_PX
+    found.push({ stretch: steps.slice(i, i + count), score })
+  }
+  return found
+}
+
 /**
  * Where a name of this width fits along a path: the straightest stretch near the middle of the window, as steps from
  * the name's beginning to its end. Null where none is calm enough.
@@ -54,23 +71,14 @@ function upright(steps: PathStep[]): PathStep[] {
 export function calmStretch(
   points: readonly ScreenPoint[],
   width: number,
-  { window, taken = [] }: { window: Window; taken?: readonly PathStep[] },
+  { window, taken = [] }: { window: Box; taken?: readonly PathStep[] },
 ): PathStep[] | null {
-  const steps = smoothed(points)
   const count = Math.ceil(width / STEP)
-  const inside = ({ x, y }: PathStep) => x > window.left && x < window.right && y > window.top && y < window.bottom
-  const middle = { x: (window.left + window.right) / 2, y: (window.top + window.bottom) / 2 }
-  let best: { stretch: PathStep[]; score: number } | null = null
-  for (let i = 0; i + count <= steps.length; i += 4) {
-    const stretch = steps.slice(i, i + count)
-    if (!inside(stretch[0]!) || !inside(stretch.at(-1)!)) continue
-    const bent = bend(stretch)
-    const centre = stretch[count >> 1]!
-    const score = bent + Math.hypot(centre.x - middle.x, centre.y - middle.y) / FAR_PX
-    if (bent > MOST_BEND || (best !== null && score >= best.score) || meets(stretch, taken)) continue
-    best = { stretch, score }
-  }
-  return best && upright(best.stretch)
+  const best = visibleRuns(points, window)
+    .flatMap((run) => candidates(smoothed(run), count, window))
+    .sort((a, b) => a.score - b.score)
+    .find(({ stretch }) => !meets(stretch, taken))
+  return best ? upright(best.stretch) : null
 }
 
 /** The place of a letter whose middle lies `along` pixels from the beginning of a stretch. */

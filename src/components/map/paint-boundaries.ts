@@ -1,7 +1,8 @@
 import type { Boundary } from '#shared/contracts/map.ts'
 import type { MapColours } from './map-colours.ts'
 import type { MapFrame } from './map-frame.ts'
-import { resample, type ScreenPoint } from './screen-path.ts'
+import { frameBox, tracePath } from './paint-lines.ts'
+import { resample, visibleRuns, type ScreenPoint } from './screen-path.ts'
 
 type Kind = Boundary['kind']
 
@@ -40,12 +41,6 @@ function paintTicks(context: CanvasRenderingContext2D, points: readonly ScreenPo
   context.stroke()
 }
 
-function strokePoints(context: CanvasRenderingContext2D, points: readonly ScreenPoint[]) {
-  context.beginPath()
-  for (const [x, y] of points) context.lineTo(x, y)
-  context.stroke()
-}
-
 export function paintBoundaries(
   context: CanvasRenderingContext2D,
   frame: MapFrame,
@@ -56,15 +51,17 @@ export function paintBoundaries(
   context.lineJoin = 'round'
   for (const { kind, path } of boundaries) {
     const { dash, width, colour, tickEvery } = boundaryStyles[kind]
-    const points = path.map(([lon, lat]) => frame.project(lon, lat))
+    tracePath(context, frame, path)
     context.strokeStyle = colours.sheet
     context.lineWidth = width + 2.5
-    strokePoints(context, points)
+    context.stroke()
     context.strokeStyle = colour(colours)
     context.lineWidth = width
     context.setLineDash(dash)
-    strokePoints(context, points)
+    context.stroke()
     context.setLineDash([])
-    if (tickEvery !== null) paintTicks(context, points, tickEvery)
+    const points = path.map(([lon, lat]) => frame.project(lon, lat))
+    if (tickEvery === null) continue
+    for (const run of visibleRuns(points, frameBox(frame))) paintTicks(context, run, tickEvery)
   }
 }

@@ -1,15 +1,29 @@
 import type { AquiferUnit, Stream } from '#shared/contracts/map.ts'
 import type { MapColours } from './map-colours.ts'
 import type { MapFrame } from './map-frame.ts'
+import { visibleRuns, type Box } from './screen-path.ts'
+
+/** Wider than any line, so that none is cut off at the edge. */
+const MARGIN = 10
 
 type Path = readonly (readonly [lon: number, lat: number])[]
 
+/** What a path is cut to before it is drawn. */
+export const frameBox = ({ width, height }: MapFrame): Box => ({
+  left: -MARGIN,
+  top: -MARGIN,
+  right: width + MARGIN,
+  bottom: height + MARGIN,
+})
+
 export function tracePath(context: CanvasRenderingContext2D, frame: MapFrame, path: Path) {
+  const points = path.map(([lon, lat]) => frame.project(lon, lat))
   context.beginPath()
-  for (const [i, [lon, lat]] of path.entries()) {
-    const [x, y] = frame.project(lon, lat)
-    if (i === 0) context.moveTo(x, y)
-    else context.lineTo(x, y)
+  for (const run of visibleRuns(points, frameBox(frame))) {
+    for (const [i, [x, y]] of run.entries()) {
+      if (i === 0) context.moveTo(x, y)
+      else context.lineTo(x, y)
+    }
   }
 }
 

@@ -8,17 +8,24 @@ import type { PathStep } from './screen-path.ts'
 const LIFT_PX = 11
 const EDGE_PX = 30
 
-type Write = 'strokeText' | 'fillText'
+interface Placed extends PathStep {
+  letter: string
+}
 
-function writeAlong(context: CanvasRenderingContext2D, name: string, stretch: readonly PathStep[], write: Write) {
-  for (const [i, letter] of [...name].entries()) {
+function placeLetters(context: CanvasRenderingContext2D, name: string, stretch: readonly PathStep[]): Placed[] {
+  return [...name].map((letter, i) => {
     // Measured from the beginning, so that kerning is kept.
     const end = context.measureText(name.slice(0, i + 1)).width
-    const { x, y, angle } = letterPlace(stretch, end - context.measureText(letter).width / 2)
+    return { letter, ...letterPlace(stretch, end - context.measureText(letter).width / 2) }
+  })
+}
+
+function write(context: CanvasRenderingContext2D, letters: readonly Placed[], how: 'strokeText' | 'fillText') {
+  for (const { letter, x, y, angle } of letters) {
     context.save()
     context.translate(x, y)
     context.rotate(angle)
-    context[write](letter, 0, -LIFT_PX)
+    context[how](letter, 0, -LIFT_PX)
     context.restore()
   }
 }
@@ -46,8 +53,9 @@ export function paintUnitNames(
     const stretch = calmStretch(points, context.measureText(name).width, { window, taken: written })
     if (!stretch) continue
     written.push(...stretch)
+    const letters = placeLetters(context, name, stretch)
     // The whole halo first: that of a letter would cover the one before it.
-    writeAlong(context, name, stretch, 'strokeText')
-    writeAlong(context, name, stretch, 'fillText')
+    write(context, letters, 'strokeText')
+    write(context, letters, 'fillText')
   }
 }

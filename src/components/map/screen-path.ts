@@ -7,6 +7,32 @@ export interface PathStep {
   angle: number
 }
 
+export interface Box {
+  left: number
+  top: number
+  right: number
+  bottom: number
+}
+
+const outside = ([ax, ay]: ScreenPoint, [bx, by]: ScreenPoint, { left, top, right, bottom }: Box) =>
+  (ax < left && bx < left) || (ax > right && bx > right) || (ay < top && by < top) || (ay > bottom && by > bottom)
+
+/** The parts of a path that may be seen in a box: close to the map, most of an outline lies far outside the window. */
+export function visibleRuns(points: readonly ScreenPoint[], box: Box): ScreenPoint[][] {
+  const runs: ScreenPoint[][] = []
+  let open: ScreenPoint[] | null = null
+  for (let i = 1; i < points.length; i += 1) {
+    const [a, b] = [points[i - 1]!, points[i]!]
+    if (outside(a, b, box)) {
+      open = null
+      continue
+    }
+    if (!open) runs.push((open = [a]))
+    open.push(b)
+  }
+  return runs
+}
+
 /** Points at equal distances along a path on the screen, beginning half a step in. */
 export function resample(points: readonly ScreenPoint[], step: number): PathStep[] {
   const steps: PathStep[] = []

@@ -1,6 +1,6 @@
 import { describe, expect, it } from 'vitest'
 import { calmStretch, letterPlace } from '../../../src/components/map/label-path.ts'
-import { distanceToPath, resample, type ScreenPoint } from '../../../src/components/map/screen-path.ts'
+import { distanceToPath, resample, visibleRuns, type ScreenPoint } from '../../../src/components/map/screen-path.ts'
 
 const window = { left: 0, top: 0, right: 1000, bottom: 600 }
 const line: ScreenPoint[] = [
@@ -93,5 +93,55 @@ describe('a name along a path', () => {
     const stretch = calmStretch(line, 100, { window })!
     expect(letterPlace(stretch, 10).x - letterPlace(stretch, 4).x).toBeCloseTo(6)
     expect(letterPlace(stretch, 1e9)).toEqual(stretch.at(-1))
+  })
+})
+
+describe('the visible parts of a path', () => {
+  const box = { left: 0, top: 0, right: 100, bottom: 100 }
+
+  it('are all of a path inside, and none of one outside', () => {
+    const inside: ScreenPoint[] = [
+      [10, 10],
+      [90, 90],
+    ]
+    expect(visibleRuns(inside, box)).toEqual([inside])
+    expect(
+      visibleRuns(
+        [
+          [-20, 10],
+          [-10, 90],
+        ],
+        box,
+      ),
+    ).toEqual([])
+    expect(visibleRuns([[50, 50]], box)).toEqual([])
+  })
+
+  it('hold a segment that only crosses, and part where the path leaves', () => {
+    expect(
+      visibleRuns(
+        [
+          [-50, 50],
+          [150, 60],
+        ],
+        box,
+      ),
+    ).toHaveLength(1)
+    const out: ScreenPoint[] = [
+      [50, 50],
+      [150, 50],
+      [150, 40],
+      [50, 40],
+    ]
+    expect(visibleRuns(out, box)).toEqual([
+      [
+        [50, 50],
+        [150, 50],
+      ],
+      [
+        [150, 40],
+        [50, 40],
+      ],
+    ])
   })
 })
