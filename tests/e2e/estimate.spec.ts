@@ -109,7 +109,6 @@ const views = [
 ] as const
 
 test('The sheet is accessible and fits, light and dark, wide and narrow', async ({ page }) => {
-  test.slow()
   await signIn(page, 'reader')
   for (const { colorScheme, width } of views) {
     await page.emulateMedia({ colorScheme, reducedMotion: 'reduce' })

@@ -133,7 +133,6 @@ const views = [
 // Few rows: axe looks at every cell, and all rows are alike.
 for (const path of ['/regional-table?quantity=T&evidence=firm&from=2012', '/reviews'])
   test(`${path} is accessible and fits, light and dark, wide and narrow`, async ({ page }) => {
-    test.slow()
     await signIn(page, 'reviewer')
     await page.goto(path)
     await expect(page.getByText(/^Fetching /)).toHaveCount(0)
