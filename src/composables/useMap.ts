@@ -11,6 +11,8 @@ export interface MapMarks {
   place: LonLat | null
   /** The line is the wider, the larger the weight; weights add up to one. */
   contributions: readonly (LonLat & { weight: number })[]
+  /** The sheet draws a circle around the place itself; the legend says so. */
+  radius?: boolean
 }
 
 export interface MapHandle {

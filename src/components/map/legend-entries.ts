@@ -1,3 +1,4 @@
+import type { MapMarks } from '../../composables/useMap.ts'
 import type { LayerId, WellFilter } from '../../stores/map.ts'
 import type { OnMap } from './in-view.ts'
 import { boundaryNames } from './paint-boundaries.ts'
@@ -15,6 +16,9 @@ export type LegendSymbolId =
   | 'barrier'
   | 'coast'
   | 'constant-head'
+  | 'place'
+  | 'contribution'
+  | 'radius'
 
 export interface LegendEntry {
   id: string
@@ -73,9 +77,27 @@ function lines({ streams, units, boundaries }: OnMap): LegendEntry[] {
   ]
 }
 
+const mark = (symbol: LegendSymbolId, name: string): LegendEntry => ({
+  id: symbol,
+  symbol,
+  name,
+  filter: null,
+  layer: null,
+})
+
+/** What the open sheet draws; it comes and goes with the sheet, so there is nothing to click. */
+function markEntries(marks: MapMarks | null): LegendEntry[] {
+  if (!marks?.place) return []
+  return [
+    mark('place', 'this place'),
+    ...(marks.contributions.length > 0 ? [mark('contribution', 'carried the estimate, wider: more')] : []),
+    ...(marks.radius ? [mark('radius', 'radius of tests nearby')] : []),
+  ]
+}
+
 /** What the legend says: everything in view, and nothing else. */
-export function legendEntries(visible: OnMap, filter: WellFilter | null): LegendEntry[] {
+export function legendEntries(visible: OnMap, filter: WellFilter | null, marks: MapMarks | null = null): LegendEntry[] {
   const grouped = visible.clusters.length > 0 ? clusterEntries.map(filtering) : []
   const single = visible.wells.length > 0 || (filter && grouped.length === 0) ? singleWells(visible, filter) : []
-  return [...single, ...grouped, ...lines(visible)]
+  return [...single, ...grouped, ...lines(visible), ...markEntries(marks)]
 }

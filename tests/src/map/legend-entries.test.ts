@@ -35,3 +35,23 @@ describe('the legend', () => {
     expect(names(visible, null)).toEqual(['no value yet', 'planned', 'wells, arc: with a value', 'without a value'])
   })
 })
+
+describe('what an open sheet draws', () => {
+  const place = { lon: -21.2, lat: -38.4 }
+  const named = (marks: Parameters<typeof legendEntries>[2]) => names(makeOnMap(), null, marks)
+
+  it('is in the legend while it is on the map', () => {
+    expect(named({ place, contributions: [] })).toEqual(['this place'])
+    expect(named({ place, contributions: [{ ...place, weight: 1 }], radius: true })).toEqual([
+      'this place',
+      'carried the estimate, wider: more',
+      'radius of tests nearby',
+    ])
+    expect(named({ place: null, contributions: [] })).toEqual([])
+  })
+
+  it('cannot be switched off there', () => {
+    const [entry] = legendEntries(makeOnMap(), null, { place, contributions: [] })
+    expect(entry).toMatchObject({ filter: null, layer: null })
+  })
+})
