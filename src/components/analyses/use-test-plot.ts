@@ -1,4 +1,5 @@
-import { computed, type ComputedRef } from 'vue'
+import { computed, type ComputedRef, type Ref } from 'vue'
+import type { Fit } from '#shared/charts/fit-band.ts'
 import { distanceDrawing, distancePlot } from '#shared/charts/distance-plot.ts'
 import { fitDrawing, type FitDrawing } from '#shared/charts/fit-drawing.ts'
 import { timePlot } from '#shared/charts/time-plot.ts'
@@ -6,9 +7,8 @@ import type { TestPlot } from '#shared/charts/test-chart.ts'
 import { useUnits } from '../../composables/useUnits.ts'
 import { usePreferences } from '../../stores/preferences.ts'
 import { useWorkbench } from './use-workbench.ts'
-import type { Fit } from '#shared/charts/fit-band.ts'
-import type { Ref } from 'vue'
 
+/** A computed value that stays the same object while it says the same. */
 const sameText = <Value>(make: () => Value) => {
   const text = computed(() => JSON.stringify(make()))
   return computed(() => JSON.parse(text.value) as Value)
@@ -20,9 +20,12 @@ export function useTestPlot(smoothing: Ref<number>) {
   const units = useUnits()
   const preferences = usePreferences()
 
-  const wellIds = sameText(
-    () => present.value?.options.wellIds ?? snapshot.value.inputs.series.map(({ wellId }) => wellId),
-  )
+  /** The wells of the analysis; all of them without one, or where wells are compared by an analysis of a single one. */
+  const wellIds = sameText(() => {
+    const all = snapshot.value.inputs.series.map(({ wellId }) => wellId)
+    const compares = present.value?.method === 'distance-drawdown'
+    return plotKind.value === 'distance' && !compares ? all : (present.value?.options.wellIds ?? all)
+  })
   const history = sameText(() => ({
     phase: present.value?.options.phase ?? 'pumping',
     rateHistory: present.value?.options.rateHistory ?? 'superposition',

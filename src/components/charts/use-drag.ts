@@ -1,7 +1,7 @@
 import { onScopeDispose } from 'vue'
 
 /** A pointer that drags one element; positions are given at most once a frame, in pixels of the window. */
-export function useDrag(moved: (at: { x: number; y: number }) => void, ended: () => void = () => undefined) {
+export function useDrag(moved: (at: { x: number; y: number }) => void) {
   let frame = 0
   let last = { x: 0, y: 0 }
   let held: number | null = null
@@ -26,12 +26,10 @@ export function useDrag(moved: (at: { x: number; y: number }) => void, ended: ()
   function up(event: PointerEvent) {
     if (event.pointerId !== held) return
     held = null
-    if (frame) {
-      cancelAnimationFrame(frame)
-      frame = 0
-      moved(last)
-    }
-    ended()
+    if (frame === 0) return
+    cancelAnimationFrame(frame)
+    frame = 0
+    moved(last)
   }
 
   onScopeDispose(() => cancelAnimationFrame(frame))
