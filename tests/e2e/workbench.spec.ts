@@ -102,7 +102,6 @@ test('A log becomes a value of the regional table, from the file to the reviewer
   baseURL,
   watch,
 }) => {
-  test.setTimeout(180_000)
   watch.expect(/400/)
   await signIn(page, 'analyst')
   const observation = await enterTest(page)
