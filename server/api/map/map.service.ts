@@ -2,14 +2,18 @@ import type { MapWellQuery, MapWells } from '#shared/contracts/map.ts'
 import type { Viewer } from '#shared/contracts/permissions.ts'
 import { fromMercatorInts } from '#shared/geodesy/index.ts'
 import type { Deps } from '../../deps.ts'
-import { clusterWells, listMapWells } from './map.repository.ts'
+import { groupFilteredWells, groupWells, listMapWells } from './map.repository.ts'
 
 /** Up to this many wells a view shows each of them; more are grouped. */
 const mostSingle = 1_200
 /** Discs in a cell of 64 pixels before they hide each other: then they are grouped too. */
 const mostInCell = 30
 
-type Cells = Awaited<ReturnType<typeof clusterWells>>
+type Group = Awaited<ReturnType<typeof groupWells>>[number]
+type Cells = (Group & { valued: number })[]
+
+const isFiltered = ({ only, from, below }: MapWellQuery) =>
+  only !== undefined || from !== undefined || below !== undefined
 
 export function createMapService({ connection: { db } }: Deps) {
   /** A well alone in its cell is shown as itself among the groups. */
@@ -18,9 +22,23 @@ export function createMapService({ connection: { db } }: Deps) {
     return ids.length === 0 ? [] : listMapWells(db, viewer, query, ids)
   }
 
+  /** Few wells have a value: counting those apart spares the join of all others. */
+  async function cellsOf(viewer: Viewer, query: MapWellQuery): Promise<Cells> {
+    if (isFiltered(query)) {
+      const groups = await groupFilteredWells(db, viewer, query)
+      return groups.map((group) => ({ ...group, valued: query.only === 'none' ? 0 : group.count }))
+    }
+    const [groups, valued] = await Promise.all([
+      groupWells(db, viewer, query),
+      query.unitId === undefined ? [] : groupFilteredWells(db, viewer, { ...query, only: 'valued' }),
+    ])
+    const counts = new Map(valued.map(({ cell, count }) => [cell, count]))
+    return groups.map((group) => ({ ...group, valued: counts.get(group.cell) ?? 0 }))
+  }
+
   return {
     async wells(viewer: Viewer, query: MapWellQuery): Promise<MapWells> {
-      const cells = await clusterWells(db, viewer, query)
+      const cells = await cellsOf(viewer, query)
       const total = cells.reduce((sum, { count }) => sum + count, 0)
       const valued = cells.reduce((sum, cell) => sum + cell.valued, 0)
       const grouped = total > mostSingle || tooDense(cells, query.zoom)

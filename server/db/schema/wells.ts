@@ -41,7 +41,8 @@ export const wells = mysqlTable(
   },
   (table) => [
     uniqueIndex('wells_code').on(table.code),
-    index('wells_mercator').on(table.mx, table.my, table.visibility, table.embargoUntil),
+    // Everything that the map's groups and `readable` ask for, so that a grouped query reads the index alone.
+    index('wells_mercator').on(table.mx, table.my, table.visibility, table.embargoUntil, table.createdBy),
   ],
 )
 
