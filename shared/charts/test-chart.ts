@@ -6,7 +6,7 @@ import { CHART_FONT, CHART_FONT_SIZE, faded, type ChartTheme } from './chart-the
 import type { DistancePlot } from './distance-plot.ts'
 import type { FitDrawing } from './fit-drawing.ts'
 import { dotSize, fitSeries, residualLimit } from './fit-series.ts'
-import type { PlotFrame } from './plot-frame.ts'
+import type { Margins, PlotFrame } from './plot-frame.ts'
 import { symbolOf, type PlotPoint, type PlotWell } from './plot-wells.ts'
 import type { TimePlot } from './time-plot.ts'
 
@@ -37,7 +37,7 @@ export function testChart(
 export function standingChart(plot: TestPlot, frame: PlotFrame, theme: ChartTheme): EChartsOption {
   return {
     ...common(theme),
-    grid: [{ ...frame.plot, containLabel: false }],
+    grid: [exactly(frame.plot)],
     xAxis: [xAxisOption(plot.x, theme)],
     yAxis: [yOption(plot, frame, theme)],
     tooltip: tooltip(plot, theme),
@@ -79,10 +79,10 @@ const common = (theme: ChartTheme) => ({
   textStyle: { fontFamily: CHART_FONT, fontSize: CHART_FONT_SIZE, color: theme.ink },
 })
 
-const gridsOf = ({ plot, strip }: PlotFrame) => [
-  { ...plot, containLabel: false },
-  ...(strip ? [{ ...strip, containLabel: false }] : []),
-]
+/** Long labels must not push the plot aside: layers and handles stand in the same frame. */
+const exactly = (margins: Margins) => ({ ...margins, containLabel: false, outerBoundsMode: 'none' as const })
+
+const gridsOf = ({ plot, strip }: PlotFrame) => [exactly(plot), ...(strip ? [exactly(strip)] : [])]
 
 const yOption = ({ y }: TestPlot, frame: PlotFrame, theme: ChartTheme) => yAxisOption(y, theme, frame.plot.left - 18)
 

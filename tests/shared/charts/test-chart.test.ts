@@ -6,7 +6,7 @@ import type { EChartsOption } from 'echarts'
 import { describe, expect, it } from 'vitest'
 import type { ChartTheme } from '#shared/charts/chart-theme.ts'
 import { fitDrawing } from '#shared/charts/fit-drawing.ts'
-import { plotFrame } from '#shared/charts/plot-frame.ts'
+import { plotFrame, xPixel, yPixel } from '#shared/charts/plot-frame.ts'
 import { movedChart, movingChart, standingChart, testChart } from '#shared/charts/test-chart.ts'
 import { makeFit, makePlot, makeTestInputs } from './make-plot.ts'
 
@@ -87,6 +87,26 @@ describe('The two layers of the page', () => {
   it('lose the analysis when there is none', () => {
     const gone = drawn(movingChart(plot, fitDrawing(plot, fit), frame, theme), movedChart(plot, null, frame, theme))
     expect(gone).not.toContain('log cycle')
+  })
+})
+
+describe('Everything on a chart', () => {
+  it('stands where its frame says, however long the labels of the axes are', () => {
+    const small = makeTestInputs()
+    small.series[0]!.drawdown_m = small.series[0]!.drawdown_m.map((drawdown) => drawdown * 1e-4)
+    for (const kind of ['semi-log', 'log-log'] as const) {
+      const chart = makePlot({ kind, inputs: small })
+      const svg = drawn(standingChart(chart, frame, theme))
+      const dots = [...svg.matchAll(/matrix\(3\.5,0,0,3\.5,([\d.]+),([\d.]+)\)/g)].map(([, x, y]) => [
+        Number(x),
+        Number(y),
+      ])
+      expect(dots).toHaveLength(chart.wells[0]!.points.length)
+      chart.wells[0]!.points.forEach(({ x, y }, i) => {
+        expect(Math.abs(dots[i]![0]! - xPixel(frame, chart.x, x))).toBeLessThan(0.01)
+        expect(Math.abs(dots[i]![1]! - yPixel(frame, chart.y, y))).toBeLessThan(0.01)
+      })
+    }
   })
 })
 
