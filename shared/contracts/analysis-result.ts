@@ -11,6 +11,14 @@ export const parameterEstimate = z.object({
   determined: z.boolean(),
 })
 
+const otherEstimate = z.object({
+  id: z.string(),
+  value: z.number(),
+  low: z.number(),
+  high: z.number(),
+  determined: z.boolean(),
+})
+
 export const finding = z.object({
   code: z.string(),
   severity: z.enum(['good', 'note', 'caution', 'bad']),
@@ -38,8 +46,18 @@ export const analysisResult = z.object({
   S: parameterEstimate.nullable(),
   K: parameterEstimate.nullable(),
   storageClass: storageClass.nullable(),
+  others: z.array(otherEstimate).optional(),
   extras: z.record(z.string(), z.number()),
-  residuals: z.array(z.object({ wellId: z.string(), elapsed_s: z.number(), residual_m: z.number() })),
+  residuals: z.array(
+    z.object({
+      wellId: z.string(),
+      elapsed_s: z.number(),
+      residual_m: z.number(),
+      standsFor: z.int().positive().optional(),
+    }),
+  ),
+  /** Wells whose residuals were thinned to be kept; results without any, and older ones, leave it out. */
+  residualsShown: z.array(z.object({ wellId: z.string(), residualsShown: z.int(), of: z.int() })).optional(),
   fit: z.object({
     n: z.int(),
     effectiveN: z.number(),
@@ -50,6 +68,7 @@ export const analysisResult = z.object({
     singular: z.boolean(),
     objective: z.number(),
     correlation: z.number().optional(),
+    aicc: z.number().nullable().optional(),
   }),
   findings: z.array(finding),
   leftOut: z.array(z.object({ wellId: z.string(), count: z.int(), reason: leftOutReason })),
@@ -58,14 +77,21 @@ export type StoredResult = z.infer<typeof analysisResult>
 
 export const rateStep = z.object({ start_s: z.number(), rate_m3_s: z.number() })
 
+/** Depths below the aquifer's top. */
+const interval = z.object({ top_m: z.number(), bottom_m: z.number() })
+const construction = {
+  wellRadius_m: z.number().nullable(),
+  casingRadius_m: z.number().nullable(),
+  screen: interval.nullable().optional(),
+}
+
 export const series = z.object({
   wellId: z.string(),
   label: z.string(),
   role: z.enum(['pumped', 'observation']),
   distance_m: z.number(),
   distanceSd_m: z.number(),
-  wellRadius_m: z.number().nullable(),
-  casingRadius_m: z.number().nullable(),
+  ...construction,
   elapsed_s: z.array(z.number()),
   drawdown_m: z.array(z.number()),
   included: z.array(z.boolean()),
@@ -76,6 +102,7 @@ export const analysisInputs = z.object({
   rates: z.array(rateStep),
   rateError: z.number(),
   series: z.array(series),
+  pumpedWell: z.object(construction).optional(),
   aquifer: z.enum(['confined', 'leaky', 'unconfined']),
   thickness_m: z.number().nullable(),
   thicknessBasis: z.enum(['aquifer', 'screen', 'saturated', 'unknown']),

@@ -6,6 +6,12 @@ export interface RateStep {
   rate_m3_s: number
 }
 
+/** Depths below the top of the aquifer. */
+export interface Interval {
+  top_m: number
+  bottom_m: number
+}
+
 export interface Series {
   wellId: string
   label: string
@@ -16,6 +22,8 @@ export interface Series {
   wellRadius_m: number | null
   /** Inner radius of the casing in which the water level moves, the riser's area taken off. */
   casingRadius_m: number | null
+  /** Open part of the well; left out or null: all of the aquifer. A point has top and bottom alike. */
+  screen?: Interval | null
   elapsed_s: number[]
   drawdown_m: number[]
   included: boolean[]
@@ -28,6 +36,8 @@ export interface AnalysisInputs {
   /** Relative standard deviation of the rate, 0.05 unless known better. */
   rateError: number
   series: Series[]
+  /** Construction of the pumped well, for tests in which its own level is not among the series. */
+  pumpedWell?: Pick<Series, 'wellRadius_m' | 'casingRadius_m' | 'screen'>
   aquifer: 'confined' | 'leaky' | 'unconfined'
   thickness_m: number | null
   thicknessBasis: 'aquifer' | 'screen' | 'saturated' | 'unknown'
@@ -80,6 +90,15 @@ export interface ParameterEstimate {
   determined: boolean
 }
 
+/** A quantity found beside T and S: leakage, anisotropy, skin, a distance. `determined` as for T and S. */
+export interface OtherEstimate {
+  id: string
+  value: number
+  low: number
+  high: number
+  determined: boolean
+}
+
 /** A statement about a result: a code with SI parameters; the sentence is in shared/words/findings.ts. */
 export interface Finding {
   code: string
@@ -110,6 +129,21 @@ export interface Residual {
   elapsed_s: number
   /** Measured − calculated drawdown. */
   residual_m: number
+  /** How many fitted readings this one stands for where residuals were thinned; left out: itself alone. */
+  standsFor?: number
+}
+
+/** A well whose residuals are too many to be kept: the result holds some of them. */
+export interface ResidualsShown {
+  wellId: string
+  residualsShown: number
+  of: number
+}
+
+export interface KeptResiduals {
+  residuals: Residual[]
+  /** Wells whose residuals were thinned; left out where none were. The summary of the fit is of all readings. */
+  residualsShown?: ResidualsShown[]
 }
 
 export interface FitSummary {
@@ -124,6 +158,8 @@ export interface FitSummary {
   objective: number
   /** Correlation of ln T and ln S. */
   correlation?: number
+  /** Akaike's criterion for small samples, from the effective number of readings; null where too few for it. */
+  aicc?: number | null
 }
 
 /** What a method's `run` returns; `analyse` adds which method it was. */
@@ -131,6 +167,8 @@ export interface MethodOutcome {
   T: ParameterEstimate | null
   S: ParameterEstimate | null
   storageClass: StorageClass | null
+  /** What the method found beside T and S, in the order of its unknowns. */
+  others?: OtherEstimate[]
   /** Further numbers by name: slope, intercept, distances, the window used (window_from_s, window_to_s). */
   extras: Record<string, number>
   residuals: Residual[]
@@ -139,7 +177,7 @@ export interface MethodOutcome {
   leftOut: LeftOut[]
 }
 
-export interface AnalysisResult extends MethodOutcome {
+export interface AnalysisResult extends MethodOutcome, KeptResiduals {
   version: 1
   method: MethodId
   methodVersion: number

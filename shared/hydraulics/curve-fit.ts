@@ -2,14 +2,30 @@ import { lagOneAutocorrelation } from '#shared/numerics/autocorrelation.ts'
 import { correlatedCovariance, type CorrelatedCovariance } from '#shared/numerics/correlated-residuals.ts'
 import type { ResidualSeries } from '#shared/numerics/fading-noise.ts'
 import type { LeastSquaresFit } from '#shared/numerics/levenberg-marquardt.ts'
-import type { AnalysisInputs, AnalysisOptions, FitSummary, ParameterEstimate, Residual } from './analysis.ts'
-import { curveProblem, curveReadings } from './curve-problem.ts'
-import { parameterEstimate, scaledEstimate, UNDETERMINED_FACTOR } from './parameter-estimate.ts'
+import type {
+  AnalysisInputs,
+  AnalysisOptions,
+  FitSummary,
+  OtherEstimate,
+  ParameterEstimate,
+  Residual,
+} from './analysis.ts'
+import { curveProblem, placed } from './curve-problem.ts'
+import { smallSampleCriterion } from './information-criterion.ts'
+import type { Unknown } from './method.ts'
+import {
+  linearEstimate,
+  parameterEstimate,
+  scaledEstimate,
+  UNDETERMINED_FACTOR,
+  type LogUncertainty,
+} from './parameter-estimate.ts'
+import type { ResponsePlace } from './place.ts'
 import type { RateHistory } from './rates.ts'
 import type { Selected } from './selection.ts'
 import type { Solution } from './solution.ts'
 import { thinningFactor } from './unconfined.ts'
-import { distanceError, radiusOf } from './wells.ts'
+import { distanceError } from './wells.ts'
 
 /** Everything known once a curve is fitted. */
 export interface Fitted {
@@ -18,6 +34,7 @@ export interface Fitted {
   solution: Solution
   history: RateHistory
   wells: Selected[]
+  places: ResponsePlace[]
   logarithmic: boolean
   fit: LeastSquaresFit
 }
@@ -55,26 +72,49 @@ export function curveSummary(fitted: Fitted, { covariance, effectiveNumber }: Co
     converged: fit.converged,
     singular: fit.singular,
     objective: fit.objective,
+    aicc: smallSampleCriterion(fit.objective / n, effectiveNumber, fit.parameters.length),
     ...(tt * ss > 0 ? { correlation: ts / Math.sqrt(tt * ss) } : {}),
   }
 }
 
-/** T, S and what else the solution has, each with the scatter of the readings and the errors of rate and distances. */
-export function curveEstimates(fitted: Fitted, { covariance }: CorrelatedCovariance): ParameterEstimate[] {
-  const { fit, solution, inputs, options, wells } = fitted
+/** What is known of the unknowns of a fit: the values' scatter, and the errors of rate and distances. */
+export function curveUncertainties(fitted: Fitted, { covariance }: CorrelatedCovariance): LogUncertainty[] {
+  const { fit, solution, wells } = fitted
   const freedom = Math.max(1, fit.residuals.length - solution.unknowns.length)
   const shifts = [rateShift(fitted), ...wells.map((well, w) => distanceShift(fitted, well, w))]
-  return solution.unknowns.map(({ id }, k) => {
+  return solution.unknowns.map((_, k) => {
     const variance = (covariance[k] as number[])[k] as number
-    const uncertainty = {
+    return {
       fitSd: fit.singular || fit.atBound.includes(k) ? Infinity : Math.sqrt(variance),
       freedom,
       otherSd: Math.hypot(...shifts.map((shift) => shift[k] as number)),
     }
-    const widest = id === 'T' ? UNDETERMINED_FACTOR.T : UNDETERMINED_FACTOR.S
-    const estimate = parameterEstimate(fit.parameters[k] as number, uncertainty, widest)
-    return id === 'S' ? scaledEstimate(estimate, thinningFactor(inputs, options, wells)) : estimate
   })
+}
+
+/** One unknown on a log scale with its interval, null for an unknown that the solution does not have. */
+export function curveEstimate(fitted: Fitted, known: LogUncertainty[], id: string): ParameterEstimate | null {
+  const { fit, solution, inputs, options, wells } = fitted
+  const k = solution.unknowns.findIndex((unknown) => unknown.id === id)
+  if (k === -1) return null
+  const widest = id === 'T' ? UNDETERMINED_FACTOR.T : UNDETERMINED_FACTOR.S
+  const estimate = parameterEstimate(fit.parameters[k] as number, known[k] as LogUncertainty, widest)
+  return id === 'S' ? scaledEstimate(estimate, thinningFactor(inputs, options, wells)) : estimate
+}
+
+/** The unknowns beside T and the storage that is reported as S. */
+export function otherEstimates(fitted: Fitted, known: LogUncertainty[], reported: readonly string[]): OtherEstimate[] {
+  return fitted.solution.unknowns.flatMap((unknown, k) =>
+    reported.includes(unknown.id)
+      ? []
+      : [otherEstimate(unknown, fitted.fit.parameters[k] as number, known[k] as LogUncertainty)],
+  )
+}
+
+function otherEstimate({ id, scale }: Unknown, value: number, known: LogUncertainty): OtherEstimate {
+  const estimate =
+    scale === 'log' ? parameterEstimate(value, known, UNDETERMINED_FACTOR.S) : linearEstimate(value, known)
+  return { id, value, low: estimate.low, high: estimate.high, determined: estimate.determined }
 }
 
 /** Change of the fitted parameters when the rate is one standard deviation higher. */
@@ -95,12 +135,12 @@ function distanceShift(fitted: Fitted, well: Selected, index: number): number[] 
 }
 
 function residualsAt(
-  { solution, wells, history, logarithmic, fit }: Fitted,
+  { solution, wells, places, history, logarithmic, fit }: Fitted,
   index: number,
   stretch: number,
 ): Float64Array {
-  const distances = wells.map(({ series }, w) => radiusOf(series) * (w === index ? stretch : 1))
-  const problem = curveProblem(solution, curveReadings(wells, distances), history.increments, logarithmic)
+  const moved = places.map((place, w) => (w === index ? { ...place, distance_m: place.distance_m * stretch } : place))
+  const problem = curveProblem(solution, placed(wells, moved), history.increments, logarithmic)
   const residuals = new Float64Array(problem.count)
   problem.residuals(fit.parameters, residuals)
   return residuals

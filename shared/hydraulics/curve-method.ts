@@ -8,10 +8,19 @@ import {
   type MethodOutcome,
 } from './analysis.ts'
 import { casingFinding } from './casing-storage.ts'
-import { curveCovariance, curveEstimates, curveResiduals, curveSummary, type Fitted } from './curve-fit.ts'
-import { curveProblem, curveReadings } from './curve-problem.ts'
+import {
+  curveCovariance,
+  curveEstimate,
+  curveResiduals,
+  curveSummary,
+  curveUncertainties,
+  otherEstimates,
+  type Fitted,
+} from './curve-fit.ts'
+import { curveProblem, placed } from './curve-problem.ts'
 import {
   aquiferFindings,
+  correlationFindings,
   determinationFindings,
   distanceFindings,
   fitFindings,
@@ -19,12 +28,12 @@ import {
   storageClassOf,
 } from './findings.ts'
 import { sharedOptions, type Method } from './method.ts'
+import { placeOf } from './place.ts'
 import { rateHistory, type RateHistory } from './rates.ts'
 import { chosenSeries, largest, pumpingPhase, requireReadings, selectReadings, type Selected } from './selection.ts'
 import type { Solution } from './solution.ts'
 import { drawdownHistory } from './superposition.ts'
 import { drawnDrawdown, thinningFindings, thinningGuard } from './unconfined.ts'
-import { radiusOf } from './wells.ts'
 
 /** A catalogue method that fits one analytical solution to any number of wells jointly, under any rate history. */
 export function curveMethod(solution: Solution): Method {
@@ -74,18 +83,25 @@ function run(solution: Solution, inputs: AnalysisInputs, options: AnalysisOption
   const covariance = curveCovariance(fitted)
   const summary = curveSummary(fitted, covariance)
   const observed = wells.some(({ series }) => series.role === 'observation')
-  const [T = null, S = null] = curveEstimates(fitted, covariance)
+  const known = curveUncertainties(fitted, covariance)
+  const storage = solution.storage ?? { unknown: 'S', storageClass: storageClassOf(inputs, options, last_s) }
+  const T = curveEstimate(fitted, known, 'T')
+  const S = curveEstimate(fitted, known, storage.unknown)
+  const others = otherEstimates(fitted, known, ['T', storage.unknown])
   return {
     T,
     S: observed ? S : null,
-    storageClass: observed ? storageClassOf(inputs, options, last_s) : null,
+    storageClass: observed ? storage.storageClass : null,
+    ...(others.length > 0 ? { others } : {}),
     extras: extrasOf(fitted),
     residuals: curveResiduals(fitted),
     fit: summary,
     findings: [
       ...modelFindings(fitted, last_s),
       ...fitFindings(summary),
-      ...determinationFindings(observed ? { T, S } : { T }),
+      ...determinationFindings(observed ? { T, [storage.unknown]: S } : { T }),
+      ...determinationFindings(Object.fromEntries(others.map((other) => [other.id, other]))),
+      ...correlationFindings(solution.unknowns, covariance.covariance),
     ],
     leftOut: selection.leftOut,
   }
@@ -99,12 +115,13 @@ function fit(
   options: AnalysisOptions,
 ): Fitted {
   const logarithmic = options.objective === 'log-drawdown'
-  const problem = curveProblem(solution, curveReadings(wells), history.increments, logarithmic)
+  const places = wells.map(({ series }) => placeOf(series, inputs))
+  const problem = curveProblem(solution, placed(wells, places), history.increments, logarithmic)
   if (wells.every((well) => well.drawdown_m.every((value) => !(value > 0))))
     throw new AnalysisError('analysis/no-drawdown')
   try {
-    const result = levenbergMarquardt(problem, { starts: solution.guess({ wells, history }) })
-    return { inputs, options, solution, history, wells, logarithmic, fit: result }
+    const result = levenbergMarquardt(problem, { starts: solution.guess({ inputs, wells, history }) })
+    return { inputs, options, solution, history, wells, places, logarithmic, fit: result }
   } catch (error) {
     if (error instanceof RangeError) throw new AnalysisError('analysis/no-fit')
     throw error
@@ -125,11 +142,11 @@ function modelFindings({ inputs, options, solution, history, wells, fit }: Fitte
   const pumped = wells.filter(({ series }) => series.role === 'pumped')
   const T = fit.parameters[0] as number
   return [
-    ...solution.judge(fit.parameters, { wells, history }),
+    ...solution.judge(fit.parameters, { inputs, wells, history }),
     ...pumped.map((well) => casingFinding(T, well.series, well.time_s[0] as number, 'drawdown')),
     ...(pumped.length === wells.length ? [pumpedStorageFinding] : []),
     ...(pumped.length > 0 && pumped.length < wells.length ? [pumpedInJointFit] : []),
-    ...aquiferFindings(inputs, options, last_s),
+    ...aquiferFindings(inputs, options, last_s, solution.aquifers),
     ...thinningFindings(largest(wells.flatMap((well) => well.measured_m)), inputs, options),
     ...distanceFindings(wells),
     ...fit.atBound.map((k) => atBound(solution.unknowns[k]?.id ?? '')),
@@ -148,11 +165,12 @@ function curve(
   times_s: number[],
 ): FittedCurve[] {
   const { increments } = rateHistory(inputs.rates)
+  const size = solution.unknowns.length
   const parameters = solution.unknowns.map(({ id }) => extras[`fitted_${id}`] as number)
   return chosenSeries(inputs, options).map((series) => ({
     wellId: series.wellId,
-    drawdown_m: drawdownHistory(solution.response, parameters, increments, times_s, radiusOf(series)).map((value) =>
-      drawnDrawdown(value, inputs, options),
+    drawdown_m: drawdownHistory(solution.respond(parameters, placeOf(series, inputs)), size, increments, times_s).map(
+      (value) => drawnDrawdown(value, inputs, options),
     ),
   }))
 }

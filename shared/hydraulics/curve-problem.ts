@@ -1,32 +1,24 @@
 import type { LeastSquaresProblem } from '#shared/numerics/least-squares-problem.ts'
+import type { ResponsePlace } from './place.ts'
 import type { RateIncrement } from './rates.ts'
 import type { Selected } from './selection.ts'
 import type { Solution } from './solution.ts'
 import { superpose } from './superposition.ts'
-import { radiusOf } from './wells.ts'
 
-/** The readings of all wells end to end, as the fitter takes them. */
-export interface CurveReadings {
-  elapsed_s: Float64Array
-  distance_m: Float64Array
-  drawdown_m: Float64Array
+/** The readings of one well with their place, as the fitter takes them. */
+export interface PlacedReadings {
+  place: ResponsePlace
+  elapsed_s: readonly number[]
+  drawdown_m: readonly number[]
 }
 
-export function curveReadings(
-  wells: Selected[],
-  distances = wells.map(({ series }) => radiusOf(series)),
-): CurveReadings {
-  return {
-    elapsed_s: Float64Array.from(wells.flatMap((well) => well.elapsed_s)),
-    distance_m: Float64Array.from(wells.flatMap((well, w) => well.elapsed_s.map(() => distances[w] as number))),
-    drawdown_m: Float64Array.from(wells.flatMap((well) => well.drawdown_m)),
-  }
-}
+export const placed = (wells: readonly Selected[], places: readonly ResponsePlace[]): PlacedReadings[] =>
+  wells.map(({ elapsed_s, drawdown_m }, w) => ({ place: places[w] as ResponsePlace, elapsed_s, drawdown_m }))
 
-/** Least squares of a solution on drawdown, or on its logarithm. */
+/** Least squares of a solution on drawdown, or on its logarithm; wells end to end. */
 export function curveProblem(
-  { response, unknowns }: Solution,
-  { elapsed_s, distance_m, drawdown_m }: CurveReadings,
+  { respond, unknowns }: Solution,
+  wells: PlacedReadings[],
   increments: RateIncrement[],
   logarithmic: boolean,
 ): LeastSquaresProblem {
@@ -34,18 +26,22 @@ export function curveProblem(
   const out = new Float64Array(size + 1)
   const scratch = new Float64Array(size + 1)
   const fill = (parameters: ArrayLike<number>, residuals: Float64Array, jacobian: Float64Array | null) => {
-    for (let i = 0; i < elapsed_s.length; i++) {
-      superpose(response, parameters, increments, elapsed_s[i] as number, distance_m[i] as number, out, scratch)
-      const model = out[0] as number
-      const measured = drawdown_m[i] as number
-      residuals[i] = logarithmic ? Math.log(model / measured) : model - measured
-      if (!jacobian) continue
-      const scale = logarithmic ? 1 / model : 1
-      for (let k = 0; k < size; k++) jacobian[i * size + k] = (out[k + 1] as number) * scale
+    let row = 0
+    for (const { place, elapsed_s, drawdown_m } of wells) {
+      const atPlace = respond(parameters, place)
+      for (let i = 0; i < elapsed_s.length; i++, row++) {
+        superpose(atPlace, increments, elapsed_s[i] as number, out, scratch)
+        const model = out[0] as number
+        const measured = drawdown_m[i] as number
+        residuals[row] = logarithmic ? Math.log(model / measured) : model - measured
+        if (!jacobian) continue
+        const scale = logarithmic ? 1 / model : 1
+        for (let k = 0; k < size; k++) jacobian[row * size + k] = (out[k + 1] as number) * scale
+      }
     }
   }
   return {
-    count: elapsed_s.length,
+    count: wells.reduce((sum, { elapsed_s }) => sum + elapsed_s.length, 0),
     unknowns: [...unknowns],
     residuals: (parameters, residuals) => fill(parameters, residuals, null),
     jacobian: fill,

@@ -14,6 +14,7 @@ const DOUBTS = new Set([
   'casing-unknown',
   'rate-varied',
   'aquifer-leaky',
+  'aquifer-unlike',
   'drainage-not-over',
   'thinning-offered',
   'thinning-too-large',

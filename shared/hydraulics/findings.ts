@@ -1,11 +1,5 @@
-import type {
-  AnalysisInputs,
-  AnalysisOptions,
-  FitSummary,
-  Finding,
-  ParameterEstimate,
-  StorageClass,
-} from './analysis.ts'
+import type { AnalysisInputs, AnalysisOptions, Finding, FitSummary, OtherEstimate, StorageClass } from './analysis.ts'
+import type { Unknown } from './method.ts'
 import { RATE_VARIATION_LIMIT, rateVariation, type RateHistory } from './rates.ts'
 import type { Selected } from './selection.ts'
 import { isAfterDrainage } from './unconfined.ts'
@@ -29,6 +23,23 @@ export function rateFindings(history: RateHistory, until_s: number): Finding[] {
   return [{ code: 'rate-varied', severity: 'caution', params: { variation, limit: RATE_VARIATION_LIMIT } }]
 }
 
+/** Two parameters that move together this closely cannot be told apart by the readings (common practice). */
+const CORRELATION_LIMIT = 0.95
+
+/** Names pairs of unknowns that the readings do not tell apart. T and S of one well are often alike; that pair is shown as a figure. */
+export function correlationFindings(unknowns: readonly Unknown[], covariance: number[][]): Finding[] {
+  const at = (i: number, j: number) => (covariance[i] as number[])[j] as number
+  return unknowns.flatMap((one, i) =>
+    unknowns.slice(Math.max(2, i + 1)).flatMap((other, skipped) => {
+      const j = Math.max(2, i + 1) + skipped
+      const correlation = at(i, j) / Math.sqrt(at(i, i) * at(j, j))
+      if (!(Math.abs(correlation) > CORRELATION_LIMIT)) return []
+      const params = { one: one.id, other: other.id, correlation, limit: CORRELATION_LIMIT }
+      return [{ code: 'parameters-correlated', severity: 'caution' as const, params }]
+    }),
+  )
+}
+
 /** What the number and likeness of the residuals say. */
 export function fitFindings(fit: FitSummary): Finding[] {
   const findings: Finding[] = []
@@ -42,7 +53,9 @@ export function fitFindings(fit: FitSummary): Finding[] {
 }
 
 /** Names each parameter that the readings leave open. */
-export function determinationFindings(estimates: Record<string, ParameterEstimate | null>): Finding[] {
+export function determinationFindings(
+  estimates: Record<string, Pick<OtherEstimate, 'low' | 'high' | 'determined'> | null>,
+): Finding[] {
   return Object.entries(estimates).flatMap(([parameter, estimate]) =>
     estimate && !estimate.determined
       ? [
@@ -78,10 +91,17 @@ export function distanceFindings(wells: Selected[]): Finding[] {
     }))
 }
 
-/** The aquifer's kind against a method for a confined one of constant thickness. */
-export function aquiferFindings(inputs: AnalysisInputs, options: AnalysisOptions, last_s: number): Finding[] {
+/** The aquifer's kind against the kinds that a method describes; without `described`, a confined one. */
+export function aquiferFindings(
+  inputs: AnalysisInputs,
+  options: AnalysisOptions,
+  last_s: number,
+  described: readonly AnalysisInputs['aquifer'][] = ['confined'],
+): Finding[] {
+  if (described.includes(inputs.aquifer)) return []
+  if (!described.includes('confined'))
+    return [{ code: 'aquifer-unlike', severity: 'caution', params: { aquifer: inputs.aquifer } }]
   if (inputs.aquifer === 'leaky') return [{ code: 'aquifer-leaky', severity: 'caution', params: {} }]
-  if (inputs.aquifer === 'confined') return []
   return isAfterDrainage(options, last_s)
     ? [{ code: 'drainage-over', severity: 'good', params: { last_s } }]
     : [{ code: 'drainage-not-over', severity: 'caution', params: { last_s } }]

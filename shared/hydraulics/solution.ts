@@ -1,11 +1,13 @@
-import type { Finding } from './analysis.ts'
+import type { AnalysisInputs, Finding, StorageClass } from './analysis.ts'
 import type { Unknown, ValidityRule } from './method.ts'
+import type { ResponsePlace } from './place.ts'
 import type { RateHistory } from './rates.ts'
 import type { Selected } from './selection.ts'
-import type { UnitResponse } from './superposition.ts'
+import type { Respond } from './superposition.ts'
 
 /** What a solution sees of the readings when it guesses where to start or judges a fit. */
 export interface SolutionReadings {
+  inputs: AnalysisInputs
   wells: Selected[]
   history: RateHistory
 }
@@ -19,9 +21,14 @@ export interface Solution {
   label: string
   version: number
   source: string
-  /** In the order in which `response` takes them; the first two are T and S. */
+  /** Kinds of aquifer that it describes; for any other a caution says so. */
+  aquifers: readonly AnalysisInputs['aquifer'][]
+  /** The storage that may be adopted, with its class; left out: S, classed by the aquifer and the length of the test. */
+  storage?: { unknown: string; storageClass: StorageClass }
+  /** In the order in which `respond` takes them; the first two are T and S. */
   unknowns: readonly Unknown[]
-  response: UnitResponse
+  /** @throws AnalysisError where the place lacks what the solution needs */
+  respond(parameters: ArrayLike<number>, place: ResponsePlace): Respond
   /** Starting points, natural parameters in the order of `unknowns`. */
   guess(readings: SolutionReadings): number[][]
   validity: readonly ValidityRule[]

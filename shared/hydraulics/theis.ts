@@ -1,9 +1,11 @@
 import { exponentialIntegral, inverseExponentialIntegral } from '#shared/numerics/exponential-integral.ts'
 import { storativity, transmissivity } from './method.ts'
+import type { ResponsePlace } from './place.ts'
 import { meanRate } from './rates.ts'
 import type { Selected } from './selection.ts'
 import type { Solution, SolutionReadings } from './solution.ts'
 import { theisU } from './small-u.ts'
+import type { Respond } from './superposition.ts'
 import { radiusOf } from './wells.ts'
 
 /** The early part of the type curve, where S is told from T, reaches down to about this u. */
@@ -15,20 +17,21 @@ export function theisDrawdown(rate_m3_s: number, T: number, S: number, distance_
 }
 
 /** Unit-rate response with derivatives by ln T and ln S, from dW/d ln u = −e^-u. */
-export function theisResponse(
+export function theisRespond(
   parameters: ArrayLike<number>,
-  time_s: number,
-  distance_m: number,
-  out: Float64Array,
-): void {
+  { distance_m }: Pick<ResponsePlace, 'distance_m'>,
+): Respond {
   const T = parameters[0] as number
-  const u = theisU(T, parameters[1] as number, distance_m, time_s)
+  const S = parameters[1] as number
   const factor = 1 / (4 * Math.PI * T)
-  const W = exponentialIntegral(u)
-  const decay = Math.exp(-u)
-  out[0] = factor * W
-  out[1] = factor * (decay - W)
-  out[2] = -factor * decay
+  return (time_s, out) => {
+    const u = theisU(T, S, distance_m, time_s)
+    const W = exponentialIntegral(u)
+    const decay = Math.exp(-u)
+    out[0] = factor * W
+    out[1] = factor * (decay - W)
+    out[2] = -factor * decay
+  }
 }
 
 /** Starts that all pass through the last reading of the first well: T from its late slope, and four times off it. */
@@ -68,8 +71,9 @@ export const theis: Solution = {
   label: 'Confined aquifer curve (Theis)',
   version: 1,
   source: 'Theis 1935; ASTM D4106',
+  aquifers: ['confined'],
   unknowns: [transmissivity, storativity],
-  response: theisResponse,
+  respond: theisRespond,
   guess,
   validity: [
     {

@@ -1,4 +1,5 @@
 import type { AnalysisErrorCode, Finding } from '#shared/hydraulics/analysis.ts'
+import { methods } from '#shared/hydraulics/catalogue.ts'
 import { formatElapsed } from '#shared/quantities/elapsed.ts'
 import { formatNumber, formatQuantity } from '#shared/quantities/format.ts'
 import { defaultUnitSystemId, unitSystemById, type UnitSystem } from '#shared/quantities/systems.ts'
@@ -15,7 +16,11 @@ interface Words {
 }
 type Sentences<Code extends string> = Record<Code, (words: Words) => string>
 
-const parameterNames: Record<string, string> = { T: 'Transmissivity', S: 'Storativity' }
+/** The name that the methods give to a quantity they find. */
+const parameterName = (id: string): string =>
+  Object.values(methods)
+    .flatMap(({ unknowns }) => [...unknowns])
+    .find((unknown) => unknown.id === id)?.label ?? id
 const optionNames: Record<string, string> = {
   window: 'The time window must end after it begins, and cannot begin before zero.',
   line: 'The line drawn by hand needs a slope and a height.',
@@ -45,6 +50,10 @@ const findings: Sentences<string> = {
     `The rate differed by up to ${percent('variation')} from its mean, more than ${percent('limit')}. A curve fit with the whole rate history is safer.`,
   'aquifer-leaky': () =>
     'The aquifer is leaky, and the method assumes that no water enters from above or below. Late readings make transmissivity too high.',
+  'aquifer-unlike': ({ text }) =>
+    `The solution describes another kind of aquifer than the ${text('aquifer')} one of this test. Compare it with one made for that kind.`,
+  'parameters-correlated': ({ text, number }) =>
+    `${parameterName(text('one'))} and ${parameterName(text('other')).toLowerCase()} move together (correlation ${number('correlation')}): these readings hardly tell one from the other.`,
   'drainage-over': ({ span }) =>
     `The readings reach ${span('last_s')} and are taken to follow delayed drainage, so storage is specific yield.`,
   'drainage-not-over': ({ span }) =>
@@ -65,9 +74,9 @@ const findings: Sentences<string> = {
   'not-converged': ({ text }) =>
     `The search did not come to an end after ${text('iterations')} steps. Do not use the result.`,
   'not-determined': ({ text, number }) =>
-    `${parameterNames[text('parameter')] ?? text('parameter')} is not determined by these data: its interval spans a factor of ${number('factor')}.`,
+    `${parameterName(text('parameter'))} is not determined by these data: its interval spans a factor of ${number('factor')}.`,
   'at-bound': ({ text }) =>
-    `${parameterNames[text('parameter')] ?? text('parameter')} ran to the edge of the range searched. Check rate, distance and units.`,
+    `${parameterName(text('parameter'))} ran to the edge of the range searched. Check rate, distance and units.`,
   'curve-covered': ({ number }) =>
     `The readings begin early enough (u up to ${number('u')}) for the bend of the curve to fix storativity.`,
   'curve-late-only': ({ number }) =>

@@ -2,7 +2,7 @@ import { readFileSync } from 'node:fs'
 import type { AnalysisInputs, AnalysisOptions, RateStep, Series } from '#shared/hydraulics/analysis.ts'
 import { rateHistory } from '#shared/hydraulics/rates.ts'
 import { drawdownHistory } from '#shared/hydraulics/superposition.ts'
-import { theisResponse } from '#shared/hydraulics/theis.ts'
+import { theisRespond } from '#shared/hydraulics/theis.ts'
 
 export const DAY = 86_400
 
@@ -59,7 +59,7 @@ export function makeTheisSeries(
   const series = makeSeries(overrides)
   const distance = series.role === 'pumped' ? (series.wellRadius_m ?? 0.1) : series.distance_m
   const times = series.elapsed_s.map((time) => (Number.isFinite(time) ? time : 0))
-  const exact = drawdownHistory(theisResponse, [T, S], rateHistory(rates).increments, times, distance)
+  const exact = drawdownHistory(theisRespond([T, S], { distance_m: distance }), 2, rateHistory(rates).increments, times)
   return { ...series, drawdown_m: exact.map((value, i) => value + (noise?.[i] ?? 0)) }
 }
 

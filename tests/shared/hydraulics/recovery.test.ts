@@ -4,7 +4,7 @@ import { analyse, fittedCurve } from '#shared/hydraulics/catalogue.ts'
 import { recoveryAbscissa } from '#shared/hydraulics/recovery-line.ts'
 import { rateHistory } from '#shared/hydraulics/rates.ts'
 import { drawdownHistory } from '#shared/hydraulics/superposition.ts'
-import { theisDrawdown, theisResponse } from '#shared/hydraulics/theis.ts'
+import { theisDrawdown, theisRespond } from '#shared/hydraulics/theis.ts'
 import { DAY, logSpaced, makeInputs, makeOptions, makeTheisSeries, relative, valueOf } from './make-inputs.ts'
 
 const truth = { T: 5e-3, S: 2e-4 }
@@ -20,7 +20,12 @@ describe('recovery', () => {
     fc.assert(
       fc.property(fc.double({ min: 10, max: 1e6, noNaN: true }), (since) => {
         const time = stop + since
-        const [superposed] = drawdownHistory(theisResponse, [5e-3, 2e-4], rateHistory(rates).increments, [time], 50)
+        const [superposed] = drawdownHistory(
+          theisRespond([5e-3, 2e-4], { distance_m: 50 }),
+          2,
+          rateHistory(rates).increments,
+          [time],
+        )
         const closed = theisDrawdown(0.01, 5e-3, 2e-4, 50, time) - theisDrawdown(0.01, 5e-3, 2e-4, 50, since)
         expect(Math.abs((superposed as number) - closed)).toBeLessThan(1e-12)
       }),

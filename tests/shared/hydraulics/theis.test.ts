@@ -1,7 +1,7 @@
 import fc from 'fast-check'
 import { describe, expect, it, vi } from 'vitest'
 import { analyse, fittedCurve } from '#shared/hydraulics/catalogue.ts'
-import { theisDrawdown, theisResponse } from '#shared/hydraulics/theis.ts'
+import { theisDrawdown, theisRespond } from '#shared/hydraulics/theis.ts'
 import reference from '../../reference/hydraulics-fits.json'
 import {
   DAY,
@@ -30,7 +30,7 @@ describe('Theis response', () => {
     fc.assert(
       fc.property(T, S, distance, moment, (t, s, r, time) => {
         const out = new Float64Array(3)
-        theisResponse([t, s], time, r, out)
+        theisRespond([t, s], { distance_m: r })(time, out)
         // Far out on the flank the drawdown itself vanishes and differences are all rounding.
         fc.pre((r * r * s) / (4 * t * time) < 20)
         const h = 1e-5
