@@ -18,6 +18,7 @@ const python = '/usr/bin/python3'
  */
 const references = [
   ...[
+    'bessel-functions',
     'distributions',
     'hydraulics-fits',
     'numerics-functions',
