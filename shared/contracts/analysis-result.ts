@@ -91,6 +91,7 @@ export const series = z.object({
   role: z.enum(['pumped', 'observation']),
   distance_m: z.number(),
   distanceSd_m: z.number(),
+  bearing_deg: z.number().nullable().optional(),
   ...construction,
   elapsed_s: z.array(z.number()),
   drawdown_m: z.array(z.number()),
@@ -110,6 +111,12 @@ export const analysisInputs = z.object({
   streamDistance_m: z.number().nullable(),
 })
 
+const boundary = z.object({
+  kind: z.enum(['recharge', 'barrier']),
+  distance_m: z.number().positive().nullable(),
+  bearing_deg: z.number(),
+})
+
 const window = z.object({ from_s: z.number(), to_s: z.number() })
 
 export const analysisOptions = z.object({
@@ -120,6 +127,7 @@ export const analysisOptions = z.object({
   thinning: z.boolean().optional(),
   afterDrainage: z.boolean().nullable().optional(),
   readingsPerCycle: z.int().positive().nullable().optional(),
+  boundaries: z.array(boundary).max(2).optional(),
   phase: z.enum(['pumping', 'all']).optional(),
   time_s: z.number().positive().nullable().optional(),
   rateHistory: z.enum(['superposition', 'equivalent']).optional(),

@@ -22,6 +22,8 @@ export interface Series {
   wellRadius_m: number | null
   /** Inner radius of the casing in which the water level moves, the riser's area taken off. */
   casingRadius_m: number | null
+  /** Direction from the pumped well, degrees clockwise from north; left out or null: not known. */
+  bearing_deg?: number | null
   /** Open part of the well; left out or null: all of the aquifer. A point has top and bottom alike. */
   screen?: Interval | null
   elapsed_s: number[]
@@ -52,6 +54,15 @@ export interface TimeWindow {
   to_s: number
 }
 
+/** A stream or barrier that an analysis takes into account. */
+export interface ChosenBoundary {
+  kind: 'recharge' | 'barrier'
+  /** Shortest distance from the pumped well; null: to be fitted. */
+  distance_m: number | null
+  /** Direction of the shortest way, degrees clockwise from north. */
+  bearing_deg: number
+}
+
 /** A straight line drawn by hand: drawdown in metres on log10 of the method's abscissa (seconds, metres or t/t'). */
 export interface HandLine {
   slope: number
@@ -72,6 +83,8 @@ export interface AnalysisOptions {
   afterDrainage?: boolean | null
   /** Most readings used in each factor of ten in time, per well; null uses all. Default 50. */
   readingsPerCycle?: number | null
+  /** Edges of the aquifer, at most two; curve methods stand image wells for them. Default none. */
+  boundaries?: ChosenBoundary[]
   /** Readings a curve method fits: those during pumping, or recovery too, by superposition. Default 'pumping'. */
   phase?: 'pumping' | 'all'
   /** Moment at which distance–drawdown compares the wells; null: the last moment common to all. Default null. */
@@ -215,6 +228,11 @@ export type AnalysisErrorCode =
   | 'analysis/thinning-too-large'
   | 'analysis/thinning-early'
   | 'analysis/no-fit'
+  | 'analysis/boundaries-too-many'
+  | 'analysis/boundaries-behind'
+  | 'analysis/boundaries-angle'
+  | 'analysis/boundary-place'
+  | 'analysis/bearing-unknown'
 
 /** Inputs a method refuses, as a code and parameters; the sentence is in shared/words/findings.ts. */
 export class AnalysisError extends Error {

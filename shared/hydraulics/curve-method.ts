@@ -7,6 +7,7 @@ import {
   type FittedCurve,
   type MethodOutcome,
 } from './analysis.ts'
+import { boundedSolution } from './boundaries/bounded-solution.ts'
 import { casingFinding } from './casing-storage.ts'
 import {
   curveCovariance,
@@ -47,10 +48,12 @@ export function curveMethod(solution: Solution): Method {
     validity,
     needs: { phase: 'pumping', wells: { least: 1, most: null, roles: ['pumped', 'observation'] } },
     options: curveOptions,
-    run: (inputs, options) => run(solution, inputs, options),
-    curve: (inputs, options, outcome, times_s) => curve(solution, inputs, options, outcome, times_s),
+    run: (inputs, options) => run(bounded(solution, options), inputs, options),
+    curve: (inputs, options, outcome, times_s) => curve(bounded(solution, options), inputs, options, outcome, times_s),
   }
 }
+
+const bounded = (solution: Solution, { boundaries = [] }: AnalysisOptions) => boundedSolution(solution, boundaries)
 
 const curveOptions: Method['options'] = [
   sharedOptions.window,

@@ -7,6 +7,8 @@ export interface ResponsePlace {
   pumped: boolean
   /** Distance from the axis of the pumped well; in the pumped well its radius. */
   distance_m: number
+  /** Direction from the pumped well, degrees clockwise from north; null: not known. */
+  bearing_deg: number | null
   /** Radius of the pumped well. */
   wellRadius_m: number | null
   /** Radius of the casing in which the pumped well's level moves, the riser's area taken off. */
@@ -25,6 +27,7 @@ export function placeOf(series: Series, { series: all, pumpedWell, thickness_m }
   return {
     pumped: series.role === 'pumped',
     distance_m: radiusOf(series),
+    bearing_deg: series.bearing_deg ?? null,
     wellRadius_m: pumped?.wellRadius_m ?? null,
     casingRadius_m: pumped?.casingRadius_m ?? null,
     thickness_m,

@@ -137,6 +137,15 @@ const refusals: Sentences<AnalysisErrorCode> = {
     `Drawdown reaches ${length('drawdown_m')}, more than half of the saturated thickness of ${length('thickness_m')}. The correction for thinning does not hold there.`,
   'analysis/thinning-early': ({ span }) =>
     `The readings end at ${span('last_s')}, before delayed drainage is over. The correction for thinning is for later readings; say so if they are late enough.`,
+  'analysis/boundaries-too-many': ({ text }) =>
+    `${text('found')} boundaries were chosen; image wells stand for at most two. Choose the nearest.`,
+  'analysis/boundaries-behind': () =>
+    'Both boundaries lie on the same side of the pumped well, one behind the other. Choose the nearer.',
+  'analysis/boundaries-angle': () =>
+    'Image wells cannot stand for two boundaries that meet at this angle: it must be 180° divided by a whole number, or by an even one where a stream meets a barrier. Choose one of them.',
+  'analysis/boundary-place': () => 'A boundary needs a distance above zero and a direction.',
+  'analysis/bearing-unknown': ({ text }) =>
+    `The direction of ${text('well')} from the pumped well is not known, so its distance from the boundary is not either. Enter the position of both wells.`,
   'analysis/no-fit': () => 'No curve could be fitted. Check rate, distance and units.',
 }
 

@@ -7,6 +7,7 @@ import { theisDrawdown, theisRespond } from '#shared/hydraulics/theis.ts'
 const place: ResponsePlace = {
   pumped: false,
   distance_m: 40,
+  bearing_deg: null,
   wellRadius_m: 0.1,
   casingRadius_m: 0.1,
   thickness_m: 20,

@@ -1,0 +1,101 @@
+import { AnalysisError } from '../analysis.ts'
+
+/** A straight, fully penetrating edge of the aquifer, as seen from the pumped well. */
+export interface Boundary {
+  /** `recharge`: a stream or lake that keeps its level; `barrier`: no water passes. */
+  kind: 'recharge' | 'barrier'
+  /** Shortest distance from the pumped well. */
+  distance_m: number
+  /** Direction of that shortest way, degrees clockwise from north. */
+  bearing_deg: number
+}
+
+/** A well that stands in for a boundary: +1 pumps like the real one, −1 injects as much. */
+export interface ImageWell {
+  east_m: number
+  north_m: number
+  sign: 1 | -1
+}
+
+interface Edge {
+  east: number
+  north: number
+  distance_m: number
+  sign: 1 | -1
+}
+
+/** Two parallel edges have infinitely many images; those beyond so many act later than any test lasts. */
+const MOST_BETWEEN_PARALLELS = 4000
+/** Mirrors of two edges that meet close after at most so many images, or never. */
+const MOST_IN_A_WEDGE = 200
+/** Positions closer than this share of the nearer edge's distance are one place. */
+const SAME_PLACE = 1e-6
+
+/**
+ * Image wells of one or two straight boundaries, nearest first. The edges mirror every well, images among them, until
+ * nothing new appears; between two parallel edges, until they are too many to matter.
+ * @throws AnalysisError for an edge without distance, more than two edges, one edge behind another, or an angle whose
+ * mirrors contradict each other
+ * Sources: Ferris et al. 1962; Stallman 1963; ASTM D5270.
+ */
+export function imageWells(boundaries: readonly Boundary[]): ImageWell[] {
+  if (boundaries.length > 2) throw new AnalysisError('analysis/boundaries-too-many', { found: boundaries.length })
+  const edges = boundaries.map(edgeOf)
+  if (isPair(edges) && cosine(...edges) > 1 - 1e-9) throw new AnalysisError('analysis/boundaries-behind')
+  const images = isPair(edges) && cosine(...edges) < -1 + 1e-9 ? betweenParallels(edges) : inWedge(edges)
+  return images.sort((one, other) => reach(one) - reach(other))
+}
+
+function edgeOf({ kind, distance_m, bearing_deg }: Boundary): Edge {
+  if (!(distance_m > 0) || !Number.isFinite(bearing_deg)) throw new AnalysisError('analysis/boundary-place')
+  const angle = (bearing_deg * Math.PI) / 180
+  return { east: Math.sin(angle), north: Math.cos(angle), distance_m, sign: kind === 'barrier' ? 1 : -1 }
+}
+
+const isPair = (edges: Edge[]): edges is [Edge, Edge] => edges.length === 2
+const cosine = (one: Edge, other: Edge) => one.east * other.east + one.north * other.north
+const reach = ({ east_m, north_m }: ImageWell) => Math.hypot(east_m, north_m)
+const realWell: ImageWell = { east_m: 0, north_m: 0, sign: 1 }
+
+/** Mirrors of each edge in turn, in both directions. */
+function betweenParallels(edges: [Edge, Edge]): ImageWell[] {
+  return [0, 1].flatMap((first) => {
+    let image = realWell
+    return Array.from({ length: MOST_BETWEEN_PARALLELS / 2 }, (_, i) => {
+      image = mirror(image, edges[(first + i) % 2] as Edge)
+      return image
+    })
+  })
+}
+
+/** Mirrors of mirrors until all of them are known. */
+function inWedge(edges: Edge[]): ImageWell[] {
+  const tolerance = SAME_PLACE * Math.min(...edges.map(({ distance_m }) => distance_m))
+  const found = [realWell]
+  for (let i = 0; i < found.length; i++) {
+    for (const edge of edges) {
+      const image = mirror(found[i] as ImageWell, edge)
+      const same = found.find((known) => isNear(known, image, tolerance))
+      if (same && same.sign === image.sign) continue
+      if (same || isInside(image, edges, tolerance) || found.length > MOST_IN_A_WEDGE)
+        throw new AnalysisError('analysis/boundaries-angle')
+      found.push(image)
+    }
+  }
+  return found.slice(1)
+}
+
+function mirror({ east_m, north_m, sign }: ImageWell, edge: Edge): ImageWell {
+  const beyond = 2 * (edge.distance_m - edge.east * east_m - edge.north * north_m)
+  return {
+    east_m: east_m + beyond * edge.east,
+    north_m: north_m + beyond * edge.north,
+    sign: (sign * edge.sign) as 1 | -1,
+  }
+}
+
+const isNear = (one: ImageWell, other: ImageWell, tolerance: number) =>
+  Math.hypot(one.east_m - other.east_m, one.north_m - other.north_m) < tolerance
+
+const isInside = ({ east_m, north_m }: ImageWell, edges: Edge[], tolerance: number) =>
+  edges.every(({ east, north, distance_m }) => east * east_m + north * north_m < distance_m - tolerance)
