@@ -84,7 +84,7 @@ function pointOf({ series, time_s, drawdown_m }: Reach, at_s: number, start_s: n
   const { wellId, label, role, distance_m } = series
   const y = interpolated(time_s, drawdown_m, at_s) / length_m
   const points = [{ x: distance_m / length_m, y, elapsed_s: start_s + at_s }]
-  return [{ wellId, label, role, points, leftOut: [], derivative: [] }]
+  return [{ wellId, label, role, points, readingCount: points.length, leftOut: [], derivative: [] }]
 }
 
 /** The line through the wells, drawn only for the method that compares distances. */

@@ -43,22 +43,33 @@ function slopes(fit: Fit, wellId: string, times_s: number[]): number[][] {
   return times_s.map((_, i) => columns.map((column) => column[i] as number))
 }
 
-/** Times at which each well's readings were fitted. */
-function fittedTimes({ result }: Fit): Map<string, number[]> {
-  const times = new Map<string, number[]>()
-  for (const { wellId, elapsed_s } of result.residuals) times.set(wellId, [...(times.get(wellId) ?? []), elapsed_s])
-  return times
+interface Weighed {
+  row: number[]
+  /** How many readings the row counts for. */
+  weight: number
+}
+
+/** Change of the curve at each kept residual, which may stand for others that were thinned away. */
+function weighedSlopes(fit: Fit): Weighed[] {
+  const wells = [...new Set(fit.result.residuals.map(({ wellId }) => wellId))]
+  return wells.flatMap((id) => {
+    const kept = fit.result.residuals.filter(({ wellId }) => wellId === id)
+    const times = kept.map(({ elapsed_s }) => elapsed_s)
+    return slopes(fit, id, times).map((row, i) => ({ row, weight: kept[i]?.standsFor ?? 1 }))
+  })
 }
 
 /** Covariance of the parameters, widened for residuals that are not independent. */
 function covariance(fit: Fit): number[][] {
-  const { residuals, fit: summary } = fit.result
-  const rows = [...fittedTimes(fit)].flatMap(([wellId, times]) => slopes(fit, wellId, times))
+  const { fit: summary } = fit.result
+  const rows = weighedSlopes(fit)
   const size = parametersOf(fit.result).length
   const normal = Array.from({ length: size }, (_, a) =>
-    Array.from({ length: size }, (_, b) => rows.reduce((sum, row) => sum + (row[a] as number) * (row[b] as number), 0)),
+    Array.from({ length: size }, (_, b) =>
+      rows.reduce((sum, { row, weight }) => sum + weight * (row[a] as number) * (row[b] as number), 0),
+    ),
   )
-  const squares = residuals.reduce((sum, { residual_m }) => sum + residual_m ** 2, 0)
+  const squares = summary.rmse_m ** 2 * summary.n
   const variance = (squares / (summary.n - size)) * (summary.n / Math.max(1, summary.effectiveN))
   return invertSymmetric(normal).inverse.map((row) => row.map((value) => value * variance))
 }

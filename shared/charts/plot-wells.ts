@@ -20,6 +20,8 @@ export interface PlotWell {
   label: string
   role: Series['role']
   points: PlotPoint[]
+  /** How many readings the points were chosen from; as many as there are points where all are drawn. */
+  readingCount: number
   /** Readings that somebody left out. */
   leftOut: PlotPoint[]
   /** Derivative of drawdown by the logarithm of time. */
@@ -58,6 +60,7 @@ function plotWell({ kind, inputs, clock, length_m, smoothing }: WellsRequest, se
     label,
     role,
     points: thinned(kept, kind, clock.origin_s),
+    readingCount: kept.length,
     leftOut: placed.filter(({ included }) => !included),
     derivative: withDerivative(kind) ? derivativeOf(inputs, wellId, clock, { length_m, smoothing, kind }) : [],
   }
@@ -80,6 +83,13 @@ function thinned<Point extends PlotPoint>(points: Point[], kind: PlotKind, origi
   }
   const times = points.map(({ elapsed_s }) => elapsed_s - origin_s)
   return thinLogarithmically(times, POINTS_PER_CYCLE).map((i) => points[i] as Point)
+}
+
+/** How many of the wells' readings are drawn; null where all are. */
+export function drawnShare(wells: readonly PlotWell[]): { drawn: number; of: number } | null {
+  const drawn = wells.reduce((sum, { points }) => sum + points.length, 0)
+  const of = wells.reduce((sum, { readingCount }) => sum + readingCount, 0)
+  return drawn < of ? { drawn, of } : null
 }
 
 const withDerivative = (kind: PlotKind) => kind === 'semi-log' || kind === 'log-log'

@@ -10,9 +10,11 @@ import {
 import { cooperJacob } from './cooper-jacob.ts'
 import { curveMethod } from './curve-method.ts'
 import { distanceDrawdown } from './distance-drawdown.ts'
+import { keptResiduals } from './kept-residuals.ts'
 import { limitFindings } from './limits.ts'
 import type { Method } from './method.ts'
 import { conductivityEstimate } from './parameter-estimate.ts'
+import { rateHistory } from './rates.ts'
 import { recovery } from './recovery.ts'
 import { chosenSeries } from './selection.ts'
 import { theis } from './theis.ts'
@@ -31,7 +33,8 @@ export const methodIds = Object.keys(methods) as MethodId[]
 
 /**
  * Analyses a pumping test.
- * @returns parameters with 95 % intervals in SI, findings, residuals, and every reading left out with its reason
+ * @returns parameters with 95 % intervals in SI, findings, residuals (thinned where a well has very many, see
+ * `keptResiduals`; the summary of the fit is of all), and every reading left out with its reason
  * @throws AnalysisError for inputs the method refuses
  */
 export function analyse(methodId: MethodId, inputs: AnalysisInputs, options: AnalysisOptions): AnalysisResult {
@@ -43,6 +46,7 @@ export function analyse(methodId: MethodId, inputs: AnalysisInputs, options: Ana
     method: methodId,
     methodVersion: method.version,
     ...outcome,
+    ...keptResiduals(outcome.residuals, clockOrigin(method, inputs)),
     K: conductivityOf(outcome.T, inputs),
     findings: [
       ...limitFindings({
@@ -54,6 +58,12 @@ export function analyse(methodId: MethodId, inputs: AnalysisInputs, options: Ana
       ...thicknessFindings(inputs),
     ],
   }
+}
+
+/** Moment from which the method's clock runs; it has run, so that there is a stop where it needs one. */
+function clockOrigin({ needs }: Method, { rates }: AnalysisInputs): number {
+  const { start_s, stop_s } = rateHistory(rates)
+  return needs.phase === 'recovery' ? (stop_s ?? start_s) : start_s
 }
 
 /** Drawdown of the fitted model at elapsed times, one entry per well, null where the model says nothing. */

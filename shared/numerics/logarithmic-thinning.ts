@@ -16,3 +16,23 @@ export function thinLogarithmically(values: ArrayLike<number>, perCycle: number 
     return opens || i === last
   })
 }
+
+/**
+ * Indices of at most `most` (2 or more) values spread evenly in their logarithm, with the first and the last. Values must
+ * be positive and ascending. Where early values lie too far apart to be spread finely, the later ones get their share.
+ */
+export function sampleLogarithmically(values: ArrayLike<number>, most: number): number[] {
+  if (!(most >= 2)) throw new RangeError(`Cannot sample ${most} values`)
+  if (values.length <= most) return Array.from({ length: values.length }, (_, i) => i)
+  const last = values.length - 1
+  const end = Math.log(values[last] as number)
+  const kept: number[] = []
+  let next = -Infinity
+  for (let i = 0; i < last && kept.length < most - 1; i++) {
+    const at = Math.log(values[i] as number)
+    if (at < next) continue
+    kept.push(i)
+    next = at + (end - at) / (most - kept.length)
+  }
+  return [...kept, last]
+}

@@ -23,6 +23,7 @@ export function withoutHiddenWells(
     result: {
       ...result,
       residuals: result.residuals.filter(visible),
+      ...(result.residualsShown && { residualsShown: result.residualsShown.filter(visible) }),
       leftOut: result.leftOut.filter(visible),
       findings: result.findings.filter(({ params }) => params.well === undefined || !codes.has(params.well)),
     },

@@ -1,7 +1,9 @@
 import { describe, expect, it } from 'vitest'
 import { studentQuantile } from '#shared/numerics/student.ts'
 import { bandOf } from '#shared/charts/fit-band.ts'
-import { makeFit, makeTestInputs } from './make-plot.ts'
+import { methods } from '#shared/hydraulics/catalogue.ts'
+import { makeInputs, makeTheisSeries } from '../hydraulics/make-inputs.ts'
+import { makeFit, makeTestInputs, truth } from './make-plot.ts'
 
 const noisy = makeTestInputs({ noise: 0.004 })
 
@@ -30,6 +32,19 @@ describe('The band of a fitted curve', () => {
     expect(middle!).toBeLessThan(fit.result.fit.rmse_m)
     expect(late!).toBeGreaterThan(middle!)
     expect(early!).toBeGreaterThan(0)
+  })
+
+  it('is as wide from thinned residuals as from all of them', () => {
+    const elapsed_s = Array.from({ length: 20_000 }, (_, i) => 10 * (i + 1))
+    const noise = elapsed_s.map((_, i) => 0.004 * [1, -1, 0.5, -0.5, -1, 1][i % 6]!)
+    const series = makeTheisSeries(truth, { elapsed_s, included: elapsed_s.map(() => true), noise })
+    const inputs = makeInputs({ series: [series] })
+    const fit = makeFit('cooper-jacob', { window: { from_s: 3_000, to_s: 2e5 }, readingsPerCycle: null }, inputs)
+    const { residuals } = methods['cooper-jacob'].run(inputs, fit.options)
+    expect(fit.result.residuals.length).toBeLessThan(residuals.length / 5)
+    const times = [3_500, 16_000, 190_000]
+    const whole = bandOf({ ...fit, result: { ...fit.result, residuals } })!('o1', times)
+    bandOf(fit)!('o1', times).forEach((half, i) => expect(half / whole[i]!).toBeCloseTo(1, 2))
   })
 
   it('vanishes with the scatter', () => {
