@@ -35,6 +35,18 @@ export function createModels(deps: Deps, adoptedValues: EstimatesNeeds['adoptedV
     return loading
   }
 
+  const fitting = new Map<string, Promise<UnitModel>>()
+
+  /** A fit takes a thread for seconds: those who ask for the same one at the same moment wait for it together. */
+  function fitOnce(unitId: number, quantity: EstimateQuantity, scope: Scope, dataVersion: number, data: UnitData) {
+    const key = [unitId, quantity, scope, dataVersion].join(':')
+    const running = fitting.get(key)
+    if (running) return running
+    const started = fit(unitId, quantity, scope, dataVersion, data).finally(() => fitting.delete(key))
+    fitting.set(key, started)
+    return started
+  }
+
   async function fit(
     unitId: number,
     quantity: EstimateQuantity,
@@ -42,6 +54,9 @@ export function createModels(deps: Deps, adoptedValues: EstimatesNeeds['adoptedV
     dataVersion: number,
     data: UnitData,
   ): Promise<UnitModel> {
+    // Another process, or a fit that ended since the caller looked, may have stored it.
+    const newest = await repository.newestModel(db, unitId, quantity, scope)
+    if (newest && fits(newest, dataVersion, data)) return newest.model
     const input: FitModelInput = { values: data.siteValues, options: { quantity, barriers: data.barriers } }
     const model = await deps.workers.run<UnitModel>('fit-model', input)
     const stored = { ...model, fingerprint: fingerprintOf(data) }
@@ -60,7 +75,7 @@ export function createModels(deps: Deps, adoptedValues: EstimatesNeeds['adoptedV
       if (!data) throw new AppError('estimate/unknown-unit')
       const newest = await repository.newestModel(db, unitId, quantity, scope)
       if (!newest)
-        return { data, model: await fit(unitId, quantity, scope, dataVersion, data), dataVersion, outdated: false }
+        return { data, model: await fitOnce(unitId, quantity, scope, dataVersion, data), dataVersion, outdated: false }
       // The version that the answer names is that of the last change its reader could see.
       if (fits(newest, dataVersion, data)) return { data, ...newest, outdated: false }
       return { data, model: newest.model, dataVersion, outdated: true }
@@ -75,7 +90,7 @@ export function createModels(deps: Deps, adoptedValues: EstimatesNeeds['adoptedV
         const data = await dataOf(unitId, quantity, scope, epsg, dataVersion)
         const newest = await repository.newestModel(db, unitId, quantity, scope)
         if (!data || (newest && fits(newest, dataVersion, data))) continue
-        await fit(unitId, quantity, scope, dataVersion, data)
+        await fitOnce(unitId, quantity, scope, dataVersion, data)
       }
       await report(work.length, work.length)
     },

@@ -1,6 +1,8 @@
 import { eq } from 'drizzle-orm'
 import { beforeAll, describe, expect, it } from 'vitest'
 import type { Estimate } from '#shared/contracts/estimates.ts'
+import { createServices } from '../../../server/api/services.ts'
+import type { Workers } from '../../../server/jobs/workers.ts'
 import { adoptedValues, variogramModels } from '../../../server/db/schema/index.ts'
 import type { Position } from '../../../server/db/spatial.ts'
 import { useApp, type SignedIn } from '../../support/app.ts'
@@ -245,6 +247,43 @@ describe('an embargoed well', () => {
     expect(await estimate(analyst, { unitId, ...beside })).not.toEqual(full)
     await tested.deps.jobs.drain()
     expect(await estimate(reader, { unitId, ...beside })).toEqual(before)
+  })
+})
+
+describe('the first estimates of a unit', () => {
+  /** Services over the same database as another process would have them, and how often these had a model fitted. */
+  function anotherProcess() {
+    const { workers } = tested.deps
+    let fits = 0
+    const counting: Workers = {
+      ...workers,
+      run: (name, input, signal) => {
+        if (name === 'fit-model') fits += 1
+        return workers.run(name, input, signal)
+      },
+    }
+    const { estimates } = createServices({ ...tested.deps, workers: counting })
+    return { estimates, fits: () => fits }
+  }
+  const query = (unitId: number) => ({ lat, lon, unitId, quantity: 'T' as const })
+
+  it('share one fit when they come at the same moment', async () => {
+    const { unitId } = await unitWith(grid.slice(0, 8))
+    const { estimates, fits } = anotherProcess()
+    const answers = await Promise.all(
+      Array.from({ length: 12 }, () => estimates.estimate(books.steward, query(unitId))),
+    )
+    expect(fits()).toBe(1)
+    for (const answer of answers) expect(answer).toEqual(answers[0])
+  })
+
+  it('use the fit that another process has stored', async () => {
+    const { unitId } = await unitWith(grid.slice(0, 8))
+    const first = anotherProcess()
+    const second = anotherProcess()
+    const answer = await first.estimates.estimate(books.steward, query(unitId))
+    expect(await second.estimates.estimate(books.steward, query(unitId))).toEqual(answer)
+    expect([first.fits(), second.fits()]).toEqual([1, 0])
   })
 })
 
