@@ -40,8 +40,8 @@ export const unitAtPlace = z.object({
   kind: z.enum(['confined', 'leaky', 'unconfined', 'aquitard']),
 })
 
-export const estimateContribution = z.object({
-  valueId: recordId,
+/** A test as it is seen from a place. */
+const testFromPlace = {
   pumpingTestId: recordId,
   wellId: recordId,
   wellCode: z.string(),
@@ -49,6 +49,11 @@ export const estimateContribution = z.object({
   lat: latitude,
   distanceM: z.number(),
   bearingDeg: z.number(),
+}
+
+export const estimateContribution = z.object({
+  valueId: recordId,
+  ...testFromPlace,
   weight: z.number(),
   /** SI. */
   value: z.number(),
@@ -107,13 +112,7 @@ export const nearbyValue = z.object({
 })
 
 export const nearbyTest = z.object({
-  pumpingTestId: recordId,
-  wellId: recordId,
-  wellCode: z.string(),
-  lon: longitude,
-  lat: latitude,
-  distanceM: z.number(),
-  bearingDeg: z.number(),
+  ...testFromPlace,
   startAt: instant,
   year: z.int(),
   unitNames: z.array(z.string()),

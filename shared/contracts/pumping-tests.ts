@@ -148,14 +148,10 @@ export const pumpingTest = z.object({
 })
 export type PumpingTest = z.infer<typeof pumpingTest>
 
+const { id, kind, wellId, wellCode, startAt, startLocal, startPrecision } = pumpingTest.shape
+
 export const pumpingTestSummary = z.object({
-  id: recordId,
-  kind: testKind,
-  wellId: recordId,
-  wellCode: z.string(),
-  startAt: instant,
-  startLocal: z.string(),
-  startPrecision: precision,
+  ...{ id, kind, wellId, wellCode, startAt, startLocal, startPrecision },
   unitNames: z.array(z.string()),
   wellCount: z.int(),
   analysisCount: z.int(),

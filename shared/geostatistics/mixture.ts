@@ -1,4 +1,5 @@
-import { normalDensity, normalProbability, studentDensity, studentProbability } from './distributions.ts'
+import { studentCdf } from '#shared/numerics/student.ts'
+import { normalDensity, normalProbability, studentDensity } from './distributions.ts'
 import { GeostatisticsError } from './errors.ts'
 
 /** One part of a mixture: a normal distribution, or Student's t when `df` is given, moved to `mean` and scaled by `sd`. */
@@ -14,7 +15,7 @@ export function mixtureProbability(components: readonly Component[], x: number):
   let total = 0
   for (const { weight, mean, sd, df } of components) {
     if (sd === 0) total += x >= mean ? weight : 0
-    else total += weight * (df === null ? normalProbability((x - mean) / sd) : studentProbability((x - mean) / sd, df))
+    else total += weight * (df === null ? normalProbability((x - mean) / sd) : studentCdf((x - mean) / sd, df))
   }
   return total
 }

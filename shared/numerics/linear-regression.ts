@@ -1,5 +1,3 @@
-import { studentQuantile } from './student.ts'
-
 export interface LineFit {
   slope: number
   intercept: number
@@ -40,19 +38,6 @@ export function describeLine(x: ArrayLike<number>, y: ArrayLike<number>, slope: 
     [-meanX * slopeVariance, slopeVariance],
   ]
   return { slope, intercept, covariance, residuals, sumOfSquares, count }
-}
-
-/** Two-sided intervals of slope and intercept at a confidence level, 0.95 by default. */
-export function lineIntervals(fit: LineFit, { level = 0.95 } = {}) {
-  const t = studentQuantile((1 + level) / 2, lineFreedom(fit.count))
-  const around = (value: number, variance: number) => {
-    const half = t * Math.sqrt(variance)
-    return { low: value - half, high: value + half }
-  }
-  return {
-    slope: around(fit.slope, fit.covariance[1][1]),
-    intercept: around(fit.intercept, fit.covariance[0][0]),
-  }
 }
 
 function moments(x: ArrayLike<number>, y: ArrayLike<number>) {

@@ -35,6 +35,11 @@ describe('quantiles and the functions under them', () => {
     )
   })
 
+  it('keep the limits of the beta function, and its straight line where both parameters are 1', () => {
+    expect([incompleteBeta(0, 2, 3), incompleteBeta(1, 2, 3)]).toEqual([0, 1])
+    near(incompleteBeta(0.3, 1, 1), 0.3, 1e-14)
+  })
+
   it('are undone by the distribution function and are symmetric', () => {
     fc.assert(
       fc.property(probability, freedom, (p, f) => {
