@@ -9,16 +9,18 @@ import {
   seriesForm,
 } from '#shared/contracts/reading-series.ts'
 import type { Deps } from '../../deps.ts'
-import { fieldError } from '../../errors.ts'
 import { onceOf } from '../idempotency/once.ts'
 import { route, type Route } from '../registry.ts'
 import type { Services } from '../services.ts'
-import { takeLogFile } from './upload.ts'
+import { createTurns } from './turns.ts'
+import { readLogFile, takeLogFile, uploadFolder } from './upload.ts'
 
 const params = z.object({ id: idInPath })
 const one = '/api/reading-series/:id'
 
 export function readingSeriesRoutes({ readingSeries }: Services, deps: Deps): Route[] {
+  // More logs than threads to read them would only wait in memory, some 100 MB each.
+  const inTurn = createTurns(deps.config.workerThreads)
   return [
     route(
       {
@@ -27,18 +29,18 @@ export function readingSeriesRoutes({ readingSeries }: Services, deps: Deps): Ro
         action: 'pumping-tests/edit',
         summary: 'Upload the readings of one well of a test',
         limit: 'upload',
-        before: [takeLogFile],
+        before: [takeLogFile(uploadFolder(deps.config))],
         params,
         body: seriesForm,
         response: seriesCreated,
         status: 201,
       },
-      ({ viewer, params: { id }, body: { request }, req }) => {
-        if (!req.file) throw fieldError('file', 'field/required')
-        const { originalname: name, buffer: bytes, size } = req.file
-        const once = onceOf(deps, { viewer, req, body: { request, name, size } })
-        return readingSeries.create(viewer, id, { name, bytes }, request, once)
-      },
+      ({ viewer, params: { id }, body: { request }, req }) =>
+        inTurn(async () => {
+          const file = await readLogFile(req)
+          const known = { request, name: file.name, size: file.bytes.length }
+          return readingSeries.create(viewer, id, file, request, onceOf(deps, { viewer, req, body: known }))
+        }),
     ),
     route(
       {
