@@ -7,20 +7,43 @@ import type { Executor } from '../../db/client.ts'
 import { readable } from '../../db/readable.ts'
 import { adoptedValues, pumpingTests, wells } from '../../db/schema/index.ts'
 
-/** Side of a cluster cell in pixels is 64 = 2^6; a pixel at zoom z is 2^(24 − 8 − z) of the Mercator integers. */
-const cellBits = (zoom: number) => Math.max(0, mercatorBits - 8 - zoom + 6)
+const world = 2 ** mercatorBits
+/** As many cells as a screen of 8 K needs with the margin that the map asks for. */
+const mostCells = 128 * 128
 
-/** Wells of a box, as a range of the Mercator index; a box across the date line wraps. */
-function inBox([west, south, east, north]: MapWellQuery['bbox']): SQL {
+/** A box as ranges of the Mercator index, ends included; across the date line `left` is more than `right`. */
+function rangesOf([west, south, east, north]: MapWellQuery['bbox']) {
   const a = mercatorInts(west, north)
   const b = mercatorInts(east, south)
   // The date line as the eastern edge is the end of the map, not its beginning.
-  const last = east === 180 ? 2 ** mercatorBits - 1 : b.mx
+  return { left: a.mx, right: east === 180 ? world - 1 : b.mx, top: a.my, bottom: b.my }
+}
+
+/** Wells of a box; a box across the date line wraps. */
+function inBox(bbox: MapWellQuery['bbox']): SQL {
+  const { left, right, top, bottom } = rangesOf(bbox)
   const x =
-    west <= east
-      ? sql`${wells.mx} between ${a.mx} and ${last}`
-      : sql`(${wells.mx} >= ${a.mx} or ${wells.mx} <= ${last})`
-  return sql`${x} and ${wells.my} between ${a.my} and ${b.my}`
+    left <= right
+      ? sql`${wells.mx} between ${left} and ${right}`
+      : sql`(${wells.mx} >= ${left} or ${wells.mx} <= ${right})`
+  return sql`${x} and ${wells.my} between ${top} and ${bottom}`
+}
+
+function cellsOf(bbox: MapWellQuery['bbox'], bits: number): number {
+  const { left, right, top, bottom } = rangesOf(bbox)
+  const between = (from: number, to: number) => (to >> bits) - (from >> bits) + 1
+  const columns = left <= right ? between(left, right) : between(left, world - 1) + between(0, right)
+  return columns * Math.max(0, between(top, bottom))
+}
+
+/**
+ * Side of a cluster cell in pixels is 64 = 2^6; a pixel at zoom z is 2^(24 − 8 − z) of the Mercator integers. Cells are
+ * coarser where a box has more of them than any screen shows: the world at street level would answer with every well.
+ */
+function cellBits({ bbox, zoom }: MapWellQuery): number {
+  let bits = Math.max(0, mercatorBits - 8 - zoom + 6)
+  while (cellsOf(bbox, bits) > mostCells) bits += 1
+  return bits
 }
 
 const log10 = (value: number | undefined, within: (log: number) => SQL) =>
@@ -71,8 +94,8 @@ function filtered(executor: Executor, viewer: Viewer, query: MapWellQuery) {
  * Per grid cell: how many wells, and their mean place. Sums of doubles and one expression to group by, because averages
  * of whole numbers are decimals and cost four times as much.
  */
-function measuresOf(zoom: number) {
-  const bits = cellBits(zoom)
+function measuresOf(query: MapWellQuery) {
+  const bits = cellBits(query)
   const cell = sql<number>`((${wells.mx} >> ${bits}) << ${mercatorBits}) | (${wells.my} >> ${bits})`
   const mean = (column: AnyMySqlColumn) => sql<number>`sum(${column} + 0e0) / count(*)`.mapWith(Number)
   const measures = {
@@ -87,19 +110,19 @@ function measuresOf(zoom: number) {
 }
 
 /** All wells of the box, grouped: answered by one index alone, always fresh. */
-export function groupWells(executor: Executor, viewer: Viewer, { bbox, zoom }: MapWellQuery) {
-  const { measures, by } = measuresOf(zoom)
+export function groupWells(executor: Executor, viewer: Viewer, query: MapWellQuery) {
+  const { measures, by } = measuresOf(query)
   return executor
     .select(measures)
     .from(wells)
-    .where(and(inBox(bbox), readable.wells(viewer)))
+    .where(and(inBox(query.bbox), readable.wells(viewer)))
     .groupBy(by)
 }
 
 /** The wells that the query's filter leaves, grouped; without a filter this is `groupWells` and slower. */
 export function groupFilteredWells(executor: Executor, viewer: Viewer, query: MapWellQuery) {
   const { newest, where } = filtered(executor, viewer, query)
-  const { measures, by } = measuresOf(query.zoom)
+  const { measures, by } = measuresOf(query)
   return executor
     .select(measures)
     .from(wells)

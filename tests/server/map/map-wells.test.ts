@@ -3,7 +3,7 @@ import type { MapWells } from '#shared/contracts/map.ts'
 import { wells } from '../../../server/db/schema/index.ts'
 import { mercatorInts } from '#shared/geodesy/index.ts'
 import { useApp, type SignedIn } from '../../support/app.ts'
-import { createWell, makeRegion, makeUnit } from '../../support/domain.ts'
+import { createPublishedWell, createWell, makeRegion, makeUnit } from '../../support/domain.ts'
 import { makeAdoptedValue } from './make-value.ts'
 
 const app = useApp()
@@ -50,11 +50,11 @@ beforeAll(async () => {
   unitId = await makeUnit(app)
   otherUnitId = await makeUnit(app, { name: 'Brannet Sandstone' })
 
-  const firm = await createWell(steward, { code: 'FIRM', x: -21.3 })
-  const slight = await createWell(steward, { code: 'SLIGHT', x: -21.25 })
-  await createWell(steward, { code: 'BARE' })
-  await createWell(steward, { code: 'INSIDE', visibility: 'internal', x: -21.1 })
-  const embargoed = await createWell(steward, { code: 'LATER', x: -21.05 })
+  const firm = await createPublishedWell(steward, { code: 'FIRM', x: -21.3 })
+  const slight = await createPublishedWell(steward, { code: 'SLIGHT', x: -21.25 })
+  await createPublishedWell(steward, { code: 'BARE' })
+  await createWell(steward, { code: 'INSIDE', x: -21.1 })
+  const embargoed = await createPublishedWell(steward, { code: 'LATER', x: -21.05 })
   await makeAdoptedValue(app, steward, { wellId: firm, unitId, value: 5e-3 })
   await makeAdoptedValue(app, steward, { wellId: slight, unitId, value: 1e-4, evidence: 'slight' })
   await makeAdoptedValue(app, steward, {
@@ -122,7 +122,7 @@ describe('wells on the map', () => {
   })
 
   it('hides the value of an internal test at a published well from readers', async () => {
-    const wellId = await createWell(steward, { code: 'HALF', x: -21.4 })
+    const wellId = await createPublishedWell(steward, { code: 'HALF', x: -21.4 })
     const { testId } = await makeAdoptedValue(app, steward, { wellId, unitId })
     await steward
       .put(`/api/pumping-tests/${testId}/visibility`)
@@ -134,7 +134,7 @@ describe('wells on the map', () => {
   })
 
   it('shows the newest of several current values, and none that has ended', async () => {
-    const wellId = await createWell(steward, { code: 'OFTEN', x: -21.45 })
+    const wellId = await createPublishedWell(steward, { code: 'OFTEN', x: -21.45 })
     await makeAdoptedValue(app, steward, { wellId, unitId, value: 1e-2 })
     await makeAdoptedValue(app, steward, { wellId, unitId, value: 2e-2, evidence: 'fair' })
     await makeAdoptedValue(app, steward, { wellId, unitId, value: 9e-2, validTo: app.deps.now() })
@@ -193,6 +193,16 @@ describe('boxes', () => {
   it('hold every well when they are the world', async () => {
     const everything = await ask(steward, { bbox: '-180,-90,180,90', zoom: 1 })
     expect(everything.total).toBe(await app.deps.connection.db.$count(wells))
+  })
+
+  it('of the world are answered as coarsely at street level as a screen of 8 K would show them', async () => {
+    const bbox = '-180,-85,180,85'
+    const close = await ask(steward, { bbox, zoom: 22, unitId })
+    expect(close).toEqual(await ask(steward, { bbox, zoom: 5, unitId }))
+    expect(close.clusters.length + close.wells.length).toBeLessThan(30)
+    // What a window shows is as fine as its zoom.
+    const window = await ask(reader, { bbox: '40,20,40.4,20.4', zoom: 15 })
+    expect(window.clusters.length + window.wells.length).toBeGreaterThan(1_000)
   })
 
   it.each([
