@@ -9,13 +9,25 @@ const htmlStrings = [
   { selector: "MemberExpression[property.name='innerHTML']", message: 'Build elements, not HTML strings.' },
   {
     selector:
-      "CallExpression[callee.property.name=/^(bindPopup|bindTooltip|setContent)$/] > :matches(Literal, TemplateLiteral).arguments",
+      'CallExpression[callee.property.name=/^(bindPopup|bindTooltip|setContent)$/] > :matches(Literal, TemplateLiteral).arguments',
     message: 'Leaflet reads a string as HTML: pass an element.',
   },
 ]
 
 export default tseslint.config(
-  { ignores: ['dist', '.data', '.cache', 'drizzle', 'tiles', 'coverage', 'test-results', 'tests/reference'] },
+  {
+    ignores: [
+      'dist',
+      '.data',
+      '.cache',
+      'drizzle',
+      'tiles/light',
+      'tiles/dark',
+      'coverage',
+      'test-results',
+      'tests/reference',
+    ],
+  },
   js.configs.recommended,
   ...tseslint.configs.recommended,
   ...vue.configs['flat/recommended'],
@@ -34,5 +46,8 @@ export default tseslint.config(
     },
   },
   { files: ['**/*.vue'], languageOptions: { parserOptions: { parser: tseslint.parser } } },
-  { files: ['server/setup/**', 'tests/bench/**', 'tests/reference/**', 'tests/support/**'], rules: { 'no-console': 'off' } },
+  {
+    files: ['server/setup/**', 'tests/bench/**', 'tests/reference/**', 'tests/support/**'],
+    rules: { 'no-console': 'off' },
+  },
 )
