@@ -18,10 +18,19 @@ const allUnits = dimensions.flatMap(unitsOf)
 const asPrinted = 5e-7
 const relativeError = (value: number, expected: number) => Math.abs(value / expected - 1)
 
-/**
- * NIST SP 811 (2008), Appendix B.8, by its entry. `read`: seen in public transcriptions of the table
- * (the SysML v2 library of US customary units, the R package NISTunits); the others are from memory.
+/*
+ * Sources of the factors in this file, and nothing else is used:
+ * - NIST SP 811 (2008), Appendix B.8, printed to seven digits, by its entry. `read`: seen in public transcriptions of
+ *   the table (the SysML v2 library of US customary units, the R package NISTunits); `from memory`: recalled, not read.
+ * - NIST SP 811 (2008), Appendix B.6: the survey foot is 1200/3937 m, so 2.000004 parts in a million longer than the
+ *   foot; Table 6 and 7.10.2: minute, hour, day, litre, per cent. From memory.
+ * - The gallons by their definitions, 231 cubic inches and 4.546 09 L; 1728 cubic inches in a cubic foot; the acre of
+ *   43 560 square survey feet; standard gravity 9.806 65 m/s²; the pound of 0.453 592 37 kg; conventional water of
+ *   1000 kg/m³. From memory; units-factors.py composes every unit from these in exact rational arithmetic.
+ * - scipy.constants (version in units-factors.json), for every unit that it has.
  */
+
+/** By entry of NIST SP 811, B.8. */
 const printed: [unit: string, entry: string, factor: number, how: 'read' | 'from memory'][] = [
   ['ft', 'foot (ft)', 3.048e-1, 'read'],
   ['ft-us', 'foot (U.S. survey) (ft)', 3.048006e-1, 'read'],
@@ -51,11 +60,11 @@ const composed: [unit: string, factor: number, how: string][] = [
 ]
 
 describe('unit factors', () => {
-  it.each(printed)('%s agrees with NIST SP 811 B.8 "%s"', (unit, _entry, factor) => {
+  it.each(printed)('%s agrees with NIST SP 811 B.8 "%s", %d (%s)', (unit, _entry, factor) => {
     expect(relativeError(unitById(unit).toSI, factor)).toBeLessThan(asPrinted)
   })
 
-  it.each(composed)('%s agrees with its parts in NIST SP 811', (unit, factor) => {
+  it.each(composed)('%s agrees with its parts in NIST SP 811, %d (%s)', (unit, factor) => {
     expect(relativeError(unitById(unit).toSI, factor)).toBeLessThan(asPrinted)
   })
 
