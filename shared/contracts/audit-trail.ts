@@ -1,13 +1,30 @@
 import { z } from 'zod'
 import { instant, listOf, paging, recordId } from './common.ts'
 
+/** Everything that is recorded, as `area/what`; the words are in shared/words/audit-actions.ts. */
+export type AuditAction =
+  | 'adopted-values/withdraw'
+  | `analyses/${'create' | 'delete' | 'edit' | 'report' | 'submit' | 'take-back'}`
+  | 'aquifer-units/create'
+  | 'boundaries/create'
+  | 'jobs/cancel'
+  | `password/${'change' | 'set'}`
+  | `people/${'edit' | 'invite' | 'invite-again'}`
+  | `pumping-tests/${'create' | 'edit' | 'report'}`
+  | `readings/${'add' | 'decide' | 'delete'}`
+  | 'region/edit'
+  | `reviews/${'accept' | 'return'}`
+  | 'streams/create'
+  | `visibility/${'edit' | 'lift-embargo'}`
+  | `wells/${'create' | 'edit'}`
+
 export const auditEntry = z.object({
   id: recordId,
   at: instant,
   /** Null: the program itself. */
   actorId: recordId.nullable(),
   actorName: z.string(),
-  /** `area/what`, as in `people/edit`. */
+  /** `area/what`, as in `people/edit`; older entries may hold one that is no longer recorded. */
   action: z.string(),
   subject: z.string(),
   subjectId: recordId.nullable(),

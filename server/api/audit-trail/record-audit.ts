@@ -1,3 +1,4 @@
+import type { AuditAction } from '#shared/contracts/audit-trail.ts'
 import type { Viewer } from '#shared/contracts/permissions.ts'
 import type { Executor } from '../../db/client.ts'
 import { insertAudit } from './audit-trail.repository.ts'
@@ -6,8 +7,7 @@ export interface AuditRecord {
   /** Who did it; null for the program itself. */
   viewer: Pick<Viewer, 'id' | 'name'> | null
   at: Date
-  /** `area/what`, as in `people/edit`. */
-  action: `${string}/${string}`
+  action: AuditAction
   subject: string
   subjectId?: number | null
   /** What changed, for a person to read later; never a secret. */

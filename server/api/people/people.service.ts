@@ -1,3 +1,4 @@
+import type { AuditAction } from '#shared/contracts/audit-trail.ts'
 import type { Invitation, PeopleQuery, Person, PersonEdit } from '#shared/contracts/people.ts'
 import type { Viewer } from '#shared/contracts/permissions.ts'
 import { invitationMail } from '#shared/words/mails.ts'
@@ -47,7 +48,7 @@ export function createPeopleService(deps: Deps, region: RegionService) {
   const record = (
     tx: Executor,
     viewer: Viewer,
-    what: `people/${string}`,
+    what: Extract<AuditAction, `people/${string}`>,
     id: number,
     details: Record<string, unknown>,
   ) => recordAudit(tx, { viewer, at: now(), action: what, subject: 'person', subjectId: id, details })

@@ -1,4 +1,5 @@
 import { beforeAll, describe, expect, it } from 'vitest'
+import type { AuditAction } from '#shared/contracts/audit-trail.ts'
 import { recordAudit } from '../../../server/api/audit-trail/record-audit.ts'
 import { makeApp, useApp, type SignedIn } from '../../support/app.ts'
 import { hours, makeClock } from '../../support/clock.ts'
@@ -14,13 +15,14 @@ describe('the audit trail', () => {
   beforeAll(async () => {
     administrator = await test.signIn('administrator', { name: 'Keeper' })
     const keeper = { id: administrator.id, name: 'Keeper' }
-    const record = (action: `${string}/${string}`, subject: string, subjectId: number, viewer: typeof keeper | null) =>
+    const record = (action: AuditAction, subject: string, subjectId: number, viewer: typeof keeper | null) =>
       recordAudit(test.deps.connection.db, { viewer, at: clock.now(), action, subject, subjectId })
     await record('wells/create', 'well', 1, keeper)
     clock.forward(hours)
     await record('wells/edit', 'well', 1, keeper)
     clock.forward(hours)
-    await record('wells-of-old/lift', 'well', 2, null)
+    // As another version of the program may have recorded it.
+    await record('wells-of-old/lift' as AuditAction, 'well', 2, null)
   })
 
   it('lists the newest first, with the program’s own work under its name', async () => {
