@@ -1,7 +1,7 @@
 import { preferences, type PasswordChange, type Preferences } from '#shared/contracts/account.ts'
 import { session, type Session } from '#shared/contracts/session.ts'
 import { api } from './client.ts'
-import { setCsrfToken } from './csrf.ts'
+import { holdCsrfToken } from './csrf.ts'
 
 export const savePreferences = (body: Preferences): Promise<Preferences> =>
   api.put('/api/account/preferences', { body, response: preferences })
@@ -9,6 +9,6 @@ export const savePreferences = (body: Preferences): Promise<Preferences> =>
 /** Ends the person's other sessions; this one goes on with a new token. */
 export async function changePassword(body: PasswordChange): Promise<Session> {
   const answer = await api.put('/api/account/password', { body, response: session })
-  setCsrfToken(answer.csrfToken)
+  holdCsrfToken(answer)
   return answer
 }

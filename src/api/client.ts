@@ -58,7 +58,11 @@ const dispatch = (call: Call): Promise<Incoming> =>
 /** Puts right what stood in the way; true when the request is worth repeating. */
 async function recover(problem: ApiProblem, call: Call): Promise<boolean> {
   if (problem.status === 503) apiHooks().unavailable()
-  if (problem.code === 'request/csrf') return refreshCsrfToken().then(() => true)
+  if (problem.code === 'request/csrf') {
+    if (await refreshCsrfToken()) return true
+    apiHooks().anotherPerson()
+    throw ApiProblem.of('client/another-person')
+  }
   if (problem.code === 'session/required') return (await apiHooks().signInAgain()) && !call.signal?.aborted
   return false
 }

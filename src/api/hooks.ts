@@ -4,10 +4,16 @@ export interface ApiHooks {
   signInAgain: () => Promise<boolean>
   /** The server or its database does not answer. */
   unavailable: () => void
+  /** Somebody else has signed in in another window of this browser; the page is no longer theirs who opened it. */
+  anotherPerson: () => void
 }
 
-const hooks: ApiHooks = { signInAgain: () => Promise.resolve(false), unavailable: () => undefined }
+const hooks: ApiHooks = {
+  signInAgain: () => Promise.resolve(false),
+  unavailable: () => undefined,
+  anotherPerson: () => undefined,
+}
 
-export const setApiHooks = (given: ApiHooks) => Object.assign(hooks, given)
+export const setApiHooks = (given: Partial<ApiHooks>) => Object.assign(hooks, given)
 
 export const apiHooks = (): Readonly<ApiHooks> => hooks

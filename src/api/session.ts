@@ -1,11 +1,11 @@
 import { session, type Session, type SignIn } from '#shared/contracts/session.ts'
 import { api } from './client.ts'
-import { setCsrfToken } from './csrf.ts'
+import { holdCsrfToken } from './csrf.ts'
 
 /** Keeps the token of the session that the answer describes. */
 async function entered(answer: Promise<Session>): Promise<Session> {
   const given = await answer
-  setCsrfToken(given.csrfToken)
+  holdCsrfToken(given)
   return given
 }
 

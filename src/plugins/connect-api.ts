@@ -11,5 +11,6 @@ export function connectApi(pinia: Pinia) {
     // A visitor has no session that could have ended: the guard sends them to the sign-in page.
     signInAgain: () => (session.signedIn ? useSignInPrompt(pinia).ask() : Promise.resolve(false)),
     unavailable: () => useConnection(pinia).lost(),
+    anotherPerson: () => void session.changeOver().catch(() => undefined),
   })
 }

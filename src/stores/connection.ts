@@ -23,7 +23,8 @@ export const useConnection = defineStore('connection', () => {
     checking.value = true
     available.value = await serverAnswers()
     checking.value = false
-    if (available.value) await queries.invalidateQueries()
+    // What still fails says so where it stands.
+    if (available.value) await queries.invalidateQueries().catch(() => undefined)
     else timer = setTimeout(retry, RETRY_MS)
   }
 

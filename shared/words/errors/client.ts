@@ -10,6 +10,11 @@ export const clientErrors = {
     status: 500,
     sentence: () => 'The answer of the server could not be read. Reload the page: it may be older than the server.',
   },
+  'client/another-person': {
+    status: 403,
+    sentence: () =>
+      'Somebody else has signed in in another window of this browser. Nothing was saved under their name: sign in again to go on.',
+  },
   'client/failed': {
     status: 500,
     sentence: () => 'Something went wrong on this page. Reload it and try again; nothing that was saved is lost.',

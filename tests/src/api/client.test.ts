@@ -1,7 +1,7 @@
 import { afterEach, beforeEach, describe, expect, it, vi } from 'vitest'
 import { z } from 'zod'
 import { api } from '../../../src/api/client.ts'
-import { setCsrfToken } from '../../../src/api/csrf.ts'
+import { holdCsrfToken } from '../../../src/api/csrf.ts'
 import { setApiHooks } from '../../../src/api/hooks.ts'
 import { ApiProblem, fieldText } from '../../../src/api/problem.ts'
 import { fakeServer, refuse, type Asked } from '../support/fake-server.ts'
@@ -13,9 +13,9 @@ const problemOf = (work: Promise<unknown>) =>
     (error: ApiProblem) => error,
   )
 
-beforeEach(() => setCsrfToken('token-1'))
+beforeEach(() => holdCsrfToken({ csrfToken: 'token-1', viewer: { id: 7 } }))
 afterEach(() => {
-  setApiHooks({ signInAgain: async () => false, unavailable: () => undefined })
+  setApiHooks({ signInAgain: async () => false, unavailable: () => undefined, anotherPerson: () => undefined })
   vi.unstubAllGlobals()
 })
 
@@ -56,7 +56,7 @@ describe('the query string', () => {
 describe('a stale token', () => {
   it('is refreshed once and the request goes through with the new one', async () => {
     fakeServer({
-      'GET /api/session': () => ({ body: { csrfToken: 'token-2' } }),
+      'GET /api/session': () => ({ body: { csrfToken: 'token-2', viewer: { id: 7 } } }),
       'PATCH /api/wells/1': ({ headers }) =>
         headers.get('X-CSRF-Token') === 'token-2' ? { body: { code: 'V-2' } } : refuse('request/csrf'),
     })
@@ -65,12 +65,27 @@ describe('a stale token', () => {
 
   it('that stays refused ends as a problem and not in a circle', async () => {
     const { asked } = fakeServer({
-      'GET /api/session': () => ({ body: { csrfToken: 'token-2' } }),
+      'GET /api/session': () => ({ body: { csrfToken: 'token-2', viewer: { id: 7 } } }),
       'PATCH /api/wells/1': () => refuse('request/csrf'),
     })
     const problem = await problemOf(api.patch('/api/wells/1', { body: {}, response: well }))
     expect(problem?.code).toBe('request/csrf')
     expect(asked.length).toBeLessThan(8)
+  })
+})
+
+describe('a token of somebody else, who signed in in another window', () => {
+  it('is not taken: nothing is saved under their name, and the application is told', async () => {
+    let told = 0
+    setApiHooks({ anotherPerson: () => void (told += 1) })
+    const { asked } = fakeServer({
+      'GET /api/session': () => ({ body: { csrfToken: 'token-of-8', viewer: { id: 8 } } }),
+      'PATCH /api/wells/1': ({ headers }) =>
+        headers.get('X-CSRF-Token') === 'token-of-8' ? { body: { code: 'V-2' } } : refuse('request/csrf'),
+    })
+    const problem = await problemOf(api.patch('/api/wells/1', { body: {}, response: well }))
+    expect([problem?.code, told]).toEqual(['client/another-person', 1])
+    expect(asked.filter(({ method }) => method === 'PATCH')).toHaveLength(1)
   })
 })
 

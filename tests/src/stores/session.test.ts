@@ -1,9 +1,10 @@
+import { useQuery } from '@pinia/colada'
 import { describe, expect, it } from 'vitest'
 import { defaultPreferences } from '#shared/contracts/account.ts'
 import { usePreferences } from '../../../src/stores/preferences.ts'
 import { useSession } from '../../../src/stores/session.ts'
 import { fakeServer, refuse } from '../support/fake-server.ts'
-import { runWith } from '../support/mount.ts'
+import { runWith, settle } from '../support/mount.ts'
 import { makeRegion, makeSession, makeVisitor } from '../support/session.ts'
 
 describe('the session', () => {
@@ -33,5 +34,28 @@ describe('the session', () => {
     expect(session.signedIn).toBe(false)
     await session.signInWith({ email: 'bo@veldray.example', password: 'right' })
     expect([session.viewer.name, chosen.theme, chosen.unitSystem.id]).toEqual(['Bo', 'dark', 'us'])
+  })
+
+  const reading = (answers: string[]) => () => {
+    const session = useSession()
+    const { data } = useQuery({ key: ['wells', 1], query: async () => answers.shift() ?? 'nothing more' })
+    return { session, data }
+  }
+
+  it('of another person shows nothing that was fetched for the one before', async () => {
+    const { session, data } = runWith(reading(['internal']), makeSession({ role: 'steward' }))
+    await settle()
+    expect(data.value).toBe('internal')
+    session.enter(makeSession({ id: 8, role: 'reader' }))
+    expect(data.value).toBeUndefined()
+  })
+
+  it('of the same person with another role keeps the page and fetches it anew', async () => {
+    const { session, data } = runWith(reading(['as a steward', 'as a reader']), makeSession({ role: 'steward' }))
+    await settle()
+    session.enter(makeSession({ role: 'reader' }))
+    expect(data.value).toBe('as a steward')
+    await settle()
+    expect(data.value).toBe('as a reader')
   })
 })

@@ -61,8 +61,10 @@ export async function mountWith(given: object, { props = {}, slots = {}, session
   const host = document.createElement('div')
   document.body.append(host)
   const root = { render: () => h(VApp, null, { default: () => h(component, props, slots as never) }) }
-  // As in the program: who is signed in is known before a page is set up.
-  enter(session ?? makeSession())
+  // As in the program: who is signed in is known before a page is set up, and stores are made inside an application.
+  const before = createApp({ render: () => null })
+  for (const plugin of list.slice(0, 2)) before.use(plugin as never)
+  before.runWithContext(() => enter(session ?? makeSession()))
   const wrapper = mount(root, { attachTo: host, global: { plugins: list as never } })
   unmounts.push(() => wrapper.unmount())
   await router.push(path)
@@ -75,7 +77,7 @@ export function runWith<Result>(use: () => Result, session: Session = makeSessio
   const { list } = plugins(session)
   const app = createApp({ render: () => null })
   for (const plugin of list) app.use(plugin as never)
-  enter(session)
+  app.runWithContext(() => enter(session))
   const scope = effectScope()
   unmounts.push(() => scope.stop())
   return app.runWithContext(() => scope.run(use)) as Result
