@@ -14,14 +14,32 @@ function tell(news: Job) {
   for (const listener of listeners) listener(news)
 }
 
-/** Opens the stream; `heard` gets each piece of news. */
+const RETRY_MS = 5_000
+
+/**
+ * Opens the stream; `heard` gets each piece of news. A browser gives up for good after an answer that is no stream (the
+ * session ended, the database was away), so it is opened again then.
+ */
 function openStream(heard: Listener): () => void {
-  const source = new EventSource('/api/progress')
-  source.addEventListener('job', (event: MessageEvent<string>) => {
-    const parsed = job.safeParse(parseJson(event.data))
-    if (parsed.success) heard(parsed.data)
-  })
-  return () => source.close()
+  let source: EventSource
+  let waiting: ReturnType<typeof setTimeout> | undefined
+
+  function open() {
+    source = new EventSource('/api/progress')
+    source.addEventListener('job', (event: MessageEvent<string>) => {
+      const parsed = job.safeParse(parseJson(event.data))
+      if (parsed.success) heard(parsed.data)
+    })
+    source.addEventListener('error', () => {
+      if (source.readyState === EventSource.CLOSED) waiting = setTimeout(open, RETRY_MS)
+    })
+  }
+
+  open()
+  return () => {
+    clearTimeout(waiting)
+    source.close()
+  }
 }
 
 /**
