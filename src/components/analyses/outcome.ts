@@ -46,6 +46,9 @@ export function comparedOf(
 export const isFitted = (analysis: Analysis): analysis is Analysis & { method: MethodId; options: AnalysisOptions } =>
   analysis.method !== 'reported' && analysis.options !== null
 
+/** What a reviewer sent back, or whose value was withdrawn, is evidence of nothing. */
+export const isEvidence = (state: Analysis['state']): boolean => state !== 'returned' && state !== 'withdrawn'
+
 /** Evidence that a result would have beside the kept analyses of its test, by the rules that the server adopts by. */
 export function evidencePreview(
   inputs: AnalysisInputs,
@@ -55,7 +58,7 @@ export function evidencePreview(
   const mine = comparedOf('', '', { ...work, wellIds: work.options.wellIds })
   if (!mine) return null
   const recoveryAgrees = kept.some((other) => {
-    if (other.id === work.id || other.method !== 'recovery' || other.state === 'withdrawn' || !isFitted(other))
+    if (other.id === work.id || other.method !== 'recovery' || !isEvidence(other.state) || !isFitted(other))
       return false
     const theirs = comparedOf('', '', {
       ...other,

@@ -1,27 +1,31 @@
 import { useQueryCache } from '@pinia/colada'
 import { computed } from 'vue'
-import type { AnalysisInput } from '#shared/contracts/analyses.ts'
-import { createAnalysis, deleteAnalysis, fetchAnalyses, updateAnalysis } from '../../api/analyses.ts'
+import type { Analysis, AnalysisInput } from '#shared/contracts/analyses.ts'
+import { createAnalysis, deleteAnalysis, updateAnalysis } from '../../api/analyses.ts'
+import type { ApiProblem } from '../../api/problem.ts'
+import { useDataChanged } from '../../composables/useDataChanged.ts'
 import { useSubmit } from '../../composables/useSubmit.ts'
 import { useMessages } from '../../stores/messages.ts'
 import { useWorkbench } from './use-workbench.ts'
 
-/** Everything that a change of an analysis may show on. */
-export function useRefresh() {
+/** The server's answer stands in the list at once, whether or not the list can be fetched anew. */
+function useKeptList() {
   const queries = useQueryCache()
-  return (testId: number) =>
-    Promise.all(
-      [['pumping-tests', testId], ['pumping-tests', 'list'], ['adopted-values'], ['reviews']].map((key) =>
-        queries.invalidateQueries({ key }),
-      ),
-    )
+  return (saved: Analysis) =>
+    queries.setQueryData<{ items: Analysis[] }>(['pumping-tests', saved.pumpingTestId, 'analyses'], (before) => {
+      const items = before?.items ?? []
+      const known = items.some(({ id }) => id === saved.id)
+      return { items: known ? items.map((item) => (item.id === saved.id ? saved : item)) : [...items, saved] }
+    })
 }
 
 /** Saving, deleting and the conflict of two editors. */
 export function useAnalysisWrites() {
-  const { test, snapshot, present, result, kept, selected, select, discard, setWork } = useWorkbench()
+  const { test, snapshot, present, result, kept, selected, select, discard, setWork, unsavedOf, settle } =
+    useWorkbench()
   const messages = useMessages()
-  const refresh = useRefresh()
+  const changed = useDataChanged()
+  const enter = useKeptList()
 
   const body = computed<AnalysisInput | null>(() => {
     if (!present.value || !result.value) return null
@@ -39,25 +43,35 @@ export function useAnalysisWrites() {
 
   async function save() {
     const from = selected.value
-    const answer = body.value && (await saving.submit(body.value))
-    if (!answer || from === null) return null
-    await refresh(test.value.id)
-    select(String(answer.id))
-    discard(from)
+    if (!body.value || from === null) return
+    const sent = unsavedOf(from)
+    const answer = await saving.submit(body.value)
+    if (!answer) return whenRefused(saving.problem.value)
+    enter(answer)
+    settle(from, sent, answer)
     messages.tell('The analysis is saved.')
-    return answer
+    await changed()
+  }
+
+  /**
+   * A conflict is told beside what is saved now, not beside what the page began with. New inputs wait until they are
+   * asked for, because they change the numbers.
+   */
+  async function whenRefused(problem: ApiProblem | null) {
+    if (problem?.status === 404) messages.tell(problem.message, 'caution')
+    const known = problem?.status === 409 || problem?.status === 404
+    if (known && problem.code !== 'analysis/inputs-changed') await changed()
   }
 
   /** Another person changed the same draft: go on from theirs, or write over it. */
   async function keepMine() {
-    const { items } = await fetchAnalyses(test.value.id)
-    const newest = items.find(({ id }) => id === kept.value?.id)
-    if (newest) setWork({ rowVersion: newest.rowVersion })
+    await changed()
+    if (kept.value) setWork({ rowVersion: kept.value.rowVersion })
     await save()
   }
 
   async function takeTheirs() {
-    await refresh(test.value.id)
+    await changed()
     if (selected.value) discard(selected.value)
     saving.clear()
   }
@@ -69,8 +83,8 @@ export function useAnalysisWrites() {
     if (id === undefined || !(await removing.submit(id))) return
     discard(String(id))
     select(null)
-    await refresh(test.value.id)
     messages.tell('The draft is deleted.')
+    await changed()
   }
 
   return { body, saving, save, keepMine, takeTheirs, removing, remove }

@@ -1,7 +1,7 @@
 import { computed } from 'vue'
 import type { AnalysisOptions, AnalysisResult } from '#shared/hydraulics/analysis.ts'
 import type { AquiferKnown } from '#shared/hydraulics/well-performance-at.ts'
-import { isFitted } from './outcome.ts'
+import { isEvidence, isFitted } from './outcome.ts'
 import { useWorkbench } from './use-workbench.ts'
 
 interface Candidate {
@@ -14,7 +14,7 @@ interface Candidate {
  * alone, else from the best kept one that does.
  */
 export function useAquifer() {
-  const { snapshot, analyses, present, resting } = useWorkbench()
+  const { snapshot, analyses, resting } = useWorkbench()
 
   const observedOnly = ({ options }: Candidate) =>
     options.wellIds.every(
@@ -22,9 +22,10 @@ export function useAquifer() {
     )
 
   return computed<AquiferKnown>(() => {
-    const open: Candidate[] =
-      present.value && resting.value ? [{ options: present.value.options, result: resting.value }] : []
-    const kept = analyses.value.filter(isFitted).filter(({ state }) => state !== 'withdrawn' && state !== 'returned')
+    const open: Candidate[] = resting.value
+      ? [{ options: resting.value.work.options, result: resting.value.result }]
+      : []
+    const kept = analyses.value.filter(isFitted).filter(({ state }) => isEvidence(state))
     const accepted = kept.filter(({ state }) => state === 'accepted')
     const all = [...open, ...accepted, ...[...kept].reverse()].map(({ options, result: found }) => ({
       options,

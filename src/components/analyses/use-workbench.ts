@@ -1,4 +1,4 @@
-import { computed, inject, provide, ref, shallowRef, type ComputedRef, type InjectionKey, type Ref } from 'vue'
+import { computed, inject, provide, ref, shallowRef, watch, type ComputedRef, type InjectionKey, type Ref } from 'vue'
 import type { Analysis, WorkbenchInputs } from '#shared/contracts/analyses.ts'
 import type { PumpingTest } from '#shared/contracts/pumping-tests.ts'
 import type { AnalysisOptions, AnalysisResult } from '#shared/hydraulics/analysis.ts'
@@ -25,17 +25,24 @@ export interface Workbench {
   editable: ComputedRef<boolean>
   outcome: ComputedRef<Outcome | null>
   result: ComputedRef<AnalysisResult | null>
-  /** The result while nothing moves: what takes longer, or stands aside, follows it and not the mouse. */
-  resting: Readonly<Ref<AnalysisResult | null>>
+  /** Work and result while nothing moves: what takes longer, or stands aside, follows them and not the mouse. */
+  resting: Readonly<Ref<{ work: Work; result: AnalysisResult } | null>>
   moving: ComputedRef<boolean>
   hasNew: ComputedRef<boolean>
   isChanged(key: string): boolean
   select(key: string | null): void
+  /** Begins a new analysis; asks first where that would replace another one that somebody has worked on. */
   start(method: MethodId, given?: Partial<Work>): void
+  /** What `start` asks about: how it goes on, or null. */
+  asking: Ref<(() => void) | null>
   setOptions(change: Partial<AnalysisOptions>): void
   setWork(change: Partial<Work>): void
   /** Forgets unsaved changes of a key. */
   discard(key: string): void
+  /** Unsaved changes of a key as they are now, to be told from later ones. */
+  unsavedOf(key: string): Work | null
+  /** After saving: what was sent is no longer unsaved; what was changed meanwhile goes on as a change of the saved one. */
+  settle(from: string, sent: Work | null, saved: Analysis): void
   mayCreate: ComputedRef<boolean>
 }
 
@@ -47,7 +54,7 @@ interface Given {
   snapshot: () => WorkbenchInputs
   analyses: () => readonly Analysis[]
   /** Opened by the address. */
-  opened: number | null
+  opened: () => number | null
 }
 
 const workOf = (analysis: Analysis | null): Work | null =>
@@ -58,7 +65,7 @@ const workOf = (analysis: Analysis | null): Work | null =>
 /** Which analysis is open first: the one asked for, unsaved work, the accepted one, the newest. */
 function firstKey({ analyses, opened }: Given, works: Record<string, Work>): string | null {
   const fitted = analyses().filter(isFitted)
-  const found = fitted.find(({ id }) => id === opened) ?? fitted.find(({ id }) => works[id])
+  const found = fitted.find(({ id }) => id === opened()) ?? fitted.find(({ id }) => works[id])
   if (found) return String(found.id)
   if (works[NEW]) return NEW
   const best = fitted.find(({ state }) => state === 'accepted') ?? fitted.at(-1)
@@ -67,22 +74,25 @@ function firstKey({ analyses, opened }: Given, works: Record<string, Work>): str
 
 export function provideWorkbench(given: Given): Workbench {
   const session = useSession()
-  const testId = given.test().id
-  const works = shallowRef<Record<string, Work>>(readWork(testId))
+  const desk = { personId: session.viewer.id, testId: given.test().id }
+  const works = shallowRef<Record<string, Work>>(readWork(desk))
   const selected = ref(firstKey(given, works.value))
   const plotKind = ref<PlotKind>('semi-log')
 
   const snapshot = computed(given.snapshot)
   const analyses = computed(given.analyses)
   const kept = computed(() => analyses.value.find(({ id }) => String(id) === selected.value) ?? null)
-  const unsaved = computed(() => (selected.value === null ? null : (works.value[selected.value] ?? null)))
-  const present = computed(() => unsaved.value ?? workOf(kept.value))
   const mayCreate = computed(() => session.can('analyses/create'))
   const editable = computed(() => (selected.value === NEW ? mayCreate.value : (kept.value?.mayEdit ?? false)))
+  /** What was submitted meanwhile is shown as it was submitted, never with changes that were not saved before. */
+  const unsaved = computed(() => (selected.value !== null && editable.value ? unsavedOf(selected.value) : null))
+  const present = computed(() => unsaved.value ?? workOf(kept.value))
 
   const outcome = computed<Outcome | null>(() => {
     if (!present.value) return null
-    if (!unsaved.value && kept.value) return { result: kept.value.result as AnalysisResult }
+    // A draft of inputs that have changed is calculated anew, so that saving it can keep what the page shows.
+    const stands = kept.value && !unsaved.value && !(kept.value.inputsChanged && editable.value)
+    if (stands && kept.value) return { result: kept.value.result as AnalysisResult }
     return outcomeOf(present.value.method, snapshot.value.inputs, present.value.options)
   })
 
@@ -97,9 +107,49 @@ export function provideWorkbench(given: Given): Workbench {
     if (method) plotKind.value = plotOfMethod[method]
   }
 
+  function unsavedOf(at: string): Work | null {
+    return works.value[at] ?? null
+  }
+
+  const untouched = (method: MethodId): Work => ({
+    method,
+    options: firstOptions(method, snapshot.value.inputs),
+    label: null,
+    rowVersion: null,
+  })
+
+  /** Settings chosen by hand would be lost; a proposal that nobody touched would not be missed. */
+  function isWorkedOn(work: Work | null): boolean {
+    return work !== null && JSON.stringify(work) !== JSON.stringify(untouched(work.method))
+  }
+
+  const asking = shallowRef<(() => void) | null>(null)
+
   function start(method: MethodId, rest: Partial<Work> = {}) {
-    put(NEW, { method, options: firstOptions(method, snapshot.value.inputs), label: null, rowVersion: null, ...rest })
-    select(NEW)
+    const begin = () => {
+      asking.value = null
+      put(NEW, { ...untouched(method), ...rest })
+      select(NEW)
+    }
+    if (isWorkedOn(unsavedOf(NEW))) asking.value = begin
+    else begin()
+  }
+
+  function settle(from: string, sent: Work | null, saved: Analysis) {
+    const now = unsavedOf(from)
+    put(from, null)
+    if (now !== sent && now) put(String(saved.id), { ...now, rowVersion: saved.rowVersion })
+    if (selected.value === from) select(String(saved.id))
+  }
+
+  /** Somebody deleted the draft that is open: its unsaved changes stay, as a new analysis. */
+  function rescue() {
+    const at = selected.value
+    if (at === null || at === NEW || analyses.value.some(({ id }) => String(id) === at)) return
+    const work = unsavedOf(at)
+    put(at, null)
+    if (work && !unsavedOf(NEW)) put(NEW, { ...work, rowVersion: null })
+    select(work && unsavedOf(NEW) ? NEW : firstKey(given, works.value))
   }
 
   function setWork(change: Partial<Work>) {
@@ -111,10 +161,16 @@ export function provideWorkbench(given: Given): Workbench {
     if (at === selected.value && at === NEW) select(firstKey(given, works.value))
   }
 
-  keepWhileOpen(testId, works)
+  watch(analyses, rescue)
+  watch(given.opened, (id) => {
+    if (analyses.value.some((analysis) => analysis.id === id && isFitted(analysis))) select(String(id))
+  })
+  keepWhileOpen(desk, works)
 
   const result = computed(() => resultOf(outcome.value))
-  const resting = useResting(result)
+  const resting = useResting(
+    computed(() => (present.value && result.value ? { work: present.value, result: result.value } : null)),
+  )
 
   const bench: Workbench = {
     test: computed(given.test),
@@ -129,14 +185,17 @@ export function provideWorkbench(given: Given): Workbench {
     outcome,
     result,
     resting,
-    moving: computed(() => resting.value !== result.value),
+    moving: computed(() => (resting.value?.result ?? null) !== result.value),
     hasNew: computed(() => NEW in works.value),
-    isChanged: (at) => at in works.value,
+    isChanged: (at) => at in works.value && (analyses.value.find(({ id }) => String(id) === at)?.mayEdit ?? false),
     select,
     start,
+    asking,
     setWork,
     setOptions: (change) => present.value && setWork({ options: { ...present.value.options, ...change } }),
     discard,
+    unsavedOf,
+    settle,
     mayCreate,
   }
   provide(key, bench)

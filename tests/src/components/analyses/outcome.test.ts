@@ -1,6 +1,4 @@
 import { describe, expect, it } from 'vitest'
-import type { Analysis } from '#shared/contracts/analyses.ts'
-import type { AnalysisResult } from '#shared/hydraulics/analysis.ts'
 import { unitSystemById } from '#shared/quantities/systems.ts'
 import {
   bySeverity,
@@ -10,40 +8,11 @@ import {
   resultOf,
 } from '../../../../src/components/analyses/outcome.ts'
 import { firstOptions } from '../../../../src/components/analyses/first-options.ts'
+import { makeAnalysis } from './make.ts'
 import { makeSeries } from '../../../shared/hydraulics/make-inputs.ts'
 import { makeFit, makeTestInputs } from '../../../shared/charts/make-plot.ts'
 
 const metric = unitSystemById('metric')
-
-function makeAnalysis(
-  method: 'recovery' | 'theis',
-  result: AnalysisResult,
-  overrides: Partial<Analysis> = {},
-): Analysis {
-  return {
-    id: 3,
-    pumpingTestId: 1,
-    method,
-    methodVersion: 1,
-    state: 'draft',
-    options: { wellIds: ['o1'], window: null },
-    result,
-    label: null,
-    rationale: null,
-    adoption: null,
-    inputsChanged: false,
-    questions: [],
-    refusals: [],
-    createdBy: null,
-    createdAt: '2026-01-01T00:00:00.000Z',
-    submittedAt: null,
-    reviews: [],
-    rowVersion: 1,
-    mayEdit: true,
-    mayReview: false,
-    ...overrides,
-  }
-}
 
 describe('An outcome', () => {
   it('is a result, or the sentence of why there is none', () => {
@@ -85,12 +54,12 @@ describe('The evidence that is shown before saving', () => {
     expect(evidencePreview(inputs, open(), [])?.evidence).toBe('firm')
   })
 
-  it('counts a kept recovery that agrees, and not a withdrawn one', () => {
-    const recovery = makeAnalysis('recovery', makeFit('recovery', {}, pumpedOnly).result)
+  it('counts a kept recovery that agrees, and neither a withdrawn nor a returned one', () => {
+    const recovery = makeAnalysis({ method: 'recovery', result: makeFit('recovery', {}, pumpedOnly).result })
     expect(evidencePreview(pumpedOnly, open(pumpedOnly), [])?.reason).toBe('single-well')
     expect(evidencePreview(pumpedOnly, open(pumpedOnly), [recovery])?.reason).toBe('recovery-agrees')
-    const gone = { ...recovery, state: 'withdrawn' as const }
-    expect(evidencePreview(pumpedOnly, open(pumpedOnly), [gone])?.reason).toBe('single-well')
+    for (const state of ['withdrawn', 'returned'] as const)
+      expect(evidencePreview(pumpedOnly, open(pumpedOnly), [{ ...recovery, state }])?.reason).toBe('single-well')
   })
 })
 
