@@ -138,6 +138,20 @@ export function windowOfSpan(
   return { from_s: Math.max(0, Math.min(a, b)), to_s: Math.max(a, b) }
 }
 
+/** The window after one of its edges was moved: the edge that stayed keeps all its digits. */
+export function movedWindow(
+  plot: Pick<TimePlot, 'clock' | 'units'>,
+  origin_s: number,
+  { window, span, moved }: { window: TimeWindow; span: readonly [number, number]; moved: readonly [number, number] },
+): TimeWindow {
+  const before = windowOfSpan(plot, origin_s, span)
+  const after = windowOfSpan(plot, origin_s, moved)
+  return {
+    from_s: after.from_s === before.from_s ? window.from_s : after.from_s,
+    to_s: after.to_s === before.to_s ? window.to_s : after.to_s,
+  }
+}
+
 const shadeLabels: Record<string, string> = {
   'u-small': 'u > 0.05',
   'u-large': 'u > 0.05',

@@ -1,6 +1,6 @@
 import { describe, expect, it } from 'vitest'
 import { distanceDrawing, distancePlot } from '#shared/charts/distance-plot.ts'
-import { fitDrawing, methodOrigin, spanOf, windowOfSpan } from '#shared/charts/fit-drawing.ts'
+import { fitDrawing, methodOrigin, movedWindow, spanOf, windowOfSpan } from '#shared/charts/fit-drawing.ts'
 import { lineEnds, lineFromZero, lineOf, lineThrough, zeroOf } from '#shared/charts/hand-line.ts'
 import { plotKinds } from '#shared/charts/plot-kinds.ts'
 import { logSpaced, makeInputs, makeTheisSeries } from '../hydraulics/make-inputs.ts'
@@ -71,6 +71,26 @@ describe('A plot against time', () => {
 })
 
 describe('The window on an axis', () => {
+  it('keeps all digits of the edge that is not moved, whichever way the axis runs', () => {
+    const window = { from_s: 1_234.567, to_s: 48_765.432 }
+    for (const [kind, method] of [
+      ['semi-log', 'cooper-jacob'],
+      ['recovery', 'recovery'],
+    ] as const) {
+      const inputs = makeTestInputs()
+      const plot = makePlot({ kind, inputs })
+      const origin = methodOrigin(inputs, method)
+      const span = spanOf(plot, origin, window)!
+      const first = movedWindow(plot, origin, { window, span, moved: [span[0] * 1.1, span[1]] })
+      const last = movedWindow(plot, origin, { window, span, moved: [span[0], span[1] / 1.1] })
+      const [early, late] = kind === 'recovery' ? [last, first] : [first, last]
+      expect(early.to_s).toBe(window.to_s)
+      expect(early.from_s).not.toBe(window.from_s)
+      expect(late.from_s).toBe(window.from_s)
+      expect(late.to_s).not.toBe(window.to_s)
+    }
+  })
+
   it('comes back from its span, in few figures', () => {
     for (const [kind, method] of [
       ['semi-log', 'cooper-jacob'],
