@@ -66,6 +66,14 @@ describe('a number field', () => {
     expect(model.value).toBe(0.012)
   })
 
+  it('leaves the quantity itself alone when its unit changes, to the last digit', async () => {
+    const { model, unitId, text } = await makeField(12.5, 'm')
+    unitId.value = 'ft'
+    await settle()
+    expect(text()).toBe('41.01049869')
+    expect(model.value).toBe(12.5)
+  })
+
   it('leaves what was typed as it was typed', async () => {
     const { type, text } = await makeField(null, 'L/s')
     await type('12,50')
