@@ -30,5 +30,9 @@ export function usePagedQuery<Filter extends object, Item>(options: PagedOptions
     placeholderData: (previous) => previous,
   })
   const pages = computed(() => Math.max(1, Math.ceil((query.data.value?.total ?? 0) / limit)))
+  // Rows that went may have been the whole of the last page.
+  watch(pages, (last) => {
+    if (page.value > last && query.data.value) page.value = last
+  })
   return { ...query, page, pages }
 }

@@ -1,4 +1,4 @@
-import { nextTick, ref, toValue, type MaybeRefOrGetter } from 'vue'
+import { computed, nextTick, ref, toValue, type MaybeRefOrGetter } from 'vue'
 
 const steps: Record<string, (at: number, last: number) => number> = {
   ArrowDown: (at, last) => Math.min(at + 1, last),
@@ -9,7 +9,12 @@ const steps: Record<string, (at: number, last: number) => number> = {
 
 /** One row of a table body is in the tab order; arrow keys, Home and End move to others. */
 export function useRowFocus(count: MaybeRefOrGetter<number>) {
-  const focused = ref(0)
+  const at = ref(0)
+  /** After a change to fewer rows the last one: a table without a row in the tab order cannot be reached. */
+  const focused = computed({
+    get: () => Math.max(0, Math.min(at.value, toValue(count) - 1)),
+    set: (index) => (at.value = index),
+  })
 
   function onKeydown(event: KeyboardEvent) {
     const step = steps[event.key]

@@ -1,4 +1,5 @@
 import { describe, expect, it } from 'vitest'
+import { defineComponent, h, ref } from 'vue'
 import DataList from '../../../../src/components/base/DataList.vue'
 import { mountWith, settle } from '../../support/mount.ts'
 
@@ -36,6 +37,18 @@ describe('a list whose rows can be opened', () => {
     ;(body[0]!.element as HTMLElement).focus()
     await press('ArrowDown')
     expect(body.map((row) => row.attributes('tabindex'))).toEqual(['-1', '0', '-1'])
+  })
+
+  it('still has one when there are fewer rows than the one that had the focus', async () => {
+    const shown = ref(rows)
+    const parent = defineComponent({
+      render: () => h(DataList, { caption: 'Wells', columns, rows: shown.value, openable: true } as never),
+    })
+    const wrapper = await mountWith(parent)
+    await wrapper.findAll('tbody tr')[2]!.trigger('focus')
+    shown.value = rows.slice(0, 2)
+    await settle()
+    expect(wrapper.findAll('tbody tr').map((row) => row.attributes('tabindex'))).toEqual(['-1', '0'])
   })
 
   it('opens a row by Enter and by a click', async () => {
