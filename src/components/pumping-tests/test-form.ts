@@ -73,6 +73,10 @@ const starts: Record<Precision, (form: TestForm) => string> = {
   year: ({ year }) => year,
 }
 
+/** Whether the tested interval is typed; otherwise it follows from the well, and its fields are not on the page. */
+export const typesInterval = ({ intervalBasis }: Pick<TestForm, 'intervalBasis'>): boolean =>
+  intervalBasis === 'packers' || intervalBasis === 'open-hole'
+
 /**
  * What is sent. Fields left empty go as null, so that the server names every one of them at once, each under its own
  * path; the types say otherwise only until it has answered.
@@ -81,6 +85,7 @@ export function inputOf(form: TestForm): Input {
   const { precision: _p, date: _d, time: _t, year: _y, conditions, units, rateSteps, observationWells, ...rest } = form
   return {
     ...rest,
+    ...(typesInterval(form) ? {} : { intervalTopM: null, intervalBottomM: null }),
     startLocal: starts[form.precision](form),
     units: units.length === 1 ? [{ ...units[0], share: 1 }] : units,
     rateSteps: rateSteps.map(({ startS, value, unit }) => ({ startS, rate: { value, unit } })),
@@ -128,6 +133,24 @@ export function formOf(test: PumpingTest): TestForm {
     staticLevelM: test.wells.find(({ role }) => role === 'pumped')?.staticLevelM ?? null,
     conditions: test.conditions ?? '',
   }
+}
+
+/** Fields that a pumped well may say something about. */
+const suggestible = ['intervalBasis', 'visibility', 'units', 'thicknessM', 'thicknessBasis', 'aquifer'] as const
+type Suggested = Pick<TestForm, (typeof suggestible)[number]>
+
+/**
+ * Fills in what a well suggests. What somebody chose stays; what another well suggested before goes with that well, so
+ * that no thickness of one well stands in the test of another. `before` is what the form was given before this.
+ */
+export function suggest(form: TestForm, before: Suggested, suggestions: Partial<TestForm>): Suggested {
+  const fresh = emptyForm(form.zone, '')
+  const next = Object.fromEntries(suggestible.map((field) => [field, suggestions[field] ?? fresh[field]])) as unknown
+  const given = next as Suggested
+  const same = (field: keyof Suggested) => JSON.stringify(form[field]) === JSON.stringify(before[field])
+  const open = suggestible.filter(same).map((field) => [field, structuredClone(given[field])])
+  Object.assign(form, Object.fromEntries(open))
+  return given
 }
 
 const kinds = ['confined', 'leaky', 'unconfined'] as const

@@ -1,7 +1,13 @@
 import { describe, expect, it } from 'vitest'
 import { pumpingTestInput } from '#shared/contracts/pumping-tests.ts'
 import type { Well } from '#shared/contracts/wells.ts'
-import { emptyForm, inputOf, suggestionsOf, type TestForm } from '../../../../src/components/pumping-tests/test-form.ts'
+import {
+  emptyForm,
+  inputOf,
+  suggest,
+  suggestionsOf,
+  type TestForm,
+} from '../../../../src/components/pumping-tests/test-form.ts'
 import { pumpingText, testDate } from '../../../../src/components/pumping-tests/test-facts.ts'
 
 const makeForm = (overrides: Partial<TestForm> = {}): TestForm => ({
@@ -30,6 +36,15 @@ describe('A test as it is typed', () => {
     expect(inputOf(makeForm({ observationWells: [well] })).observationWells[0]).toMatchObject({
       distanceM: null,
       reason: null,
+    })
+  })
+
+  it('sends no depths of an interval that follows from the well', () => {
+    const typed = { intervalTopM: 30, intervalBottomM: 50 }
+    expect(inputOf(makeForm({ ...typed, intervalBasis: 'packers' }))).toMatchObject(typed)
+    expect(inputOf(makeForm({ ...typed, intervalBasis: 'screens' }))).toMatchObject({
+      intervalTopM: null,
+      intervalBottomM: null,
     })
   })
 
@@ -64,6 +79,29 @@ describe('What the pumped well suggests', () => {
   it('is nothing about the unit where none is picked, and an unknown interval without screens', () => {
     const bare = suggestionsOf({ ...well, screens: [], picks: [] }, units)
     expect(bare).toEqual({ intervalBasis: 'unknown', visibility: 'published' })
+  })
+})
+
+describe('A form that a pumped well fills in', () => {
+  const limestone = { thicknessM: 34, aquifer: 'leaky' as const, visibility: 'published' as const }
+
+  it('takes what the well suggests', () => {
+    const form = emptyForm('UTC', 'L/s')
+    suggest(form, emptyForm('UTC', 'L/s'), limestone)
+    expect(form).toMatchObject(limestone)
+  })
+
+  it('loses what another well suggested, so that its thickness does not stand in the test of this one', () => {
+    const form = emptyForm('UTC', 'L/s')
+    const before = suggest(form, emptyForm('UTC', 'L/s'), limestone)
+    suggest(form, before, { visibility: 'internal' })
+    expect(form).toMatchObject({ thicknessM: null, aquifer: 'confined', visibility: 'internal' })
+  })
+
+  it('keeps what somebody chose before the well', () => {
+    const form = { ...emptyForm('UTC', 'L/s'), visibility: 'private' as const, thicknessM: 20 }
+    suggest(form, emptyForm('UTC', 'L/s'), limestone)
+    expect(form).toMatchObject({ visibility: 'private', thicknessM: 20, aquifer: 'leaky' })
   })
 })
 
