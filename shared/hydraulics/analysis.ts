@@ -1,4 +1,5 @@
 import type { MethodId } from './catalogue.ts'
+import type { KindErrorCode } from './kind-errors.ts'
 
 /** A step of the pumping rate; a step with rate 0 is the stop. Times in seconds on the clock of `elapsed_s`. */
 export interface RateStep {
@@ -204,6 +205,7 @@ export interface FittedCurve {
 }
 
 export type AnalysisErrorCode =
+  | KindErrorCode
   | 'analysis/unknown-method'
   | 'analysis/no-wells'
   | 'analysis/unknown-well'

@@ -15,7 +15,12 @@ export function casingStorageTimes(T: number, casingRadius_m: number, { riserRad
 }
 
 /** Judges the first reading used at a pumped well against casing storage. */
-export function casingFinding(T: number, series: Series, from_s: number, use: keyof typeof CASING_STORAGE): Finding {
+export function casingFinding(
+  T: number,
+  series: Pick<Series, 'label' | 'casingRadius_m'>,
+  from_s: number,
+  use: keyof typeof CASING_STORAGE,
+): Finding {
   if (series.casingRadius_m === null || !(series.casingRadius_m > 0)) {
     return { code: 'casing-unknown', severity: 'caution', params: { well: series.label } }
   }

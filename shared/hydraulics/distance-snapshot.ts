@@ -24,11 +24,14 @@ export interface Snapshot {
 }
 
 /** Observation wells with readings; the pumped well is left out because its well loss does not lie on the line. */
-export function observationWells(selected: Selected[]): { wells: Selected[]; leftOut: LeftOut[] } {
+export function observationWells(
+  selected: Selected[],
+  fewest = FEWEST_WELLS,
+): { wells: Selected[]; leftOut: LeftOut[] } {
   const pumped = selected.filter(({ series }) => series.role === 'pumped')
   const wells = selected.filter(({ series, time_s }) => series.role === 'observation' && time_s.length > 0)
-  if (wells.length < FEWEST_WELLS) {
-    throw new AnalysisError('analysis/too-few-wells', { needed: FEWEST_WELLS, found: wells.length })
+  if (wells.length < fewest) {
+    throw new AnalysisError('analysis/too-few-wells', { needed: fewest, found: wells.length })
   }
   const distances = wells.map(({ series }) => radiusOf(series))
   if (distances.every((distance) => distance === distances[0])) throw new AnalysisError('analysis/distances-equal')

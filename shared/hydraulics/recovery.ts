@@ -11,10 +11,11 @@ import { transmissivityFromSlope } from './cooper-jacob.ts'
 import { determinationFindings, fitFindings, handLineFinding } from './findings.ts'
 import { sharedOptions, transmissivity, type Method } from './method.ts'
 import { parameterEstimate, UNDETERMINED_FACTOR } from './parameter-estimate.ts'
-import { lateWindow, straightLineStart } from './proposed-window.ts'
-import { meanRate, rateHistory, type RateHistory } from './rates.ts'
+import { lateWindow } from './proposed-window.ts'
+import { rateHistory, type RateHistory } from './rates.ts'
+import { lateRecoveryStart } from './recovery-start.ts'
 import { ratioFinding, recoveryAbscissa, storageRatio, type StorageRatio } from './recovery-line.ts'
-import { largest, pumpingPhase, recoveryPhase, requireReadings, selectReadings, type Selected } from './selection.ts'
+import { largest, recoveryPhase, requireReadings, selectReadings, type Selected } from './selection.ts'
 import { LARGEST_U, smallUFinding } from './small-u.ts'
 import { lineResiduals, slopeSd, straightLine, type StraightLine } from './straight-line.ts'
 import { drawnDrawdown, thinningFindings, thinningGuard } from './unconfined.ts'
@@ -72,20 +73,6 @@ function ageFindings(
   return validFrom_s === null || validFrom_s === 0
     ? [{ code: 'u-unknown', severity: 'note', params: {} }]
     : [smallUFinding((LARGEST_U * validFrom_s) / first_s, validFrom_s)]
-}
-
-/** Time since the stop from which u' ≤ 0.05, S being taken from the last drawdown while pumping; null without one. */
-function lateRecoveryStart(
-  inputs: AnalysisInputs,
-  options: AnalysisOptions,
-  history: RateHistory,
-  T: number,
-): number | null {
-  const well = selectReadings(inputs, options, pumpingPhase(history, null)).wells[0]
-  const late_s = well?.time_s.at(-1)
-  if (!well || late_s === undefined) return null
-  const late_m = well.drawdown_m.at(-1) as number
-  return straightLineStart(well.series, T, { rate: meanRate(history, history.start_s + late_s), late_s, late_m })
 }
 
 function proposed(inputs: AnalysisInputs, options: AnalysisOptions, history: RateHistory) {

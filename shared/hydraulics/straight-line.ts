@@ -49,10 +49,20 @@ export function straightLine(
   if (hand && !(Number.isFinite(hand.slope) && Number.isFinite(hand.intercept))) {
     throw new AnalysisError('analysis/bad-option', { option: 'line' })
   }
-  const fit = hand ? describeLine(x, drawdown, hand.slope, hand.intercept) : linearRegression(x, drawdown)
-  if (isLevel(x, drawdown, fit.slope) || !(rising ? fit.slope > 0 : fit.slope < 0)) {
-    throw new AnalysisError('analysis/slope-not-positive', { slope: rising ? fit.slope : -fit.slope })
+  const line = regressionLine(x, drawdown, { hand, ...(time_s ? { time_s } : {}) })
+  if (isLevel(x, drawdown, line.slope) || !(rising ? line.slope > 0 : line.slope < 0)) {
+    throw new AnalysisError('analysis/slope-not-positive', { slope: rising ? line.slope : -line.slope })
   }
+  return line
+}
+
+/** The same without a judgement of the slope: a level that no longer changes is a line too. */
+export function regressionLine(
+  x: number[],
+  drawdown: number[],
+  { hand = null, time_s }: Omit<LineOptions, 'rising'> = {},
+): StraightLine {
+  const fit = hand ? describeLine(x, drawdown, hand.slope, hand.intercept) : linearRegression(x, drawdown)
   const { covariance, effectiveNumber } = lineCovariance(x, fit.residuals, time_s)
   return {
     slope: fit.slope,

@@ -3,9 +3,10 @@ import { methods } from '#shared/hydraulics/catalogue.ts'
 import { formatElapsed } from '#shared/quantities/elapsed.ts'
 import { formatNumber, formatQuantity } from '#shared/quantities/format.ts'
 import { defaultUnitSystemId, unitSystemById, type UnitSystem } from '#shared/quantities/systems.ts'
+import { kindFindings, kindOptionNames, kindRefusals } from './kind-findings.ts'
 
 /** Reads params as text in the reader's units. */
-interface Words {
+export interface Words {
   text: (name: string) => string
   number: (name: string) => string
   percent: (name: string) => string
@@ -14,7 +15,7 @@ interface Words {
   rate: (name: string) => string
   transmissivity: (name: string) => string
 }
-type Sentences<Code extends string> = Record<Code, (words: Words) => string>
+export type Sentences<Code extends string> = Record<Code, (words: Words) => string>
 
 /** The name that the methods give to a quantity they find. */
 const parameterName = (id: string): string =>
@@ -22,6 +23,7 @@ const parameterName = (id: string): string =>
     .flatMap(({ unknowns }) => [...unknowns])
     .find((unknown) => unknown.id === id)?.label ?? id
 const optionNames: Record<string, string> = {
+  ...kindOptionNames,
   window: 'The time window must end after it begins, and cannot begin before zero.',
   line: 'The line drawn by hand needs a slope and a height.',
   readingsPerCycle: 'The number of readings used per factor of ten in time must be at least 1.',
@@ -29,6 +31,7 @@ const optionNames: Record<string, string> = {
 
 /** Every finding of an analysis. */
 const findings: Sentences<string> = {
+  ...kindFindings,
   'u-small': ({ number, percent }) =>
     `u is at most ${number('u')} in the window, within the limit of ${number('limit')}: the straight line is off by ${percent('drawdownError')} of drawdown and ${percent('slopeError')} of slope at most.`,
   'u-large': ({ number, percent, span }) =>
@@ -103,6 +106,7 @@ const findings: Sentences<string> = {
 
 /** Every reason for which an analysis refuses its inputs. */
 const refusals: Sentences<AnalysisErrorCode> = {
+  ...kindRefusals,
   'analysis/unknown-method': ({ text }) => `The method "${text('method')}" is not known. Reload the page.`,
   'analysis/no-wells': () => 'Choose at least one well.',
   'analysis/unknown-well': () => 'A chosen well is not part of this test. Choose the wells again.',

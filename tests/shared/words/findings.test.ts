@@ -11,7 +11,8 @@ const folder = new URL('../../../shared/hydraulics/', import.meta.url)
 
 /** Every code of a finding that the methods can make, read from their source. */
 function codesInSource(): string[] {
-  const text = readdirSync(folder)
+  const text = readdirSync(folder, { recursive: true, encoding: 'utf8' })
+    .filter((name) => name.endsWith('.ts'))
     .map((name) => readFileSync(new URL(name, folder), 'utf8'))
     .join('\n')
   const direct = [...text.matchAll(/code: '([a-z-]+)', severity/g)].map((match) => match[1] as string)

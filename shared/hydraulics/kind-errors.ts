@@ -1,0 +1,15 @@
+/** Refusals of the methods beyond the pumping test at a constant rate; sentences in shared/words/kind-findings.ts. */
+export type KindErrorCode =
+  | 'analysis/no-stop-drawdown'
+  | 'analysis/dimension'
+  | 'analysis/slug-readings'
+  | 'analysis/no-repeats'
+  | 'analysis/initial-head'
+  | 'analysis/spring-no-transmissivity'
+  | 'analysis/well-loss-exceeds'
+  | 'analysis/step-readings'
+  | 'analysis/too-few-steps'
+  | 'analysis/step-increment'
+  | 'analysis/correction-readings'
+  | 'analysis/correction-cover'
+  | 'analysis/correction-level'
