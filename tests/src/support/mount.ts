@@ -47,6 +47,12 @@ function plugins(session: Session) {
   return { pinia, router, list: [pinia, PiniaColada, createVuetifyPlugin('light'), router], session }
 }
 
+function applicationOf(list: readonly unknown[]) {
+  const app = createApp({ render: () => null })
+  for (const plugin of list) app.use(plugin as never)
+  return app
+}
+
 function enter(session: Session) {
   const store = useSession()
   store.enter(session)
@@ -62,9 +68,7 @@ export async function mountWith(given: object, { props = {}, slots = {}, session
   document.body.append(host)
   const root = { render: () => h(VApp, null, { default: () => h(component, props, slots as never) }) }
   // As in the program: who is signed in is known before a page is set up, and stores are made inside an application.
-  const before = createApp({ render: () => null })
-  for (const plugin of list.slice(0, 2)) before.use(plugin as never)
-  before.runWithContext(() => enter(session ?? makeSession()))
+  applicationOf(list.slice(0, 2)).runWithContext(() => enter(session ?? makeSession()))
   const wrapper = mount(root, { attachTo: host, global: { plugins: list as never } })
   unmounts.push(() => wrapper.unmount())
   await router.push(path)
@@ -75,8 +79,7 @@ export async function mountWith(given: object, { props = {}, slots = {}, session
 /** Runs a composable or a store inside the application's plugins. */
 export function runWith<Result>(use: () => Result, session: Session = makeSession()): Result {
   const { list } = plugins(session)
-  const app = createApp({ render: () => null })
-  for (const plugin of list) app.use(plugin as never)
+  const app = applicationOf(list)
   app.runWithContext(() => enter(session))
   const scope = effectScope()
   unmounts.push(() => scope.stop())
