@@ -1,7 +1,7 @@
-import { and, eq, exists, isNull, ne, or, sql, type SQL } from 'drizzle-orm'
+import { and, eq, exists, inArray, isNull, ne, or, sql, type SQL } from 'drizzle-orm'
 import { alias, QueryBuilder, type AnyMySqlColumn } from 'drizzle-orm/mysql-core'
 import { atLeast, type Viewer } from '#shared/contracts/permissions.ts'
-import { pumpingTests, wells } from './schema/index.ts'
+import { analyses, pumpingTests, wells } from './schema/index.ts'
 
 type Guarded = Record<'visibility' | 'embargoUntil' | 'createdBy', AnyMySqlColumn>
 
@@ -42,4 +42,10 @@ export const readable = {
       .where(and(eq(parent.id, pumpingTests.wellId), rows(parent, viewer)))
     return and(rows(pumpingTests, viewer), exists(well)) ?? sql`false`
   },
+  /**
+   * Of the analyses of a test that the viewer may see: what is not decided yet, or was returned, is the business of
+   * those who analyse.
+   */
+  analyses: (viewer: Viewer): SQL =>
+    atLeast(viewer, 'analyst') ? sql`true` : inArray(analyses.state, ['accepted', 'withdrawn']),
 }

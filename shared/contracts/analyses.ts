@@ -37,6 +37,8 @@ export const submissionInput = z.object({
 })
 export type SubmissionInput = z.infer<typeof submissionInput>
 
+export const takingBack = z.object({ rowVersion: z.coerce.number().pipe(rowVersion) })
+
 export const review = z.object({
   decision: z.enum(['accepted', 'returned']),
   comment: z.string().nullable(),
@@ -75,6 +77,8 @@ export const analysis = z.object({
   reviews: z.array(review),
   rowVersion,
   mayEdit: z.boolean(),
+  /** Whether its submission may be taken back, so that it can be changed again. */
+  mayTakeBack: z.boolean(),
   mayReview: z.boolean(),
 })
 export type Analysis = z.infer<typeof analysis>

@@ -18,7 +18,7 @@ export const reviewQueueItem = z.object({
   author: z.string(),
   submittedAt: instant,
   inputsChanged: z.boolean(),
-  /** False for the author's own work. */
+  /** False for work in which the viewer took part. */
   mayReview: z.boolean(),
 })
 export type ReviewQueueItem = z.infer<typeof reviewQueueItem>

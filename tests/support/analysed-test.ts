@@ -1,9 +1,10 @@
-import type { Analysis } from '#shared/contracts/analyses.ts'
+import type { Analysis, WorkbenchInputs } from '#shared/contracts/analyses.ts'
 import type { PumpingTest, PumpingTestInput } from '#shared/contracts/pumping-tests.ts'
 import type { WellInput } from '#shared/contracts/wells.ts'
+import { analyse, type MethodId } from '#shared/hydraulics/catalogue.ts'
 import { exponentialIntegral } from '#shared/numerics/exponential-integral.ts'
 import type { SignedIn } from './app.ts'
-import { createWell, islandMiddle, makeMapping, makeTestInput, saveAnalysis, upload } from './domain.ts'
+import { createWell, islandMiddle, makeMapping, makeTestInput, publish, saveAnalysis, upload } from './domain.ts'
 
 interface Wanted {
   unitId: number
@@ -46,11 +47,38 @@ export async function enterTest(person: SignedIn, wanted: Wanted) {
   return { id, input, pumped, observation, test: await readTest(person, id) }
 }
 
+/** Shows a test with its pumped well to readers, and the observation well unless it is to stay hidden. */
+export async function publishTest(
+  steward: SignedIn,
+  { id, pumped, observation }: Pick<Awaited<ReturnType<typeof enterTest>>, 'id' | 'pumped' | 'observation'>,
+  { withObservation = true } = {},
+) {
+  await publish(steward, 'wells', pumped)
+  if (withObservation) await publish(steward, 'wells', observation)
+  await publish(steward, 'pumping-tests', id)
+}
+
 /** An analysis of the test, put forward for review. */
 export async function submitAnalysis(person: SignedIn, testId: number): Promise<Analysis> {
-  const saved = (await saveAnalysis(person, testId, 'theis')).body as Analysis
-  const submission = { rowVersion: saved.rowVersion, rationale: 'The curve follows all readings.', confirmed: [] }
-  return (await person.post(`/api/analyses/${saved.id}/submission`).send(submission).expect(200)).body as Analysis
+  return submitDraft(person, (await saveAnalysis(person, testId, 'theis')).body as Analysis)
+}
+
+export async function submitDraft(person: SignedIn, { id, rowVersion }: Analysis): Promise<Analysis> {
+  const submission = { rowVersion, rationale: 'The curve follows all readings.', confirmed: [] }
+  return (await person.post(`/api/analyses/${id}/submission`).send(submission).expect(200)).body as Analysis
+}
+
+/** The draft once more, calculated from the inputs of its test as they are now. */
+export async function recalculate(person: SignedIn, draft: Analysis): Promise<Analysis> {
+  const { id, pumpingTestId, rowVersion } = draft
+  const answer = await person.get(`/api/pumping-tests/${pumpingTestId}/inputs`).expect(200)
+  const { inputs, sha256: inputsSha256 } = answer.body as WorkbenchInputs
+  const method = draft.method as MethodId
+  const options = draft.options!
+  const { methodVersion, T, S } = analyse(method, inputs, options)
+  const expected = { methodVersion, T: T?.value ?? null, S: S?.value ?? null }
+  const update = { method, options, label: 'Calculated again', expected, inputsSha256, rowVersion }
+  return (await person.put(`/api/analyses/${id}`).send(update).expect(200)).body as Analysis
 }
 
 export const accept = (reviewer: SignedIn, { id, rowVersion }: Analysis) =>

@@ -75,7 +75,7 @@ export function makeWellInput(overrides: Partial<WellInput> = {}): WellInput {
     drilledYear: 1998,
     ownerLabel: null,
     notes: null,
-    visibility: 'published',
+    visibility: 'internal',
     screens: [{ topM: 30, bottomM: 55, validFrom: null, validTo: null }],
     picks: [],
     confirmOutside: false,
@@ -86,6 +86,17 @@ export function makeWellInput(overrides: Partial<WellInput> = {}): WellInput {
 export async function createWell(person: SignedIn, overrides: Partial<WellInput> = {}): Promise<number> {
   const answer = await person.post('/api/wells').send(makeWellInput(overrides)).expect(201)
   return (answer.body as { id: number }).id
+}
+
+/** A well that readers see, entered by somebody who may publish it. */
+export const createPublishedWell = (steward: SignedIn, overrides: Partial<WellInput> = {}): Promise<number> =>
+  createWell(steward, { visibility: 'published', ...overrides })
+
+/** Shows what somebody entered to readers. */
+export async function publish(steward: SignedIn, resource: 'wells' | 'pumping-tests', id: number) {
+  const { rowVersion } = (await steward.get(`/api/${resource}/${id}`).expect(200)).body as { rowVersion: number }
+  const exposure = { rowVersion, visibility: 'published', embargoUntil: null }
+  await steward.put(`/api/${resource}/${id}/visibility`).send(exposure).expect(200)
 }
 
 export const makeTestInput = (
@@ -105,7 +116,7 @@ export const makeTestInput = (
   observationWells: [],
   staticLevelM: null,
   conditions: null,
-  visibility: 'published',
+  visibility: 'internal',
   ...overrides,
 })
 

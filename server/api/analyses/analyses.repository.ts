@@ -1,36 +1,40 @@
 import { and, asc, desc, eq, inArray, isNull, ne, sql } from 'drizzle-orm'
-import { atLeast, type Viewer } from '#shared/contracts/permissions.ts'
+import type { Viewer } from '#shared/contracts/permissions.ts'
 import type { Executor } from '../../db/client.ts'
 import { readable } from '../../db/readable.ts'
-import { adoptedValues, analyses, pumpingTests, reviews, testWells, users } from '../../db/schema/index.ts'
+import {
+  adoptedValues,
+  analyses,
+  analysisEditors,
+  pumpingTests,
+  reviews,
+  testWells,
+  users,
+} from '../../db/schema/index.ts'
+import { tookPart } from '../../db/took-part.ts'
 
 export type AnalysisRow = typeof analyses.$inferSelect
 export type NewAnalysis = typeof analyses.$inferInsert
 
-const withAuthor = (executor: Executor) =>
+const withAuthor = (executor: Executor, viewer: Viewer) =>
   executor
-    .select({ row: analyses, authorName: users.name })
+    .select({ row: analyses, authorName: users.name, tookPart: tookPart(viewer) })
     .from(analyses)
     .innerJoin(pumpingTests, eq(pumpingTests.id, analyses.pumpingTestId))
     .leftJoin(users, eq(users.id, analyses.createdBy))
 
 export type FoundAnalysis = Awaited<ReturnType<typeof listAnalyses>>[number]
 
-/** What is not decided yet, or was returned, is the business of those who analyse. */
-const shown = (viewer: Viewer) =>
-  and(
-    readable.pumpingTests(viewer),
-    atLeast(viewer, 'analyst') ? undefined : inArray(analyses.state, ['accepted', 'withdrawn']),
-  )
+const shown = (viewer: Viewer) => and(readable.pumpingTests(viewer), readable.analyses(viewer))
 
 /** Analyses of one test that the viewer may see, oldest first. */
 export const listAnalyses = (executor: Executor, viewer: Viewer, testId: number) =>
-  withAuthor(executor)
+  withAuthor(executor, viewer)
     .where(and(eq(analyses.pumpingTestId, testId), shown(viewer)))
     .orderBy(asc(analyses.id))
 
 export async function findAnalysis(executor: Executor, viewer: Viewer, id: number): Promise<FoundAnalysis | null> {
-  const [found] = await withAuthor(executor).where(and(eq(analyses.id, id), shown(viewer)))
+  const [found] = await withAuthor(executor, viewer).where(and(eq(analyses.id, id), shown(viewer)))
   return found ?? null
 }
 
@@ -89,7 +93,17 @@ export const setWithdrawn = (executor: Executor, id: number) =>
     .set({ state: 'withdrawn', rowVersion: sql`${analyses.rowVersion} + 1` })
     .where(and(eq(analyses.id, id), eq(analyses.state, 'accepted')))
 
-export const deleteAnalysis = (executor: Executor, id: number) => executor.delete(analyses).where(eq(analyses.id, id))
+export async function deleteAnalysis(executor: Executor, id: number): Promise<void> {
+  await executor.delete(analysisEditors).where(eq(analysisEditors.analysisId, id))
+  await executor.delete(analyses).where(eq(analyses.id, id))
+}
+
+/** Remembers who had a hand in an analysis, once each. */
+export async function addEditor(executor: Executor, analysisId: number, { id: userId }: Viewer): Promise<void> {
+  if (userId === null) return
+  const row = { analysisId, userId }
+  await executor.insert(analysisEditors).values(row).onDuplicateKeyUpdate({ set: row })
+}
 
 /** Whether an analysis that waits for review, or a value of the regional table, rests on the test's inputs. */
 export async function isInUse(executor: Executor, testId: number): Promise<boolean> {

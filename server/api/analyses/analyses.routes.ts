@@ -5,6 +5,7 @@ import {
   analysisList,
   analysisUpdate,
   submissionInput,
+  takingBack,
   workbenchInputs,
 } from '#shared/contracts/analyses.ts'
 import { idInPath, nothing } from '#shared/contracts/common.ts'
@@ -87,6 +88,18 @@ export function analysesRoutes({ analyses }: Services, deps: Deps): Route[] {
         response: analysis,
       },
       ({ viewer, params: { id }, body }) => analyses.submit(viewer, id, body),
+    ),
+    route(
+      {
+        method: 'delete',
+        path: `${one}/submission`,
+        action: 'analyses/submit',
+        summary: 'Take a submitted analysis back: it is a draft again',
+        params,
+        query: takingBack,
+        response: analysis,
+      },
+      ({ viewer, params: { id }, query: { rowVersion } }) => analyses.takeBack(viewer, id, rowVersion),
     ),
   ]
 }

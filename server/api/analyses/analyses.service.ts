@@ -1,5 +1,5 @@
 import { createHash } from 'node:crypto'
-import type { AnalysisInput, AnalysisUpdate, SubmissionInput } from '#shared/contracts/analyses.ts'
+import type { AnalysisInput, AnalysisUpdate } from '#shared/contracts/analyses.ts'
 import type { Viewer } from '#shared/contracts/permissions.ts'
 import { evidenceOf } from '#shared/hydraulics/evidence.ts'
 import { limitRules } from '#shared/hydraulics/limits.ts'
@@ -12,16 +12,13 @@ import * as repository from './analyses.repository.ts'
 import { adoptedRows } from './adoption.ts'
 import { calculate, checkExpected, checkRepeats } from './calculate.ts'
 import { checkAdoptable } from './check-adoptable.ts'
+import { everything } from './everything.ts'
 import type { createInputsService } from './inputs.service.ts'
+import { lockDraft } from './lock-draft.ts'
 import { reportedFacts, reportedResult, type ReportedValue } from './reported.ts'
-import { analysisView, mayChange } from './view.ts'
+import { createSubmissions } from './submissions.ts'
+import { analysisView } from './view.ts'
 import { withoutHiddenWells } from './without-hidden-wells.ts'
-
-/**
- * Analyses are calculated from all wells of a test, whoever saves: a test that is not private has no private wells,
- * so that everybody who analyses sees the same inputs.
- */
-const everything: Viewer = { id: null, name: 'Basinbook', role: 'steward', mayReview: false }
 
 export function createAnalysesService(deps: Deps, inputs: ReturnType<typeof createInputsService>) {
   const { db } = deps.connection
@@ -58,16 +55,13 @@ export function createAnalysesService(deps: Deps, inputs: ReturnType<typeof crea
     }
   }
 
-  /** The locked draft, when the viewer may change it. */
-  async function lockDraft(executor: Executor, viewer: Viewer, id: number) {
-    const row = await repository.lockAnalysis(executor, viewer, id)
-    if (!row) throw notFound()
-    if (row.state !== 'draft') throw new AppError('analysis/not-draft')
-    if (!mayChange(viewer, row)) throw new AppError('analysis/not-yours')
-    return row
-  }
+  const { submit, takeBack, lockForReview, settle } = createSubmissions(deps, { inputs, view })
 
   return {
+    submit,
+    takeBack,
+    lockForReview,
+    settle,
     isInUse: repository.isInUse,
 
     async workbench(viewer: Viewer, testId: number) {
@@ -103,6 +97,7 @@ export function createAnalysesService(deps: Deps, inputs: ReturnType<typeof crea
           createdAt: now(),
         }
         const id = await repository.insertAnalysis(tx, row)
+        await repository.addEditor(tx, id, viewer)
         await recordAudit(tx, {
           viewer,
           at: now(),
@@ -142,6 +137,7 @@ export function createAnalysesService(deps: Deps, inputs: ReturnType<typeof crea
           createdBy: viewer.id,
           createdAt: at,
         })
+        await repository.addEditor(tx, id, viewer)
         await recordAudit(tx, {
           viewer,
           at,
@@ -158,6 +154,7 @@ export function createAnalysesService(deps: Deps, inputs: ReturnType<typeof crea
         const row = await lockDraft(tx, viewer, id)
         const computed = await compute(tx, row.pumpingTestId, input)
         if (!(await repository.updateAnalysis(tx, id, rowVersion, computed))) throw new AppError('edit/conflict')
+        await repository.addEditor(tx, id, viewer)
         await recordAudit(tx, { viewer, at: now(), action: 'analyses/edit', subject: 'analysis', subjectId: id })
         return view(tx, viewer, id)
       }),
@@ -169,41 +166,6 @@ export function createAnalysesService(deps: Deps, inputs: ReturnType<typeof crea
         await recordAudit(tx, { viewer, at: now(), action: 'analyses/delete', subject: 'analysis', subjectId: id })
         return {}
       }),
-
-    /** Freezes an analysis for review; its inputs must be those of the test as it is now. */
-    submit: (viewer: Viewer, id: number, { rowVersion, rationale, confirmed }: SubmissionInput) =>
-      inTransaction(deps, async (tx) => {
-        const row = await lockDraft(tx, viewer, id)
-        const snapshot = await inputs.snapshot(tx, everything, row.pumpingTestId)
-        if (snapshot.sha256 !== row.inputsSha256) throw new AppError('analysis/inputs-changed')
-        if (snapshot.test.found.test.visibility === 'private') throw new AppError('analysis/private-test')
-        const { result } = await view(tx, viewer, id)
-        checkAdoptable(result, confirmed)
-        const change = { state: 'submitted' as const, rationale, submittedAt: now() }
-        if (!(await repository.updateAnalysis(tx, id, rowVersion, change))) throw new AppError('edit/conflict')
-        const details = { rationale, confirmed }
-        await recordAudit(tx, {
-          viewer,
-          at: now(),
-          action: 'analyses/submit',
-          subject: 'analysis',
-          subjectId: id,
-          details,
-        })
-        return view(tx, viewer, id)
-      }),
-
-    /** The locked analysis that waits for review. */
-    async lockSubmitted(executor: Executor, viewer: Viewer, id: number) {
-      const row = await repository.lockAnalysis(executor, viewer, id)
-      if (!row) throw notFound()
-      if (row.state !== 'submitted') throw new AppError('review/not-submitted')
-      return row
-    },
-
-    async settle(executor: Executor, id: number, rowVersion: number, state: 'accepted' | 'returned') {
-      if (!(await repository.updateAnalysis(executor, id, rowVersion, { state }))) throw new AppError('edit/conflict')
-    },
 
     /** The values an accepted analysis stands for, after repeating it from its own snapshot. */
     async valuesOf(executor: Executor, id: number) {

@@ -7,20 +7,28 @@ import type { FoundAnalysis, listReviews } from './analyses.repository.ts'
 
 type ReviewRows = Awaited<ReturnType<typeof listReviews>>
 
-export const mayChange = (viewer: Viewer, { createdBy, state }: FoundAnalysis['row']): boolean =>
-  state === 'draft' && (atLeast(viewer, 'steward') || (atLeast(viewer, 'analyst') && createdBy === viewer.id))
+const isTheirs = (viewer: Viewer, { createdBy }: FoundAnalysis['row']): boolean =>
+  atLeast(viewer, 'steward') || (atLeast(viewer, 'analyst') && createdBy === viewer.id)
 
-/** Nobody reviews their own analysis. */
-export const mayDecide = (viewer: Viewer, { createdBy, state }: FoundAnalysis['row']): boolean =>
-  state === 'submitted' && can(viewer, 'reviews/decide') && createdBy !== viewer.id
+export const mayChange = (viewer: Viewer, row: FoundAnalysis['row']): boolean =>
+  row.state === 'draft' && isTheirs(viewer, row)
+
+/** A value that was reported has no draft to go back to: a reviewer returns it. */
+export const mayTakeBack = (viewer: Viewer, row: FoundAnalysis['row']): boolean =>
+  row.state === 'submitted' && row.method !== 'reported' && isTheirs(viewer, row)
+
+/** Nobody reviews an analysis in which they took part. */
+const mayDecide = (viewer: Viewer, { row, tookPart }: FoundAnalysis): boolean =>
+  row.state === 'submitted' && can(viewer, 'reviews/decide') && !tookPart
 
 /** `siblings` are the analyses of the same test: a recovery that agrees is evidence. */
 export function analysisView(
   viewer: Viewer,
-  { row, authorName }: FoundAnalysis,
+  found: FoundAnalysis,
   siblings: FoundAnalysis['row'][],
   reviews: ReviewRows,
 ): Analysis {
+  const { row, authorName } = found
   const result = analysisResult.parse(row.result)
   const limits = limitFindings({
     T: result.T?.value ?? null,
@@ -47,7 +55,8 @@ export function analysisView(
     reviews: reviews.filter((review) => review.row.analysisId === row.id).map(reviewView),
     rowVersion: row.rowVersion,
     mayEdit: mayChange(viewer, row),
-    mayReview: mayDecide(viewer, row),
+    mayTakeBack: mayTakeBack(viewer, row),
+    mayReview: mayDecide(viewer, found),
   }
 }
 

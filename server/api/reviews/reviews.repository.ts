@@ -3,6 +3,7 @@ import type { Viewer } from '#shared/contracts/permissions.ts'
 import type { Executor } from '../../db/client.ts'
 import { readable } from '../../db/readable.ts'
 import { analyses, pumpingTests, reviews, users, wells } from '../../db/schema/index.ts'
+import { tookPart } from '../../db/took-part.ts'
 
 const submitted = (viewer: Viewer) => and(eq(analyses.state, 'submitted'), readable.pumpingTests(viewer))
 
@@ -17,7 +18,7 @@ export const listQueue = (executor: Executor, viewer: Viewer, limit: number, off
       rationale: analyses.rationale,
       result: analyses.result,
       submittedAt: analyses.submittedAt,
-      authorId: analyses.createdBy,
+      tookPart: tookPart(viewer),
       author: users.name,
       wellCode: wells.code,
       startAt: pumpingTests.startAt,

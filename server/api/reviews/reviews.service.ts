@@ -6,7 +6,6 @@ import type { ReviewQueueItem } from '#shared/contracts/reviews.ts'
 import type { Executor } from '../../db/client.ts'
 import { inTransaction } from '../../db/transaction.ts'
 import type { Deps } from '../../deps.ts'
-import { AppError } from '../../errors.ts'
 import type { createAdoptedValuesService } from '../adopted-values/adopted-values.service.ts'
 import type { createAnalysesService } from '../analyses/analyses.service.ts'
 import { recordAudit } from '../audit-trail/record-audit.ts'
@@ -15,7 +14,7 @@ import { localStart } from '../pumping-tests/start-time.ts'
 import * as repository from './reviews.repository.ts'
 
 export interface ReviewsNeeds {
-  analyses: Pick<ReturnType<typeof createAnalysesService>, 'lockSubmitted' | 'settle' | 'get' | 'valuesOf'>
+  analyses: Pick<ReturnType<typeof createAnalysesService>, 'lockForReview' | 'settle' | 'get' | 'valuesOf'>
   adoptedValues: Pick<ReturnType<typeof createAdoptedValuesService>, 'adopt'>
 }
 
@@ -45,8 +44,7 @@ export function createReviewsService(deps: Deps, { analyses, adoptedValues }: Re
      */
     decide: (viewer: Viewer, id: number, { decision, comment, rowVersion }: ReviewInput) =>
       inTransaction(deps, async (tx) => {
-        const row = await analyses.lockSubmitted(tx, viewer, id)
-        if (row.createdBy === viewer.id) throw new AppError('review/own-work')
+        const row = await analyses.lockForReview(tx, viewer, id)
         await analyses.settle(tx, id, rowVersion, decision)
         const reviewId = await repository.insertReview(tx, {
           analysisId: id,
@@ -86,7 +84,7 @@ type QueueRow = Awaited<ReturnType<typeof repository.listQueue>>[number]
 
 function queueItem(
   viewer: Viewer,
-  { result, authorId, author, startAt, zone, startPrecision, submittedAt, ...row }: QueueRow,
+  { result, tookPart, author, startAt, zone, startPrecision, submittedAt, ...row }: QueueRow,
 ): ReviewQueueItem {
   const { T, S, storageClass } = analysisResult.parse(result)
   return {
@@ -98,6 +96,6 @@ function queueItem(
     author: author ?? '',
     startLocal: localStart(startAt, zone, startPrecision),
     submittedAt: (submittedAt ?? startAt).toISOString(),
-    mayReview: can(viewer, 'reviews/decide') && authorId !== viewer.id,
+    mayReview: can(viewer, 'reviews/decide') && !tookPart,
   }
 }

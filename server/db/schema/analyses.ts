@@ -1,4 +1,16 @@
-import { boolean, double, index, int, json, mysqlEnum, mysqlTable, text, uniqueIndex, varchar } from 'drizzle-orm/mysql-core'
+import {
+  boolean,
+  double,
+  index,
+  int,
+  json,
+  mysqlEnum,
+  mysqlTable,
+  primaryKey,
+  text,
+  uniqueIndex,
+  varchar,
+} from 'drizzle-orm/mysql-core'
 import { id, instant, reference, rowVersion } from './columns.ts'
 
 export const analyses = mysqlTable(
@@ -25,6 +37,13 @@ export const analyses = mysqlTable(
     rowVersion: rowVersion(),
   },
   (table) => [index('analyses_test').on(table.pumpingTestId), index('analyses_state').on(table.state)],
+)
+
+/** Everybody who made, changed or submitted an analysis: none of them reviews it. */
+export const analysisEditors = mysqlTable(
+  'analysis_editors',
+  { analysisId: reference().notNull(), userId: reference().notNull() },
+  (table) => [primaryKey({ columns: [table.analysisId, table.userId] })],
 )
 
 export const reviews = mysqlTable(

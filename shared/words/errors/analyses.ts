@@ -22,11 +22,16 @@ export const analysisErrors = {
   },
   'analysis/not-draft': {
     status: 409,
-    sentence: () => 'This analysis has been submitted and cannot be changed. Make a new one from it.',
+    sentence: () =>
+      'This analysis has been submitted and cannot be changed. Take it back while nobody has decided, or copy it.',
   },
   'analysis/not-yours': {
     status: 403,
     sentence: () => 'Only the person who made this analysis, or a steward, can change it.',
+  },
+  'analysis/reported-stays': {
+    status: 409,
+    sentence: () => 'A reported value has no draft to go back to. A reviewer can return it.',
   },
   'analysis/no-transmissivity': {
     status: 400,
@@ -42,6 +47,10 @@ export const analysisErrors = {
     sentence: () => 'A private test must be released before a value can be submitted from it.',
   },
   'review/comment-needed': { status: 400, sentence: () => 'Say what should be changed.' },
-  'review/own-work': { status: 403, sentence: () => 'Nobody reviews their own analysis. Ask another reviewer.' },
+  'review/own-work': {
+    status: 403,
+    sentence: () =>
+      'You took part in this analysis: you made, changed or submitted it, or chose among its readings. Ask another reviewer.',
+  },
   'review/not-submitted': { status: 409, sentence: () => 'This analysis is not waiting for review any more.' },
 } satisfies ErrorCatalogue

@@ -78,6 +78,7 @@ export const pumpingTestErrors = {
   },
   'pumping-test/in-use': {
     status: 409,
-    sentence: () => 'Readings behind a submitted or adopted value cannot be deleted. Withdraw the value first.',
+    sentence: () =>
+      'Readings behind a submitted or adopted value cannot be deleted. Take the analysis back or withdraw the value first.',
   },
 } satisfies ErrorCatalogue
