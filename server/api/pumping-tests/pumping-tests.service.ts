@@ -12,6 +12,7 @@ import type { Deps } from '../../deps.ts'
 import { AppError, fieldError, notFound } from '../../errors.ts'
 import { recordAudit } from '../audit-trail/record-audit.ts'
 import { pageOf } from '../page-of.ts'
+import { checkPublishing } from '../visibility/publishing.ts'
 import type { createWellsService } from '../wells/wells.service.ts'
 import { countPumpingTests, listPumpingTests, unitNames } from './list.repository.ts'
 import { checkLogs } from './check-logs.ts'
@@ -129,6 +130,7 @@ export function createPumpingTestsService(deps: Deps, { wells, markInputsChanged
 
     create: (viewer: Viewer, input: PumpingTestInput, transaction: Transaction = transactionOf(deps)) =>
       transaction(async (tx) => {
+        checkPublishing(viewer, input)
         const { row, wellRows } = await resolve(tx, viewer, input)
         const at = now()
         const id = await repository.insertPumpingTest(tx, {
@@ -145,6 +147,7 @@ export function createPumpingTestsService(deps: Deps, { wells, markInputsChanged
     /** Enters a test of which only values came down to us. */
     createReported: (viewer: Viewer, { wellId, startLocal, units, ...facts }: ReportedTest) =>
       inTransaction(deps, async (tx) => {
+        checkPublishing(viewer, facts)
         const [well] = await repository.findWellsForTest(tx, viewer, [wellId])
         if (!well) throw fieldError('wellId', 'pumping-test/unknown-well')
         const start = startTime(startLocal, facts.zone, now())

@@ -43,6 +43,9 @@ export function createVisibilityService(deps: Deps, { adoptedValues }: Needs) {
       inTransaction(deps, async (tx) => {
         if (!(await repository.lockSubject(tx, viewer, subject, id))) throw notFound()
         const wanted = { visibility, embargoUntil: embargoUntil === null ? null : new Date(embargoUntil) }
+        // It would hide the record until the daily job comes by, or publish it at once where a year was mistyped.
+        if (wanted.embargoUntil && wanted.embargoUntil <= now())
+          throw fieldError('embargoUntil', 'visibility/embargo-over')
         await checkFamily(tx, subject, id, wanted)
         const units = await adoptedValues.unitsWithValues(tx, subject, [id])
         if (visibility === 'private' && units.length > 0) throw new AppError('visibility/has-values')

@@ -10,6 +10,7 @@ import { AppError, fieldError, notFound } from '../../errors.ts'
 import { recordAudit } from '../audit-trail/record-audit.ts'
 import { pageOf } from '../page-of.ts'
 import type { RegionService } from '../region/region.service.ts'
+import { checkPublishing } from '../visibility/publishing.ts'
 import { wellPosition } from './position.ts'
 import { listScreens } from './screens.repository.ts'
 import { summaryView, wellView } from './view.ts'
@@ -74,6 +75,7 @@ export function createWellsService(deps: Deps, { region, testsOf, valuesOf, well
     create: (viewer: Viewer, input: WellInput, transaction: Transaction = transactionOf(deps)) =>
       refusingTakenCode(input, () =>
         transaction(async (tx) => {
+          checkPublishing(viewer, input)
           const row = { ...(await columns(tx, input)), createdBy: viewer.id, createdAt: now() }
           const id = await repository.insertWell(tx, row)
           await writeParts(tx, id, input)

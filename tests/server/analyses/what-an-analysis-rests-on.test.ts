@@ -3,7 +3,7 @@ import type { AdoptedValueList } from '#shared/contracts/adopted-values.ts'
 import type { Analysis } from '#shared/contracts/analyses.ts'
 import type { Problem } from '#shared/contracts/problem.ts'
 import type { Well } from '#shared/contracts/wells.ts'
-import { accept, enterTest, readAnalysis, submitAnalysis } from '../../support/analysed-test.ts'
+import { accept, enterTest, publishTest, readAnalysis, submitAnalysis } from '../../support/analysed-test.ts'
 import { useApp, type SignedIn } from '../../support/app.ts'
 import { makeMapping, makeRegion, makeUnit, makeWellInput, saveAnalysis, upload } from '../../support/domain.ts'
 
@@ -119,7 +119,9 @@ describe('an accepted analysis', () => {
 
 describe('a reader', () => {
   it('is shown no draft and nothing that waits for review', async () => {
-    const { id } = await enterTest(analyst, { unitId })
+    const entered = await enterTest(analyst, { unitId })
+    await publishTest(steward, entered)
+    const { id } = entered
     const draft = (await saveAnalysis(analyst, id, 'theis')).body as Analysis
     const submitted = await submitAnalysis(analyst, id)
     await reader.get(`/api/analyses/${draft.id}`).expect(404)
@@ -130,8 +132,10 @@ describe('a reader', () => {
   })
 
   it('learns nothing of a hidden observation well from the analysis of a published test', async () => {
-    const observation = { visibility: 'internal' as const, casingRadiusM: null, wellRadiusM: null }
-    const { id, test } = await enterTest(analyst, { unitId, observation })
+    const observation = { casingRadiusM: null, wellRadiusM: null }
+    const entered = await enterTest(analyst, { unitId, observation })
+    await publishTest(steward, entered, { withObservation: false })
+    const { id, test } = entered
     const hidden = test.wells.find(({ role }) => role === 'observation')!
     const submitted = await submitAnalysis(analyst, id)
     await accept(reviewer, submitted).expect(200)

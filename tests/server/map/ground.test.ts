@@ -3,7 +3,14 @@ import type { AquiferUnit, SearchHit } from '#shared/contracts/map.ts'
 import { boundaries, boundaryUnits, streams, unitStreams } from '../../../server/db/schema/index.ts'
 import { useApp, type SignedIn } from '../../support/app.ts'
 import request from 'supertest'
-import { createWell, islandMiddle, makeRegion, makeTestInput, makeUnit } from '../../support/domain.ts'
+import {
+  createPublishedWell,
+  createWell,
+  islandMiddle,
+  makeRegion,
+  makeTestInput,
+  makeUnit,
+} from '../../support/domain.ts'
 import { makeAdoptedValue } from './make-value.ts'
 
 const app = useApp()
@@ -41,7 +48,7 @@ beforeAll(async () => {
 
 describe('units, streams and boundaries', () => {
   it('lists units shallow first, with the values that the viewer may see', async () => {
-    const wellId = await createWell(steward)
+    const wellId = await createPublishedWell(steward)
     const { testId } = await makeAdoptedValue(app, steward, { wellId, unitId: gravels })
     await makeAdoptedValue(app, steward, { wellId, unitId: gravels, quantity: 'K' })
     await steward
@@ -102,34 +109,31 @@ describe('the search', () => {
     ((await person.get('/api/search').query({ text }).expect(200)).body as { items: SearchHit[] }).items
 
   it('finds units, streams and wells by part of their names, whatever the case', async () => {
-    await createWell(steward, { code: 'V-0001', name: 'Tarrow bridge' })
+    await createPublishedWell(steward, { code: 'V-0001', name: 'Tarrow bridge' })
     const kinds = (await search(reader, 'tarrow')).map(({ kind }) => kind)
     expect(kinds).toEqual(['well', 'aquifer-unit', 'stream'])
   })
 
   it('puts the whole code before codes that begin with it, and those before the rest', async () => {
-    for (const code of ['A-Q7', 'Q70', 'Q7']) await createWell(steward, { code })
+    for (const code of ['A-Q7', 'Q70', 'Q7']) await createPublishedWell(steward, { code })
     expect((await search(reader, 'q7')).map(({ title }) => title)).toEqual(['Q7', 'Q70', 'A-Q7'])
   })
 
   it('finds tests by the code of their well and by their day', async () => {
-    const wellId = await createWell(steward, { code: 'TESTED' })
+    const wellId = await createPublishedWell(steward, { code: 'TESTED' })
     const units = [{ unitId: gravels, share: 1, basis: 'single-unit' as const }]
     await steward
       .post('/api/pumping-tests')
-      .send(makeTestInput({ wellId, units, startLocal: '2017-05-06T09:00' }))
+      .send(makeTestInput({ wellId, units, startLocal: '2017-05-06T09:00', visibility: 'published' }))
       .expect(201)
     expect((await search(reader, 'TESTED')).map(({ kind }) => kind)).toEqual(['well', 'pumping-test'])
     expect((await search(reader, '2017-05-06')).map(({ title }) => title)).toEqual(['TESTED, 2017-05-06'])
   })
 
   it('does not betray hidden wells and tests', async () => {
-    const wellId = await createWell(steward, { code: 'SECRET-9', visibility: 'internal' })
+    const wellId = await createWell(steward, { code: 'SECRET-9' })
     const units = [{ unitId: gravels, share: 1, basis: 'single-unit' as const }]
-    await steward
-      .post('/api/pumping-tests')
-      .send(makeTestInput({ wellId, units, visibility: 'internal' }))
-      .expect(201)
+    await steward.post('/api/pumping-tests').send(makeTestInput({ wellId, units })).expect(201)
     expect(await search(steward, 'secret-9')).toHaveLength(2)
     expect(await search(reader, 'secret-9')).toEqual([])
   })

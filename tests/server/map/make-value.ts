@@ -10,11 +10,14 @@ type Row = typeof adoptedValues.$inferInsert
  */
 export async function makeAdoptedValue(
   { deps }: TestApp,
-  person: SignedIn,
+  steward: SignedIn,
   { wellId, unitId, value = 1e-3, ...rest }: Pick<Row, 'wellId' | 'unitId'> & { value?: number } & Partial<Row>,
 ): Promise<{ valueId: number; testId: number }> {
   const units = [{ unitId, share: 1, basis: 'single-unit' as const }]
-  const test = await person.post('/api/pumping-tests').send(makeTestInput({ wellId, units })).expect(201)
+  const test = await steward
+    .post('/api/pumping-tests')
+    .send(makeTestInput({ wellId, units, visibility: 'published' }))
+    .expect(201)
   const pumpingTestId = (test.body as { id: number }).id
   const now = deps.now()
   const method = { method: 'theis', methodVersion: 1, state: 'accepted' as const }

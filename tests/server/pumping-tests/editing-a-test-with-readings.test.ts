@@ -27,7 +27,7 @@ const codesOf = (body: Problem) => body.fields.map(({ code }) => code)
 
 describe('editing a pumping test', () => {
   it('neither shows nor hides it, which is the stewards’ business', async () => {
-    const { id, input, test } = await enterTest(analyst, { unitId, test: { visibility: 'internal' } })
+    const { id, input, test } = await enterTest(analyst, { unitId })
     await edit(analyst, id, { ...input, visibility: 'published', rowVersion: test.rowVersion }).expect(200)
     expect((await readTest(analyst, id)).visibility).toBe('internal')
   })

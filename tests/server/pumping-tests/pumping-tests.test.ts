@@ -2,7 +2,7 @@ import { beforeAll, describe, expect, it } from 'vitest'
 import type { PumpingTest, PumpingTestInput } from '#shared/contracts/pumping-tests.ts'
 import type { Problem } from '#shared/contracts/problem.ts'
 import { useApp, type SignedIn } from '../../support/app.ts'
-import { createWell, islandMiddle, makeRegion, makeUnit } from '../../support/domain.ts'
+import { createWell, islandMiddle, makeRegion, makeUnit, publish } from '../../support/domain.ts'
 import { createTest, fieldsOf, makeSite, siteInput, type Site } from './support.ts'
 
 const tested = useApp()
@@ -103,6 +103,14 @@ describe('A pumping test that cannot be right is refused under the field that is
     expect(await refused({ wellId: bare })).toEqual({ intervalBasis: 'pumping-test/no-screens' })
   })
 
+  it('refuses to publish for an analyst, who may enter it as internal or private', async () => {
+    expect(await refused({ visibility: 'published' })).toEqual({
+      visibility: 'visibility/publishing-is-for-stewards',
+    })
+    for (const visibility of ['internal', 'private'] as const)
+      expect((await createTest(analyst, siteInput(site, { visibility }))).visibility).toBe(visibility)
+  })
+
   it('names every missing field at once', async () => {
     const answer = await analyst
       .post('/api/pumping-tests')
@@ -198,9 +206,10 @@ describe('Two people edit one test', () => {
 describe('The list of tests', () => {
   it('pages, filters by state and unit, and hides internal tests from readers', async () => {
     const own = await makeSite(tested, analyst)
+    await publish(steward, 'wells', own.pumped)
     const ids: number[] = []
     for (const visibility of ['published', 'internal', 'published'] as const)
-      ids.push((await createTest(analyst, siteInput(own, { visibility }))).id)
+      ids.push((await createTest(steward, siteInput(own, { visibility }))).id)
     const list = async (person: SignedIn, query: object) =>
       (
         await person

@@ -3,9 +3,16 @@ import type { Estimate } from '#shared/contracts/estimates.ts'
 import type { AquiferUnit } from '#shared/contracts/map.ts'
 import type { Problem } from '#shared/contracts/problem.ts'
 import type { Well } from '#shared/contracts/wells.ts'
-import { accept, enterTest, readTest, submitAnalysis } from '../../support/analysed-test.ts'
+import { accept, enterTest, publishTest, readTest, submitAnalysis } from '../../support/analysed-test.ts'
 import { useApp, type SignedIn } from '../../support/app.ts'
-import { createWell, islandMiddle, makeRegion, makeUnit, makeWellInput } from '../../support/domain.ts'
+import {
+  createPublishedWell,
+  createWell,
+  islandMiddle,
+  makeRegion,
+  makeUnit,
+  makeWellInput,
+} from '../../support/domain.ts'
 
 let time = new Date('2024-05-31T23:30:00Z')
 const tested = useApp({ now: () => time })
@@ -35,8 +42,9 @@ const wellOf = async (id: number) => (await steward.get(`/api/wells/${id}`).expe
 
 async function adopted(unitId: number) {
   const entered = await enterTest(analyst, { unitId })
+  await publishTest(steward, entered)
   await accept(reviewer, await submitAnalysis(analyst, entered.id)).expect(200)
-  return entered
+  return { ...entered, test: await readTest(steward, entered.id) }
 }
 
 describe('a private well', () => {
@@ -80,12 +88,40 @@ describe('an estimate', () => {
   })
 })
 
+describe('an embargo', () => {
+  it('cannot end in the past, where it would hide until the daily job or publish by a slip of the pen', async () => {
+    const { id, test } = await adopted(await makeUnit(tested))
+    for (const over of ['2023-06-01T00:00:00Z', time.toISOString()]) {
+      const { body } = await embargo(id, test.rowVersion, over).expect(400)
+      expect((body as Problem).fields).toMatchObject([{ path: 'embargoUntil', code: 'visibility/embargo-over' }])
+    }
+    expect((await readTest(reader, id)).rowVersion).toBe(test.rowVersion)
+  })
+
+  it('whose day has come hides its record until the job has lifted it, from lists and addresses alike', async () => {
+    const unitId = await makeUnit(tested)
+    const { id, test, pumped } = await adopted(unitId)
+    await embargo(id, test.rowVersion, '2024-07-01T00:00:00Z').expect(200)
+    time = new Date('2024-07-02T12:00:00Z')
+    const seen = async () =>
+      (await reader.get(`/api/pumping-tests?unitId=${unitId}`).expect(200)).body as { total: number }
+    expect((await seen()).total).toBe(0)
+    await reader.get(`/api/pumping-tests/${id}`).expect(404)
+    expect(((await reader.get(`/api/wells/${pumped}`).expect(200)).body as Well).tests).toEqual([])
+
+    await tested.deps.jobs.enqueue(tested.deps.connection.db, 'lift-embargoes')
+    await tested.deps.jobs.drain()
+    expect((await seen()).total).toBe(1)
+    await readTest(reader, id)
+  })
+})
+
 describe('the picks of a unit', () => {
   it('are counted without those of hidden wells', async () => {
     const unitId = await makeUnit(tested)
     const picks = [{ unitId, topM: 10, bottomM: 40, source: 'driller’s log' }]
+    await createPublishedWell(steward, { picks })
     await createWell(analyst, { picks })
-    await createWell(analyst, { picks, visibility: 'internal' })
     const countFor = async (person: SignedIn) =>
       ((await person.get(`/api/aquifer-units/${unitId}`).expect(200)).body as AquiferUnit & { pickCount: number })
         .pickCount
@@ -97,12 +133,15 @@ describe('nearby tests', () => {
   it('are found on both sides of the date line', async () => {
     const unitId = await makeUnit(tested)
     const place = { x: 179.999, y: -38.4, confirmOutside: true }
-    const { id } = await enterTest(analyst, {
+    const entered = await enterTest(analyst, {
       unitId,
       pumped: place,
       observation: { ...place, x: 179.998 },
     })
+    await publishTest(steward, entered)
     const { body } = await reader.get('/api/nearby-tests?lon=-179.999&lat=-38.4&radiusM=5000').expect(200)
-    expect((body as { items: { pumpingTestId: number }[] }).items.map((item) => item.pumpingTestId)).toEqual([id])
+    expect((body as { items: { pumpingTestId: number }[] }).items.map((item) => item.pumpingTestId)).toEqual([
+      entered.id,
+    ])
   })
 })

@@ -3,7 +3,7 @@ import type { Problem } from '#shared/contracts/problem.ts'
 import type { Well, WellInput } from '#shared/contracts/wells.ts'
 import { geodesicDistance } from '#shared/geodesy/index.ts'
 import { useApp, type SignedIn } from '../../support/app.ts'
-import { createWell, makeRegion, makeUnit, makeWellInput } from '../../support/domain.ts'
+import { createPublishedWell, createWell, makeRegion, makeUnit, makeWellInput } from '../../support/domain.ts'
 
 const app = useApp()
 let steward: SignedIn
@@ -107,11 +107,21 @@ describe('entering a well', () => {
   it('is not open to readers', async () => {
     await reader.post('/api/wells').send(makeWellInput()).expect(403)
   })
+
+  it('shows it to readers only when a steward or an administrator enters it', async () => {
+    expect(await refused({ visibility: 'published' })).toEqual([
+      ['visibility', 'visibility/publishing-is-for-stewards'],
+    ])
+    for (const role of ['steward', 'administrator'] as const) {
+      const id = await createPublishedWell(await app.signIn(role))
+      expect((await read(reader, id)).visibility).toBe('published')
+    }
+  })
 })
 
 describe('reading wells', () => {
   it('answers 404 for a well that is hidden from the reader, as for one that does not exist', async () => {
-    const internal = await createWell(steward, { visibility: 'internal' })
+    const internal = await createWell(steward)
     const own = await createWell(analyst, { visibility: 'private' })
     const hidden = await reader.get(`/api/wells/${internal}`).expect(404)
     const missing = await reader.get('/api/wells/999999').expect(404)
@@ -123,8 +133,8 @@ describe('reading wells', () => {
   })
 
   it('lists by code in pages, and finds by part of code or name', async () => {
-    for (const code of ['LIST-b', 'LIST-a', 'LIST-c']) await createWell(steward, { code })
-    await createWell(steward, { code: 'LIST-d', visibility: 'internal' })
+    for (const code of ['LIST-b', 'LIST-a', 'LIST-c']) await createPublishedWell(steward, { code })
+    await createWell(steward, { code: 'LIST-d' })
     const page = await reader.get('/api/wells').query({ text: 'list-', limit: 2 }).expect(200)
     expect(page.body).toMatchObject({ total: 3, next: 2 })
     expect(page.body.items.map(({ code }: { code: string }) => code)).toEqual(['LIST-a', 'LIST-b'])
@@ -147,7 +157,7 @@ describe('changing a well', () => {
       .put(`/api/wells/${id}`)
       .send({ ...change, depthM: 72, rowVersion: 2 })
       .expect(200)
-    expect(await read(reader, id)).toMatchObject({ depthM: 72, rowVersion: 3 })
+    expect(await read(analyst, id)).toMatchObject({ depthM: 72, rowVersion: 3 })
   })
 
   it('of an older version is a conflict and changes nothing', async () => {
@@ -160,7 +170,7 @@ describe('changing a well', () => {
   })
 
   it('leaves its visibility to the stewards', async () => {
-    const id = await createWell(analyst, { code: 'STAYS', visibility: 'internal' })
+    const id = await createWell(analyst, { code: 'STAYS' })
     const change = { ...makeWellInput({ code: 'STAYS', visibility: 'published' }), rowVersion: 1 }
     await analyst.put(`/api/wells/${id}`).send(change).expect(200)
     expect((await read(analyst, id)).visibility).toBe('internal')

@@ -128,5 +128,6 @@ export function makeFullTest(
     rationale: RATIONALES[outcome],
     conditions: describe(test, images, site.at),
     visibility: pumped.well.visibility,
+    embargoUntil: pumped.well.embargoUntil,
   }
 }

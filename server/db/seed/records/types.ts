@@ -123,6 +123,8 @@ interface DemoTestBase {
 
 export interface DemoFullTest extends DemoTestBase {
   kind: 'constant-rate'
+  /** That of its well. */
+  embargoUntil: string | null
   rateSteps: { startS: number; rate: { value: number; unit: string } }[]
   staticLevelM: number
   observationWells: { wellCode: string; distanceM: number; staticLevelM: number }[]

@@ -15,10 +15,10 @@ async function createTest(
   wellIds: WellIds,
   unitIds: UnitIds,
 ) {
-  const { startLocal, zone, aquifer, thicknessM, thicknessBasis, conditions, visibility, rateSteps, staticLevelM } =
-    test
+  const { startLocal, zone, aquifer, thicknessM, thicknessBasis, conditions, rateSteps, staticLevelM } = test
   const { id } = await pumpingTests.create(analyst, {
-    ...{ startLocal, zone, aquifer, thicknessM, thicknessBasis, conditions, visibility, rateSteps, staticLevelM },
+    ...{ startLocal, zone, aquifer, thicknessM, thicknessBasis, conditions, rateSteps, staticLevelM },
+    visibility: 'internal',
     wellId: wellIds.get(test.wellCode)!,
     intervalBasis: 'screens',
     intervalTopM: null,
@@ -35,6 +35,18 @@ async function createTest(
     })),
   })
   return pumpingTests.get(analyst, id)
+}
+
+/** A test is as open as its well, and embargoed with it; the steward decides that, not the person who enters it. */
+async function publish(
+  { visibility }: Services,
+  { steward }: Cast,
+  { id, rowVersion }: Awaited<ReturnType<typeof createTest>>,
+  { visibility: wanted, embargoUntil }: DemoFullTest,
+) {
+  if (wanted === 'internal') return
+  const until = embargoUntil === null ? null : new Date(embargoUntil).toISOString()
+  await visibility.set(steward, 'pumping-test', id, { rowVersion, visibility: wanted, embargoUntil: until })
 }
 
 async function uploadLogs(
@@ -115,6 +127,7 @@ export async function writeFullTest(
   unitIds: UnitIds,
 ) {
   const created = await createTest(services, cast, test, wellIds, unitIds)
+  await publish(services, cast, created, test)
   await uploadLogs(services, cast, created, test)
   const saved: (Saved | null)[] = []
   for (const planned of test.analyses) saved.push(await saveAnalysis(services, cast, created.id, planned, wellIds))

@@ -5,7 +5,7 @@ import type { Executor } from '../../client.ts'
 import { pumpingTests, wells } from '../../schema/index.ts'
 import { seedAccounts } from '../accounts.ts'
 import { demoRecords } from '../records/index.ts'
-import type { DemoTest } from '../records/types.ts'
+import type { DemoRecords, DemoTest } from '../records/types.ts'
 import { localStart } from '../../../api/pumping-tests/start-time.ts'
 import { writeFullTest } from './full-test.ts'
 import { writeGeography } from './geography.ts'
@@ -43,13 +43,25 @@ async function knownTests(executor: Executor): Promise<Set<string>> {
   return new Set(rows.map((row) => keyOf(row.wellId, localStart(row.startAt, row.zone, row.startPrecision))))
 }
 
+/** In an installation made after an embargo has ended, its record is published like any other. */
+function withoutPastEmbargoes(records: DemoRecords, now: Date): DemoRecords {
+  const ahead = (until: string | null) => (until !== null && new Date(until) > now ? until : null)
+  return {
+    ...records,
+    wells: records.wells.map((well) => ({ ...well, embargoUntil: ahead(well.embargoUntil) })),
+    tests: records.tests.map((test) =>
+      test.kind === 'reported' ? test : { ...test, embargoUntil: ahead(test.embargoUntil) },
+    ),
+  }
+}
+
 /** Fills an empty region with the Isle of Veldray, through the program's own services; repeating it changes nothing. */
 export function seedDemo(deps: Deps): JobHandler {
   const { db } = deps.connection
   return async (_payload, context) => {
     await seedAccounts(deps, db)
     const cast = await castOf(db)
-    const records = demoRecords(demoSeed)
+    const records = withoutPastEmbargoes(demoRecords(demoSeed), deps.now())
     const unitIds = await writeGeography(createServices(deps), cast, db, records)
 
     const wellIds = new Map((await db.select().from(wells)).map(({ code, id }) => [code, id]))
