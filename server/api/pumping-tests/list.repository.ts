@@ -1,5 +1,5 @@
 import { and, asc, desc, eq, exists, inArray, like, or, sql, type SQL } from 'drizzle-orm'
-import type { PumpingTestQuery } from '#shared/contracts/pumping-tests.ts'
+import type { PumpingTestQuery, PumpingTestSummary } from '#shared/contracts/pumping-tests.ts'
 import type { Viewer } from '#shared/contracts/permissions.ts'
 import type { Executor } from '../../db/client.ts'
 import { containing } from '../../db/like.ts'
@@ -14,24 +14,26 @@ import {
   wells,
 } from '../../db/schema/index.ts'
 
-/** The furthest that work on a test has come. */
-const state = sql<'no-readings' | 'open' | 'submitted' | 'returned' | 'accepted'>`(case
-  when exists (select 1 from ${analyses} where ${analyses.pumpingTestId} = ${pumpingTests.id} and ${analyses.state} = 'accepted') then 'accepted'
-  when exists (select 1 from ${analyses} where ${analyses.pumpingTestId} = ${pumpingTests.id} and ${analyses.state} = 'submitted') then 'submitted'
-  when exists (select 1 from ${analyses} where ${analyses.pumpingTestId} = ${pumpingTests.id} and ${analyses.state} = 'returned') then 'returned'
+/** The analyses of a test that the viewer may see: neither state nor count tells of the others. */
+const seen = (viewer: Viewer) =>
+  sql`from ${analyses} where ${analyses.pumpingTestId} = ${pumpingTests.id} and ${readable.analyses(viewer)}`
+
+type State = PumpingTestSummary['state']
+
+/** The furthest that work on a test has come, as far as the viewer may know. */
+const stateFor = (viewer: Viewer) => sql<State>`(case
+  when exists (select 1 ${seen(viewer)} and ${analyses.state} = 'accepted') then 'accepted'
+  when exists (select 1 ${seen(viewer)} and ${analyses.state} = 'submitted') then 'submitted'
+  when exists (select 1 ${seen(viewer)} and ${analyses.state} = 'returned') then 'returned'
   when exists (select 1 from ${readingSeries} where ${readingSeries.pumpingTestId} = ${pumpingTests.id} and ${readingSeries.deletedAt} is null) then 'open'
   else 'no-readings' end)`
 
-const counts = {
-  wellCount:
-    sql<number>`(select count(*) from ${testWells} where ${testWells.pumpingTestId} = ${pumpingTests.id})`.mapWith(
-      Number,
-    ),
-  analysisCount:
-    sql<number>`(select count(*) from ${analyses} where ${analyses.pumpingTestId} = ${pumpingTests.id})`.mapWith(
-      Number,
-    ),
-}
+const countsFor = (viewer: Viewer) => ({
+  // In the subquery, wells are those that take part, not the pumped well of the query around it.
+  wellCount: sql<number>`(select count(*) from ${testWells} inner join ${wells} on ${wells.id} = ${testWells.wellId}
+    where ${testWells.pumpingTestId} = ${pumpingTests.id} and ${readable.wells(viewer)})`.mapWith(Number),
+  analysisCount: sql<number>`(select count(*) ${seen(viewer)})`.mapWith(Number),
+})
 
 const orders = { '-start': desc(pumpingTests.startAt), start: asc(pumpingTests.startAt), well: asc(wells.code) }
 
@@ -50,13 +52,13 @@ function filters(executor: Executor, viewer: Viewer, query: PumpingTestQuery): S
     query.unitId ? inUnit(query.unitId) : undefined,
     query.wellId ? eq(pumpingTests.wellId, query.wellId) : undefined,
     query.kind ? eq(pumpingTests.kind, query.kind) : undefined,
-    query.state ? eq(state, query.state) : undefined,
+    query.state ? eq(stateFor(viewer), query.state) : undefined,
   )
 }
 
 export function listPumpingTests(executor: Executor, viewer: Viewer, query: PumpingTestQuery) {
   return executor
-    .select({ test: pumpingTests, wellCode: wells.code, state, ...counts })
+    .select({ test: pumpingTests, wellCode: wells.code, state: stateFor(viewer), ...countsFor(viewer) })
     .from(pumpingTests)
     .innerJoin(wells, eq(wells.id, pumpingTests.wellId))
     .where(filters(executor, viewer, query))
