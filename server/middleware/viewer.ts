@@ -1,4 +1,5 @@
 import type { Request, RequestHandler } from 'express'
+import type { SessionData } from 'express-session'
 import { visitor, type Viewer } from '#shared/contracts/permissions.ts'
 import type { Config } from '../config/config.ts'
 import { isLoopback } from '../config/loopback.ts'
@@ -20,12 +21,31 @@ export function setAccount(req: Request, account: Account | null): void {
   else accounts.delete(req)
 }
 
+const asViewer = ({ id, name, role, mayReview }: Account): Viewer => ({ id, name, role, mayReview })
+
 /** Who asks. Rights are read from the database each time: a change works at once in every process. */
 export function viewerOf(req: Request): Viewer {
   const account = accounts.get(req)
-  if (!account) return visitor
-  const { id, name, role, mayReview } = account
-  return { id, name, role, mayReview }
+  return account ? asViewer(account) : visitor
+}
+
+const storedSession = (req: Request) =>
+  new Promise<SessionData | null>((resolve, reject) =>
+    req.sessionStore.get(req.sessionID, (error: unknown, session) =>
+      error ? reject(error as Error) : resolve(session ?? null),
+    ),
+  )
+
+/**
+ * Who asks by now, for an answer that goes on for long: null once the session has ended, the account was closed, or
+ * another person signed in over it.
+ */
+export async function viewerNow({ connection: { db }, config }: Deps, req: Request): Promise<Viewer | null> {
+  const before = accountOf(req)
+  const session = await storedSession(req)
+  if (!before || session?.userId !== before.id) return null
+  const account = await findAccount(db, before.id)
+  return account && mayEnter(account, config) ? asViewer(account) : null
 }
 
 export function withViewer({ connection: { db }, config, now }: Deps): RequestHandler {

@@ -1,12 +1,15 @@
 import { z } from 'zod'
 import { idInPath, nothing, paging } from '#shared/contracts/common.ts'
 import { jobList } from '#shared/contracts/jobs.ts'
+import { can } from '#shared/contracts/permissions.ts'
 import type { Deps } from '../../deps.ts'
+import { viewerNow } from '../../middleware/viewer.ts'
 import { route, type Route } from '../registry.ts'
 import type { Services } from '../services.ts'
 import { streamProgress } from './progress-stream.ts'
 
-export function jobsRoutes({ jobs }: Services, { now, stopping }: Deps): Route[] {
+export function jobsRoutes({ jobs }: Services, deps: Deps): Route[] {
+  const { now, stopping } = deps
   return [
     route(
       {
@@ -38,8 +41,20 @@ export function jobsRoutes({ jobs }: Services, { now, stopping }: Deps): Route[]
         summary: 'Progress of work as server-sent events',
         response: 'sent',
       },
-      ({ viewer, res }) =>
-        streamProgress(res, { load: (since) => jobs.active(viewer, since), now, stopping: stopping.signal }),
+      ({ viewer: opener, req, res }) => {
+        let viewer = opener
+        return streamProgress(res, {
+          load: (since) => jobs.active(viewer, since),
+          async mayGoOn() {
+            const found = await viewerNow(deps, req)
+            if (!found || !can(found, 'progress/follow')) return false
+            viewer = found
+            return true
+          },
+          now,
+          stopping: stopping.signal,
+        })
+      },
     ),
   ]
 }

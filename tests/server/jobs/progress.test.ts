@@ -1,16 +1,22 @@
 import { createServer, request as httpRequest, type Server } from 'node:http'
 import { once } from 'node:events'
 import type { AddressInfo } from 'node:net'
+import { eq } from 'drizzle-orm'
 import { afterAll, beforeAll, describe, expect, it } from 'vitest'
 import type { Job } from '#shared/contracts/jobs.ts'
+import { users } from '../../../server/db/schema/index.ts'
+import { endSessionsOf } from '../../../server/middleware/session.repository.ts'
 import { useApp } from '../../support/app.ts'
+import { makeClock, seconds } from '../../support/clock.ts'
 
-const tested = useApp()
+const clock = makeClock()
+const tested = useApp({ now: clock.now })
 let server: Server
 
 beforeAll(async () => {
   server = createServer(tested.app).listen(0, '127.0.0.1')
   await once(server, 'listening')
+  tested.deps.jobs.handle('demo-work', async (_payload, { report }) => report({ done: 2, total: 2, message: 'rows' }))
 })
 afterAll(() => void server.close())
 
@@ -41,6 +47,21 @@ async function follow(cookie: string, ended: (job: Job) => boolean): Promise<Job
   })
 }
 
+/** Opens the stream and hears whether the server ends it; `opened` once its first line has come. */
+function openStream(cookie: string) {
+  const { port } = server.address() as AddressInfo
+  const req = httpRequest({ port, path: '/api/progress', headers: { cookie } })
+  const opened = new Promise<void>((resolve) =>
+    req.on('response', (res) => void res.on('data', (chunk: Buffer) => void (chunk.length > 0 && resolve()))),
+  )
+  const ended = new Promise<void>((resolve, reject) => {
+    req.on('response', (res) => res.on('end', resolve))
+    req.on('error', reject)
+  })
+  req.end()
+  return { opened, ended, close: () => req.destroy() }
+}
+
 async function cookieOf(email: string, password: string) {
   const { port } = server.address() as AddressInfo
   const answer = await fetch(`http://127.0.0.1:${port}/api/session`, {
@@ -59,7 +80,6 @@ describe('the progress stream', () => {
     const { deps } = tested
     const mine = await tested.makePerson({ role: 'analyst' })
     const other = await tested.makePerson({ role: 'analyst' })
-    deps.jobs.handle('demo-work', async (_payload, { report }) => report({ done: 2, total: 2, message: 'rows' }))
     await deps.jobs.enqueue(deps.connection.db, 'demo-work', { createdBy: other.id })
     const id = await deps.jobs.enqueue(deps.connection.db, 'demo-work', { createdBy: mine.id })
     const cookie = await cookieOf(mine.email, 'a long enough password')
@@ -67,6 +87,36 @@ describe('the progress stream', () => {
     const seen = await follow(cookie, ({ state }) => state === 'done')
     expect(new Set(seen.map((job) => job.id))).toEqual(new Set([id]))
     expect(seen.at(-1)).toMatchObject({ state: 'done', done: 2, total: 2, message: 'rows' })
+  })
+
+  it.each([
+    ['signs out', (person: { id: number }) => endSessionsOf(tested.deps.connection.db, person.id)],
+    [
+      'is deactivated',
+      (person: { id: number }) =>
+        tested.deps.connection.db.update(users).set({ active: false }).where(eq(users.id, person.id)),
+    ],
+  ])('ends at the next heartbeat after the person %s', async (_, loseRight) => {
+    const person = await tested.makePerson({ role: 'analyst' })
+    const stream = openStream(await cookieOf(person.email, 'a long enough password'))
+    await stream.opened
+    await loseRight(person)
+    clock.forward(20 * seconds)
+    await stream.ended
+  })
+
+  it('goes on through heartbeats while the session lasts, and follows a right that was gained', async () => {
+    const { deps } = tested
+    const person = await tested.makePerson({ role: 'analyst' })
+    const other = await tested.makePerson({ role: 'analyst' })
+    const cookie = await cookieOf(person.email, 'a long enough password')
+    const id = await deps.jobs.enqueue(deps.connection.db, 'demo-work', { createdBy: other.id })
+    const seen = follow(cookie, (job) => job.id === id)
+    await deps.connection.db.update(users).set({ role: 'steward' }).where(eq(users.id, person.id))
+    const forward = setInterval(() => clock.forward(20 * seconds), 100)
+    expect((await seen).at(-1)?.id).toBe(id)
+    clearInterval(forward)
+    await deps.jobs.drain()
   })
 
   it('is closed to visitors', async () => {
