@@ -1,5 +1,6 @@
 import type { MethodId } from './catalogue.ts'
 import type { KindErrorCode } from './kind-errors.ts'
+import type { PenetrationErrorCode } from './penetration-errors.ts'
 
 /** A step of the pumping rate; a step with rate 0 is the stop. Times in seconds on the clock of `elapsed_s`. */
 export interface RateStep {
@@ -206,6 +207,7 @@ export interface FittedCurve {
 
 export type AnalysisErrorCode =
   | KindErrorCode
+  | PenetrationErrorCode
   | 'analysis/unknown-method'
   | 'analysis/no-wells'
   | 'analysis/unknown-well'

@@ -4,6 +4,7 @@ import { formatElapsed } from '#shared/quantities/elapsed.ts'
 import { formatNumber, formatQuantity } from '#shared/quantities/format.ts'
 import { defaultUnitSystemId, unitSystemById, type UnitSystem } from '#shared/quantities/systems.ts'
 import { kindFindings, kindOptionNames, kindRefusals } from './kind-findings.ts'
+import { leakageFindings, penetrationRefusals } from './leakage-findings.ts'
 
 /** Reads params as text in the reader's units. */
 export interface Words {
@@ -32,6 +33,7 @@ const optionNames: Record<string, string> = {
 /** Every finding of an analysis. */
 const findings: Sentences<string> = {
   ...kindFindings,
+  ...leakageFindings,
   'u-small': ({ number, percent }) =>
     `u is at most ${number('u')} in the window, within the limit of ${number('limit')}: the straight line is off by ${percent('drawdownError')} of drawdown and ${percent('slopeError')} of slope at most.`,
   'u-large': ({ number, percent, span }) =>
@@ -107,6 +109,7 @@ const findings: Sentences<string> = {
 /** Every reason for which an analysis refuses its inputs. */
 const refusals: Sentences<AnalysisErrorCode> = {
   ...kindRefusals,
+  ...penetrationRefusals,
   'analysis/unknown-method': ({ text }) => `The method "${text('method')}" is not known. Reload the page.`,
   'analysis/no-wells': () => 'Choose at least one well.',
   'analysis/unknown-well': () => 'A chosen well is not part of this test. Choose the wells again.',
