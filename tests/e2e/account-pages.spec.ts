@@ -1,6 +1,6 @@
 import type { Page } from '@playwright/test'
 import { expectAccessible, expectNoSidewaysScroll } from './support/accessible.ts'
-import { signIn } from './support/sign-in.ts'
+import { visitAs } from './support/sign-in.ts'
 import { expect, test } from './support/test.ts'
 
 const forVisitors = [
@@ -45,12 +45,12 @@ for (const [path, heading] of forVisitors)
 
 for (const [path, heading] of forAdministrators)
   test(`${path} is accessible and fits, light and dark, wide and narrow`, async ({ page }) => {
-    await signIn(page, 'administrator')
+    await visitAs(page, 'administrator')
     await expectFitInEachView(page, path, heading)
   })
 
 test('Menus and dialogs of the frame are accessible', async ({ page }) => {
-  await signIn(page, 'administrator')
+  await visitAs(page, 'administrator')
   await page.goto('/settings/people')
   await page.getByRole('button', { name: /^Units:/ }).click()
   await expect(page.getByRole('option').first()).toBeVisible()

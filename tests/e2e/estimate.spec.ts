@@ -1,6 +1,6 @@
 import { expectAccessible, expectNoSidewaysScroll } from './support/accessible.ts'
 import { choose, chooseUnits } from './support/choose.ts'
-import { signIn } from './support/sign-in.ts'
+import { signIn, visitAs } from './support/sign-in.ts'
 import { expect, test } from './support/test.ts'
 
 /** A place in the middle of the Tarrow Gravels. */
@@ -34,7 +34,7 @@ test('A consultant types coordinates and gets the estimate with its interval, no
 })
 
 test('Unit, quantity and depth are asked anew, and the address keeps the question', async ({ page }) => {
-  await signIn(page, 'reader')
+  await visitAs(page, 'reader')
   await page.goto(PLACE)
   const sheet = sheetOf(page)
   await expect(sheet.getByText(/transmissivity, median/)).toBeVisible()
@@ -55,7 +55,7 @@ test('Unit, quantity and depth are asked anew, and the address keeps the questio
 })
 
 test('The interval can be read for a new test, in other units and in other coordinates', async ({ page }) => {
-  await signIn(page, 'reader')
+  await visitAs(page, 'reader')
   await page.goto(PLACE)
   const figure = sheetOf(page).getByRole('region', { name: 'Estimate' })
   const interval = figure.locator('dd').nth(1)
@@ -76,7 +76,7 @@ test('The interval can be read for a new test, in other units and in other coord
 })
 
 test('The radius is typed or slid, and narrows the tests', async ({ page }) => {
-  await signIn(page, 'reader')
+  await visitAs(page, 'reader')
   await page.goto(`${PLACE}?radius=8000`)
   const nearby = sheetOf(page).getByRole('region', { name: 'Tests nearby' })
   const count = nearby.getByRole('status')
@@ -90,7 +90,7 @@ test('The radius is typed or slid, and narrows the tests', async ({ page }) => {
 })
 
 test('Where nothing can be estimated the sheet says why and what is near', async ({ page }) => {
-  await signIn(page, 'reader')
+  await visitAs(page, 'reader')
   await page.goto('/map/place/-38.700000,-21.900000')
   await expect(sheetOf(page).getByText('No aquifer unit is mapped here', { exact: false })).toBeVisible()
   await page.goto('/map/place/-38.417200,-21.184000?quantity=S')
@@ -109,7 +109,7 @@ const views = [
 ] as const
 
 test('The sheet is accessible and fits, light and dark, wide and narrow', async ({ page }) => {
-  await signIn(page, 'reader')
+  await visitAs(page, 'reader')
   for (const { colorScheme, width } of views) {
     await page.emulateMedia({ colorScheme, reducedMotion: 'reduce' })
     await page.setViewportSize({ width, height: 900 })

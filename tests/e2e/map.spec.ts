@@ -1,7 +1,7 @@
 import type { Page } from '@playwright/test'
 import { expectAccessible, expectNoSidewaysScroll } from './support/accessible.ts'
 import { chooseUnits } from './support/choose.ts'
-import { signIn } from './support/sign-in.ts'
+import { visitAs } from './support/sign-in.ts'
 import { expect, test } from './support/test.ts'
 
 const layers = (page: Page) => page.getByRole('region', { name: 'Layers' })
@@ -27,7 +27,7 @@ async function openList(page: Page) {
 test('The map opens at the home extent with wells by value, streams, units, the fault and a legend of them', async ({
   page,
 }) => {
-  await signIn(page, 'reader')
+  await visitAs(page, 'reader')
   await openMap(page)
   await expect(legend(page)).toContainText('Transmissivity, m²/d')
   for (const entry of ['firm', 'fair', 'slight', 'no value yet', 'stream', 'unit outline', 'fault'])
@@ -38,7 +38,7 @@ test('The map opens at the home extent with wells by value, streams, units, the 
 })
 
 test('A legend entry leaves only its wells; the list in view says the same', async ({ page }) => {
-  await signIn(page, 'analyst')
+  await visitAs(page, 'analyst')
   await openMap(page)
   const all = await wellsInView(page)
   const list = await openList(page)
@@ -56,7 +56,7 @@ test('A legend entry leaves only its wells; the list in view says the same', asy
 })
 
 test('Unit and parameter recolour the wells, in the units that the reader chooses', async ({ page }) => {
-  await signIn(page, 'analyst')
+  await visitAs(page, 'analyst')
   await openMap(page)
   await layers(page).getByLabel('Aquifer unit').selectOption({ label: 'Fennick Limestone' })
   await layers(page).getByLabel('Value of the wells').selectOption({ label: 'Storativity' })
@@ -73,7 +73,7 @@ test('Unit and parameter recolour the wells, in the units that the reader choose
 })
 
 test('A well opens from the list by keyboard, has its own address, and Back and Escape lead out', async ({ page }) => {
-  await signIn(page, 'reader')
+  await visitAs(page, 'reader')
   await openMap(page)
   const list = await openList(page)
   const first = list.getByRole('link').first()
@@ -118,7 +118,7 @@ async function pixelOf(page: Page, { lon, lat }: { lon: number; lat: number }): 
 }
 
 test('A disc says what it is under the pointer, and a click opens its well', async ({ page }) => {
-  await signIn(page, 'reader')
+  await visitAs(page, 'reader')
   await openMap(page)
   const answer = await page.request.get('/api/map/wells?bbox=-21.5,-38.6,-20.9,-38.2&zoom=11')
   const { wells } = (await answer.json()) as { wells: { code: string; lon: number; lat: number }[] }
@@ -133,7 +133,7 @@ test('A disc says what it is under the pointer, and a click opens its well', asy
 })
 
 test('A click on the empty map opens the place, and a switched-off layer takes no clicks', async ({ page }) => {
-  await signIn(page, 'reader')
+  await visitAs(page, 'reader')
   await openMap(page)
   for (const name of ['Wells', 'Streams', 'Unit outlines', 'Boundaries'])
     await layers(page).getByRole('checkbox', { name }).uncheck()
@@ -145,7 +145,7 @@ test('A click on the empty map opens the place, and a switched-off layer takes n
 })
 
 test('Enter on the map asks for the place in its middle', async ({ page }) => {
-  await signIn(page, 'reader')
+  await visitAs(page, 'reader')
   await openMap(page)
   await page.getByRole('application', { name: 'Map' }).focus()
   await page.keyboard.press('Enter')
@@ -153,7 +153,7 @@ test('Enter on the map asks for the place in its middle', async ({ page }) => {
 })
 
 test('Coordinates under the pointer stand in degrees and in the region’s system', async ({ page }) => {
-  await signIn(page, 'reader')
+  await visitAs(page, 'reader')
   await openMap(page)
   await page.mouse.move(760, 420)
   await expect(page.getByText(/^\d\d\.\d{4}° S, \d\d\.\d{4}° W$/)).toBeVisible()
@@ -161,7 +161,7 @@ test('Coordinates under the pointer stand in degrees and in the region’s syste
 })
 
 test('The search finds wells, streams, units and places from anywhere', async ({ page }) => {
-  await signIn(page, 'reader')
+  await visitAs(page, 'reader')
   await page.goto('/account')
   await expect(page.getByRole('heading', { level: 1 })).toBeVisible()
   await page.keyboard.press('/')
@@ -183,7 +183,7 @@ test('The search finds wells, streams, units and places from anywhere', async ({
 })
 
 test('m opens the map; groups of wells stand for many from afar and open when they are chosen', async ({ page }) => {
-  await signIn(page, 'analyst')
+  await visitAs(page, 'analyst')
   await page.goto('/account')
   await expect(page.getByRole('heading', { level: 1 })).toBeVisible()
   await page.keyboard.press('m')
@@ -205,7 +205,7 @@ test('An analyst enters a well at a place of the map, and a slip is caught befor
 }) => {
   // Refused on purpose, twice.
   watch.expect(/status of 400 .*\/api\/wells/)
-  await signIn(page, 'analyst')
+  await visitAs(page, 'analyst')
   await openMap(page)
   await page.getByRole('link', { name: 'Enter a well' }).click()
   const form = sheet(page, 'New well')
@@ -241,7 +241,7 @@ test('An analyst enters a well at a place of the map, and a slip is caught befor
 })
 
 test('A steward embargoes a well, and a reader no longer finds it', async ({ page, browser, baseURL }) => {
-  await signIn(page, 'steward')
+  await visitAs(page, 'steward')
   await page.goto('/map/wells/new?at=-38.405000,-21.150000')
   const code = `EMB-${Date.now()}`
   await sheet(page, 'New well').getByLabel('Code').fill(code)
@@ -256,7 +256,7 @@ test('A steward embargoes a well, and a reader no longer finds it', async ({ pag
   await expect(well.getByText('embargoed until 1 May 2031')).toBeVisible()
 
   const other = await browser.newPage({ baseURL: baseURL! })
-  await signIn(other, 'reader')
+  await visitAs(other, 'reader')
   await other.goto(page.url())
   await expect(other.getByText('Nothing here')).toBeVisible()
   await other.getByRole('combobox', { name: /^Search/ }).fill(code)
@@ -275,7 +275,7 @@ for (const { colorScheme, width } of views)
   test(`The map and its sheets are accessible and fit, ${colorScheme} at ${width} px`, async ({ page }) => {
     await page.emulateMedia({ colorScheme, reducedMotion: 'reduce' })
     await page.setViewportSize({ width, height: 800 })
-    await signIn(page, 'steward')
+    await visitAs(page, 'steward')
     for (const path of ['/map', '/map/wells/1', '/map/streams/1', '/map/aquifer-units/1', '/map/wells/new']) {
       await page.goto(path)
       await expect(page.getByRole('application', { name: 'Map' })).toBeVisible()
@@ -288,7 +288,7 @@ for (const { colorScheme, width } of views)
 
 test('Cards open and close on a phone, and the list in view works there too', async ({ page }) => {
   await page.setViewportSize({ width: 360, height: 740 })
-  await signIn(page, 'reader')
+  await visitAs(page, 'reader')
   await page.goto('/map')
   await layers(page).getByRole('button', { name: 'Layers' }).click()
   await layers(page).getByRole('button', { name: 'In view' }).click()

@@ -1,7 +1,7 @@
 import { readFile } from 'node:fs/promises'
 import { expectAccessible, expectNoSidewaysScroll } from './support/accessible.ts'
 import { choose, chooseUnits } from './support/choose.ts'
-import { signIn } from './support/sign-in.ts'
+import { signIn, visitAs } from './support/sign-in.ts'
 import { expect, test } from './support/test.ts'
 
 test('A reader filters and sorts the regional table, and Back undoes it', async ({ page }) => {
@@ -34,7 +34,7 @@ test('A reader filters and sorts the regional table, and Back undoes it', async 
 test('A row leads back to its analysis, its test, its readings and its history, by keyboard alone', async ({
   page,
 }) => {
-  await signIn(page, 'reader')
+  await visitAs(page, 'reader')
   await page.goto('/regional-table?method=theis&quantity=T')
   const table = page.getByRole('region', { name: 'Regional table' })
   const first = table.getByRole('row').nth(1)
@@ -58,7 +58,7 @@ test('A row leads back to its analysis, its test, its readings and its history, 
 })
 
 test('The export holds what the filters leave, in the reader’s units', async ({ page }) => {
-  await signIn(page, 'reader')
+  await visitAs(page, 'reader')
   await page.goto('/regional-table?quantity=K')
   await expect(page.getByRole('region', { name: 'Regional table' })).toBeVisible()
   const downloading = page.waitForEvent('download')
@@ -71,7 +71,7 @@ test('The export holds what the filters leave, in the reader’s units', async (
 })
 
 test('A switch of units changes every number at once', async ({ page }) => {
-  await signIn(page, 'reader')
+  await visitAs(page, 'reader')
   await page.goto('/regional-table?quantity=T')
   const cell = page.getByRole('region', { name: 'Regional table' }).getByRole('row').nth(1)
   await expect(cell).toContainText('m²/d')
@@ -80,7 +80,7 @@ test('A switch of units changes every number at once', async ({ page }) => {
 })
 
 test('A steward withdraws a value with a reason, and it leaves the table', async ({ page }) => {
-  await signIn(page, 'steward')
+  await visitAs(page, 'steward')
   await page.goto('/regional-table?quantity=T&evidence=slight&sort=-well')
   const table = page.getByRole('region', { name: 'Regional table' })
   const row = table.getByRole('row').nth(1)
@@ -99,7 +99,7 @@ test('A steward withdraws a value with a reason, and it leaves the table', async
 })
 
 test('An empty answer says so and clears its filters', async ({ page }) => {
-  await signIn(page, 'reader')
+  await visitAs(page, 'reader')
   await page.goto('/regional-table?text=no-such-well')
   await expect(page.getByText('No value fits')).toBeVisible()
   await page.getByRole('button', { name: 'Clear the filters' }).last().click()
@@ -133,7 +133,7 @@ const views = [
 // Few rows: axe looks at every cell, and all rows are alike.
 for (const path of ['/regional-table?quantity=T&evidence=firm&from=2012', '/reviews'])
   test(`${path} is accessible and fits, light and dark, wide and narrow`, async ({ page }) => {
-    await signIn(page, 'reviewer')
+    await visitAs(page, 'reviewer')
     await page.goto(path)
     await expect(page.getByText(/^Fetching /)).toHaveCount(0)
     for (const { colorScheme, width } of views) {

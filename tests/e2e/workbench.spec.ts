@@ -1,7 +1,7 @@
 import { fileURLToPath } from 'node:url'
 import type { Page } from '@playwright/test'
 import { expectAccessible, expectNoSidewaysScroll } from './support/accessible.ts'
-import { signIn } from './support/sign-in.ts'
+import { signIn, visitAs } from './support/sign-in.ts'
 import { expect, test } from './support/test.ts'
 
 const korendijk = fileURLToPath(new URL('../reference/oude-korendijk.csv', import.meta.url))
@@ -143,7 +143,7 @@ test('A log becomes a value of the regional table, from the file to the reviewer
 })
 
 test('The line is drawn by hand with the keyboard, and goes back to least squares', async ({ page }) => {
-  await signIn(page, 'analyst')
+  await visitAs(page, 'analyst')
   await openTest(page)
   const end = page.getByRole('slider', { name: /^Line at/ }).last()
   await end.focus()
@@ -156,11 +156,9 @@ test('The line is drawn by hand with the keyboard, and goes back to least square
 
 /** A seeded test with three observation wells. */
 async function testAddress(page: Page): Promise<string> {
-  const id = await page.evaluate(async () => {
-    const answer = await fetch('/api/pumping-tests?kind=constant-rate&state=accepted&limit=50')
-    const { items } = (await answer.json()) as { items: { id: number; wellCount: number }[] }
-    return items.find(({ wellCount }) => wellCount >= 4)?.id
-  })
+  const answer = await page.request.get('/api/pumping-tests?kind=constant-rate&state=accepted&limit=50')
+  const { items } = (await answer.json()) as { items: { id: number; wellCount: number }[] }
+  const id = items.find(({ wellCount }) => wellCount >= 4)?.id
   return `/pumping-tests/${id}`
 }
 
@@ -173,7 +171,7 @@ async function openTest(page: Page) {
 }
 
 test('Every plot of a test is drawn, read as a table and saved', async ({ page }) => {
-  await signIn(page, 'analyst')
+  await visitAs(page, 'analyst')
   await openTest(page)
   for (const kind of ['Linear', 'Log–log', 'Recovery', 'Distance', 'Semi-log']) {
     await page.getByRole('button', { name: kind, exact: true }).click()
@@ -208,7 +206,7 @@ const pages: Record<string, (address: string) => string> = {
 
 for (const [name, pathOf] of Object.entries(pages)) {
   test(`The ${name} fits the narrowest window in the dark theme`, async ({ page }) => {
-    await signIn(page, 'analyst')
+    await visitAs(page, 'analyst')
     await page.setViewportSize({ width: 320, height: 700 })
     await page.emulateMedia({ colorScheme: 'dark' })
     await page.goto(pathOf(await testAddress(page)))
