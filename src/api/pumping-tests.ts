@@ -6,6 +6,7 @@ import {
   type PumpingTestQuery,
   type PumpingTestUpdate,
 } from '#shared/contracts/pumping-tests.ts'
+import { visibilityAnswer, type VisibilityInput } from '#shared/contracts/visibility.ts'
 import { api } from './client.ts'
 
 export const fetchPumpingTests = (query: PumpingTestQuery, signal?: AbortSignal) =>
@@ -19,3 +20,6 @@ export const createPumpingTest = (body: PumpingTestInput, idempotencyKey: string
 
 export const updatePumpingTest = (id: number, body: PumpingTestUpdate) =>
   api.put(`/api/pumping-tests/${id}`, { body, response: pumpingTest })
+
+export const setPumpingTestVisibility = (id: number, body: VisibilityInput) =>
+  api.put(`/api/pumping-tests/${id}/visibility`, { body, response: visibilityAnswer })

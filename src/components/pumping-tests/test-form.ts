@@ -161,8 +161,11 @@ export interface UnitFacts {
   kind: string
 }
 
-/** What the pumped well suggests: the unit that its screens are open to, that unit's thickness and kind, who may see it. */
-export function suggestionsOf(well: Well, units: readonly UnitFacts[]): Partial<TestForm> {
+/**
+ * What the pumped well suggests: the unit that its screens are open to, that unit's thickness and kind, who may see it.
+ * A test of a published well is published by a steward.
+ */
+export function suggestionsOf(well: Well, units: readonly UnitFacts[], mayPublish: boolean): Partial<TestForm> {
   const top = Math.min(...well.screens.map(({ topM }) => topM))
   const bottom = Math.max(...well.screens.map(({ bottomM }) => bottomM))
   const open = well.picks.find(
@@ -174,7 +177,7 @@ export function suggestionsOf(well: Well, units: readonly UnitFacts[]): Partial<
   const kind = units.find(({ id }) => id === open?.unitId)?.kind
   return {
     intervalBasis: well.screens.length > 0 ? 'screens' : 'unknown',
-    visibility: well.visibility,
+    visibility: well.visibility === 'published' && !mayPublish ? 'internal' : well.visibility,
     ...(open ? { units: [{ unitId: open.unitId, share: 1, basis: 'single-unit' as const }] } : {}),
     ...(open?.bottomM != null ? { thicknessM: open.bottomM - open.topM, thicknessBasis: 'aquifer' as const } : {}),
     ...(kind && isAquifer(kind) ? { aquifer: kind } : {}),

@@ -1,7 +1,9 @@
 import { beforeAll, describe, expect, it, vi } from 'vitest'
 import NewWellForm from '../../../src/components/wells/NewWellForm.vue'
+import VisibilityField from '../../../src/components/wells/VisibilityField.vue'
 import { makeProblem, fakeServer, type Rules } from '../support/fake-server.ts'
 import { mountWith, settle } from '../support/mount.ts'
+import { makeSession } from '../support/session.ts'
 
 vi.setConfig({ testTimeout: 30_000 })
 
@@ -33,6 +35,22 @@ const taken =
     status: 400,
     body: makeProblem('request/invalid', { fields: [{ path, code, params }] }),
   })
+
+describe('who sees a new well', () => {
+  const choicesFor = async (role: 'analyst' | 'steward') => {
+    const form = await mountWith(VisibilityField, {
+      props: { modelValue: 'internal', label: 'Visibility', errors: [] },
+      session: makeSession({ role }),
+    })
+    const { items } = form.findComponent({ name: 'VSelect' }).props() as { items: { title: string }[] }
+    return [items.map(({ title }) => title), form.text().includes('A steward publishes it.')]
+  }
+
+  it('is everybody only by the choice of a steward; others are told so', async () => {
+    expect(await choicesFor('analyst')).toEqual([['Internal', 'Private'], true])
+    expect(await choicesFor('steward')).toEqual([['Published', 'Internal', 'Private'], false])
+  })
+})
 
 describe('entering a well', () => {
   it('begins in the region’s system and shows where typed coordinates lie', async () => {

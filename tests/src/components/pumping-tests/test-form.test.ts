@@ -68,7 +68,7 @@ describe('What the pumped well suggests', () => {
   ]
 
   it('is the unit that its screens are open to, with its kind and thickness', () => {
-    expect(suggestionsOf(well, units)).toMatchObject({
+    expect(suggestionsOf(well, units, true)).toMatchObject({
       aquifer: 'leaky',
       thicknessM: 34,
       units: [{ unitId: 2, share: 1, basis: 'single-unit' }],
@@ -77,8 +77,17 @@ describe('What the pumped well suggests', () => {
   })
 
   it('is nothing about the unit where none is picked, and an unknown interval without screens', () => {
-    const bare = suggestionsOf({ ...well, screens: [], picks: [] }, units)
+    const bare = suggestionsOf({ ...well, screens: [], picks: [] }, units, true)
     expect(bare).toEqual({ intervalBasis: 'unknown', visibility: 'published' })
+  })
+
+  it('is an internal test of a published well for those who do not publish', () => {
+    const seenBy = (visibility: Well['visibility']) => suggestionsOf({ ...well, visibility }, units, false).visibility
+    expect(['published', 'internal', 'private'].map((each) => seenBy(each as Well['visibility']))).toEqual([
+      'internal',
+      'internal',
+      'private',
+    ])
   })
 })
 
