@@ -28,6 +28,9 @@ export const deleteAnalysis = (id: number) => api.delete(`/api/analyses/${id}`, 
 export const submitAnalysis = (id: number, body: SubmissionInput, idempotencyKey: string) =>
   api.post(`/api/analyses/${id}/submission`, { body, response: analysis, idempotencyKey })
 
+export const takeAnalysisBack = (id: number, rowVersion: number) =>
+  api.delete(`/api/analyses/${id}/submission`, { query: { rowVersion }, response: analysis })
+
 export const reviewAnalysis = (id: number, body: ReviewInput, idempotencyKey: string) =>
   api.post(`/api/analyses/${id}/review`, { body, response: analysis, idempotencyKey })
 

@@ -42,8 +42,8 @@ describe('the queue of reviews', () => {
 
   it('warns of inputs that changed, and says when somebody else must decide', async () => {
     expect((await mounted({ inputsChanged: true })).text()).toContain('Inputs changed')
-    expect((await mounted({ mayReview: false })).text()).toContain('Your own: somebody else decides')
-    expect((await mounted({ mayReview: false }, false)).text()).not.toContain('Your own')
+    expect((await mounted({ mayReview: false })).text()).toContain('You took part: somebody else decides')
+    expect((await mounted({ mayReview: false }, false)).text()).not.toContain('You took part')
     expect((await mounted()).text()).not.toContain('Inputs changed')
   })
 
