@@ -1,6 +1,6 @@
 import { existsSync, mkdirSync, readdirSync, utimesSync, writeFileSync } from 'node:fs'
-import { connect } from 'node:net'
-import { createServer, type AddressInfo } from 'node:http'
+import { createServer } from 'node:http'
+import { connect, type AddressInfo } from 'node:net'
 import { join } from 'node:path'
 import { beforeAll, describe, expect, it } from 'vitest'
 import { uploadFolder } from '../../../server/api/reading-series/upload.ts'
