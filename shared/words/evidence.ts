@@ -9,10 +9,12 @@ const sentences: Record<string, string> = {
   'unconfined-single-well': 'A single well in an unconfined aquifer, without a recovery that agrees: slight evidence.',
   'recovery-agrees': 'A single well whose recovery agrees: fair evidence.',
   'single-well': 'A single well without a recovery that agrees: fair evidence, with a wider error.',
+  'composite-share': 'The test drew on several units, and this is the share of one of them: slight evidence.',
   'storage-usable': 'The storage value can be used in estimates.',
   'storage-pumped-well': 'Storage from a pumped well alone is kept, but not used in estimates.',
   'storage-slug': 'Storage from a slug test is kept, but not used in estimates.',
-  'storage-apparent': 'The test was too short for a storage value of years to come: it is kept, but not used in estimates.',
+  'storage-apparent':
+    'The test was too short for a storage value of years to come: it is kept, but not used in estimates.',
   'storage-unclassified': 'It is not known what kind of storage this is: it is kept, but not used in estimates.',
 }
 

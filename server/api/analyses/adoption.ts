@@ -12,6 +12,7 @@ import { evidenceOf, type Evidence, type EvidenceFacts } from '#shared/hydraulic
 import type { NewValue } from '../adopted-values/adopted-values.service.ts'
 import { localStart } from '../pumping-tests/start-time.ts'
 import type { PumpingTestRow, TestParts } from '../pumping-tests/view.ts'
+import type { AdoptedRow } from './adopted.repository.ts'
 import type { AnalysisRow } from './analyses.repository.ts'
 import { reportedFacts, reportedInputs } from './reported.ts'
 
@@ -66,21 +67,38 @@ export function weigh(row: Weighed, siblings: Weighed[]): Weight {
   return { facts, evidence: evidenceOf(facts) }
 }
 
-/** What adopting the analysis would write into the regional table; null where it gives no transmissivity. */
-export function adoptionOf(row: Weighed, siblings: Weighed[]): Analysis['adoption'] {
+const asReasons = (codes: (string | null | undefined)[]): NonNullable<Analysis['adoption']>['reasons'] =>
+  codes.flatMap((code) => (code ? [{ code, severity: 'note' as const, params: {} }] : []))
+
+/**
+ * What adopting the analysis wrote into the regional table, or would write; null where it gives no transmissivity.
+ * Analyses of the same test weigh only until a reviewer has decided: what was adopted stays what it was.
+ */
+export function adoptionOf(row: Weighed, siblings: Weighed[], adopted: AdoptedRow[]): Analysis['adoption'] {
   if (!resultOf(row).T) return null
-  const { evidence: found } = weigh(row, siblings)
-  const { evidence, reason, logErrorT, storage } = found
+  return asAdopted(adopted.filter(({ analysisId }) => analysisId === row.id)) ?? asProposed(weigh(row, siblings))
+}
+
+function asAdopted(rows: AdoptedRow[]): Analysis['adoption'] {
+  const T = rows.find(({ quantity }) => quantity === 'T')
+  const S = rows.find(({ quantity }) => quantity === 'S')
+  if (!T) return null
   return {
-    evidence,
-    log10ErrorT: logErrorT,
-    log10ErrorS: storage?.logError ?? null,
-    storageUsable: storage?.usable ?? false,
-    reasons: [reason, storage?.reason].flatMap((code) =>
-      code ? [{ code, severity: 'note' as const, params: {} }] : [],
-    ),
+    evidence: T.evidence,
+    log10ErrorT: T.log10Error,
+    log10ErrorS: S?.log10Error ?? null,
+    storageUsable: S?.usable ?? false,
+    reasons: asReasons([T.evidenceReason, S?.evidenceReason]),
   }
 }
+
+const asProposed = ({ evidence: { evidence, reason, logErrorT, storage } }: Weight): Analysis['adoption'] => ({
+  evidence,
+  log10ErrorT: logErrorT,
+  log10ErrorS: storage?.logError ?? null,
+  storageUsable: storage?.usable ?? false,
+  reasons: asReasons([reason, storage?.reason]),
+})
 
 export interface AdoptedTest {
   found: { test: PumpingTestRow }
@@ -129,6 +147,7 @@ export function adoptedRows(
       log10Value: Math.log10(T.value * share),
       log10Error,
       evidence: 'slight' as const,
+      evidenceReason: 'composite-share',
       composite: true,
     }))
   }
@@ -136,7 +155,7 @@ export function adoptedRows(
   const withThickness = Math.hypot(evidence.logErrorT, test.thicknessError / Math.LN10)
   // A slug test measures K, and its T is derived with the thickness; a pumping test the other way round.
   const measuresK = facts.origin === 'slug-test'
-  const grade = evidence.evidence
+  const grade = { evidence: evidence.evidence, evidenceReason: evidence.reason }
   const rows: NewValue[] = [
     {
       ...common,
@@ -144,11 +163,11 @@ export function adoptedRows(
       quantity: 'T',
       log10Value: Math.log10(T.value),
       log10Error: measuresK ? withThickness : evidence.logErrorT,
-      evidence: grade,
+      ...grade,
     },
   ]
   if (S && storageClass && evidence.storage) {
-    const { logError: log10Error, usable, evidence: storageGrade } = evidence.storage
+    const { logError: log10Error, usable, evidence: storageGrade, reason: evidenceReason } = evidence.storage
     rows.push({
       ...common,
       unitId,
@@ -158,11 +177,12 @@ export function adoptedRows(
       log10Error,
       usable,
       evidence: storageGrade,
+      evidenceReason,
     })
   }
   if (K) {
     const log10Error = measuresK ? evidence.logErrorT : withThickness
-    rows.push({ ...common, unitId, quantity: 'K', log10Value: Math.log10(K.value), log10Error, evidence: grade })
+    rows.push({ ...common, unitId, quantity: 'K', log10Value: Math.log10(K.value), log10Error, ...grade })
   }
   return rows
 }

@@ -8,6 +8,7 @@ import { inTransaction, transactionOf, type Transaction } from '../../db/transac
 import type { Deps } from '../../deps.ts'
 import { AppError, notFound } from '../../errors.ts'
 import { recordAudit } from '../audit-trail/record-audit.ts'
+import { listAdopted } from './adopted.repository.ts'
 import * as repository from './analyses.repository.ts'
 import { adoptedRows } from './adoption.ts'
 import { calculate, checkExpected, checkRepeats } from './calculate.ts'
@@ -17,7 +18,7 @@ import type { createInputsService } from './inputs.service.ts'
 import { lockDraft } from './lock-draft.ts'
 import { reportedFacts, reportedResult, type ReportedValue } from './reported.ts'
 import { createSubmissions } from './submissions.ts'
-import { analysisView } from './view.ts'
+import { analysisView, type Surroundings } from './view.ts'
 import { withoutHiddenWells } from './without-hidden-wells.ts'
 
 export function createAnalysesService(deps: Deps, inputs: ReturnType<typeof createInputsService>) {
@@ -27,12 +28,17 @@ export function createAnalysesService(deps: Deps, inputs: ReturnType<typeof crea
   const siblingsOf = async (executor: Executor, testId: number) =>
     (await repository.listAnalyses(executor, everything, testId)).map(({ row }) => row)
 
+  const surroundings = async (executor: Executor, testId: number, ids: number[]): Promise<Surroundings> => ({
+    siblings: await siblingsOf(executor, testId),
+    reviews: await repository.listReviews(executor, ids),
+    adopted: await listAdopted(executor, ids),
+  })
+
   async function view(executor: Executor, viewer: Viewer, id: number) {
     const found = await repository.findAnalysis(executor, viewer, id)
     if (!found) throw notFound()
-    const reviews = await repository.listReviews(executor, [id])
     const { pumpingTestId } = found.row
-    const shown = analysisView(viewer, found, await siblingsOf(executor, pumpingTestId), reviews)
+    const shown = analysisView(viewer, found, await surroundings(executor, pumpingTestId, [id]))
     return withoutHiddenWells(shown, found.row, await inputs.wellsSeen(executor, viewer, pumpingTestId))
   }
 
@@ -71,16 +77,11 @@ export function createAnalysesService(deps: Deps, inputs: ReturnType<typeof crea
 
     async list(viewer: Viewer, testId: number) {
       const rows = await repository.listAnalyses(db, viewer, testId)
-      const reviews = await repository.listReviews(
-        db,
-        rows.map(({ row }) => row.id),
-      )
       if (rows.length === 0) return { items: [] }
-      const siblings = await siblingsOf(db, testId)
+      const ids = rows.map(({ row }) => row.id)
+      const around = await surroundings(db, testId, ids)
       const seen = await inputs.wellsSeen(db, viewer, testId)
-      return {
-        items: rows.map((row) => withoutHiddenWells(analysisView(viewer, row, siblings, reviews), row.row, seen)),
-      }
+      return { items: rows.map((row) => withoutHiddenWells(analysisView(viewer, row, around), row.row, seen)) }
     },
 
     get: (viewer: Viewer, id: number, executor: Executor = db) => view(executor, viewer, id),

@@ -2,6 +2,7 @@ import type { Analysis } from '#shared/contracts/analyses.ts'
 import { analysisOptions, analysisResult } from '#shared/contracts/analysis-result.ts'
 import { atLeast, can, type Viewer } from '#shared/contracts/permissions.ts'
 import { limitFindings } from '#shared/hydraulics/limits.ts'
+import type { AdoptedRow } from './adopted.repository.ts'
 import { adoptionOf } from './adoption.ts'
 import type { FoundAnalysis, listReviews } from './analyses.repository.ts'
 
@@ -21,12 +22,18 @@ export const mayTakeBack = (viewer: Viewer, row: FoundAnalysis['row']): boolean 
 const mayDecide = (viewer: Viewer, { row, tookPart }: FoundAnalysis): boolean =>
   row.state === 'submitted' && can(viewer, 'reviews/decide') && !tookPart
 
-/** `siblings` are the analyses of the same test: a recovery that agrees is evidence. */
+/** What the view of an analysis is made from beside itself; of other analyses too. */
+export interface Surroundings {
+  /** Analyses of the same test: a recovery that agrees is evidence. */
+  siblings: FoundAnalysis['row'][]
+  reviews: ReviewRows
+  adopted: AdoptedRow[]
+}
+
 export function analysisView(
   viewer: Viewer,
   found: FoundAnalysis,
-  siblings: FoundAnalysis['row'][],
-  reviews: ReviewRows,
+  { siblings, reviews, adopted }: Surroundings,
 ): Analysis {
   const { row, authorName } = found
   const result = analysisResult.parse(row.result)
@@ -45,7 +52,7 @@ export function analysisView(
     result,
     label: row.label,
     rationale: row.rationale,
-    adoption: adoptionOf(row, siblings),
+    adoption: adoptionOf(row, siblings, adopted),
     inputsChanged: row.inputsChanged,
     questions: limits.filter(({ severity }) => severity === 'caution'),
     refusals: limits.filter(({ severity }) => severity === 'bad'),

@@ -74,6 +74,8 @@ export const adoptedValues = mysqlTable(
     log10Value: double().notNull(),
     log10Error: double().notNull(),
     evidence: mysqlEnum(['firm', 'fair', 'slight']).notNull(),
+    /** The rule that gave the evidence; the words are in shared/words/evidence.ts. Empty where it was not kept yet. */
+    evidenceReason: varchar({ length: 40 }),
     method: varchar({ length: 40 }).notNull(),
     /** Where the drawdown behind it was measured. */
     origin: mysqlEnum(['observation-well', 'pumped-well', 'slug-test', 'other']).notNull(),

@@ -5,8 +5,9 @@ import type { Problem } from '#shared/contracts/problem.ts'
 import type { PumpingTest } from '#shared/contracts/pumping-tests.ts'
 import { analyse } from '#shared/hydraulics/catalogue.ts'
 import { useApp, type SignedIn } from '../../support/app.ts'
-import { makeRegion, saveAnalysis } from '../../support/domain.ts'
-import { decide, makeSite, siteInput, submit, testWithReadings, type Site } from './support.ts'
+import { makeMapping, makeRegion, saveAnalysis, upload } from '../../support/domain.ts'
+import { logSpaced, makeTheisSeries } from '../../shared/hydraulics/make-inputs.ts'
+import { createTest, decide, makeSite, siteInput, submit, testWithReadings, type Site } from './support.ts'
 
 const tested = useApp()
 let analyst: SignedIn
@@ -194,5 +195,65 @@ describe('Review', () => {
       ['theis', true],
       ['cooper-jacob', false],
     ])
+  })
+})
+
+describe('What was adopted', () => {
+  /** Half a day of pumping and half a day of recovery in the pumped well, exactly Theis: T 0.005 m²/s. */
+  function pumpedWellLog(): string {
+    const rates = [
+      { start_s: 0, rate_m3_s: 0.012 },
+      { start_s: 43_200, rate_m3_s: 0 },
+    ]
+    const spaced = logSpaced(40, 60, 43_200)
+    const elapsed_s = [...spaced, ...spaced.map((time) => 43_200 + time)]
+    const { drawdown_m } = makeTheisSeries(
+      { T: 0.005, S: 2e-4 },
+      { role: 'pumped', wellRadius_m: 0.15, rates, elapsed_s, included: elapsed_s.map(() => true) },
+    )
+    return ['min,m', ...elapsed_s.map((time, i) => `${time / 60},${drawdown_m[i]!.toFixed(5)}`)].join('\n')
+  }
+  const codes = ({ adoption }: Analysis) => adoption?.reasons.map(({ code }) => code)
+
+  it('stays on the analysis as it was, when another of the test would make better evidence of it today', async () => {
+    const rateSteps = [
+      { startS: 0, rate: { value: 12, unit: 'L/s' } },
+      { startS: 43_200, rate: { value: 0, unit: 'L/s' } },
+    ]
+    const test = await createTest(analyst, siteInput(site, { rateSteps }))
+    const pumped = test.wells.find(({ role }) => role === 'pumped')!.id
+    await upload(analyst, test.id, pumped, pumpedWellLog(), makeMapping()).expect(201)
+
+    const draft = (await saveAnalysis(analyst, test.id, 'cooper-jacob')).body as Analysis
+    const submitted = (await submit(analyst, draft).expect(200)).body as Analysis
+    const accepted = (await decide(reviewer, submitted, 'accepted').expect(200)).body as Analysis
+    expect(codes(accepted)).toEqual(['single-well'])
+    const { adoption } = accepted
+
+    await saveAnalysis(analyst, test.id, 'recovery')
+    const proposed = (await saveAnalysis(analyst, test.id, 'cooper-jacob')).body as Analysis
+    expect(codes(proposed)).toEqual(['recovery-agrees'])
+    expect(proposed.adoption!.log10ErrorT).toBeLessThan(adoption!.log10ErrorT)
+    const list = (await analyst.get(`/api/pumping-tests/${test.id}/analyses`)).body as { items: Analysis[] }
+    expect(list.items.find(({ id }) => id === accepted.id)!.adoption).toEqual(adoption)
+    expect((await reload(accepted.id)).adoption).toEqual(adoption)
+
+    const table = (await analyst.get(`/api/pumping-tests/${test.id}/adopted-values`)).body as AdoptedValueList
+    const T = table.items.find(({ quantity }) => quantity === 'T')!
+    expect(adoption).toMatchObject({ evidence: T.evidence, log10ErrorT: T.log10Error, log10ErrorS: null })
+  })
+
+  it('stays when the value has left the regional table', async () => {
+    const submitted = (await submit(analyst, await save(await newTest())).expect(200)).body as Analysis
+    const { adoption } = (await decide(reviewer, submitted, 'accepted').expect(200)).body as Analysis
+    expect(codes(submitted)).toEqual(adoption!.reasons.map(({ code }) => code))
+    const steward = await tested.signIn('steward')
+    const history = (await analyst.get(`/api/pumping-tests/${submitted.pumpingTestId}/adopted-values`))
+      .body as AdoptedValueList
+    for (const { id } of history.items)
+      await steward.post(`/api/adopted-values/${id}/withdrawal`).send({ reason: 'Wrong well.' }).expect(200)
+    const withdrawn = await reload(submitted.id)
+    expect(withdrawn.state).toBe('withdrawn')
+    expect(withdrawn.adoption).toEqual(adoption)
   })
 })

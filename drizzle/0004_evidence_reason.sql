@@ -1,0 +1,1 @@
+ALTER TABLE `adopted_values` ADD `evidence_reason` varchar(40);
