@@ -136,6 +136,7 @@ test('A log becomes a value of the regional table, from the file to the reviewer
   await signIn(theirs, 'reviewer')
   await theirs.goto(`/pumping-tests/${testId}`)
   await expect(theirs.getByText('the same numbers')).toBeVisible()
+  await expect(theirs.getByText('Readers see its value once a steward has published the test.')).toBeVisible()
   await theirs.getByRole('button', { name: 'Accept' }).click()
   await expect(theirs.getByRole('heading', { name: 'In the regional table' })).toBeVisible()
   expect((await adopted(theirs, testId)).map(Math.round)).toEqual([391])
