@@ -21,9 +21,15 @@ export function outcomeOf(method: MethodId, inputs: AnalysisInputs, options: Ana
     return { result: analyse(method, inputs, options) }
   } catch (error) {
     if (error instanceof AnalysisError) return { error }
+    // Readings far from anything a well can do: the page says so and stays usable.
+    if (error instanceof RangeError) return { error: new AnalysisError('analysis/no-fit') }
     throw error
   }
 }
+
+/** Plots and methods count from the moment at which pumping begins. */
+export const isPumped = ({ rates }: Pick<AnalysisInputs, 'rates'>): boolean =>
+  rates.some(({ rate_m3_s }) => rate_m3_s > 0)
 
 export const resultOf = (outcome: Outcome | null): AnalysisResult | null =>
   outcome && 'result' in outcome ? outcome.result : null

@@ -3,7 +3,9 @@ import type { Fit } from '#shared/charts/fit-band.ts'
 import { distanceDrawing, distancePlot } from '#shared/charts/distance-plot.ts'
 import { fitDrawing, type FitDrawing } from '#shared/charts/fit-drawing.ts'
 import { timePlot } from '#shared/charts/time-plot.ts'
+import { plotKinds } from '#shared/charts/plot-kinds.ts'
 import type { TestPlot } from '#shared/charts/test-chart.ts'
+import { AnalysisError } from '#shared/hydraulics/analysis.ts'
 import { useUnits } from '../../composables/useUnits.ts'
 import { usePreferences } from '../../stores/preferences.ts'
 import { useWorkbench } from './use-workbench.ts'
@@ -20,11 +22,17 @@ export function useTestPlot(smoothing: Ref<number>) {
   const units = useUnits()
   const preferences = usePreferences()
 
+  /** What a test had when a plot was chosen may be gone since: the stop for a recovery, wells for a distance plot. */
+  const shownKind = computed(() => {
+    const fits = plotKinds.find(({ id }) => id === plotKind.value)?.fits(snapshot.value.inputs) ?? false
+    return fits ? plotKind.value : 'semi-log'
+  })
+
   /** The wells of the analysis; all of them without one, or where wells are compared by an analysis of a single one. */
   const wellIds = sameText(() => {
     const all = snapshot.value.inputs.series.map(({ wellId }) => wellId)
     const compares = present.value?.method === 'distance-drawdown'
-    return plotKind.value === 'distance' && !compares ? all : (present.value?.options.wellIds ?? all)
+    return shownKind.value === 'distance' && !compares ? all : (present.value?.options.wellIds ?? all)
   })
   const history = sameText(() => ({
     phase: present.value?.options.phase ?? 'pumping',
@@ -36,7 +44,7 @@ export function useTestPlot(smoothing: Ref<number>) {
   const plot: ComputedRef<TestPlot> = computed(() => {
     const { inputs } = snapshot.value
     const common = { inputs, wellIds: wellIds.value, units: unitIds.value, direction: preferences.drawdownDirection }
-    const kind = plotKind.value
+    const kind = shownKind.value
     return kind === 'distance'
       ? distancePlot({ ...common, time_s: moment.value })
       : timePlot({ ...common, kind, options: history.value, smoothing: smoothing.value })
@@ -50,9 +58,18 @@ export function useTestPlot(smoothing: Ref<number>) {
 
   const drawing = computed<FitDrawing | null>(() => {
     if (!fit.value) return null
-    if (plot.value.kind === 'distance') return distanceDrawing(plot.value, fit.value)
-    return fitDrawing(plot.value, fit.value, { withBand: !moving.value })
+    try {
+      if (plot.value.kind === 'distance') return distanceDrawing(plot.value, fit.value)
+      return fitDrawing(plot.value, fit.value, { withBand: !moving.value })
+    } catch (error) {
+      // A kept analysis of inputs that have changed since may have no curve on the present ones; its numbers stand.
+      if (error instanceof AnalysisError || error instanceof RangeError) return null
+      throw error
+    }
   })
 
-  return { plot, fit, drawing }
+  /** What is not drawn is not listed either. */
+  const drawn = computed(() => (drawing.value ? fit.value : null))
+
+  return { plot, fit: drawn, drawing }
 }

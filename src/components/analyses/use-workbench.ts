@@ -7,7 +7,7 @@ import { plotOfMethod, type PlotKind } from '#shared/charts/plot-kinds.ts'
 import { useSession } from '../../stores/session.ts'
 import { firstOptions } from './first-options.ts'
 import { keepWhileOpen, readWork, type Work } from './kept-work.ts'
-import { isFitted, outcomeOf, resultOf, type Outcome } from './outcome.ts'
+import { isFitted, isPumped, outcomeOf, resultOf, type Outcome } from './outcome.ts'
 import { useResting } from './use-resting.ts'
 
 export interface Workbench {
@@ -199,7 +199,7 @@ export function provideWorkbench(given: Given): Workbench {
     mayCreate,
   }
   provide(key, bench)
-  const canStart = snapshot.value.inputs.series.length > 0 && snapshot.value.inputs.rates.length > 0
+  const canStart = snapshot.value.inputs.series.length > 0 && isPumped(snapshot.value.inputs)
   if (selected.value !== null) select(selected.value)
   else if (mayCreate.value && canStart) start('cooper-jacob')
   return bench

@@ -23,6 +23,16 @@ describe('An outcome', () => {
     expect(refusalText(refused, metric)).toBe('Choose at least one well.')
   })
 
+  it('is a sentence and no crash for a level that never fell', () => {
+    const inputs = makeTestInputs()
+    const flat = { ...inputs, series: inputs.series.map((s) => ({ ...s, drawdown_m: s.drawdown_m.map(() => 0) })) }
+    for (const method of ['cooper-jacob', 'theis', 'recovery'] as const)
+      for (const line of [null, { slope: 1, intercept: 0 }, { slope: 1e-12, intercept: 5 }]) {
+        const outcome = outcomeOf(method, flat, { wellIds: ['o1'], window: { from_s: 60, to_s: 1e9 }, line })
+        expect(resultOf(outcome) !== null || refusalText(outcome, metric) !== '').toBe(true)
+      }
+  })
+
   it('lists findings worst first', () => {
     const make = (severity: 'good' | 'note' | 'caution' | 'bad') => ({ code: severity, severity, params: {} })
     expect(bySeverity([make('good'), make('bad'), make('note'), make('caution')]).map(({ code }) => code)).toEqual([

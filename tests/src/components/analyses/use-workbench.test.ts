@@ -1,4 +1,4 @@
-import { afterEach, describe, expect, it } from 'vitest'
+import { beforeEach, describe, expect, it } from 'vitest'
 import { defineComponent, shallowRef } from 'vue'
 import type { Analysis, WorkbenchInputs } from '#shared/contracts/analyses.ts'
 import { provideWorkbench, type Workbench } from '../../../../src/components/analyses/use-workbench.ts'
@@ -6,7 +6,8 @@ import { makeTestInputs } from '../../../shared/charts/make-plot.ts'
 import { mountWith, settle } from '../../support/mount.ts'
 import { makeAnalysis, makeTest } from './make.ts'
 
-afterEach(() => sessionStorage.clear())
+// Work that is not saved is kept when a page goes, so it is there after the test.
+beforeEach(() => sessionStorage.clear())
 
 const doubled = (inputs = makeTestInputs()) => ({
   ...inputs,
@@ -90,6 +91,12 @@ describe('The workbench', () => {
     analyses.value = []
     await settle()
     expect([bench.selected.value, bench.present.value?.options.window]).toEqual(['new', window])
+  })
+
+  it('begins no analysis of a well that was not pumped', async () => {
+    const inputs = makeTestInputs()
+    const { bench } = await makeBench([], { ...inputs, rates: [{ start_s: 0, rate_m3_s: 0 }] })
+    expect([bench.selected.value, bench.outcome.value]).toEqual([null, null])
   })
 
   it('asks before a new analysis takes the place of one that was changed, and only then', async () => {
