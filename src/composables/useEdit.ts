@@ -29,7 +29,7 @@ export function useEdit<Item extends Versioned, Field extends keyof Item & strin
   const base = shallowRef(options.start)
   const form = ref(pick(options.start)) as Ref<Pick<Item, Field>>
   const theirs = shallowRef<Item | null>(null)
-  const { submit, sending, problem, fieldErrors, clear } = useSubmit(options.send)
+  const { submit, sending, problem, fieldErrors, met, clear } = useSubmit(options.send)
 
   const differences = computed(() => {
     const saved = theirs.value
@@ -42,6 +42,16 @@ export function useEdit<Item extends Versioned, Field extends keyof Item & strin
       })
   })
 
+  /** The record as it is now; null while it cannot be fetched, and then why stands on the page. */
+  async function newest(): Promise<Item | null> {
+    try {
+      return await options.fetch()
+    } catch (error) {
+      met(error)
+      return null
+    }
+  }
+
   async function save() {
     const answer = await submit({ ...form.value, rowVersion: base.value.rowVersion } as Pick<Item, Field> & Versioned)
     if (answer) {
@@ -49,11 +59,12 @@ export function useEdit<Item extends Versioned, Field extends keyof Item & strin
       theirs.value = null
       await options.saved(answer)
     } else if (problem.value?.code === 'edit/conflict') {
-      theirs.value = await options.fetch()
+      theirs.value = await newest()
     }
   }
 
-  function takeTheirs() {
+  async function takeTheirs() {
+    theirs.value ??= await newest()
     if (!theirs.value) return
     base.value = theirs.value
     form.value = pick(theirs.value)

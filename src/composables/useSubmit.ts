@@ -34,5 +34,5 @@ export function useSubmit<Given, Answer>(send: (given: Given, idempotencyKey: st
     }
   }
 
-  return { submit, sending, problem, fieldErrors, clear }
+  return { submit, sending, problem, fieldErrors, met, clear }
 }

@@ -11,7 +11,7 @@ interface Well {
 const makeWell = (overrides: Partial<Well> = {}): Well => ({ rowVersion: 1, name: 'V-1', depth: 40, ...overrides })
 
 /** A record on a server that somebody else has changed since it was read. */
-function makeEdit(stored: Well) {
+function makeEdit(stored: Well, fetch?: () => Promise<Well>) {
   let server = stored
   const edit = useEdit<Well, 'name' | 'depth'>({
     start: makeWell(),
@@ -22,7 +22,7 @@ function makeEdit(stored: Well) {
         throw new ApiProblem({ ...ApiProblem.of('client/failed').problem, code: 'edit/conflict', status: 409 })
       return (server = { ...server, ...changes, rowVersion: server.rowVersion + 1 })
     },
-    fetch: async () => server,
+    fetch: fetch ?? (async () => server),
     saved: () => undefined,
   })
   return { ...edit, server: () => server }
@@ -60,6 +60,16 @@ describe('an edit of what somebody else changed meanwhile', () => {
     form.value.depth = 41
     await save()
     expect(server()).toEqual({ rowVersion: 3, name: 'Old mill', depth: 41 })
+  })
+
+  it('says so when what is saved cannot be fetched, and can be saved again', async () => {
+    const answers = [() => Promise.reject(ApiProblem.of('client/offline')), () => Promise.resolve(theirs)]
+    const { form, save, problem, differences } = makeEdit(theirs, () => answers.shift()!())
+    form.value.depth = 44
+    await save()
+    expect([problem.value?.code, differences.value]).toEqual(['client/offline', []])
+    await save()
+    expect([problem.value?.code, differences.value.length]).toEqual(['edit/conflict', 2])
   })
 })
 
