@@ -21,6 +21,7 @@ const references = [
     'bessel-functions',
     'distributions',
     'hydraulics-fits',
+    'leaky-functions',
     'numerics-functions',
     'readings-filters',
     'readings-zones',
