@@ -38,7 +38,13 @@ export default defineConfig({
     projects: [
       {
         extends: true,
-        test: { name: 'shared', include: ['tests/shared/**/*.test.ts', 'tests/*.test.ts'], environment: 'node' },
+        test: {
+          name: 'shared',
+          include: ['tests/shared/**/*.test.ts', 'tests/*.test.ts'],
+          environment: 'node',
+          // Pure code keeps nothing between files, so that loading it once a worker is enough.
+          isolate: false,
+        },
       },
       {
         extends: true,
@@ -57,6 +63,9 @@ export default defineConfig({
           name: 'src',
           include: ['tests/src/**/*.test.ts'],
           environment: 'happy-dom',
+          // Loading Vuetify anew for each file takes longer than the tests; the setup file clears the page instead.
+          isolate: false,
+          setupFiles: [at('tests/src/support/setup.ts')],
           server: { deps: { inline: ['vuetify'] } },
         },
       },

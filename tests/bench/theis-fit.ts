@@ -1,6 +1,7 @@
 import { spawnSync } from 'node:child_process'
 import { fileURLToPath } from 'node:url'
 import { curveProblem } from '#shared/hydraulics/curve-problem.ts'
+import type { ResponsePlace } from '#shared/hydraulics/place.ts'
 import { theis, theisDrawdown } from '#shared/hydraulics/theis.ts'
 import { levenbergMarquardt } from '#shared/numerics/levenberg-marquardt.ts'
 import { makeNoise } from '../shared/numerics/make-noise.ts'
@@ -12,12 +13,17 @@ const elapsed_s = Array.from({ length: count }, (_, i) => 60 * 1440 ** (i / (cou
 const noise = makeNoise(1, count)
 const drawdown_m = elapsed_s.map((time, i) => theisDrawdown(rate, T, S, distance, time) + 0.01 * (noise[i] as number))
 
-const readings = {
-  elapsed_s: Float64Array.from(elapsed_s),
-  distance_m: new Float64Array(count).fill(distance),
-  drawdown_m: Float64Array.from(drawdown_m),
+const place: ResponsePlace = {
+  pumped: false,
+  distance_m: distance,
+  bearing_deg: null,
+  wellRadius_m: null,
+  casingRadius_m: null,
+  thickness_m: null,
+  pumpedScreen: null,
+  observedScreen: null,
 }
-const problem = curveProblem(theis, readings, [{ start_s: 0, change_m3_s: rate }], false)
+const problem = curveProblem(theis, [{ place, elapsed_s, drawdown_m }], [{ start_s: 0, change_m3_s: rate }], false)
 const spent: number[] = []
 let found = Number.NaN
 for (let i = 0; i < 2 * repeats; i++) {

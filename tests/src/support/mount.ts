@@ -1,7 +1,7 @@
 import { PiniaColada } from '@pinia/colada'
 import { flushPromises, mount } from '@vue/test-utils'
 import { createPinia, setActivePinia } from 'pinia'
-import { afterEach, vi } from 'vitest'
+import { vi } from 'vitest'
 import { createApp, effectScope, h, type Component } from 'vue'
 import { createMemoryHistory, createRouter } from 'vue-router'
 import { VApp } from 'vuetify/components'
@@ -20,12 +20,13 @@ interface MountOptions {
 
 const unmounts: (() => void)[] = []
 
-afterEach(() => {
+/** Leaves the page as it was; the setup file has it called after each test. */
+export function cleanUp() {
   for (const unmount of unmounts.splice(0)) unmount()
   document.body.replaceChildren()
   localStorage.clear()
   vi.unstubAllGlobals()
-})
+}
 
 /** happy-dom has no layout: what Vuetify measures with is answered with nothing. */
 function standIns() {
