@@ -20,6 +20,8 @@ export const timeOfU = (T: number, S: number, distance_m: number, u: number) =>
  * Source: Cooper & Jacob 1946; at u = 0.05 they are 2.0 % and 4.9 %.
  */
 export function straightLineErrors(u: number): { drawdown: number; slope: number } {
+  // A line with hardly any slope gives so large a T that u underflows; the straight line is then exact.
+  if (u === 0) return { drawdown: 0, slope: 0 }
   const exact = exponentialIntegral(u)
   return { drawdown: (exact + EULER_GAMMA + Math.log(u)) / exact, slope: -Math.expm1(-u) }
 }

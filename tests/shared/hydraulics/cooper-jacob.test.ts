@@ -121,6 +121,10 @@ describe('Cooper–Jacob time–drawdown', () => {
     expect(result.findings.find(({ code }) => code === 'rate-varied')?.params.variation).toBeCloseTo(1 / 6, 10)
   })
 
+  it('is exact where the line is so flat that u is below every number', () => {
+    expect(straightLineErrors(0)).toEqual({ drawdown: 0, slope: 0 })
+  })
+
   it('gives K only with a thickness, with both errors', () => {
     const series = makeTheisSeries(truth)
     const inputs = makeInputs({
