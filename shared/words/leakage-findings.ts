@@ -4,13 +4,13 @@ import type { Sentences } from './findings.ts'
 /** Findings of the solutions with leakage or partial penetration. */
 export const leakageFindings: Sentences<string> = {
   'leakage-not-shown': ({ number, percent }) =>
-    `Leakage changes the last drawdown by ${percent('share')} only (r/B ${number('ratio')}), less than ${percent('limit')}: these readings do not tell it from none. The leakage factor is a lower limit; use the confined curve.`,
+    `Leakage changes the last drawdown by ${percent('share')} only (r/B ${number('ratio')}), less than ${percent('limit')}: a drift of rate or level would look the same. Take the leakage factor as a lower limit, and compare with the confined curve.`,
   leakance: ({ number, percent }) =>
     `Leakage takes ${percent('share')} off the last drawdown (r/B ${number('ratio')}); the aquitard's K'/b' is ${number('leakance_per_s')} per second.`,
   'leakage-steady': () =>
     'The readings reach the steady state, so that leakage is told from the flat part of the curve.',
   'aquitard-storage-not-shown': ({ number, percent }) =>
-    `Water from the aquitard changes the last drawdown by ${percent('share')} only (β ${number('beta')}), less than ${percent('limit')}: these readings do not tell it from none. Use the confined curve.`,
+    `Water from the aquitard changes the last drawdown by ${percent('share')} only (β ${number('beta')}), less than ${percent('limit')}: a drift of rate or level would look the same. Compare with the confined curve.`,
   'aquitard-early-time': ({ number, span }) =>
     `The solution holds while the far side of the aquitard is not felt, before S'b'/(10K'). Whether that covers readings up to ${span('last_s')} cannot be told from pumping alone; its product K'S'/b' is ${number('product_per_s')} per second.`,
   'penetration-matters': ({ percent, number }) =>

@@ -6,10 +6,11 @@ import type { ResponsePlace } from '../place.ts'
 import { theisU } from '../small-u.ts'
 import type { Solution, SolutionReadings } from '../solution.ts'
 import type { Respond } from '../superposition.ts'
+import { theis } from '../theis.ts'
 import { radiusOf } from '../wells.ts'
 import { shapeStarts } from './shape-starts.ts'
 
-/** Storage of the aquitard that changes the last drawdown by less than this share cannot be told from none. */
+/** Water from the aquitard that changes the last drawdown by less than this share looks like a drift of the rate. */
 const LEAST_SHARE = 0.05
 /** β of the starts. */
 const BETAS = [0.01, 0.05, 0.2, 0.5, 1, 3]
@@ -66,7 +67,12 @@ export function leakyStorageRespond(
 const guess = (readings: SolutionReadings) =>
   shapeStarts(leakyStorageRespond, readings, (distance) => BETAS.map((beta) => [distance / beta]))
 
-function judge([T = NaN, S = NaN, length = NaN]: number[], { wells }: SolutionReadings): Finding[] {
+const judge = (parameters: number[], readings: SolutionReadings): Finding[] => [
+  ...theis.judge(parameters, readings),
+  ...judgeAquitard(parameters, readings),
+]
+
+function judgeAquitard([T = NaN, S = NaN, length = NaN]: number[], { wells }: SolutionReadings): Finding[] {
   const used = wells.filter(({ time_s }) => time_s.length > 0)
   const shares = used.map(({ series, time_s }) => {
     const u = theisU(T, S, radiusOf(series), time_s.at(-1) as number)
@@ -92,6 +98,7 @@ export const leakyStorage: Solution = {
   respond: leakyStorageRespond,
   guess,
   validity: [
+    ...theis.validity,
     {
       code: 'aquitard-early-time',
       statement: "Readings end before S'b'/(10K') of the aquitard, which pumping alone does not tell",
@@ -99,7 +106,8 @@ export const leakyStorage: Solution = {
     },
     {
       code: 'aquitard-storage-not-shown',
-      statement: 'Water from the aquitard changes the last drawdown by 5 % or more, so that it can be told from none',
+      statement:
+        'Water from the aquitard changes the last drawdown by 5 % or more, which no drift of rate or level would',
       source: 'common practice',
     },
   ],

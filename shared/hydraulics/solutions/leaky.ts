@@ -6,10 +6,11 @@ import type { ResponsePlace } from '../place.ts'
 import { theisU } from '../small-u.ts'
 import type { Solution, SolutionReadings } from '../solution.ts'
 import type { Respond } from '../superposition.ts'
+import { theis } from '../theis.ts'
 import { radiusOf } from '../wells.ts'
 import { shapeStarts } from './shape-starts.ts'
 
-/** Leakage that changes the last drawdown by less than this share is within what the confined curve explains. */
+/** Leakage that changes the last drawdown by less than this share looks like a drift of the rate or of the level. */
 const LEAST_SHARE = 0.05
 /** r²/(4uB²) above which drawdown is within about 1 % of its steady value Q·K0(r/B)/(2πT). */
 const STEADY_V = 3
@@ -61,27 +62,29 @@ export function leakyRespond(
 const guess = (readings: SolutionReadings) =>
   shapeStarts(leakyRespond, readings, (distance) => RATIOS.map((ratio) => [distance / ratio]))
 
+const judge = (parameters: number[], readings: SolutionReadings): Finding[] => [
+  ...theis.judge(parameters, readings),
+  ...judgeLeakage(parameters, readings),
+]
+
 /** What the readings can tell of leakage: nothing, its beginning, or the steady state. */
-function judge([T = NaN, S = NaN, B = NaN]: number[], { wells }: SolutionReadings): Finding[] {
-  const shares = wells
+function judgeLeakage([T = NaN, S = NaN, B = NaN]: number[], { wells }: SolutionReadings): Finding[] {
+  const ends = wells
     .filter(({ time_s }) => time_s.length > 0)
     .map(({ series, time_s }) => {
       const rho = radiusOf(series) / B
       const u = theisU(T, S, radiusOf(series), time_s.at(-1) as number)
       return { rho, share: 1 - leakyW(u, rho) / exponentialIntegral(u), v: (rho * rho) / (4 * u) }
     })
-  const share = Math.max(...shares.map((one) => one.share))
-  const ratio = Math.max(...shares.map((one) => one.rho))
-  if (!(share >= LEAST_SHARE))
+  const [ratio, share] = [Math.max(...ends.map((end) => end.rho)), Math.max(...ends.map((end) => end.share))]
+  if (!(share >= LEAST_SHARE)) {
     return [{ code: 'leakage-not-shown', severity: 'caution', params: { ratio, share, limit: LEAST_SHARE } }]
-  const leakance: Finding = {
-    code: 'leakance',
-    severity: 'good',
-    params: { ratio, share, leakance_per_s: leakanceOf(T, B) },
   }
-  return shares.some(({ v }) => v >= STEADY_V)
-    ? [leakance, { code: 'leakage-steady', severity: 'good', params: {} }]
-    : [leakance]
+  const steady: Finding = { code: 'leakage-steady', severity: 'good', params: {} }
+  return [
+    { code: 'leakance', severity: 'good', params: { ratio, share, leakance_per_s: leakanceOf(T, B) } },
+    ...(ends.some(({ v }) => v >= STEADY_V) ? [steady] : []),
+  ]
 }
 
 export const leaky: Solution = {
@@ -94,9 +97,10 @@ export const leaky: Solution = {
   respond: leakyRespond,
   guess,
   validity: [
+    ...theis.validity,
     {
       code: 'leakage-not-shown',
-      statement: 'Leakage changes the last drawdown by 5 % or more, so that it can be told from none',
+      statement: 'Leakage changes the last drawdown by 5 % or more, which no drift of rate or level would',
       source: 'common practice',
     },
   ],

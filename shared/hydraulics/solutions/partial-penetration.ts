@@ -6,6 +6,7 @@ import { placeOf, type ResponsePlace } from '../place.ts'
 import { theisU } from '../small-u.ts'
 import type { Solution, SolutionReadings } from '../solution.ts'
 import type { Respond } from '../superposition.ts'
+import { theis } from '../theis.ts'
 import { radiusOf } from '../wells.ts'
 import { shapeStarts } from './shape-starts.ts'
 
@@ -54,8 +55,13 @@ export function partialPenetrationDrawdown(
   return rate_m3_s * (out[0] as number)
 }
 
+const judge = (parameters: number[], readings: SolutionReadings): Finding[] => [
+  ...theis.judge(parameters, readings),
+  judgePenetration(parameters, readings),
+]
+
 /** Largest share that partial penetration takes of, or adds to, the last drawdown of a well. */
-function judge([T = NaN, S = NaN, anisotropy = 1]: number[], { inputs, wells }: SolutionReadings): Finding[] {
+function judgePenetration([T = NaN, S = NaN, anisotropy = 1]: number[], { inputs, wells }: SolutionReadings): Finding {
   const added = new Float64Array(4)
   const shares = wells
     .filter(({ time_s }) => time_s.length > 0)
@@ -66,8 +72,8 @@ function judge([T = NaN, S = NaN, anisotropy = 1]: number[], { inputs, wells }: 
     })
   const params = { share: Math.max(...shares), limit: LEAST_SHARE, anisotropy }
   return params.share >= LEAST_SHARE
-    ? [{ code: 'penetration-matters', severity: 'good', params }]
-    : [{ code: 'penetration-not-shown', severity: 'note', params }]
+    ? { code: 'penetration-matters', severity: 'good', params }
+    : { code: 'penetration-not-shown', severity: 'note', params }
 }
 
 const shared = {
@@ -76,6 +82,7 @@ const shared = {
   aquifers: ['confined'],
   respond: partialPenetrationRespond,
   validity: [
+    ...theis.validity,
     {
       code: 'penetration-not-shown',
       statement:

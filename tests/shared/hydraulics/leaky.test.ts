@@ -135,20 +135,23 @@ describe('leaky findings', () => {
   it('give the leakance K′/b′ = T/B², and say when the steady state is reached', () => {
     const inputs = withDrawdown(leaky, [3e-3, 4e-4, 100], makeInputs({ aquifer: 'leaky' }))
     const found = leaky.judge([3e-3, 4e-4, 100], readingsOf(inputs))
-    expect(found.map(({ code }) => code)).toEqual(['leakance', 'leakage-steady'])
-    expect(found[0]?.params).toMatchObject({ ratio: 0.5, leakance_per_s: 3e-7 })
+    expect(found.map(({ code }) => code)).toEqual(['curve-covered', 'leakance', 'leakage-steady'])
+    expect(found[1]?.params).toMatchObject({ ratio: 0.5, leakance_per_s: 3e-7 })
     expect(leakanceOf(3e-3, 100)).toBeCloseTo(3e-7, 15)
   })
 
   it('leave the steady state out while the curve still bends', () => {
     const series = [makeSeries({ elapsed_s: logSpaced(30, 10, 400) })]
     const inputs = withDrawdown(leaky, [3e-3, 4e-4, 100], makeInputs({ aquifer: 'leaky', series }))
-    expect(leaky.judge([3e-3, 4e-4, 100], readingsOf(inputs)).map(({ code }) => code)).toEqual(['leakance'])
+    expect(leaky.judge([3e-3, 4e-4, 100], readingsOf(inputs)).map(({ code }) => code)).toEqual([
+      'curve-covered',
+      'leakance',
+    ])
   })
 
   it('remind of the early time where storage of the aquitard matters, with its product K′S′/b′', () => {
     const inputs = withDrawdown(leakyStorage, [3e-3, 4e-4, 100], makeInputs({ aquifer: 'leaky' }))
-    const [finding] = leakyStorage.judge([3e-3, 4e-4, 100], readingsOf(inputs))
+    const finding = leakyStorage.judge([3e-3, 4e-4, 100], readingsOf(inputs)).at(-1)
     expect(finding?.code).toBe('aquitard-early-time')
     expect(finding?.params.product_per_s).toBeCloseTo(aquitardStorageProduct(3e-3, 4e-4, 100), 15)
     // β = (r/4)·√(K'S'/(b'·T·S)) for the product it gives (Hantush 1960).
