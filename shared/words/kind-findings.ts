@@ -89,7 +89,7 @@ export const kindFindings: Sentences<string> = {
   'damping-weak': ({ text, number }) =>
     `The damping of ${text('repeat')}, ${number('damping')}, is below ${number('low')}: the level swings. Use the method for oscillating tests.`,
   'damping-strong': ({ text, number }) =>
-    `The damping of ${text('repeat')}, ${number('damping')}, is above ${number('high')}: the level hardly swings. Use the method near critical damping.`,
+    `The damping of ${text('repeat')}, ${number('damping')}, is above ${number('low')}: the level hardly swings. Use the method near critical damping.`,
   'damping-overdamped': ({ text, number }) =>
     `The damping of ${text('repeat')}, ${number('damping')}, is above ${number('high')}: inertia plays no part. Use a method for overdamped tests.`,
   'column-agrees': ({ length, percent }) =>
@@ -116,7 +116,7 @@ export const kindFindings: Sentences<string> = {
     `An efficiency of ${number('efficiency')} is outside 0 to 1. Check units, sign and clock of the series.`,
   'lag-at-end': ({ span }) => `The best lag is the longest tried, ${span('lag_s')}. Try longer ones.`,
   'tides-inseparable': ({ text, span }) =>
-    `The record before pumping is too short to tell ${text('one')} and ${text('other')} apart (it takes ${span('needed_s')}). They are fitted together.`,
+    `The record before pumping is too short to tell ${text('one')} and ${text('other')} apart (it takes ${span('needed_s')}). Only ${text('one')} is fitted.`,
 }
 
 /** Every reason for which these methods refuse their inputs. */

@@ -87,3 +87,14 @@ export function springTransmissivity(
   }
   return null
 }
+
+/** Damping of a column of frequency ω0 by an aquifer: r_c²·ω0/(8T)·ln(T/(k·r_s²·S·ω0)), the same the other way round. */
+export function springDamping(
+  T: number,
+  frequency_1_s: number,
+  { casingRadius_m, screenRadius_m, storativity }: SpringWell,
+  constant: number,
+): number {
+  const argument = T / (constant * screenRadius_m ** 2 * storativity * frequency_1_s)
+  return ((casingRadius_m ** 2 * frequency_1_s) / (8 * T)) * Math.log(argument)
+}

@@ -1,9 +1,9 @@
 import type { Finding, FittedCurve } from '../analysis.ts'
 import { fitFindings } from '../findings.ts'
 import type { KindOutcome } from '../kind.ts'
-import { slugResponse } from './cooper-bredehoeft-papadopulos.ts'
+import { slugResponse, slugResponseWithDerivatives } from './cooper-bredehoeft-papadopulos.ts'
 import { effectiveCasingRadius, intakeRadius } from './effective-radius.ts'
-import { fitHeads, headSd, thinnedHeads, type HeadFit, type HeadModel } from './head-fit.ts'
+import { bestStart, fitHeads, headSd, thinnedHeads, type HeadFit, type HeadModel } from './head-fit.ts'
 import { conductivityUnknown, repeatsOption, type SlugMethod } from './line-method.ts'
 import { combinedOutcome, repeatExtra, type RepeatFit } from './repeats.ts'
 import { checkDimensions, normalisedHeads, type Heads, type SlugInputs, type SlugOptions } from './slug-test.ts'
@@ -15,7 +15,7 @@ const UNKNOWNS: HeadModel['unknowns'] = [
 ]
 /** Head by which the aquifer has answered; α = r_s²S/r_c² of the starts. */
 const HALF = 0.5
-const START_ALPHAS = [1e-1, 1e-3, 1e-6]
+const START_ALPHAS = [0.5, 1e-1, 1e-2, 1e-3, 1e-4, 1e-6, 1e-8]
 /** A head that stays above this was not followed long enough. */
 const FOLLOWED_TO = 0.5
 
@@ -23,14 +23,10 @@ function run(inputs: SlugInputs, options: SlugOptions): KindOutcome {
   checkDimensions(inputs)
   const { heads, leftOut } = normalisedHeads(inputs, options)
   const radii = radiiOf(inputs)
-  const model: HeadModel = {
-    unknowns: UNKNOWNS,
-    heads: (p, times) =>
-      times.map((time) => slugResponse(p[0] as number, p[1] as number, radii.well_m, radii.casing_m, time)),
-  }
+  const model = modelOf(radii)
   const fits = heads.map((one) => {
     const used = thinnedHeads(one, options.readingsPerCycle)
-    return fitRepeat(fitHeads(used, model, startsOf(used, radii)), one, inputs)
+    return fitRepeat(fitHeads(used, model, [bestStart(used, model, startsOf(used, radii))]), one, inputs)
   })
   const thinned = heads.map((one, i) => ({
     wellId: one.repeat.id,
@@ -43,6 +39,16 @@ function run(inputs: SlugInputs, options: SlugOptions): KindOutcome {
     leftOut: [...leftOut, ...thinned.filter(({ count }) => count > 0)],
   })
 }
+
+const modelOf = ({ well_m, casing_m }: ReturnType<typeof radiiOf>): HeadModel => ({
+  unknowns: UNKNOWNS,
+  heads: (p, times) => times.map((time) => slugResponse(p[0] as number, p[1] as number, well_m, casing_m, time)),
+  derivatives: (p, times) =>
+    times.map((time) => {
+      const one = slugResponseWithDerivatives(p[0] as number, p[1] as number, well_m, casing_m, time)
+      return { head: one.share, by: [one.byLogT, one.byLogS] }
+    }),
+})
 
 const radiiOf = (inputs: SlugInputs) => ({ well_m: intakeRadius(inputs), casing_m: effectiveCasingRadius(inputs) })
 

@@ -13,6 +13,8 @@ const READINGS_PER_CYCLE = 50
 export interface HeadModel {
   unknowns: FitUnknown[]
   heads: (parameters: ArrayLike<number>, time_s: number[]) => number[]
+  /** Heads with their derivatives by the transformed unknowns, one row a time; left out, they are taken numerically. */
+  derivatives?: (parameters: ArrayLike<number>, time_s: number[]) => { head: number; by: number[] }[]
 }
 
 export interface HeadFit {
@@ -65,16 +67,32 @@ export function fitHeads({ repeat, time_s, head }: Heads, model: HeadModel, star
 }
 
 function solve(time_s: number[], head: number[], model: HeadModel, starts: number[][]) {
+  const { unknowns, heads, derivatives } = model
   const residuals = (parameters: ArrayLike<number>, out: Float64Array) => {
-    const modelled = model.heads(parameters, time_s)
+    const modelled = heads(parameters, time_s)
     head.forEach((value, i) => (out[i] = (modelled[i] as number) - value))
   }
+  const jacobian = (parameters: ArrayLike<number>, out: Float64Array, rows: Float64Array) =>
+    derivatives?.(parameters, time_s).forEach((one, i) => {
+      out[i] = one.head - (head[i] as number)
+      rows.set(one.by, i * unknowns.length)
+    })
+  const problem = { count: head.length, unknowns, residuals, ...(derivatives ? { jacobian } : {}) }
   try {
-    return levenbergMarquardt({ count: head.length, unknowns: model.unknowns, residuals }, { starts })
+    return levenbergMarquardt(problem, { starts })
   } catch (error) {
     if (error instanceof RangeError) throw new AnalysisError('analysis/no-fit')
     throw error
   }
+}
+
+/** The one of many starting points from which the fewest squares are left to go. */
+export function bestStart({ time_s, head }: Heads, { heads }: HeadModel, starts: number[][]): number[] {
+  const squares = starts.map((start) => {
+    const sum = heads(start, time_s).reduce((total, value, i) => total + (value - (head[i] as number)) ** 2, 0)
+    return Number.isFinite(sum) ? sum : Infinity
+  })
+  return starts[squares.indexOf(Math.min(...squares))] as number[]
 }
 
 /** Heads thinned logarithmically, so that a slow tail of thousands of readings does not outvote the fall. */

@@ -2,8 +2,9 @@ import type { Kind } from '../kind.ts'
 import { bouwerRice } from './bouwer-rice.ts'
 import { cooperBredehoeftPapadopulos } from './fit-cooper-bredehoeft-papadopulos.ts'
 import { hvorslev } from './hvorslev.ts'
+import { nearCritical } from './near-critical.ts'
+import { oscillating } from './oscillating.ts'
 import type { SlugInputs, SlugOptions } from './slug-test.ts'
-import { nearCritical, oscillating } from './swinging.ts'
 
 export const slugTests: Kind<SlugInputs, SlugOptions> = {
   id: 'slug',

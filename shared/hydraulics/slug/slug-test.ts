@@ -79,6 +79,12 @@ export function checkDimensions(inputs: SlugInputs): void {
   }
 }
 
+/** @throws AnalysisError without a storativity where a method has to assume one */
+export function checkStorage({ storage }: SlugInputs): void {
+  if (!(storage.value > 0 && storage.logSd >= 0))
+    throw new AnalysisError('analysis/dimension', { dimension: 'storage' })
+}
+
 /**
  * Normalised heads of the repeats chosen.
  * @throws AnalysisError without a repeat, for an unknown one, uneven columns or an initial displacement of zero

@@ -23,8 +23,8 @@ export interface Bend {
 
 /**
  * Looks for a bend of ln(H/H0) against time that steepens no more: two straight parts, as when a filter pack drains
- * first, or a smooth curve, as when water is stored in the aquifer. Whichever of a broken line and a parabola leaves
- * fewer squares is named.
+ * first, or a smooth curve, as when water is stored in the aquifer. Whichever of a broken line and a smooth curve
+ * leaves fewer squares is named.
  */
 export function bendOf({ time_s, head }: Heads): Bend | null {
   const all = time_s.flatMap((time, i) => {
@@ -41,8 +41,9 @@ export function bendOf({ time_s, head }: Heads): Bend | null {
     t.map((value) => [1, value]),
     y,
   )
+  // As many coefficients as the broken line has, the place of its break among them.
   const curved = leastSquares(
-    t.map((value) => [1, value, value * value]),
+    t.map((value) => [1, Math.sqrt(value), value, value * value]),
     y,
   )
   const broken = bestBreak(t, y)
