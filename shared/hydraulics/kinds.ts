@@ -36,6 +36,14 @@ export const kindLabels: Record<KindId, string> = {
   'specific-capacity': specificCapacityTests.label,
 }
 
+/** A method as words need to know it. */
+type Described = Pick<KindMethod<never, never>, 'id' | 'label' | 'unknowns'>
+
+/** Methods of all kinds of their own. */
+export const kindMethods: readonly Described[] = Object.values(ownKinds).flatMap((kind): Described[] =>
+  Object.values(kind.methods),
+)
+
 /** Methods of each kind by id, for requests and menus. */
 export const methodIdsOf = (kind: KindId): string[] =>
   Object.keys(kind === 'constant-rate' ? methods : ownKinds[kind].methods)

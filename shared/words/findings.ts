@@ -1,10 +1,12 @@
 import type { AnalysisErrorCode, Finding } from '#shared/hydraulics/analysis.ts'
 import { methods } from '#shared/hydraulics/catalogue.ts'
+import { kindMethods } from '#shared/hydraulics/kinds.ts'
 import { formatElapsed } from '#shared/quantities/elapsed.ts'
 import { formatNumber, formatQuantity } from '#shared/quantities/format.ts'
 import { defaultUnitSystemId, unitSystemById, type UnitSystem } from '#shared/quantities/systems.ts'
 import { kindFindings, kindOptionNames, kindRefusals } from './kind-findings.ts'
 import { leakageFindings, penetrationRefusals } from './leakage-findings.ts'
+import { storageFindings, storageRefusals } from './storage-findings.ts'
 
 /** Reads params as text in the reader's units. */
 export interface Words {
@@ -20,8 +22,8 @@ export type Sentences<Code extends string> = Record<Code, (words: Words) => stri
 
 /** The name that the methods give to a quantity they find. */
 const parameterName = (id: string): string =>
-  Object.values(methods)
-    .flatMap(({ unknowns }) => [...unknowns])
+  [...Object.values(methods), ...kindMethods]
+    .flatMap(({ unknowns }): readonly { id: string; label: string }[] => unknowns)
     .find((unknown) => unknown.id === id)?.label ?? id
 const optionNames: Record<string, string> = {
   ...kindOptionNames,
@@ -34,6 +36,7 @@ const optionNames: Record<string, string> = {
 const findings: Sentences<string> = {
   ...kindFindings,
   ...leakageFindings,
+  ...storageFindings,
   'u-small': ({ number, percent }) =>
     `u is at most ${number('u')} in the window, within the limit of ${number('limit')}: the straight line is off by ${percent('drawdownError')} of drawdown and ${percent('slopeError')} of slope at most.`,
   'u-large': ({ number, percent, span }) =>
@@ -110,6 +113,7 @@ const findings: Sentences<string> = {
 const refusals: Sentences<AnalysisErrorCode> = {
   ...kindRefusals,
   ...penetrationRefusals,
+  ...storageRefusals,
   'analysis/unknown-method': ({ text }) => `The method "${text('method')}" is not known. Reload the page.`,
   'analysis/no-wells': () => 'Choose at least one well.',
   'analysis/unknown-well': () => 'A chosen well is not part of this test. Choose the wells again.',

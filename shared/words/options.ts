@@ -1,5 +1,10 @@
+import { shapeFactors } from '#shared/hydraulics/slug/shape-factors.ts'
+
+const shapes = Object.fromEntries(Object.entries(shapeFactors).map(([id, { label }]) => [id, label]))
+
 /** How the choices of an analysis' settings read. */
 const sentences: Record<string, string> = {
+  ...shapes,
   drawdown: 'Drawdown',
   'log-drawdown': 'Logarithm of drawdown',
   pumping: 'During pumping',

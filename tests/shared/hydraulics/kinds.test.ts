@@ -5,6 +5,8 @@ import { recoveryEquivalentTime } from '#shared/hydraulics/recovery-equivalent-t
 import { steadyState } from '#shared/hydraulics/steady-state.ts'
 import { unitSystemById } from '#shared/quantities/systems.ts'
 import { analysisErrorText, findingCodes, findingText } from '#shared/words/findings.ts'
+import { methodLabel } from '#shared/words/methods.ts'
+import { optionValueText } from '#shared/words/options.ts'
 import { kindRefusals } from '#shared/words/kind-findings.ts'
 import { makeSlugInputs, makeSlugOptions } from './make-slug.ts'
 import { makeStepInputs } from './make-steps.ts'
@@ -47,6 +49,16 @@ describe('kinds of test', () => {
     for (const result of results())
       for (const finding of result.findings)
         for (const system of units) expect(findingText(finding, system)).not.toMatch(/undefined|NaN|–/)
+  })
+
+  it('have words for their choices, their names and what they find', () => {
+    for (const method of methods) {
+      expect(methodLabel(method.id)).toBe(method.label)
+      for (const option of method.options)
+        if (option.kind === 'choice') for (const value of option.values) expect(optionValueText(value)).not.toBe('')
+    }
+    const open = { code: 'not-determined', params: { parameter: 'K', factor: 20 } }
+    expect(findingText(open, unitSystemById('metric'))).toMatch(/^Hydraulic conductivity is not determined/)
   })
 
   it('explain every refusal', () => {

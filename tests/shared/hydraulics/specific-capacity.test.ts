@@ -34,6 +34,20 @@ const run = (inputs = makeWell(), options = {}) =>
   analyseKind('specific-capacity', 'specific-capacity', inputs, options)
 
 describe('specific capacity to transmissivity', () => {
+  it('has the printed rule T = 2,000 Q/s (confined) and 1,500 Q/s (unconfined) in gpd/ft and gpm/ft', () => {
+    // Driscoll 1986, from memory: a day, a radius of 0.5 ft, T 30,000 gpd/ft, S 0.001 and 0.075.
+    const [foot, gallon] = [0.3048, 231 * 0.0254 ** 3]
+    const T = (30_000 * gallon) / DAY / foot
+    for (const { S, factor } of [
+      { S: 1e-3, factor: 2000 },
+      { S: 0.075, factor: 1500 },
+    ]) {
+      const capacity = ((30_000 / factor) * gallon) / 60 / foot
+      const inputs = makeWell({ wellRadius_m: foot / 2, drawdown_m: 0.01 / capacity })
+      expect(relative(valueOf(run(inputs, { storativity: S }).T), T)).toBeLessThan(0.01)
+    }
+  })
+
   it('gives back T of a Theis drawdown with its S', () => {
     const result = run(makeWell(), { storativity: truth.S })
     expect(relative(valueOf(result.T), truth.T)).toBeLessThan(1e-6)

@@ -32,6 +32,15 @@ function steadyWell(wellId: string, distance_m: number, noise: (i: number) => nu
 }
 
 describe('steady state', () => {
+  it('gives 370 m²/d for Oude Korendijk, 1.088 m at 30 m and 0.716 m at 90 m (ILRI 47, from memory)', () => {
+    const T = thiemTransmissivity(
+      788 / DAY,
+      { distance_m: 30, drawdown_m: 1.088 },
+      { distance_m: 90, drawdown_m: 0.716 },
+    )
+    expect(T * DAY).toBeCloseTo(370, -0.5)
+  })
+
   it('gives T of two wells by the formula', () => {
     const inputs = makeInputs({ series: [steadyWell('a', 10), steadyWell('b', 60)] })
     const result = run(inputs, makeOptions({ wellIds: ['a', 'b'] }))
