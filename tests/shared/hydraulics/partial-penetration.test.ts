@@ -5,6 +5,11 @@ import { curveMethod } from '#shared/hydraulics/curve-method.ts'
 import { penetrationCorrection } from '#shared/hydraulics/penetration.ts'
 import type { ResponsePlace } from '#shared/hydraulics/place.ts'
 import {
+  leakyPartialPenetration,
+  leakyPartialPenetrationRespond,
+} from '#shared/hydraulics/solutions/leaky-partial-penetration.ts'
+import { leakyDrawdown } from '#shared/hydraulics/solutions/leaky.ts'
+import {
   partialPenetration,
   partialPenetrationDrawdown,
   partialPenetrationIsotropic,
@@ -192,5 +197,57 @@ describe('partial penetration as a solution', () => {
     const readings = readingsOf(withDrawdown(partialPenetration, [2e-3, 3e-4, 0.15], far))
     const found = partialPenetration.judge([2e-3, 3e-4, 0.15], { ...readings, wells: readings.wells.slice(1) })
     expect(found.at(-1)?.code).toBe('penetration-not-shown')
+  })
+})
+
+describe('partial penetration in a leaky aquifer', () => {
+  const value = (parameters: number[], place: ResponsePlace, time_s: number) => {
+    const out = new Float64Array(5)
+    leakyPartialPenetrationRespond(parameters, place)(time_s, out)
+    return [...out]
+  }
+
+  it('is the leaky response for full penetration, and the confined one without leakage', () => {
+    const full = value([2e-3, 3e-4, 60, 0.2], makePlace({ pumpedScreen: part(0, 1) }), 3600)[0] ?? NaN
+    expect(relative(full, leakyDrawdown(1, [2e-3, 3e-4, 60], 10, 3600))).toBeLessThan(1e-11)
+    const place = makePlace({ observedScreen: part(0.1, 0.3) })
+    const tight = value([2e-3, 3e-4, 1e9, 0.2], place, 3600)[0] ?? NaN
+    expect(relative(tight, partialPenetrationDrawdown(1, [2e-3, 3e-4, 0.2], place, 3600))).toBeLessThan(1e-9)
+  })
+
+  it('has the derivatives by ln T, ln S, ln B and ln(Kz/Kr) that central differences show', () => {
+    const place = makePlace({ distance_m: 6, observedScreen: part(0.1, 0.3) })
+    const parameters = [2e-3, 3e-4, 30, 0.2]
+    const out = value(parameters, place, 60)
+    const h = 1e-4
+    for (const k of parameters.keys()) {
+      const at = (by: number) =>
+        value(
+          parameters.map((p, i) => (i === k ? p * Math.exp(by) : p)),
+          place,
+          60,
+        )[0] ?? NaN
+      expect(Math.abs((at(h) - at(-h)) / (2 * h) - (out[k + 1] as number))).toBeLessThan(1e-6 * (out[0] as number))
+    }
+  })
+
+  it('finds all four unknowns from piezometers at two depths and two distances', () => {
+    const series = [
+      makeSeries({ wellId: 'w', role: 'pumped', wellRadius_m: 0.1, screen: part(0, 0.4), elapsed_s: [] }),
+      ...[
+        { wellId: 'near', distance_m: 8, screen: part(0.05, 0.15) },
+        { wellId: 'deep', distance_m: 8, screen: part(0.8, 0.9) },
+        { wellId: 'far', distance_m: 60, screen: null },
+      ].map((one) => makeSeries({ ...one, elapsed_s: logSpaced(30, 10, 80_000) })),
+    ]
+    const truth = [2e-3, 3e-4, 90, 0.15]
+    const inputs = withDrawdown(leakyPartialPenetration, truth, makeInputs({ series, thickness_m, aquifer: 'leaky' }))
+    const result = curveMethod(leakyPartialPenetration).run(inputs, makeOptions({ wellIds: ['near', 'deep', 'far'] }))
+    leakyPartialPenetration.unknowns.forEach(({ id }, k) => {
+      expect(relative(result.extras[`fitted_${id}`] ?? NaN, truth[k] ?? NaN)).toBeLessThan(1e-5)
+    })
+    const codes = result.findings.map(({ code }) => code)
+    expect(codes).toEqual(expect.arrayContaining(['curve-covered', 'leakance', 'penetration-matters']))
+    expect(codes.filter((code) => code === 'curve-covered')).toHaveLength(1)
   })
 })
