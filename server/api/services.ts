@@ -46,7 +46,7 @@ export function createServices(deps: Deps) {
     valuesChanged: (executor, testId) => adoptedValues.changedAt(executor, 'pumping-test', testId),
   })
   // A well shows its tests, and a change of a test concerns its analyses: services that know each other have named types.
-  const analyses: AnalysesService = createAnalysesService(deps, createInputsService({ pumpingTests, streams }))
+  const analyses: AnalysesService = createAnalysesService(deps, createInputsService({ pumpingTests, streams, wells }))
   const { markInputsChanged, isInUse } = analyses
   return {
     account: createAccountService(deps, region),

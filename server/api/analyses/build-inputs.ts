@@ -3,12 +3,15 @@ import { toDrawdown, type StaticLevel } from '#shared/readings/drawdown.ts'
 import type { Quantity } from '#shared/readings/model.ts'
 import type { PumpingTestRow, TestParts, TestWellRow } from '../pumping-tests/view.ts'
 import type { listEdits, ReadingRow } from './inputs.repository.ts'
+import { placement, type Construction } from './placement.ts'
 
 export interface InputParts extends TestParts {
   test: PumpingTestRow
   readings: ReadingRow[]
   edits: Awaited<ReturnType<typeof listEdits>>
   streamDistanceM: number | null
+  /** By id of the well. */
+  constructions: Map<number, Construction>
 }
 
 /** Which stored reading stands behind each point of an inputs series, so that the workbench can leave it out. */
@@ -41,6 +44,7 @@ type Built = { series: Series; readings: SeriesReadings } | { problem: SeriesPro
  */
 export function buildInputs(parts: InputParts): BuiltInputs {
   const { test, steps, streamDistanceM } = parts
+  const pumped = parts.wells.find(({ row }) => row.role === 'pumped')
   const all = parts.wells.flatMap((well) => wellSeries(well, parts))
   const built = all.flatMap((item) => ('series' in item ? [item] : []))
   return {
@@ -49,6 +53,7 @@ export function buildInputs(parts: InputParts): BuiltInputs {
       rates: steps.map(({ startS, rateM3S }) => ({ start_s: startS, rate_m3_s: rateM3S })),
       rateError: test.rateError,
       series: built.map(({ series }) => series),
+      ...(pumped ? { pumpedWell: pumpedWell(pumped, parts) } : {}),
       aquifer: test.aquifer,
       thickness_m: test.thicknessM,
       thicknessBasis: test.thicknessBasis,
@@ -61,7 +66,8 @@ export function buildInputs(parts: InputParts): BuiltInputs {
 }
 
 /** One series a well: the newest log; an older one of the same well is superseded by it. */
-function wellSeries(well: TestWellRow, { series, readings, edits }: InputParts): Built[] {
+function wellSeries(well: TestWellRow, parts: InputParts): Built[] {
+  const { series, readings, edits } = parts
   const log = series.filter(({ testWellId }) => testWellId === well.row.id).at(-1)
   if (!log) return []
   const decided = new Map(
@@ -82,6 +88,7 @@ function wellSeries(well: TestWellRow, { series, readings, edits }: InputParts):
         distanceSd_m: well.row.distanceSdM,
         wellRadius_m: well.wellRadiusM,
         casingRadius_m: well.casingRadiusM,
+        ...placed(well, parts),
         elapsed_s: points.map(({ row }) => row.elapsedS!),
         drawdown_m: points.map(({ s }) => s),
         included: points.map((point) => point.included),
@@ -95,6 +102,19 @@ function wellSeries(well: TestWellRow, { series, readings, edits }: InputParts):
     },
   ]
 }
+
+function placed(well: TestWellRow, { test, units, wells, constructions }: InputParts) {
+  const unitId = units.length === 1 ? units[0]!.unitId : null
+  const pumped = wells.find(({ row }) => row.role === 'pumped')
+  const { aquifer, thicknessM } = test
+  return placement(well, constructions.get(well.row.wellId), { aquifer, thicknessM, unitId, pumped })
+}
+
+const pumpedWell = (well: TestWellRow, parts: InputParts) => ({
+  wellRadius_m: well.wellRadiusM,
+  casingRadius_m: well.casingRadiusM,
+  screen: placed(well, parts).screen,
+})
 
 const staticLevel = ({ row }: TestWellRow): StaticLevel =>
   row.staticLevelM === null ? { beforePumping: true, removeTrend: false } : { given_m: row.staticLevelM }

@@ -1,14 +1,18 @@
 import { atLeast, type Viewer } from '#shared/contracts/permissions.ts'
 import type { Executor } from '../../db/client.ts'
 import type { createPumpingTestsService } from '../pumping-tests/pumping-tests.service.ts'
+import { openAt } from '../pumping-tests/tested-interval.ts'
 import type { createStreamsService } from '../streams/streams.service.ts'
+import type { WellsService } from '../wells/wells.service.ts'
 import { buildInputs, type BuiltInputs } from './build-inputs.ts'
 import { listEdits, listReadings } from './inputs.repository.ts'
+import type { Construction } from './placement.ts'
 import { settingOf, sha256Of, type Setting } from './setting.ts'
 
 export interface InputsNeeds {
   pumpingTests: Pick<ReturnType<typeof createPumpingTestsService>, 'whole' | 'maySee' | 'hold'>
   streams: Pick<ReturnType<typeof createStreamsService>, 'nearestConnected'>
+  wells: Pick<WellsService, 'screensOf' | 'picksOf'>
 }
 
 type WholeTest = Awaited<ReturnType<InputsNeeds['pumpingTests']['whole']>>
@@ -20,7 +24,18 @@ export interface Snapshot extends BuiltInputs {
 }
 
 /** What analyses of a test are made from, as the viewer sees the test. */
-export function createInputsService({ pumpingTests, streams }: InputsNeeds) {
+export function createInputsService({ pumpingTests, streams, wells: wellsService }: InputsNeeds) {
+  /** By well: screens that were open at the test's date, and depths of the units. */
+  async function constructions(executor: Executor, { found: { test }, parts }: WholeTest) {
+    const found = new Map<number, Construction>()
+    for (const { row } of parts.wells) {
+      const screens = await wellsService.screensOf(executor, row.wellId)
+      const picks = await wellsService.picksOf(executor, row.wellId)
+      found.set(row.wellId, { screens: screens.filter(openAt(test.startAt)), picks })
+    }
+    return found
+  }
+
   return {
     maySee: pumpingTests.maySee,
     hold: pumpingTests.hold,
@@ -48,6 +63,7 @@ export function createInputsService({ pumpingTests, streams }: InputsNeeds) {
         readings,
         edits,
         streamDistanceM: stream?.distanceM ?? null,
+        constructions: await constructions(executor, test),
       })
       const setting = settingOf(test)
       return { ...built, setting, sha256: sha256Of(built.inputs, setting), test }

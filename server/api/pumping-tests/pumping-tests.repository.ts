@@ -68,6 +68,8 @@ export function listTestWells(executor: Executor, viewer: Viewer, testId: number
       position: wells.position,
       wellRadiusM: wells.wellRadiusM,
       casingRadiusM: wells.casingRadiusM,
+      measuringPointM: wells.measuringPointM,
+      staticDepthM: wells.staticDepthM,
     })
     .from(testWells)
     .innerJoin(wells, eq(wells.id, testWells.wellId))

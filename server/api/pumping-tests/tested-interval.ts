@@ -14,7 +14,8 @@ export interface Interval {
   intervalBottomM: number | null
 }
 
-const openAt = (at: Date) => (screen: Screen) =>
+/** Whether a screen was open at a moment. */
+export const openAt = (at: Date) => (screen: Screen) =>
   (screen.validFrom === null || screen.validFrom <= at) && (screen.validTo === null || screen.validTo > at)
 
 /**

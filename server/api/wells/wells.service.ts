@@ -55,6 +55,9 @@ export function createWellsService(deps: Deps, { region, testsOf, valuesOf, well
     /** All screens of a well, whenever they were valid. */
     screensOf: listScreens,
 
+    /** Depths of the units at a well, metres below ground. */
+    picksOf: repository.listPicks,
+
     async list(viewer: Viewer, query: WellQuery) {
       const rows = await repository.listWells(db, viewer, query)
       return pageOf(rows.map(summaryView), await repository.countWells(db, viewer, query), query)
