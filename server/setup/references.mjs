@@ -21,6 +21,7 @@ const references = [
     'bessel-functions',
     'distributions',
     'hydraulics-fits',
+    'laplace-solutions',
     'leaky-fits',
     'leaky-functions',
     'numerics-functions',

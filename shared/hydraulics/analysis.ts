@@ -1,6 +1,7 @@
 import type { MethodId } from './catalogue.ts'
 import type { KindErrorCode } from './kind-errors.ts'
 import type { PenetrationErrorCode } from './penetration-errors.ts'
+import type { StorageErrorCode } from './storage-errors.ts'
 
 /** A step of the pumping rate; a step with rate 0 is the stop. Times in seconds on the clock of `elapsed_s`. */
 export interface RateStep {
@@ -208,6 +209,7 @@ export interface FittedCurve {
 export type AnalysisErrorCode =
   | KindErrorCode
   | PenetrationErrorCode
+  | StorageErrorCode
   | 'analysis/unknown-method'
   | 'analysis/no-wells'
   | 'analysis/unknown-well'
