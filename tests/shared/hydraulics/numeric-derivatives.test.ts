@@ -39,7 +39,8 @@ describe('Derivatives of a solution by differences', () => {
   it('stay inside the bounds of an unknown, one-sided there', () => {
     const share: Unknown = { id: 'x', label: 'Share', dimension: 'dimensionless', low: 0, high: 1, scale: 'linear' }
     const seen: number[] = []
-    const atEdge = numericDerivatives([share], ([x = NaN]) => {
+    const atEdge = numericDerivatives([share], (parameters) => {
+      const x = parameters[0] as number
       seen.push(x)
       return () => 3 * x
     })
