@@ -14,12 +14,10 @@ const place: ResponsePlace = {
   pumpedScreen: null,
   observedScreen: null,
 }
-const respond = numericDerivatives(
-  [transmissivity, storativity],
-  ([T = NaN, S = NaN], { distance_m }) =>
-    (time_s) =>
-      theisDrawdown(1, T, S, distance_m, time_s),
-)
+const respond = numericDerivatives([transmissivity, storativity], (parameters, { distance_m }) => {
+  const [T = NaN, S = NaN] = Array.from(parameters)
+  return (time_s) => theisDrawdown(1, T, S, distance_m, time_s)
+})
 
 describe('Derivatives of a solution by differences', () => {
   it('equal the analytic ones of the Theis solution to 1e-6', () => {
