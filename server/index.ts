@@ -5,6 +5,7 @@ import { ensureFirstAdministratorLink } from './api/password/first-administrator
 import { createApp } from './app.ts'
 import { ConfigError, parseConfig } from './config/config.ts'
 import { createDeps } from './create-deps.ts'
+import { packetProblem } from './db/packet.ts'
 import type { Deps } from './deps.ts'
 import { startBackgroundWork } from './jobs/background.ts'
 
@@ -30,6 +31,12 @@ async function greetFirstAdministrator(deps: Deps) {
     process.stdout.write(`\nThere is no administrator yet. This link works once and makes you the first:\n${link}\n`)
 }
 
+/** A database that takes only short statements serves, until somebody uploads a long log. */
+async function warnOfShortPackets({ connection, log }: Deps) {
+  const problem = await packetProblem(connection.db)
+  if (problem) log.warn(problem)
+}
+
 async function main() {
   const config = parseConfig(process.env)
   const deps = await createDeps(config)
@@ -50,6 +57,9 @@ async function main() {
     process.exit(0)
   }
   for (const signal of ['SIGINT', 'SIGTERM', 'SIGHUP'] as const) process.on(signal, () => void end())
+  await warnOfShortPackets(deps).catch((err: unknown) =>
+    deps.log.error({ err }, 'the size of statements could not be asked for'),
+  )
   await greetFirstAdministrator(deps).catch((err: unknown) =>
     deps.log.error({ err }, 'no link for a first administrator'),
   )

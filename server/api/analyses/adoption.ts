@@ -8,18 +8,17 @@ import {
 import { agreementOf } from '#shared/hydraulics/agreement.ts'
 import type { AnalysisResult } from '#shared/hydraulics/analysis.ts'
 import { evidenceFacts } from '#shared/hydraulics/evidence-facts.ts'
-import { evidenceOf, type Evidence, type EvidenceFacts } from '#shared/hydraulics/evidence.ts'
+import { evidenceOf, type EvidenceFacts } from '#shared/hydraulics/evidence.ts'
 import type { NewValue } from '../adopted-values/adopted-values.service.ts'
 import { localStart } from '../pumping-tests/start-time.ts'
 import type { PumpingTestRow, TestParts } from '../pumping-tests/view.ts'
-import type { AdoptedRow } from './adopted.repository.ts'
 import type { AnalysisRow } from './analyses.repository.ts'
 import { reportedFacts, reportedInputs } from './reported.ts'
 
 /** Common practice: apportioning a composite value to its units leaves at least this error of log10. */
 const leastCompositeError = 0.35
 
-type Weighed = Pick<AnalysisRow, 'id' | 'method' | 'inputs' | 'options' | 'result' | 'state'>
+type Weighed = Pick<AnalysisRow, 'id' | 'method' | 'options' | 'result' | 'state'>
 
 const resultOf = (row: Weighed): StoredResult => analysisResult.parse(row.result)
 
@@ -43,43 +42,30 @@ function recoveryAgrees(row: Weighed, siblings: Weighed[]): boolean {
   })
 }
 
-function factsOf(row: Weighed, siblings: Weighed[]): EvidenceFacts {
+function factsOf(row: Weighed, inputs: unknown, siblings: Weighed[]): EvidenceFacts {
   const result = resultOf(row)
   if (row.method !== 'reported') {
     const agrees = { recoveryAgrees: recoveryAgrees(row, siblings) }
     return evidenceFacts(
-      analysisInputs.parse(row.inputs),
+      analysisInputs.parse(inputs),
       analysisOptions.parse(row.options),
       result as AnalysisResult,
       agrees,
     )
   }
-  return reportedFacts(reportedInputs.parse(row.inputs), result.S ? result.storageClass : null)
-}
-
-export interface Weight {
-  facts: EvidenceFacts
-  evidence: Evidence
-}
-
-export function weigh(row: Weighed, siblings: Weighed[]): Weight {
-  const facts = factsOf(row, siblings)
-  return { facts, evidence: evidenceOf(facts) }
+  return reportedFacts(reportedInputs.parse(inputs), result.S ? result.storageClass : null)
 }
 
 const asReasons = (codes: (string | null | undefined)[]): NonNullable<Analysis['adoption']>['reasons'] =>
   codes.flatMap((code) => (code ? [{ code, severity: 'note' as const, params: {} }] : []))
 
-/**
- * What adopting the analysis wrote into the regional table, or would write; null where it gives no transmissivity.
- * Analyses of the same test weigh only until a reviewer has decided: what was adopted stays what it was.
- */
-export function adoptionOf(row: Weighed, siblings: Weighed[], adopted: AdoptedRow[]): Analysis['adoption'] {
-  if (!resultOf(row).T) return null
-  return asAdopted(adopted.filter(({ analysisId }) => analysisId === row.id)) ?? asProposed(weigh(row, siblings))
-}
+type Told = Pick<NewValue, 'quantity' | 'evidence' | 'evidenceReason' | 'log10Error' | 'usable'>
 
-function asAdopted(rows: AdoptedRow[]): Analysis['adoption'] {
+/**
+ * What rows of the regional table say of their analysis, those that were written or those that would be: every unit of
+ * a composite test has the same evidence. Null where there is none.
+ */
+export function adoptionOf(rows: Told[]): Analysis['adoption'] {
   const T = rows.find(({ quantity }) => quantity === 'T')
   const S = rows.find(({ quantity }) => quantity === 'S')
   if (!T) return null
@@ -91,14 +77,6 @@ function asAdopted(rows: AdoptedRow[]): Analysis['adoption'] {
     reasons: asReasons([T.evidenceReason, S?.evidenceReason]),
   }
 }
-
-const asProposed = ({ evidence: { evidence, reason, logErrorT, storage } }: Weight): Analysis['adoption'] => ({
-  evidence,
-  log10ErrorT: logErrorT,
-  log10ErrorS: storage?.logError ?? null,
-  storageUsable: storage?.usable ?? false,
-  reasons: asReasons([reason, storage?.reason]),
-})
 
 export interface AdoptedTest {
   found: { test: PumpingTestRow }
@@ -120,15 +98,18 @@ function originOf({ origin, observationWell }: EvidenceFacts): NewValue['origin'
 /**
  * The rows of the regional table that an accepted analysis stands for: T, and S and K where it gives them, for each
  * unit. A test of several units gives each its share of T, with the error that apportioning leaves, and no S or K.
+ * @param inputs the snapshot of the analysis
  */
 export function adoptedRows(
-  row: AnalysisRow,
+  row: Weighed,
+  inputs: unknown,
   siblings: Weighed[],
   { found: { test }, parts: { units } }: AdoptedTest,
 ): NewValue[] {
   const { T, S, K, storageClass } = resultOf(row)
   if (!T) return []
-  const { facts, evidence } = weigh(row, siblings)
+  const facts = factsOf(row, inputs, siblings)
+  const evidence = evidenceOf(facts)
   const common = {
     pumpingTestId: test.id,
     analysisId: row.id,

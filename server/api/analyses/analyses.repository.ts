@@ -12,9 +12,14 @@ import {
   users,
 } from '../../db/schema/index.ts'
 import { tookPart } from '../../db/took-part.ts'
+import { deletePackedInputs, savePackedInputs } from './packed-inputs.repository.ts'
 
 export type AnalysisRow = typeof analyses.$inferSelect
 export type NewAnalysis = typeof analyses.$inferInsert
+/** The snapshot that goes with a calculated result, packed. */
+interface Packed {
+  packedInputs: Uint8Array
+}
 
 const withAuthor = (executor: Executor, viewer: Viewer) =>
   executor
@@ -69,9 +74,22 @@ export async function analysedTestsOf(executor: Executor, wellId: number): Promi
   return rows.map(({ testId }) => testId)
 }
 
-export async function insertAnalysis(executor: Executor, row: NewAnalysis): Promise<number> {
+export async function insertAnalysis(executor: Executor, { packedInputs, ...row }: NewAnalysis & Packed) {
   const [inserted] = await executor.insert(analyses).values(row).$returningId()
+  await savePackedInputs(executor, inserted!.id, packedInputs)
   return inserted!.id
+}
+
+/** Another calculation in place of the stored one. False when the row version is stale. */
+export async function replaceCalculation(
+  executor: Executor,
+  id: number,
+  version: number,
+  { packedInputs, ...change }: Partial<NewAnalysis> & Packed,
+): Promise<boolean> {
+  if (!(await updateAnalysis(executor, id, version, change))) return false
+  await savePackedInputs(executor, id, packedInputs)
+  return true
 }
 
 /** False when the row version is stale. */
@@ -95,6 +113,7 @@ export const setWithdrawn = (executor: Executor, id: number) =>
 
 export async function deleteAnalysis(executor: Executor, id: number): Promise<void> {
   await executor.delete(analysisEditors).where(eq(analysisEditors.analysisId, id))
+  await deletePackedInputs(executor, id)
   await executor.delete(analyses).where(eq(analyses.id, id))
 }
 

@@ -4,6 +4,7 @@ import type { Viewer } from '#shared/contracts/permissions.ts'
 import { evidenceOf } from '#shared/hydraulics/evidence.ts'
 import { limitRules } from '#shared/hydraulics/limits.ts'
 import type { Executor } from '../../db/client.ts'
+import { packJson } from '../../db/packed-json.ts'
 import { inTransaction, transactionOf, type Transaction } from '../../db/transaction.ts'
 import type { Deps } from '../../deps.ts'
 import { AppError, notFound } from '../../errors.ts'
@@ -11,11 +12,12 @@ import { recordAudit } from '../audit-trail/record-audit.ts'
 import { listAdopted } from './adopted.repository.ts'
 import * as repository from './analyses.repository.ts'
 import { adoptedRows } from './adoption.ts'
-import { calculate, checkExpected, checkRepeats } from './calculate.ts'
+import { calculate, checkExpected } from './calculate.ts'
 import { checkAdoptable } from './check-adoptable.ts'
 import { everything } from './everything.ts'
 import type { createInputsService } from './inputs.service.ts'
-import { lockDraft } from './lock-draft.ts'
+import { checkDraft, lockDraft } from './lock-draft.ts'
+import { readInputs } from './packed-inputs.repository.ts'
 import { reportedFacts, reportedResult, type ReportedValue } from './reported.ts'
 import { createSubmissions } from './submissions.ts'
 import { analysisView, type Surroundings } from './view.ts'
@@ -23,49 +25,85 @@ import { withoutHiddenWells } from './without-hidden-wells.ts'
 
 export function createAnalysesService(deps: Deps, inputs: ReturnType<typeof createInputsService>) {
   const { db } = deps.connection
-  const { now } = deps
+  const { now, workers } = deps
 
   const siblingsOf = async (executor: Executor, testId: number) =>
     (await repository.listAnalyses(executor, everything, testId)).map(({ row }) => row)
 
-  const surroundings = async (executor: Executor, testId: number, ids: number[]): Promise<Surroundings> => ({
-    siblings: await siblingsOf(executor, testId),
-    reviews: await repository.listReviews(executor, ids),
-    adopted: await listAdopted(executor, ids),
-  })
+  /** Snapshots of those among the analyses whose view is made from them: they are long, and most views need none. */
+  async function inputsFor(executor: Executor, ids: number[]) {
+    const read = new Map<number, unknown>()
+    for (const id of ids) read.set(id, await readInputs(executor, id))
+    return read
+  }
+
+  /** Analyses of one test as the viewer sees them. */
+  async function views(executor: Executor, viewer: Viewer, testId: number, found: repository.FoundAnalysis[]) {
+    const ids = found.map(({ row }) => row.id)
+    const seen = await inputs.wellsSeen(executor, viewer, testId)
+    const adopted = await listAdopted(executor, ids)
+    const settled = new Set(seen === null ? adopted.map(({ analysisId }) => analysisId) : [])
+    const around: Surroundings = {
+      adopted,
+      siblings: await siblingsOf(executor, testId),
+      reviews: await repository.listReviews(executor, ids),
+      test: await inputs.testOf(executor, everything, testId),
+      inputs: await inputsFor(
+        executor,
+        ids.filter((id) => !settled.has(id)),
+      ),
+    }
+    return found.map((one) => {
+      const shown = analysisView(viewer, one, around)
+      return withoutHiddenWells(shown, around.inputs.get(one.row.id), seen)
+    })
+  }
 
   async function view(executor: Executor, viewer: Viewer, id: number) {
     const found = await repository.findAnalysis(executor, viewer, id)
     if (!found) throw notFound()
-    const { pumpingTestId } = found.row
-    const shown = analysisView(viewer, found, await surroundings(executor, pumpingTestId, [id]))
-    return withoutHiddenWells(shown, found.row, await inputs.wellsSeen(executor, viewer, pumpingTestId))
+    const [shown] = await views(executor, viewer, found.row.pumpingTestId, [found])
+    return shown!
   }
 
-  async function compute(executor: Executor, testId: number, input: AnalysisInput) {
-    const snapshot = await inputs.snapshot(executor, everything, testId)
+  /**
+   * Calculates what is to be saved. It comes before the transaction, which no calculation may hold open; in it
+   * `checkUnchanged` asks whether the inputs are still those.
+   */
+  async function compute(testId: number, input: AnalysisInput) {
+    const snapshot = await inputs.snapshot(db, everything, testId)
     if (snapshot.sha256 !== input.inputsSha256) throw new AppError('analysis/inputs-changed')
-    const result = calculate(snapshot.inputs, input)
+    const kept = { ...snapshot.inputs, setting: snapshot.setting }
+    const { result, packedInputs } = await calculate(workers, kept, input)
     checkExpected(result, input.expected)
     const { method, options, label } = input
     const { methodVersion } = result
-    return {
-      method,
-      methodVersion,
-      options,
-      label,
-      result,
-      inputs: { ...snapshot.inputs, setting: snapshot.setting },
-      inputsSha256: snapshot.sha256,
-      inputsChanged: false,
-    }
+    const inputsSha256 = snapshot.sha256
+    return { method, methodVersion, options, label, result, packedInputs, inputsSha256, inputsChanged: false }
   }
 
-  const { submit, takeBack, lockForReview, settle } = createSubmissions(deps, { inputs, view })
+  async function checkUnchanged(tx: Executor, testId: number, { inputsSha256 }: Pick<AnalysisInput, 'inputsSha256'>) {
+    const { sha256 } = await inputs.snapshot(tx, everything, testId)
+    if (sha256 !== inputsSha256) throw new AppError('analysis/inputs-changed')
+  }
+
+  async function computeNew(viewer: Viewer, testId: number, input: AnalysisInput) {
+    if (!(await inputs.maySee(db, viewer, testId))) throw notFound()
+    return compute(testId, input)
+  }
+
+  async function computeAgain(viewer: Viewer, id: number, input: AnalysisInput) {
+    const found = await repository.findAnalysis(db, viewer, id)
+    const { pumpingTestId } = checkDraft(viewer, found?.row ?? null)
+    return compute(pumpingTestId, input)
+  }
+
+  const { submit, takeBack, repeat, lockForReview, settle } = createSubmissions(deps, { inputs, view })
 
   return {
     submit,
     takeBack,
+    repeat,
     lockForReview,
     settle,
     isInUse: repository.isInUse,
@@ -77,19 +115,19 @@ export function createAnalysesService(deps: Deps, inputs: ReturnType<typeof crea
 
     async list(viewer: Viewer, testId: number) {
       const rows = await repository.listAnalyses(db, viewer, testId)
-      if (rows.length === 0) return { items: [] }
-      const ids = rows.map(({ row }) => row.id)
-      const around = await surroundings(db, testId, ids)
-      const seen = await inputs.wellsSeen(db, viewer, testId)
-      return { items: rows.map((row) => withoutHiddenWells(analysisView(viewer, row, around), row.row, seen)) }
+      return { items: rows.length === 0 ? [] : await views(db, viewer, testId, rows) }
     },
 
     get: (viewer: Viewer, id: number, executor: Executor = db) => view(executor, viewer, id),
 
-    create: (viewer: Viewer, testId: number, input: AnalysisInput, transaction: Transaction = transactionOf(deps)) =>
-      transaction(async (tx) => {
+    async create(viewer: Viewer, testId: number, input: AnalysisInput, transaction: Transaction = transactionOf(deps)) {
+      const computing = computeNew(viewer, testId, input)
+      // Its refusal is told inside the transaction: a repeated request gets its first answer, whatever changed since.
+      await Promise.allSettled([computing])
+      return transaction(async (tx) => {
         if (!(await inputs.hold(tx, viewer, testId))) throw notFound()
-        const computed = await compute(tx, testId, input)
+        const computed = await computing
+        await checkUnchanged(tx, testId, input)
         const row = {
           ...computed,
           pumpingTestId: testId,
@@ -108,7 +146,8 @@ export function createAnalysesService(deps: Deps, inputs: ReturnType<typeof crea
           details: { testId },
         })
         return view(tx, viewer, id)
-      }),
+      })
+    },
 
     /** Enters a value that came down without readings, submitted; it still needs a reviewer. */
     report: (viewer: Viewer, testId: number, value: ReportedValue) =>
@@ -128,7 +167,7 @@ export function createAnalysesService(deps: Deps, inputs: ReturnType<typeof crea
           method: 'reported',
           methodVersion: 1,
           state: 'submitted',
-          inputs: snapshot,
+          packedInputs: packJson(snapshot),
           inputsSha256: createHash('sha256').update(JSON.stringify(snapshot)).digest('hex'),
           options: null,
           result,
@@ -150,15 +189,17 @@ export function createAnalysesService(deps: Deps, inputs: ReturnType<typeof crea
         return view(tx, viewer, id)
       }),
 
-    update: (viewer: Viewer, id: number, { rowVersion, ...input }: AnalysisUpdate) =>
-      inTransaction(deps, async (tx) => {
+    async update(viewer: Viewer, id: number, { rowVersion, ...input }: AnalysisUpdate) {
+      const computed = await computeAgain(viewer, id, input)
+      return inTransaction(deps, async (tx) => {
         const row = await lockDraft(tx, viewer, id)
-        const computed = await compute(tx, row.pumpingTestId, input)
-        if (!(await repository.updateAnalysis(tx, id, rowVersion, computed))) throw new AppError('edit/conflict')
+        await checkUnchanged(tx, row.pumpingTestId, input)
+        if (!(await repository.replaceCalculation(tx, id, rowVersion, computed))) throw new AppError('edit/conflict')
         await repository.addEditor(tx, id, viewer)
         await recordAudit(tx, { viewer, at: now(), action: 'analyses/edit', subject: 'analysis', subjectId: id })
         return view(tx, viewer, id)
-      }),
+      })
+    },
 
     remove: (viewer: Viewer, id: number) =>
       inTransaction(deps, async (tx) => {
@@ -168,17 +209,21 @@ export function createAnalysesService(deps: Deps, inputs: ReturnType<typeof crea
         return {}
       }),
 
-    /** The values an accepted analysis stands for, after repeating it from its own snapshot. */
+    /** The values stood for by an analysis that was repeated from its own snapshot and accepted. */
     async valuesOf(executor: Executor, id: number) {
       const found = await repository.findAnalysis(executor, everything, id)
       if (!found) throw notFound()
       if (found.row.inputsChanged) throw new AppError('analysis/inputs-changed')
-      checkRepeats(found.row)
       const test = await inputs.testOf(executor, everything, found.row.pumpingTestId)
       if (test.found.test.visibility === 'private') throw new AppError('analysis/private-test')
       return {
         pumpingTestId: found.row.pumpingTestId,
-        values: adoptedRows(found.row, await siblingsOf(executor, found.row.pumpingTestId), test),
+        values: adoptedRows(
+          found.row,
+          await readInputs(executor, id),
+          await siblingsOf(executor, found.row.pumpingTestId),
+          test,
+        ),
       }
     },
 

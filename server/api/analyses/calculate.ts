@@ -1,32 +1,69 @@
-import { fittedMethod, type AnalysisInput } from '#shared/contracts/analyses.ts'
-import { analysisInputs, analysisOptions, analysisResult } from '#shared/contracts/analysis-result.ts'
-import { AnalysisError, type AnalysisInputs, type AnalysisResult } from '#shared/hydraulics/analysis.ts'
-import { analyse } from '#shared/hydraulics/catalogue.ts'
+import type { AnalysisInput } from '#shared/contracts/analyses.ts'
+import { analysisResult } from '#shared/contracts/analysis-result.ts'
+import type { AnalysisInputs, AnalysisResult } from '#shared/hydraulics/analysis.ts'
 import { defaultUnitSystemId, unitSystemById } from '#shared/quantities/systems.ts'
 import { analysisErrorText } from '#shared/words/findings.ts'
 import { AppError } from '../../errors.ts'
+import type {
+  Analysed,
+  AnalysedAndPacked,
+  AnalyseInput,
+  AnalysisRefusal,
+  RepeatInput,
+} from '../../jobs/tasks/analyse.ts'
+import { isOutOfMemory, type Workers } from '../../jobs/workers.ts'
 import type { AnalysisRow } from './analyses.repository.ts'
+import type { Setting } from './setting.ts'
 
 /** Relative difference between browser and server beyond which nothing is stored. */
 const tolerance = 1e-6
 
-/** @throws AppError with the method's own sentence when it refuses the inputs. */
-export function calculate(
-  inputs: AnalysisInputs,
-  { method, options }: Pick<AnalysisInput, 'method' | 'options'>,
-): AnalysisResult {
+/** Ten times what the longest log that may be uploaded takes on a slow computer; with the time it waits for a thread. */
+const mostSeconds = 120
+
+/** @throws AppError where the calculation takes more time or memory than one request may have. */
+async function onThread<Outcome>(
+  workers: Workers,
+  name: string,
+  input: AnalyseInput | RepeatInput,
+  seconds: number,
+): Promise<Outcome> {
+  const signal = AbortSignal.timeout(seconds * 1000)
   try {
-    const result = analyse(method, inputs, options)
-    if (analysisResult.safeParse(result).success) return result
+    return await workers.run<Outcome>(name, input, signal)
   } catch (error) {
-    if (!(error instanceof AnalysisError)) throw error
-    throw new AppError('analysis/refused', {
-      reason: analysisErrorText(error.code, error.params, unitSystemById(defaultUnitSystemId)),
-      code: error.code,
-    })
+    if (signal.aborted) throw new AppError('analysis/too-long', { seconds })
+    if (isOutOfMemory(error)) throw new AppError('analysis/too-much-memory')
+    throw error
   }
-  // Readings far from anything a well can do: numbers that overflow are no result, and could not be stored.
-  throw new AppError('analysis/not-finite')
+}
+
+const refusal = ({ code, params }: AnalysisRefusal) =>
+  new AppError('analysis/refused', {
+    reason: analysisErrorText(code, params, unitSystemById(defaultUnitSystemId)),
+    code,
+  })
+
+/** Readings far from anything a well can do: numbers that overflow are no result, and could not be stored. */
+function checkFinite(result: AnalysisResult): AnalysisResult {
+  if (!analysisResult.safeParse(result).success) throw new AppError('analysis/not-finite')
+  return result
+}
+
+/**
+ * Calculates on a worker thread, never inside a transaction: a long log takes many seconds.
+ * @returns the result, and the inputs with their setting, packed to be kept.
+ * @throws AppError with the method's own sentence when it refuses the inputs.
+ */
+export async function calculate(
+  workers: Workers,
+  inputs: AnalysisInputs & { setting: Setting },
+  { method, options }: Pick<AnalysisInput, 'method' | 'options'>,
+  seconds = mostSeconds,
+): Promise<{ result: AnalysisResult; packedInputs: Uint8Array }> {
+  const outcome = await onThread<AnalysedAndPacked>(workers, 'analyse', { inputs, method, options }, seconds)
+  if (!outcome.ok) throw refusal(outcome)
+  return { result: checkFinite(outcome.result), packedInputs: outcome.packedInputs }
 }
 
 const differs = (a: number | null, b: number | null) =>
@@ -45,21 +82,18 @@ export function checkExpected(result: AnalysisResult, expected: AnalysisInput['e
 }
 
 /**
- * Repeats a stored analysis from its own snapshot. A reported value has nothing to repeat.
+ * Repeats a stored analysis from its own snapshot, on a worker thread. A reported value has nothing to repeat.
  * @throws AppError when another version of the method, or another number, comes out.
  */
-export function checkRepeats({
-  method,
-  inputs,
-  options,
-  result,
-}: Pick<AnalysisRow, 'method' | 'inputs' | 'options' | 'result'>): void {
-  const stored = analysisResult.parse(result)
+export async function checkRepeats(
+  workers: Workers,
+  { method, options, result }: Pick<AnalysisRow, 'method' | 'options' | 'result'>,
+  packedInputs: Uint8Array,
+  seconds = mostSeconds,
+): Promise<void> {
+  const { methodVersion, T, S } = analysisResult.parse(result)
   if (method === 'reported') return
-  const again = calculate(analysisInputs.parse(inputs), {
-    method: fittedMethod.parse(method),
-    options: analysisOptions.parse(options),
-  })
-  const { methodVersion, T, S } = stored
-  checkExpected(again, { methodVersion, T: T?.value ?? null, S: S?.value ?? null })
+  const again = await onThread<Analysed>(workers, 'repeat-analysis', { packedInputs, method, options }, seconds)
+  if (!again.ok) throw refusal(again)
+  checkExpected(checkFinite(again.result), { methodVersion, T: T?.value ?? null, S: S?.value ?? null })
 }

@@ -6,10 +6,13 @@ import type { Deps } from '../../deps.ts'
 import { AppError, notFound } from '../../errors.ts'
 import { recordAudit } from '../audit-trail/record-audit.ts'
 import * as repository from './analyses.repository.ts'
+import type { AnalysisRow } from './analyses.repository.ts'
+import { checkRepeats } from './calculate.ts'
 import { checkAdoptable } from './check-adoptable.ts'
 import { everything } from './everything.ts'
 import type { createInputsService } from './inputs.service.ts'
 import { lockDraft } from './lock-draft.ts'
+import { readPackedInputs } from './packed-inputs.repository.ts'
 import { mayTakeBack } from './view.ts'
 
 export interface SubmissionsNeeds {
@@ -20,12 +23,16 @@ export interface SubmissionsNeeds {
 /** An analysis on its way to a reviewer, and back. */
 export function createSubmissions(deps: Deps, { inputs, view }: SubmissionsNeeds) {
   const { now } = deps
+  const { db } = deps.connection
 
-  async function lockSubmitted(executor: Executor, viewer: Viewer, id: number) {
-    const row = await repository.lockAnalysis(executor, viewer, id)
+  function checkSubmitted(row: AnalysisRow | null | undefined): AnalysisRow {
     if (!row) throw notFound()
     if (row.state !== 'submitted') throw new AppError('review/not-submitted')
     return row
+  }
+
+  async function lockSubmitted(executor: Executor, viewer: Viewer, id: number) {
+    return checkSubmitted(await repository.lockAnalysis(executor, viewer, id))
   }
 
   return {
@@ -71,6 +78,19 @@ export function createSubmissions(deps: Deps, { inputs, view }: SubmissionsNeeds
       const found = await repository.findAnalysis(executor, viewer, id)
       if (found?.tookPart) throw new AppError('review/own-work')
       return row
+    },
+
+    /**
+     * Repeats an analysis that is about to be accepted from its own snapshot. It comes before the transaction, which no
+     * calculation may hold open: `settle` refuses any other version of the analysis than the one repeated here.
+     */
+    async repeat(viewer: Viewer, id: number, rowVersion: number) {
+      const found = await repository.findAnalysis(db, viewer, id)
+      const row = checkSubmitted(found?.row)
+      if (found?.tookPart) throw new AppError('review/own-work')
+      if (row.rowVersion !== rowVersion) throw new AppError('edit/conflict')
+      if (row.inputsChanged) throw new AppError('analysis/inputs-changed')
+      await checkRepeats(deps.workers, row, await readPackedInputs(db, id))
     },
 
     async settle(executor: Executor, id: number, rowVersion: number, state: 'accepted' | 'returned') {

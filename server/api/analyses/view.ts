@@ -3,7 +3,7 @@ import { analysisOptions, analysisResult } from '#shared/contracts/analysis-resu
 import { atLeast, can, type Viewer } from '#shared/contracts/permissions.ts'
 import { limitFindings } from '#shared/hydraulics/limits.ts'
 import type { AdoptedRow } from './adopted.repository.ts'
-import { adoptionOf } from './adoption.ts'
+import { adoptedRows, adoptionOf, type AdoptedTest } from './adoption.ts'
 import type { FoundAnalysis, listReviews } from './analyses.repository.ts'
 
 type ReviewRows = Awaited<ReturnType<typeof listReviews>>
@@ -28,13 +28,21 @@ export interface Surroundings {
   siblings: FoundAnalysis['row'][]
   reviews: ReviewRows
   adopted: AdoptedRow[]
+  test: AdoptedTest
+  /** Snapshots by analysis, of those at least that are not adopted. */
+  inputs: Map<number, unknown>
 }
 
-export function analysisView(
-  viewer: Viewer,
-  found: FoundAnalysis,
-  { siblings, reviews, adopted }: Surroundings,
-): Analysis {
+/**
+ * What adopting the analysis wrote into the regional table, or would write; null where it gives no transmissivity.
+ * Analyses of the same test weigh only until a reviewer has decided: what was adopted stays what it was.
+ */
+function adoptionShown(row: FoundAnalysis['row'], { adopted, inputs, siblings, test }: Surroundings) {
+  const written = adopted.filter(({ analysisId }) => analysisId === row.id)
+  return adoptionOf(written) ?? adoptionOf(adoptedRows(row, inputs.get(row.id), siblings, test))
+}
+
+export function analysisView(viewer: Viewer, found: FoundAnalysis, around: Surroundings): Analysis {
   const { row, authorName } = found
   const result = analysisResult.parse(row.result)
   const limits = limitFindings({
@@ -52,14 +60,14 @@ export function analysisView(
     result,
     label: row.label,
     rationale: row.rationale,
-    adoption: adoptionOf(row, siblings, adopted),
+    adoption: adoptionShown(row, around),
     inputsChanged: row.inputsChanged,
     questions: limits.filter(({ severity }) => severity === 'caution'),
     refusals: limits.filter(({ severity }) => severity === 'bad'),
     createdBy: row.createdBy && authorName ? { id: row.createdBy, name: authorName } : null,
     createdAt: row.createdAt.toISOString(),
     submittedAt: row.submittedAt?.toISOString() ?? null,
-    reviews: reviews.filter((review) => review.row.analysisId === row.id).map(reviewView),
+    reviews: around.reviews.filter((review) => review.row.analysisId === row.id).map(reviewView),
     rowVersion: row.rowVersion,
     mayEdit: mayChange(viewer, row),
     mayTakeBack: mayTakeBack(viewer, row),

@@ -1,17 +1,13 @@
 import type { Analysis } from '#shared/contracts/analyses.ts'
 import { analysisInputs } from '#shared/contracts/analysis-result.ts'
-import type { AnalysisRow } from './analyses.repository.ts'
 
 /**
  * An analysis rests on all wells of its test; its reader is told nothing of those that are hidden from them.
+ * @param inputs the snapshot of the analysis
  * @param seen ids of the test's wells that the reader may see; null for everything.
  */
-export function withoutHiddenWells(
-  analysis: Analysis,
-  { method, inputs }: Pick<AnalysisRow, 'method' | 'inputs'>,
-  seen: Set<string> | null,
-): Analysis {
-  if (seen === null || method === 'reported') return analysis
+export function withoutHiddenWells(analysis: Analysis, inputs: unknown, seen: Set<string> | null): Analysis {
+  if (seen === null || analysis.method === 'reported') return analysis
   const hidden = analysisInputs.parse(inputs).series.filter(({ wellId }) => !seen.has(wellId))
   if (hidden.length === 0) return analysis
   const codes = new Set<string | number>(hidden.map(({ label }) => label))

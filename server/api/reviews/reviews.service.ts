@@ -14,7 +14,7 @@ import { localStart } from '../pumping-tests/start-time.ts'
 import * as repository from './reviews.repository.ts'
 
 export interface ReviewsNeeds {
-  analyses: Pick<ReturnType<typeof createAnalysesService>, 'lockForReview' | 'settle' | 'get' | 'valuesOf'>
+  analyses: Pick<ReturnType<typeof createAnalysesService>, 'repeat' | 'lockForReview' | 'settle' | 'get' | 'valuesOf'>
   adoptedValues: Pick<ReturnType<typeof createAdoptedValuesService>, 'adopt'>
 }
 
@@ -42,8 +42,9 @@ export function createReviewsService(deps: Deps, { analyses, adoptedValues }: Re
      * Accepts or returns a submitted analysis. Accepting repeats it from its own snapshot and writes the values it
      * stands for into the regional table, in the same transaction as the audit record.
      */
-    decide: (viewer: Viewer, id: number, { decision, comment, rowVersion }: ReviewInput) =>
-      inTransaction(deps, async (tx) => {
+    async decide(viewer: Viewer, id: number, { decision, comment, rowVersion }: ReviewInput) {
+      if (decision === 'accepted') await analyses.repeat(viewer, id, rowVersion)
+      return inTransaction(deps, async (tx) => {
         const row = await analyses.lockForReview(tx, viewer, id)
         await analyses.settle(tx, id, rowVersion, decision)
         const reviewId = await repository.insertReview(tx, {
@@ -58,7 +59,8 @@ export function createReviewsService(deps: Deps, { analyses, adoptedValues }: Re
         const action = decision === 'accepted' ? 'reviews/accept' : 'reviews/return'
         await recordAudit(tx, { viewer, at: now(), action, subject: 'analysis', subjectId: id, details })
         return analyses.get(viewer, id, tx)
-      }),
+      })
+    },
   }
 
   async function adopt(executor: Executor, viewer: Viewer, analysisId: number, reviewId: number) {

@@ -11,7 +11,7 @@ import {
   uniqueIndex,
   varchar,
 } from 'drizzle-orm/mysql-core'
-import { id, instant, reference, rowVersion } from './columns.ts'
+import { bytes, id, instant, reference, rowVersion } from './columns.ts'
 
 export const analyses = mysqlTable(
   'analyses',
@@ -21,8 +21,7 @@ export const analyses = mysqlTable(
     method: varchar({ length: 40 }).notNull(),
     methodVersion: int().notNull(),
     state: mysqlEnum(['draft', 'submitted', 'accepted', 'returned', 'withdrawn']).notNull(),
-    /** Snapshot of all inputs with a version literal, and its hash: the analysis can be repeated from this row alone. */
-    inputs: json().$type<unknown>().notNull(),
+    /** Of the snapshot in analysis_inputs, from which alone the analysis can be repeated. */
     inputsSha256: varchar({ length: 64 }).notNull(),
     /** Readings, rates or distances of the test are no longer those of the snapshot. */
     inputsChanged: boolean().notNull().default(false),
@@ -37,6 +36,16 @@ export const analyses = mysqlTable(
     rowVersion: rowVersion(),
   },
   (table) => [index('analyses_test').on(table.pumpingTestId), index('analyses_state').on(table.state)],
+)
+
+/**
+ * Snapshot of all inputs of an analysis with a version literal, packed (db/packed-json.ts) and cut into parts: a long log
+ * does not fit into the largest statement that a database takes, and lists of analyses do not read it.
+ */
+export const analysisInputParts = mysqlTable(
+  'analysis_input_parts',
+  { analysisId: reference().notNull(), part: int().notNull(), bytes: bytes().notNull() },
+  (table) => [primaryKey({ columns: [table.analysisId, table.part] })],
 )
 
 /** Everybody who made, changed or submitted an analysis: none of them reviews it. */

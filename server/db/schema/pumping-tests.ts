@@ -1,4 +1,16 @@
-import { boolean, double, index, int, json, mysqlEnum, mysqlTable, primaryKey, text, uniqueIndex, varchar } from 'drizzle-orm/mysql-core'
+import {
+  boolean,
+  double,
+  index,
+  int,
+  json,
+  mysqlEnum,
+  mysqlTable,
+  primaryKey,
+  text,
+  uniqueIndex,
+  varchar,
+} from 'drizzle-orm/mysql-core'
 import { id, instant, reference, rowVersion } from './columns.ts'
 import { visibility } from './wells.ts'
 

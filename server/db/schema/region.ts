@@ -1,4 +1,15 @@
-import { boolean, double, index, int, json, mysqlEnum, mysqlTable, text, uniqueIndex, varchar } from 'drizzle-orm/mysql-core'
+import {
+  boolean,
+  double,
+  index,
+  int,
+  json,
+  mysqlEnum,
+  mysqlTable,
+  text,
+  uniqueIndex,
+  varchar,
+} from 'drizzle-orm/mysql-core'
 import { line, polygon } from '../spatial.ts'
 import { id, instant, reference, rowVersion } from './columns.ts'
 

@@ -6,6 +6,16 @@ export const analysisErrors = {
     status: 400,
     sentence: () => 'The readings are so large or so small that no value comes out. Check their unit.',
   },
+  'analysis/too-long': {
+    status: 422,
+    sentence: ({ seconds }) =>
+      `The calculation did not end within ${seconds} s and was stopped. Choose a shorter window or fewer wells, or try again when the server has less to do.`,
+  },
+  'analysis/too-much-memory': {
+    status: 422,
+    sentence: () =>
+      'The calculation needs more memory than the server may use for one. Choose a shorter window or fewer wells.',
+  },
   'analysis/result-differs': {
     status: 409,
     sentence: ({ quantity }) =>

@@ -21,7 +21,7 @@ export async function makeAdoptedValue(
   const pumpingTestId = (test.body as { id: number }).id
   const now = deps.now()
   const method = { method: 'theis', methodVersion: 1, state: 'accepted' as const }
-  const snapshot = { inputs: {}, inputsSha256: '0'.repeat(64), result: {}, createdAt: now }
+  const snapshot = { inputsSha256: '0'.repeat(64), result: {}, createdAt: now }
   const [analysis] = await deps.connection.db
     .insert(analyses)
     .values({ pumpingTestId, ...method, ...snapshot })

@@ -2,7 +2,9 @@ import { cpSync, mkdirSync, readFileSync, readdirSync, rmSync, writeFileSync } f
 import { join } from 'node:path'
 import { migrate } from 'drizzle-orm/mysql2/migrator'
 import { afterAll, beforeAll, describe, expect, it, vi } from 'vitest'
+import { readInputs } from '../../../server/api/analyses/packed-inputs.repository.ts'
 import { connect } from '../../../server/db/client.ts'
+import { analyses } from '../../../server/db/schema/index.ts'
 import { databaseFolder } from '../../../server/setup/databases.mjs'
 import { startMariadb, type Mariadb } from '../../../server/setup/mariadb.mjs'
 import { inRoot } from '../../../server/setup/places.mjs'
@@ -36,7 +38,11 @@ async function applyFirstMigration(url: string): Promise<void> {
   await migrate(db, { migrationsFolder: folder }).finally(close)
 }
 
+const snapshot = { version: 1, kind: 'reported', source: 'Brønn № 5 💧' }
+
 const records = `
+  INSERT INTO analyses (pumping_test_id, method, method_version, state, inputs, inputs_sha256, result, created_at)
+    VALUES (1, 'reported', 1, 'accepted', '${JSON.stringify(snapshot)}', repeat('0', 64), '{}', '2026-01-02');
   INSERT INTO users (email, name, role, created_at) VALUES ('a@b.example', 'Ada Ö. 🌊', 'analyst', '2026-01-02 03:04:05.678');
   INSERT INTO streams (name, stream_order, path, created_at)
     VALUES ('Brook', 2, ST_LineFromText('LINESTRING(-21.2 -38.4, -21.1 -38.3)', 4326), '2026-01-02');`
@@ -57,6 +63,14 @@ describe('a data folder made by the first migration', () => {
     const [dump = ''] = readdirSync(join(dataDir, 'backups'))
     expect(said.join()).toContain(dump)
     expect(await run('gzip', ['-dc', join(dataDir, 'backups', dump)])).toContain("'a@b.example'")
+  })
+
+  it('keeps what its analyses were made from, packed', async () => {
+    const { db, close } = connect(server.url(), 1)
+    const [row] = await db.select({ id: analyses.id }).from(analyses)
+    expect(await readInputs(db, row!.id).finally(close)).toEqual(snapshot)
+    const unpacked = 'SELECT CONVERT(UNCOMPRESS(bytes) USING utf8mb4) FROM analysis_input_parts'
+    expect(await server.query(unpacked)).toEqual([[JSON.stringify(snapshot)]])
   })
 
   it('has then the schema of a new one', async () => {
