@@ -26,6 +26,7 @@ const makeWell = (overrides: Partial<StoringWell> = {}): StoringWell => ({
 const makePlace = (overrides: Partial<ResponsePlace> = {}): ResponsePlace => ({
   pumped: false,
   distance_m: 30,
+  bearing_deg: null,
   wellRadius_m: 0.5,
   casingRadius_m: 0.5,
   thickness_m: null,

@@ -25,6 +25,7 @@ const makeAquifer = (overrides: Partial<WaterTableAquifer> = {}): WaterTableAqui
 const makePlace = (overrides: Partial<ResponsePlace> = {}): ResponsePlace => ({
   pumped: false,
   distance_m: 15,
+  bearing_deg: null,
   wellRadius_m: 0.1,
   casingRadius_m: null,
   thickness_m: 20,
