@@ -118,6 +118,7 @@ export function findWellsForTest(executor: Executor, viewer: Viewer, ids: number
       accuracyM: wells.positionAccuracyM,
       depthM: wells.depthM,
       visibility: wells.visibility,
+      embargoUntil: wells.embargoUntil,
     })
     .from(wells)
     .where(and(inArray(wells.id, ids), readable.wells(viewer)))
@@ -130,6 +131,7 @@ export async function countUnits(executor: Executor, ids: number[]): Promise<num
 /** Replaces rate steps and unit shares; wells keep their rows where they stay, so that their series stay too. */
 export async function replaceSteps(executor: Executor, testId: number, steps: NewRateStep[]) {
   await executor.delete(rateSteps).where(eq(rateSteps.pumpingTestId, testId))
+  if (steps.length === 0) return
   await executor.insert(rateSteps).values(steps.map((step) => ({ ...step, pumpingTestId: testId })))
 }
 

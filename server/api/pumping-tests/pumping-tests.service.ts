@@ -4,6 +4,7 @@ import type {
   PumpingTestQuery,
   PumpingTestUpdate,
 } from '#shared/contracts/pumping-tests.ts'
+import { kindOf } from '#shared/contracts/test-details.ts'
 import { toSI } from '#shared/quantities/units.ts'
 import type { Viewer } from '#shared/contracts/permissions.ts'
 import type { Executor } from '../../db/client.ts'
@@ -12,6 +13,7 @@ import type { Deps } from '../../deps.ts'
 import { AppError, fieldError, notFound } from '../../errors.ts'
 import { recordAudit } from '../audit-trail/record-audit.ts'
 import { pageOf } from '../page-of.ts'
+import { testShowsHidden, type Exposure } from '../visibility/exposure.ts'
 import { checkPublishing } from '../visibility/publishing.ts'
 import type { createWellsService } from '../wells/wells.service.ts'
 import { countPumpingTests, listPumpingTests, unitNames } from './list.repository.ts'
@@ -49,7 +51,7 @@ export function createPumpingTestsService(deps: Deps, { wells, markInputsChanged
   const { db } = deps.connection
   const { now } = deps
   /** Every check of an input against the database, and the rows to write. */
-  async function resolve(executor: Executor, viewer: Viewer, input: PumpingTestInput) {
+  async function resolve(executor: Executor, viewer: Viewer, input: PumpingTestInput, embargoUntil: Date | null) {
     const ids = [input.wellId, ...input.observationWells.map(({ wellId }) => wellId)]
     const found = await repository.findWellsForTest(executor, viewer, ids)
     const known = new Map<number, WellForTest>(found.map((well) => [well.id, well]))
@@ -60,7 +62,7 @@ export function createPumpingTestsService(deps: Deps, { wells, markInputsChanged
     const unitIds = new Set(input.units.map(({ unitId }) => unitId))
     if ((await repository.countUnits(executor, [...unitIds])) !== input.units.length)
       throw fieldError('units', 'pumping-test/unknown-unit')
-    checkVisibility(input, found)
+    checkVisibility({ visibility: input.visibility, embargoUntil }, input.wellId, found)
     return { wellRows, row: { ...columns(input), ...interval, startAt: start.at, startPrecision: start.precision } }
   }
 
@@ -131,11 +133,11 @@ export function createPumpingTestsService(deps: Deps, { wells, markInputsChanged
     create: (viewer: Viewer, input: PumpingTestInput, transaction: Transaction = transactionOf(deps)) =>
       transaction(async (tx) => {
         checkPublishing(viewer, input)
-        const { row, wellRows } = await resolve(tx, viewer, input)
+        const { row, wellRows } = await resolve(tx, viewer, input, null)
         const at = now()
         const id = await repository.insertPumpingTest(tx, {
           ...row,
-          kind: 'constant-rate',
+          kind: kindOf(input),
           createdBy: viewer.id,
           createdAt: at,
         })
@@ -150,6 +152,7 @@ export function createPumpingTestsService(deps: Deps, { wells, markInputsChanged
         checkPublishing(viewer, facts)
         const [well] = await repository.findWellsForTest(tx, viewer, [wellId])
         if (!well) throw fieldError('wellId', 'pumping-test/unknown-well')
+        checkVisibility({ visibility: facts.visibility, embargoUntil: null }, wellId, [well])
         const start = startTime(startLocal, facts.zone, now())
         const at = now()
         const row = {
@@ -176,8 +179,9 @@ export function createPumpingTestsService(deps: Deps, { wells, markInputsChanged
     update: (viewer: Viewer, id: number, { rowVersion, ...changed }: PumpingTestUpdate) =>
       inTransaction(deps, async (tx) => {
         const before = await lockForEdit(tx, viewer, id)
+        if (kindOf(changed) !== before.kind) throw fieldError('kind', 'pumping-test/kind-stays')
         const input = { ...changed, visibility: before.visibility }
-        const { row, wellRows } = await resolve(tx, viewer, input)
+        const { row, wellRows } = await resolve(tx, viewer, input, before.embargoUntil)
         if (!(await repository.updatePumpingTest(tx, id, rowVersion, row))) throw new AppError('edit/conflict')
         checkLogs(await repository.listLoggedWells(tx, id), before, row, wellRows)
         await write(tx, id, input, wellRows)
@@ -207,6 +211,7 @@ function columns(input: PumpingTestInput) {
     rateError,
     conditions,
     visibility,
+    details = null,
   } = input
   return {
     wellId,
@@ -219,6 +224,7 @@ function columns(input: PumpingTestInput) {
     rateError,
     conditions,
     visibility,
+    details,
   }
 }
 
@@ -226,12 +232,10 @@ function stepRow({ startS, rate }: PumpingTestInput['rateSteps'][number]): repos
   return { startS, rateM3S: toSI(rate.value, rate.unit), enteredValue: rate.value, enteredUnit: rate.unit }
 }
 
-const openness = { private: 0, internal: 1, published: 2 }
-
-function checkVisibility(input: PumpingTestInput, wells: { id: number; visibility: keyof typeof openness }[]) {
-  const well = wells.find(({ id }) => id === input.wellId)!
-  const hidden = input.visibility !== 'private' && wells.some(({ visibility }) => visibility === 'private')
-  if (hidden || openness[input.visibility] > openness[well.visibility])
+/** The rule of the visibility service, also for a test that is entered or gets other wells. */
+function checkVisibility(test: Exposure, wellId: number, wells: (Exposure & { id: number })[]) {
+  const well = wells.find(({ id }) => id === wellId)!
+  const hasPrivateWells = wells.some(({ visibility }) => visibility === 'private')
+  if (testShowsHidden(test, well, hasPrivateWells))
     throw fieldError('visibility', 'pumping-test/more-visible-than-well')
-  if (!input.rateSteps.some(({ rate }) => rate.value > 0)) throw fieldError('rateSteps', 'pumping-test/no-pumping')
 }

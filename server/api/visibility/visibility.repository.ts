@@ -3,11 +3,7 @@ import type { Executor } from '../../db/client.ts'
 import { readable } from '../../db/readable.ts'
 import { pumpingTests, testWells, wells } from '../../db/schema/index.ts'
 import type { Viewer } from '#shared/contracts/permissions.ts'
-
-export interface Exposure {
-  visibility: 'published' | 'internal' | 'private'
-  embargoUntil: Date | null
-}
+import type { Exposure } from './exposure.ts'
 
 const tables = { well: wells, 'pumping-test': pumpingTests }
 export type Subject = keyof typeof tables

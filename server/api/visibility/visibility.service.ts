@@ -6,18 +6,13 @@ import type { Deps } from '../../deps.ts'
 import { AppError, fieldError, notFound } from '../../errors.ts'
 import type { createAdoptedValuesService } from '../adopted-values/adopted-values.service.ts'
 import { recordAudit } from '../audit-trail/record-audit.ts'
+import { isMoreVisible, testShowsHidden, type Exposure } from './exposure.ts'
 import * as repository from './visibility.repository.ts'
-import type { Exposure, Subject } from './visibility.repository.ts'
+import type { Subject } from './visibility.repository.ts'
 
 interface Needs {
   adoptedValues: Pick<ReturnType<typeof createAdoptedValuesService>, 'changed' | 'unitsWithValues'>
 }
-
-const openness = { private: 0, internal: 1, published: 2 }
-
-/** An embargo hides what is published: it is then as open as what is internal. */
-const degree = ({ visibility, embargoUntil }: Exposure) =>
-  visibility === 'published' && embargoUntil ? openness.internal : openness[visibility]
 
 export function createVisibilityService(deps: Deps, { adoptedValues }: Needs) {
   const { now } = deps
@@ -26,14 +21,14 @@ export function createVisibilityService(deps: Deps, { adoptedValues }: Needs) {
   async function checkFamily(executor: Executor, subject: Subject, id: number, wanted: Exposure) {
     if (subject === 'pumping-test') {
       const parent = await repository.exposureOfParent(executor, id)
-      const hidesWells = wanted.visibility !== 'private' && (await repository.countPrivateWellsOf(executor, id)) > 0
-      if (hidesWells || degree(wanted) > degree(parent))
+      const hasPrivateWells = (await repository.countPrivateWellsOf(executor, id)) > 0
+      if (testShowsHidden(wanted, parent, hasPrivateWells))
         throw fieldError('visibility', 'pumping-test/more-visible-than-well')
       return
     }
     const tests = await repository.exposuresOfTests(executor, id)
     const observed = wanted.visibility === 'private' ? await repository.countOpenTestsWith(executor, id) : 0
-    const count = Math.max(observed, tests.filter((test) => degree(test) > degree(wanted)).length)
+    const count = Math.max(observed, tests.filter((test) => isMoreVisible(test, wanted)).length)
     if (count > 0) throw new AppError('visibility/tests-more-visible', { count })
   }
 

@@ -10,6 +10,7 @@ import {
   createWell,
   islandMiddle,
   makeRegion,
+  makeTestInput,
   makeUnit,
   makeWellInput,
 } from '../../support/domain.ts'
@@ -115,6 +116,48 @@ describe('an embargo', () => {
     await tested.deps.jobs.drain()
     expect((await seen()).total).toBe(1)
     await readTest(reader, id)
+  })
+})
+
+describe('a published test', () => {
+  const body = (wellId: number, unitId: number, visibility: 'published' | 'internal') =>
+    makeTestInput({ wellId, units: [{ unitId, share: 1, basis: 'single-unit' }], visibility })
+
+  it('is not entered at an embargoed well, which would hide it', async () => {
+    const unitId = await makeUnit(tested)
+    const id = await createPublishedWell(steward)
+    const exposure = { rowVersion: 1, visibility: 'published', embargoUntil: '2030-01-01T00:00:00Z' }
+    await steward.put(`/api/wells/${id}/visibility`).send(exposure).expect(200)
+    const refused = await steward
+      .post('/api/pumping-tests')
+      .send(body(id, unitId, 'published'))
+      .expect(400)
+    expect((refused.body as Problem).fields).toMatchObject([
+      { path: 'visibility', code: 'pumping-test/more-visible-than-well' },
+    ])
+    await steward
+      .post('/api/pumping-tests')
+      .send(body(id, unitId, 'internal'))
+      .expect(201)
+  })
+
+  it('under the embargo of its well is edited like any other', async () => {
+    const unitId = await makeUnit(tested)
+    const id = await createPublishedWell(steward)
+    const made = await steward
+      .post('/api/pumping-tests')
+      .send(body(id, unitId, 'published'))
+      .expect(201)
+    const { id: testId } = made.body as { id: number }
+    const until = '2030-01-01T00:00:00Z'
+    await embargo(testId, 1, until).expect(200)
+    await steward
+      .put(`/api/wells/${id}/visibility`)
+      .send({ rowVersion: 1, visibility: 'published', embargoUntil: until })
+      .expect(200)
+    const change = { ...body(id, unitId, 'internal'), conditions: 'Rain in the night.', rowVersion: 2 }
+    const edited = await steward.put(`/api/pumping-tests/${testId}`).send(change).expect(200)
+    expect(edited.body).toMatchObject({ visibility: 'published', conditions: 'Rain in the night.' })
   })
 })
 

@@ -10,8 +10,10 @@ export { demoValues } from './values.ts'
 export { makePlan } from './plan.ts'
 
 /** A test is never more visible than its well. */
-const noMoreVisible = (test: DemoReportedTest, { visibility }: DemoWell): DemoReportedTest =>
-  visibility === 'internal' ? { ...test, visibility } : test
+const noMoreVisible = (test: DemoReportedTest, { visibility, embargoUntil }: DemoWell): DemoReportedTest => {
+  if (visibility === 'internal') return { ...test, visibility }
+  return test.visibility === 'internal' ? test : { ...test, embargoUntil }
+}
 
 /**
  * Everything the demo region is filled with, for a seed: plain data, the same at every call. Wells are in order of

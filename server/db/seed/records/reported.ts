@@ -66,6 +66,7 @@ export function makeReportedTest(plan: Plan, report: PlannedReport, index: numbe
     thicknessBasis: unit === 'TG' ? 'saturated' : 'aquifer',
     conditions: null,
     visibility: stream.chance(0.88) ? 'published' : 'internal',
+    embargoUntil: null,
     source: `${source}; water office archive, sheet ${100 + index}`,
     basis: report.basis,
     evidence,

@@ -119,12 +119,12 @@ interface DemoTestBase {
   thicknessBasis: 'aquifer' | 'saturated'
   conditions: string | null
   visibility: 'published' | 'internal'
+  /** That of its well. */
+  embargoUntil: string | null
 }
 
 export interface DemoFullTest extends DemoTestBase {
   kind: 'constant-rate'
-  /** That of its well. */
-  embargoUntil: string | null
   rateSteps: { startS: number; rate: { value: number; unit: string } }[]
   staticLevelM: number
   observationWells: { wellCode: string; distanceM: number; staticLevelM: number }[]

@@ -4,6 +4,7 @@ import { AnalysisError, type AnalysisOptions } from '#shared/hydraulics/analysis
 import type { Services } from '../../../api/services.ts'
 import type { DemoAnalysis, DemoFullTest } from '../records/types.ts'
 import type { UnitIds } from './geography.ts'
+import { publishTest } from './publish-test.ts'
 import type { Cast } from './people.ts'
 
 type WellIds = Map<string, number>
@@ -35,18 +36,6 @@ async function createTest(
     })),
   })
   return pumpingTests.get(analyst, id)
-}
-
-/** A test is as open as its well, and embargoed with it; the steward decides that, not the person who enters it. */
-async function publish(
-  { visibility }: Services,
-  { steward }: Cast,
-  { id, rowVersion }: Awaited<ReturnType<typeof createTest>>,
-  { visibility: wanted, embargoUntil }: DemoFullTest,
-) {
-  if (wanted === 'internal') return
-  const until = embargoUntil === null ? null : new Date(embargoUntil).toISOString()
-  await visibility.set(steward, 'pumping-test', id, { rowVersion, visibility: wanted, embargoUntil: until })
 }
 
 async function uploadLogs(
@@ -127,7 +116,7 @@ export async function writeFullTest(
   unitIds: UnitIds,
 ) {
   const created = await createTest(services, cast, test, wellIds, unitIds)
-  await publish(services, cast, created, test)
+  await publishTest(services, cast, created, test)
   await uploadLogs(services, cast, created, test)
   const saved: (Saved | null)[] = []
   for (const planned of test.analyses) saved.push(await saveAnalysis(services, cast, created.id, planned, wellIds))

@@ -2,6 +2,7 @@ import type { Services } from '../../../api/services.ts'
 import type { DemoReportedTest, ReportBasis } from '../records/types.ts'
 import type { UnitIds } from './geography.ts'
 import type { Cast } from './people.ts'
+import { publishTest } from './publish-test.ts'
 
 const origins = {
   'specific-capacity': 'specific-capacity',
@@ -26,15 +27,17 @@ export async function writeReportedTest(
   wellIds: Map<string, number>,
   unitIds: UnitIds,
 ) {
-  const { startLocal, zone, aquifer, thicknessM, thicknessBasis, visibility, source } = test
+  const { startLocal, zone, aquifer, thicknessM, thicknessBasis, source } = test
   const { id } = await services.pumpingTests.createReported(cast.steward, {
-    ...{ startLocal, zone, aquifer, thicknessM, thicknessBasis, visibility, source },
+    ...{ startLocal, zone, aquifer, thicknessM, thicknessBasis, source },
+    visibility: 'internal',
     wellId: wellIds.get(test.wellCode)!,
     intervalBasis: 'unknown',
     intervalTopM: null,
     intervalBottomM: null,
     units: [{ unitId: unitIds.get(test.unit)!, share: 1, basis: 'single-unit' }],
   })
+  await publishTest(services, cast, { id, rowVersion: 1 }, test)
   const known = { origin: origins[test.basis], observationWell: false, aquifer, source }
   const analysis = await services.analyses.report(cast.steward, id, { ...known, ...valuesOf(test) })
   await services.reviews.decide(cast.reviewer, analysis.id, {
