@@ -5,7 +5,7 @@ import type { Problem } from '#shared/contracts/problem.ts'
 import type { PumpingTest } from '#shared/contracts/pumping-tests.ts'
 import { analyse } from '#shared/hydraulics/catalogue.ts'
 import { useApp, type SignedIn } from '../../support/app.ts'
-import { makeMapping, makeRegion, saveAnalysis, upload } from '../../support/domain.ts'
+import { makeMapping, makeRegion, makeUnit, saveAnalysis, upload } from '../../support/domain.ts'
 import { logSpaced, makeTheisSeries } from '../../shared/hydraulics/make-inputs.ts'
 import { createTest, decide, makeSite, siteInput, submit, testWithReadings, type Site } from './support.ts'
 
@@ -241,6 +241,26 @@ describe('What was adopted', () => {
     const table = (await analyst.get(`/api/pumping-tests/${test.id}/adopted-values`)).body as AdoptedValueList
     const T = table.items.find(({ quantity }) => quantity === 'T')!
     expect(adoption).toMatchObject({ evidence: T.evidence, log10ErrorT: T.log10Error, log10ErrorS: null })
+  })
+
+  it('is what was proposed before, also where a composite test gives each unit a share', async () => {
+    const units = [
+      { unitId: site.unitId, share: 0.4, basis: 'flow-log' as const },
+      {
+        unitId: await makeUnit(tested, { name: 'Brannet Sandstone', depthOrder: 2 }),
+        share: 0.6,
+        basis: 'flow-log' as const,
+      },
+    ]
+    for (const input of [siteInput(site), siteInput(site, { units })]) {
+      const draft = await save(await testWithReadings(analyst, input))
+      const submitted = (await submit(analyst, draft).expect(200)).body as Analysis
+      const accepted = (await decide(reviewer, submitted, 'accepted').expect(200)).body as Analysis
+      expect(draft.adoption).toEqual(accepted.adoption)
+      expect(submitted.adoption).toEqual(accepted.adoption)
+      if (input.units.length > 1)
+        expect(draft.adoption).toMatchObject({ evidence: 'slight', reasons: [{ code: 'composite-share' }] })
+    }
   })
 
   it('stays when the value has left the regional table', async () => {
