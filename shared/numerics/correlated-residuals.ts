@@ -8,7 +8,13 @@ export interface CorrelatedCovariance {
   effectiveNumber: number
 }
 
-/** Grid of descriptions. Half of the weight beforehand lies on independent residuals. */
+/**
+ * Weight beforehand of independent residuals against that of all others together. With 3, the 95 % intervals of a fit to
+ * 80 readings hold the truth in 96 % for white noise and in 94 to 97 % for a first-order autoregression of 0.5 or 0.9;
+ * with 1, in 97 to 98 % for white noise (see the coverage bench).
+ */
+const WHITE_ODDS = 3
+/** Grid of descriptions. */
 const SHARES = [0.6, 0.9, 1]
 const REACH_RATIO = 2.5
 const MOST_REACHES = 12
@@ -32,7 +38,7 @@ interface Judged {
  */
 export function correlatedCovariance(series: ResidualSeries[], normalInverse: number[][]): CorrelatedCovariance {
   const noises = fadingNoises(series)
-  const white = judge(series, normalInverse, WHITE, Math.log(Math.max(1, noises.length)))
+  const white = judge(series, normalInverse, WHITE, Math.log(WHITE_ODDS * Math.max(1, noises.length)))
   const judged = [white, ...noises.map((noise) => judge(series, normalInverse, noise, 0))]
   const heaviest = judged.reduce((most, { logWeight }) => Math.max(most, logWeight), -Infinity)
   const weights = judged.map(({ logWeight }) => Math.exp(logWeight - heaviest))
