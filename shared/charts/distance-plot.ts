@@ -9,6 +9,7 @@ import type { Fit } from './fit-band.ts'
 import type { FitDrawing, Shade } from './fit-drawing.ts'
 import { residualUnit } from './fit-drawing.ts'
 import { lineMarks } from './line-marks.ts'
+import { drawsLine } from './plot-kinds.ts'
 import type { PlotWell, XY } from './plot-wells.ts'
 import type { PlotUnits } from './time-plot.ts'
 
@@ -87,10 +88,10 @@ function pointOf({ series, time_s, drawdown_m }: Reach, at_s: number, start_s: n
   return [{ wellId, label, role, points, readingCount: points.length, leftOut: [], derivative: [] }]
 }
 
-/** The line through the wells, drawn only for the method that compares distances. */
+/** The line through the wells, drawn only for methods that compare distances. */
 export function distanceDrawing(plot: DistancePlot, fit: Fit): FitDrawing | null {
   const { slope_m: slope, intercept_m: intercept } = fit.result.extras
-  if (fit.result.method !== 'distance-drawdown' || slope === undefined || intercept === undefined) return null
+  if (!drawsLine(fit.result.method, 'distance') || slope === undefined || intercept === undefined) return null
   const length_m = unitById(plot.units.length).toSI
   const y = (x: number) => (intercept + slope * Math.log10(x * length_m)) / length_m
   const line = [0, 1].map((share): XY => [valueAt(plot.x, share), y(valueAt(plot.x, share))])

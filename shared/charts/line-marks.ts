@@ -2,7 +2,7 @@ import { formatNumber } from '#shared/quantities/format.ts'
 import { unitById } from '#shared/quantities/units.ts'
 import type { Axis } from './axis.ts'
 import type { Fit } from './fit-band.ts'
-import { plotOfMethod, type PlotKind } from './plot-kinds.ts'
+import { drawsLine, type PlotKind } from './plot-kinds.ts'
 import type { XY } from './plot-wells.ts'
 
 /** Where a straight line meets zero, and its fall in one factor of ten. */
@@ -28,7 +28,7 @@ function abscissaOf({ kind, units }: MarkedPlot) {
 
 export function lineMarks(plot: MarkedPlot, { result: { extras, method } }: Fit): LineMarks | null {
   const { slope_m: slope, intercept_m: intercept } = extras
-  if (slope === undefined || intercept === undefined || plotOfMethod[method] !== plot.kind) return null
+  if (slope === undefined || intercept === undefined || !drawsLine(method, plot.kind)) return null
   const { toSI, zero } = abscissaOf(plot)
   const length = unitById(plot.units.length)
   const y = (x: number) => (intercept + slope * Math.log10(x * toSI)) / length.toSI

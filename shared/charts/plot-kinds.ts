@@ -1,5 +1,6 @@
 import type { AnalysisInputs } from '#shared/hydraulics/analysis.ts'
-import type { MethodId } from '#shared/hydraulics/catalogue.ts'
+import { methods, type MethodId } from '#shared/hydraulics/catalogue.ts'
+import type { Method } from '#shared/hydraulics/method.ts'
 import { rateHistory } from '#shared/hydraulics/rates.ts'
 
 /** The plots of a pumping test. */
@@ -12,7 +13,7 @@ interface PlotKindFacts {
   fits: (inputs: AnalysisInputs) => boolean
 }
 
-const FEWEST_DISTANCES = 3
+const FEWEST_DISTANCES = 2
 
 function stopped({ rates }: AnalysisInputs): boolean {
   return rates.some(({ rate_m3_s }) => rate_m3_s > 0) && rateHistory(rates).stop_s !== null
@@ -31,9 +32,23 @@ export const plotKinds: readonly PlotKindFacts[] = [
 ]
 
 /** The plot in which a method is a straight line, or is usually judged. */
-export const plotOfMethod: Record<MethodId, PlotKind> = {
-  'cooper-jacob': 'semi-log',
-  theis: 'log-log',
-  recovery: 'recovery',
-  'distance-drawdown': 'distance',
+export const plotOfMethod = Object.fromEntries(
+  Object.entries(methods).map(([id, method]) => [id, plotOf(method)]),
+) as Record<MethodId, PlotKind>
+
+function plotOf({ family, needs, options }: Method): PlotKind {
+  if (family === 'curve') return 'log-log'
+  if (needs.phase === 'recovery') return 'recovery'
+  return options.some((option) => option.kind === 'line' && option.abscissa === 'distance') ? 'distance' : 'semi-log'
 }
+
+const abscissas: Partial<Record<PlotKind, string>> = {
+  'semi-log': 'elapsed',
+  recovery: 'time-ratio',
+  distance: 'distance',
+}
+
+/** Whether the line of a method is a straight line of drawdown in this plot, to be marked and taken hold of. */
+export const drawsLine = (method: MethodId, kind: PlotKind): boolean =>
+  plotOfMethod[method] === kind &&
+  methods[method].options.some((option) => option.kind === 'line' && option.abscissa === abscissas[kind])

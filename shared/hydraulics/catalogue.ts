@@ -16,7 +16,15 @@ import type { Method } from './method.ts'
 import { conductivityEstimate } from './parameter-estimate.ts'
 import { rateHistory } from './rates.ts'
 import { recovery } from './recovery.ts'
+import { recoveryEquivalentTime } from './recovery-equivalent-time.ts'
 import { chosenSeries } from './selection.ts'
+import { largeDiameter, largeDiameterSkin } from './solutions/large-diameter.ts'
+import { leakyPartialPenetration } from './solutions/leaky-partial-penetration.ts'
+import { leakyStorage } from './solutions/leaky-storage.ts'
+import { leaky } from './solutions/leaky.ts'
+import { partialPenetration, partialPenetrationIsotropic } from './solutions/partial-penetration.ts'
+import { unconfined } from './solutions/unconfined.ts'
+import { steadyState } from './steady-state.ts'
 import { theis } from './theis.ts'
 import { radiusOf } from './wells.ts'
 
@@ -25,7 +33,17 @@ export const methods = {
   'cooper-jacob': cooperJacob,
   'distance-drawdown': distanceDrawdown,
   theis: curveMethod(theis),
+  leaky: curveMethod(leaky),
+  'leaky-storage': curveMethod(leakyStorage),
+  unconfined: curveMethod(unconfined),
+  'partial-penetration': curveMethod(partialPenetration),
+  'partial-penetration-isotropic': curveMethod(partialPenetrationIsotropic),
+  'leaky-partial-penetration': curveMethod(leakyPartialPenetration),
+  'large-diameter': curveMethod(largeDiameter),
+  'large-diameter-skin': curveMethod(largeDiameterSkin),
   recovery,
+  'recovery-equivalent-time': recoveryEquivalentTime,
+  'steady-state': steadyState,
 } as const satisfies Record<string, Method>
 
 export type MethodId = keyof typeof methods

@@ -144,6 +144,8 @@ export const cooperJacob: Method = {
   label: 'Time–drawdown line (Cooper–Jacob)',
   version: 1,
   source: 'Cooper & Jacob 1946; ASTM D4105',
+  family: 'line',
+  aquifers: ['confined'],
   needs: { phase: 'pumping', wells: { least: 1, most: 1, roles: ['pumped', 'observation'] } },
   unknowns: [transmissivity, storativity],
   options: [

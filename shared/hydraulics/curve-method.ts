@@ -38,15 +38,21 @@ import { drawnDrawdown, thinningFindings, thinningGuard } from './unconfined.ts'
 
 /** A catalogue method that fits one analytical solution to any number of wells jointly, under any rate history. */
 export function curveMethod(solution: Solution): Method {
-  const { id, label, version, source, unknowns, validity } = solution
+  const { id, label, version, source, aquifers, known, unknowns, validity } = solution
   return {
     id,
     label,
     version,
     source,
+    family: 'curve',
+    aquifers,
     unknowns,
     validity,
-    needs: { phase: 'pumping', wells: { least: 1, most: null, roles: ['pumped', 'observation'] } },
+    needs: {
+      phase: 'pumping',
+      wells: { least: 1, most: null, roles: ['pumped', 'observation'] },
+      ...(known ? { known } : {}),
+    },
     options: curveOptions,
     run: (inputs, options) => run(bounded(solution, options), inputs, options),
     curve: (inputs, options, outcome, times_s) => curve(bounded(solution, options), inputs, options, outcome, times_s),
@@ -65,6 +71,7 @@ const curveOptions: Method['options'] = [
     default: 'drawdown',
   },
   { name: 'phase', label: 'Readings fitted', kind: 'choice', values: ['pumping', 'all'], default: 'pumping' },
+  { name: 'boundaries', label: 'Streams and barriers', kind: 'boundaries', most: 2 },
   sharedOptions.thinning,
   sharedOptions.afterDrainage,
   sharedOptions.readingsPerCycle,

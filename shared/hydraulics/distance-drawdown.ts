@@ -157,6 +157,8 @@ export const distanceDrawdown: Method = {
   label: 'Distance–drawdown line (Cooper–Jacob)',
   version: 1,
   source: 'Cooper & Jacob 1946',
+  family: 'line',
+  aquifers: ['confined'],
   needs: { phase: 'pumping', wells: { least: 3, most: null, roles: ['observation'] } },
   unknowns: [transmissivity, storativity],
   options: [

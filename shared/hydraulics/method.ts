@@ -1,4 +1,5 @@
 import type { AnalysisInputs, AnalysisOptions, FittedCurve, MethodOutcome } from './analysis.ts'
+import type { Requirement } from './requirements.ts'
 
 /** A quantity that a method finds. Bounds are those of the search, far outside what may be adopted. */
 export interface Unknown {
@@ -23,6 +24,7 @@ export type OptionSpec = OptionBase &
     | { kind: 'choice'; values: readonly string[]; default: string }
     | { kind: 'flag'; default: boolean }
     | { kind: 'answer' }
+    | { kind: 'boundaries'; most: number }
     | { kind: 'number'; dimension: 'time' | 'count'; low: number; high: number; default: number | null }
   )
 
@@ -33,14 +35,22 @@ export interface ValidityRule {
   source: string
 }
 
+/** How a method reads a test, for menus. */
+export type Family = 'line' | 'curve' | 'recovery' | 'steady'
+
 export interface Method {
   id: string
   label: string
   version: number
   source: string
+  family: Family
+  /** Kinds of aquifer that it is made for. */
+  aquifers: readonly AnalysisInputs['aquifer'][]
   needs: {
     phase: 'pumping' | 'recovery'
     wells: { least: number; most: number | null; roles: readonly ('pumped' | 'observation')[] }
+    /** What has to be known of aquifer and wells beside the readings. */
+    known?: readonly Requirement[]
   }
   unknowns: readonly Unknown[]
   options: readonly OptionSpec[]

@@ -148,6 +148,8 @@ export const recoveryEquivalentTime: Method = {
   label: 'Recovery by equivalent time (Agarwal)',
   version: 1,
   source: 'Agarwal 1980; Cooper & Jacob 1946',
+  family: 'recovery',
+  aquifers: ['confined'],
   needs: { phase: 'recovery', wells: { least: 1, most: 1, roles: ['pumped', 'observation'] } },
   unknowns: [transmissivity, storativity],
   options: [

@@ -121,6 +121,8 @@ export const recovery: Method = {
   label: 'Recovery line (Theis)',
   version: 1,
   source: 'Theis 1935; ASTM D5269',
+  family: 'recovery',
+  aquifers: ['confined'],
   needs: { phase: 'recovery', wells: { least: 1, most: 1, roles: ['pumped', 'observation'] } },
   unknowns: [transmissivity],
   options: [

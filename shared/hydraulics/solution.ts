@@ -2,6 +2,7 @@ import type { AnalysisInputs, Finding, StorageClass } from './analysis.ts'
 import type { Unknown, ValidityRule } from './method.ts'
 import type { ResponsePlace } from './place.ts'
 import type { RateHistory } from './rates.ts'
+import type { Requirement } from './requirements.ts'
 import type { Selected } from './selection.ts'
 import type { Respond } from './superposition.ts'
 
@@ -23,6 +24,8 @@ export interface Solution {
   source: string
   /** Kinds of aquifer that it describes; for any other a caution says so. */
   aquifers: readonly AnalysisInputs['aquifer'][]
+  /** What has to be known of aquifer and wells beside the readings. */
+  known?: readonly Requirement[]
   /** The storage that may be adopted, with its class; left out: S, classed by the aquifer and the length of the test. */
   storage?: { unknown: string; storageClass: StorageClass }
   /** In the order in which `respond` takes them; the first two are T and S. */

@@ -135,6 +135,8 @@ export const steadyState: Method = {
   label: 'Steady state (Thiem)',
   version: 1,
   source: 'Thiem 1906',
+  family: 'steady',
+  aquifers: ['confined', 'leaky', 'unconfined'],
   needs: { phase: 'pumping', wells: { least: FEWEST_WELLS, most: null, roles: ['observation'] } },
   unknowns: [transmissivity],
   options: [

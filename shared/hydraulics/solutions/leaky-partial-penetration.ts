@@ -45,6 +45,7 @@ export const leakyPartialPenetration: Solution = {
   version: 1,
   source: 'Hantush 1964',
   aquifers: ['leaky'],
+  known: ['thickness', 'short-screen'],
   unknowns: [transmissivity, storativity, leakageFactor, anisotropyRatio],
   respond: leakyPartialPenetrationRespond,
   guess: (readings) =>

@@ -80,6 +80,7 @@ const shared = {
   version: 1,
   source: 'Hantush 1961',
   aquifers: ['confined'],
+  known: ['thickness', 'short-screen'],
   respond: partialPenetrationRespond,
   validity: [
     ...theis.validity,

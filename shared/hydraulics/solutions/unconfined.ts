@@ -144,6 +144,7 @@ export const unconfined: Solution = {
   version: 1,
   source: 'Neuman 1974; Moench 1997; ASTM D5920',
   aquifers: ['unconfined'],
+  known: ['saturated-thickness'],
   storage: { unknown: 'Sy', storageClass: 'specific-yield' },
   unknowns: [transmissivity, storativity, specificYield, anisotropy],
   respond,

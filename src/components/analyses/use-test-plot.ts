@@ -3,7 +3,7 @@ import type { Fit } from '#shared/charts/fit-band.ts'
 import { distanceDrawing, distancePlot } from '#shared/charts/distance-plot.ts'
 import { fitDrawing, type FitDrawing } from '#shared/charts/fit-drawing.ts'
 import { timePlot } from '#shared/charts/time-plot.ts'
-import { plotKinds } from '#shared/charts/plot-kinds.ts'
+import { drawsLine, plotKinds } from '#shared/charts/plot-kinds.ts'
 import type { TestPlot } from '#shared/charts/test-chart.ts'
 import { AnalysisError } from '#shared/hydraulics/analysis.ts'
 import { useUnits } from '../../composables/useUnits.ts'
@@ -31,7 +31,7 @@ export function useTestPlot(smoothing: Ref<number>) {
   /** The wells of the analysis; all of them without one, or where wells are compared by an analysis of a single one. */
   const wellIds = sameText(() => {
     const all = snapshot.value.inputs.series.map(({ wellId }) => wellId)
-    const compares = present.value?.method === 'distance-drawdown'
+    const compares = present.value && drawsLine(present.value.method, 'distance')
     return shownKind.value === 'distance' && !compares ? all : (present.value?.options.wellIds ?? all)
   })
   const history = sameText(() => ({
