@@ -37,6 +37,7 @@ export function reviewsRoutes({ reviews }: Services): Route[] {
         params: z.object({ id: idInPath }),
         body: reviewInput,
         response: analysis,
+        limit: 'heavy',
       },
       ({ viewer, params: { id }, body }) => reviews.decide(viewer, id, body),
     ),
