@@ -1,12 +1,20 @@
 import { z } from 'zod'
 import { methods } from '../hydraulics/catalogue.ts'
-import { analysisInputs, analysisOptions, analysisResult, finding, storageClass } from './analysis-result.ts'
+import {
+  analysisInputs,
+  analysisOptions,
+  analysisResult,
+  finding,
+  otherEstimate,
+  storageClass,
+} from './analysis-result.ts'
 import { instant, recordId, rowVersion } from './common.ts'
+import { anyOptions, kindMethodIds, kindSchemas, ownMethod } from './kind-analyses.ts'
 import { evidence } from './kinds.ts'
 
 /** Registering a method in the hydraulics catalogue is all that is needed for it to be accepted here. */
 export const fittedMethod = z.enum(Object.keys(methods) as [keyof typeof methods])
-export const analysisMethod = z.union([fittedMethod, z.literal('reported')])
+export const analysisMethod = z.union([fittedMethod, ownMethod, z.literal('reported')])
 export const analysisState = z.enum(['draft', 'submitted', 'accepted', 'returned', 'withdrawn'])
 export { evidence }
 
@@ -15,18 +23,35 @@ export const expectedResult = z.object({
   methodVersion: z.int(),
   T: z.number().nullable(),
   S: z.number().nullable(),
+  /** Where the test gives conductivity itself, as a slug test does. */
+  K: z.number().nullable().optional(),
+  /** What a test without T, S or K finds, such as the losses of a well, by id. */
+  others: z.record(z.string(), z.number()).optional(),
 })
 
-export const analysisInput = z.object({
-  method: fittedMethod,
-  options: analysisOptions,
+const calculated = z.object({
   label: z.string().trim().max(120).nullable(),
   expected: expectedResult,
   inputsSha256: z.string().length(64),
 })
+
+const byKind = <Extra extends z.ZodRawShape>(extra: Extra) =>
+  z.discriminatedUnion('method', [
+    calculated.extend({ method: fittedMethod, options: analysisOptions, ...extra }),
+    calculated.extend({ method: kindMethodIds.slug, options: kindSchemas.slug.options, ...extra }),
+    calculated.extend({ method: kindMethodIds.step, options: kindSchemas.step.options, ...extra }),
+    calculated.extend({
+      method: kindMethodIds['specific-capacity'],
+      options: kindSchemas['specific-capacity'].options,
+      ...extra,
+    }),
+  ])
+
+/** The method tells the kind of test, and with it which options there are. */
+export const analysisInput = byKind({})
 export type AnalysisInput = z.infer<typeof analysisInput>
 
-export const analysisUpdate = analysisInput.extend({ rowVersion })
+export const analysisUpdate = byKind({ rowVersion })
 export type AnalysisUpdate = z.infer<typeof analysisUpdate>
 
 /** Values outside the usual range are stored only when the analyst has confirmed each question. */
@@ -49,7 +74,10 @@ export const review = z.object({
 /** What adopting the analysis would write, or wrote, into the regional table. */
 export const adoption = z.object({
   evidence,
-  log10ErrorT: z.number(),
+  /** Null where the test gives K and the thickness is not known. */
+  log10ErrorT: z.number().nullable(),
+  /** Where K itself was measured. */
+  log10ErrorK: z.number().nullable().optional(),
   log10ErrorS: z.number().nullable(),
   storageUsable: z.boolean(),
   reasons: z.array(finding),
@@ -61,7 +89,7 @@ export const analysis = z.object({
   method: analysisMethod,
   methodVersion: z.int(),
   state: analysisState,
-  options: analysisOptions.nullable(),
+  options: anyOptions.nullable(),
   result: analysisResult,
   label: z.string().nullable(),
   rationale: z.string().nullable(),
@@ -86,8 +114,7 @@ export type Analysis = z.infer<typeof analysis>
 export const analysisList = z.object({ items: z.array(analysis) })
 
 /** Everything the workbench calculates with: the same snapshot that the server uses, and its hash. */
-export const workbenchInputs = z.object({
-  inputs: analysisInputs,
+const workbenchParts = z.object({
   sha256: z.string(),
   /** Per series: seq of each reading, and its flags, so that readings can be left out with a reason. */
   readings: z.array(
@@ -103,7 +130,35 @@ export const workbenchInputs = z.object({
     z.object({ wellId: z.string(), code: z.string(), params: z.record(z.string(), z.union([z.string(), z.number()])) }),
   ),
 })
+
+export const workbenchInputs = workbenchParts.extend({ inputs: analysisInputs })
 export type WorkbenchInputs = z.infer<typeof workbenchInputs>
+
+/** The same for a test of a kind of its own. */
+export const kindWorkbenchInputs = z.discriminatedUnion('kind', [
+  workbenchParts.extend({ kind: z.literal('slug'), inputs: kindSchemas.slug.inputs }),
+  workbenchParts.extend({ kind: z.literal('step'), inputs: kindSchemas.step.inputs }),
+  workbenchParts.extend({
+    kind: z.literal('specific-capacity'),
+    inputs: kindSchemas['specific-capacity'].inputs,
+  }),
+])
+export type KindWorkbenchInputs = z.infer<typeof kindWorkbenchInputs>
+export const anyWorkbenchInputs = z.union([kindWorkbenchInputs, workbenchInputs])
+
+/** The losses of a pumped well by an accepted step-drawdown test: s = B·Q + C·Q^P, in SI. */
+export const wellLoss = z.object({
+  analysisId: recordId,
+  pumpingTestId: recordId,
+  method: ownMethod,
+  startLocal: z.string(),
+  startPrecision: z.enum(['instant', 'day', 'year']),
+  losses: z.array(otherEstimate),
+  rates: z.object({ low_m3_s: z.number(), high_m3_s: z.number() }),
+  inputsChanged: z.boolean(),
+})
+export type WellLoss = z.infer<typeof wellLoss>
+export const wellLossList = z.object({ items: z.array(wellLoss) })
 
 export const reviewInput = z
   .object({

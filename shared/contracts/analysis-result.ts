@@ -11,7 +11,7 @@ export const parameterEstimate = z.object({
   determined: z.boolean(),
 })
 
-const otherEstimate = z.object({
+export const otherEstimate = z.object({
   id: z.string(),
   value: z.number(),
   low: z.number(),

@@ -1,8 +1,9 @@
 import { z } from 'zod'
 import { unitsOf } from '../quantities/units.ts'
 import { idInPath, instant, latitude, listOf, longitude, paging, recordId, rowVersion } from './common.ts'
+import { checkKind, testDetails } from './test-details.ts'
 
-export const testKind = z.enum(['constant-rate', 'reported'])
+export const testKind = z.enum(['constant-rate', 'step', 'slug', 'specific-capacity', 'reported'])
 export const aquiferKind = z.enum(['confined', 'leaky', 'unconfined'])
 export const thicknessBasis = z.enum(['aquifer', 'screen', 'saturated', 'unknown'])
 export const intervalBasis = z.enum(['screens', 'packers', 'open-hole', 'unknown'])
@@ -55,7 +56,7 @@ export const unitShareInput = z.object({ unitId: recordId, share: z.number().min
 const rising = (steps: { startS: number }[]) => steps.every((step, i) => i === 0 || step.startS > steps[i - 1]!.startS)
 const total = (units: { share: number }[]) => units.reduce((sum, { share }) => sum + share, 0)
 
-export const pumpingTestInput = z.object({
+const plainInput = z.object({
   wellId: recordId,
   /** Wall-clock time in `zone`; the day or the year alone where no more is known. */
   startLocal: z.string().regex(/^\d{4}(-\d{2}-\d{2}(T\d{2}:\d{2}(:\d{2})?)?)?$/, 'pumping-test/start-format'),
@@ -75,16 +76,21 @@ export const pumpingTestInput = z.object({
   /** Relative standard deviation. */
   thicknessError: z.number().min(0).max(2).default(0.1),
   rateError: z.number().min(0).max(1).default(0.05),
-  rateSteps: z.array(rateStepInput).min(1).max(2_000).refine(rising, 'pumping-test/steps-order'),
+  /** Pumping and its stop; none in a slug test. */
+  rateSteps: z.array(rateStepInput).max(2_000).refine(rising, 'pumping-test/steps-order'),
   observationWells: z.array(observationWellInput).max(60),
   /** Depth to water in the pumped well before pumping, m. Null: the mean of the readings before pumping. */
   staticLevelM: staticLevel,
   conditions: z.string().trim().max(5_000).nullable(),
   visibility: visibility.default('internal'),
+  /** What a kind of its own needs; left out or null: a test at a constant rate. The kind of a test stays. */
+  details: testDetails.nullable().optional(),
 })
+
+export const pumpingTestInput = plainInput.superRefine(checkKind)
 export type PumpingTestInput = z.infer<typeof pumpingTestInput>
 
-export const pumpingTestUpdate = pumpingTestInput.extend({ rowVersion })
+export const pumpingTestUpdate = plainInput.extend({ rowVersion }).superRefine(checkKind)
 export type PumpingTestUpdate = z.infer<typeof pumpingTestUpdate>
 
 const testWell = z.object({
@@ -138,6 +144,7 @@ export const pumpingTest = z.object({
   ),
   wells: z.array(testWell),
   series: z.array(seriesSummary),
+  details: testDetails.nullable(),
   conditions: z.string().nullable(),
   source: z.string().nullable(),
   visibility,

@@ -5,10 +5,13 @@ import {
   analysisResult,
   type StoredResult,
 } from '#shared/contracts/analysis-result.ts'
+import { parseInputs } from '#shared/contracts/kind-analyses.ts'
 import { agreementOf } from '#shared/hydraulics/agreement.ts'
 import type { AnalysisResult } from '#shared/hydraulics/analysis.ts'
+import { kindOfMethod } from '#shared/hydraulics/any-kind.ts'
 import { evidenceFacts } from '#shared/hydraulics/evidence-facts.ts'
 import { evidenceOf, type EvidenceFacts } from '#shared/hydraulics/evidence.ts'
+import type { KindShapes } from '#shared/hydraulics/kinds.ts'
 import type { NewValue } from '../adopted-values/adopted-values.service.ts'
 import { localStart } from '../pumping-tests/start-time.ts'
 import type { PumpingTestRow, TestParts } from '../pumping-tests/view.ts'
@@ -24,6 +27,7 @@ const resultOf = (row: Weighed): StoredResult => analysisResult.parse(row.result
 
 function compared(row: Weighed) {
   const { T } = resultOf(row)
+  if (kindOfMethod(row.method) !== 'constant-rate') return null
   const { wellIds } = analysisOptions.parse(row.options)
   const phase = row.method === 'recovery' ? ('recovery' as const) : ('pumping' as const)
   return T && { id: String(row.id), label: '', T, wellIds, phase, usesDistances: false }
@@ -44,6 +48,8 @@ function recoveryAgrees(row: Weighed, siblings: Weighed[]): boolean {
 
 function factsOf(row: Weighed, inputs: unknown, siblings: Weighed[]): EvidenceFacts {
   const result = resultOf(row)
+  const kind = kindOfMethod(row.method)
+  if (kind === 'slug' || kind === 'specific-capacity') return kindFacts(kind, row.method, inputs, result)
   if (row.method !== 'reported') {
     const agrees = { recoveryAgrees: recoveryAgrees(row, siblings) }
     return evidenceFacts(
@@ -54,6 +60,17 @@ function factsOf(row: Weighed, inputs: unknown, siblings: Weighed[]): EvidenceFa
     )
   }
   return reportedFacts(reportedInputs.parse(inputs), result.S ? result.storageClass : null)
+}
+
+const kindOrigins = { slug: 'slug-test', 'specific-capacity': 'specific-capacity' } as const
+
+/** Tests in a single well whose evidence follows from their kind, and from their own error where that is larger. */
+function kindFacts(kind: keyof typeof kindOrigins, method: string, inputs: unknown, result: StoredResult) {
+  const { aquifer } = parseInputs(method, inputs) as KindShapes[typeof kind]['inputs']
+  const storageClass = result.S ? result.storageClass : null
+  const facts = reportedFacts({ origin: kindOrigins[kind], observationWell: false, aquifer }, storageClass)
+  const measured = kind === 'slug' ? result.K : result.T
+  return { ...facts, ownLogSdT: measured?.logSd ?? null, ownLogSdS: result.S?.logSd ?? null }
 }
 
 const asReasons = (codes: (string | null | undefined)[]): NonNullable<Analysis['adoption']>['reasons'] =>
@@ -68,13 +85,16 @@ type Told = Pick<NewValue, 'quantity' | 'evidence' | 'evidenceReason' | 'log10Er
 export function adoptionOf(rows: Told[]): Analysis['adoption'] {
   const T = rows.find(({ quantity }) => quantity === 'T')
   const S = rows.find(({ quantity }) => quantity === 'S')
-  if (!T) return null
+  const K = rows.find(({ quantity }) => quantity === 'K')
+  const first = T ?? K
+  if (!first) return null
   return {
-    evidence: T.evidence,
-    log10ErrorT: T.log10Error,
+    evidence: first.evidence,
+    log10ErrorT: T?.log10Error ?? null,
+    log10ErrorK: K?.log10Error ?? null,
     log10ErrorS: S?.log10Error ?? null,
     storageUsable: S?.usable ?? false,
-    reasons: asReasons([T.evidenceReason, S?.evidenceReason]),
+    reasons: asReasons([first.evidenceReason, S?.evidenceReason]),
   }
 }
 
@@ -107,7 +127,7 @@ export function adoptedRows(
   { found: { test }, parts: { units } }: AdoptedTest,
 ): NewValue[] {
   const { T, S, K, storageClass } = resultOf(row)
-  if (!T) return []
+  if (!T && !(K && kindOfMethod(row.method) === 'slug')) return []
   const facts = factsOf(row, inputs, siblings)
   const evidence = evidenceOf(facts)
   const common = {
@@ -119,7 +139,7 @@ export function adoptedRows(
     thicknessBasis: test.thicknessBasis,
     testYear: Number(localStart(test.startAt, test.zone, 'year')),
   }
-  if (units.length > 1) {
+  if (T && units.length > 1) {
     const log10Error = Math.max(leastCompositeError, evidence.logErrorT)
     return units.map(({ unitId, share }) => ({
       ...common,
@@ -137,16 +157,11 @@ export function adoptedRows(
   // A slug test measures K, and its T is derived with the thickness; a pumping test the other way round.
   const measuresK = facts.origin === 'slug-test'
   const grade = { evidence: evidence.evidence, evidenceReason: evidence.reason }
-  const rows: NewValue[] = [
-    {
-      ...common,
-      unitId,
-      quantity: 'T',
-      log10Value: Math.log10(T.value),
-      log10Error: measuresK ? withThickness : evidence.logErrorT,
-      ...grade,
-    },
-  ]
+  const rows: NewValue[] = []
+  if (T) {
+    const log10Error = measuresK ? withThickness : evidence.logErrorT
+    rows.push({ ...common, unitId, quantity: 'T', log10Value: Math.log10(T.value), log10Error, ...grade })
+  }
   if (S && storageClass && evidence.storage) {
     const { logError: log10Error, usable, evidence: storageGrade, reason: evidenceReason } = evidence.storage
     rows.push({

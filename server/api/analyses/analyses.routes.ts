@@ -4,9 +4,10 @@ import {
   analysisInput,
   analysisList,
   analysisUpdate,
+  anyWorkbenchInputs,
   submissionInput,
   takingBack,
-  workbenchInputs,
+  wellLossList,
 } from '#shared/contracts/analyses.ts'
 import { idInPath, nothing } from '#shared/contracts/common.ts'
 import type { Deps } from '../../deps.ts'
@@ -27,7 +28,7 @@ export function analysesRoutes({ analyses }: Services, deps: Deps): Route[] {
         action: 'analyses/read',
         summary: 'What analyses of a test are calculated from, with its hash',
         params,
-        response: workbenchInputs,
+        response: anyWorkbenchInputs,
       },
       ({ viewer, params: { id } }) => analyses.workbench(viewer, id),
     ),
@@ -55,6 +56,17 @@ export function analysesRoutes({ analyses }: Services, deps: Deps): Route[] {
         limit: 'heavy',
       },
       (call) => analyses.create(call.viewer, call.params.id, call.body, onceOf(deps, call)),
+    ),
+    route(
+      {
+        method: 'get',
+        path: '/api/wells/:id/losses',
+        action: 'analyses/read',
+        summary: 'Losses of a well by its accepted step-drawdown tests',
+        params,
+        response: wellLossList,
+      },
+      ({ viewer, params: { id } }) => analyses.wellLosses(viewer, id),
     ),
     route(
       { method: 'get', path: one, action: 'analyses/read', summary: 'An analysis', params, response: analysis },

@@ -1,6 +1,8 @@
 import { createHash } from 'node:crypto'
-import type { AnalysisInput, AnalysisUpdate } from '#shared/contracts/analyses.ts'
+import type { z } from 'zod'
+import type { AnalysisInput, AnalysisUpdate, anyWorkbenchInputs } from '#shared/contracts/analyses.ts'
 import type { Viewer } from '#shared/contracts/permissions.ts'
+import { kindOfMethod } from '#shared/hydraulics/any-kind.ts'
 import { evidenceOf } from '#shared/hydraulics/evidence.ts'
 import { limitRules } from '#shared/hydraulics/limits.ts'
 import type { Executor } from '../../db/client.ts'
@@ -19,6 +21,7 @@ import type { createInputsService } from './inputs.service.ts'
 import { checkDraft, lockDraft } from './lock-draft.ts'
 import { readInputs } from './packed-inputs.repository.ts'
 import { reportedFacts, reportedResult, type ReportedValue } from './reported.ts'
+import { listStepAnalyses, wellLossView } from './well-losses.repository.ts'
 import { createSubmissions } from './submissions.ts'
 import { analysisView, type Surroundings } from './view.ts'
 import { withoutHiddenWells } from './without-hidden-wells.ts'
@@ -73,6 +76,7 @@ export function createAnalysesService(deps: Deps, inputs: ReturnType<typeof crea
   async function compute(testId: number, input: AnalysisInput) {
     const snapshot = await inputs.snapshot(db, everything, testId)
     if (snapshot.sha256 !== input.inputsSha256) throw new AppError('analysis/inputs-changed')
+    if (kindOfMethod(input.method) !== snapshot.kind) throw new AppError('analysis/wrong-kind')
     const kept = { ...snapshot.inputs, setting: snapshot.setting }
     const { result, packedInputs } = await calculate(workers, kept, input)
     checkExpected(result, input.expected)
@@ -109,8 +113,10 @@ export function createAnalysesService(deps: Deps, inputs: ReturnType<typeof crea
     isInUse: repository.isInUse,
 
     async workbench(viewer: Viewer, testId: number) {
-      const { inputs: built, sha256, readings, problems } = await inputs.snapshot(db, viewer, testId)
-      return { inputs: built, sha256, readings, problems }
+      const { kind, inputs: built, sha256, readings, problems } = await inputs.snapshot(db, viewer, testId)
+      const shown = { inputs: built, sha256, readings, problems }
+      // The kind and its inputs go together, which taking them apart hides.
+      return (kind === 'constant-rate' ? shown : { kind, ...shown }) as z.input<typeof anyWorkbenchInputs>
     },
 
     async list(viewer: Viewer, testId: number) {
@@ -239,6 +245,11 @@ export function createAnalysesService(deps: Deps, inputs: ReturnType<typeof crea
     },
 
     testsOfWell: repository.analysedTestsOf,
+
+    /** Losses of a well by its accepted step-drawdown tests that the viewer may see, newest test first. */
+    wellLosses: async (viewer: Viewer, wellId: number) => ({
+      items: (await listStepAnalyses(db, viewer, wellId)).map(wellLossView),
+    }),
 
     /** The last of its values left the regional table: nothing rests on it any more. */
     withdraw: (executor: Executor, id: number) => repository.setWithdrawn(executor, id),

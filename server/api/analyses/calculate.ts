@@ -1,6 +1,6 @@
 import type { AnalysisInput } from '#shared/contracts/analyses.ts'
-import { analysisResult } from '#shared/contracts/analysis-result.ts'
-import type { AnalysisInputs, AnalysisResult } from '#shared/hydraulics/analysis.ts'
+import { analysisResult, type StoredResult } from '#shared/contracts/analysis-result.ts'
+import type { AnyInputs, AnyResult } from '#shared/hydraulics/any-kind.ts'
 import { defaultUnitSystemId, unitSystemById } from '#shared/quantities/systems.ts'
 import { analysisErrorText } from '#shared/words/findings.ts'
 import { AppError } from '../../errors.ts'
@@ -45,7 +45,7 @@ const refusal = ({ code, params }: AnalysisRefusal) =>
   })
 
 /** Readings far from anything a well can do: numbers that overflow are no result, and could not be stored. */
-function checkFinite(result: AnalysisResult): AnalysisResult {
+function checkFinite(result: AnyResult): AnyResult {
   if (!analysisResult.safeParse(result).success) throw new AppError('analysis/not-finite')
   return result
 }
@@ -57,10 +57,10 @@ function checkFinite(result: AnalysisResult): AnalysisResult {
  */
 export async function calculate(
   workers: Workers,
-  inputs: AnalysisInputs & { setting: Setting },
+  inputs: AnyInputs & { setting: Setting },
   { method, options }: Pick<AnalysisInput, 'method' | 'options'>,
   seconds = mostSeconds,
-): Promise<{ result: AnalysisResult; packedInputs: Uint8Array }> {
+): Promise<{ result: AnyResult; packedInputs: Uint8Array }> {
   const outcome = await onThread<AnalysedAndPacked>(workers, 'analyse', { inputs, method, options }, seconds)
   if (!outcome.ok) throw refusal(outcome)
   return { result: checkFinite(outcome.result), packedInputs: outcome.packedInputs }
@@ -69,16 +69,31 @@ export async function calculate(
 const differs = (a: number | null, b: number | null) =>
   a === null || b === null ? a !== b : !(Math.abs(a - b) <= tolerance * Math.abs(b))
 
+/** What a page tells of a result, or a stored result of itself. */
+const expectedOf = ({ methodVersion, T, S, K, others = [] }: StoredResult): AnalysisInput['expected'] => ({
+  methodVersion,
+  T: T?.value ?? null,
+  S: S?.value ?? null,
+  K: K?.value ?? null,
+  others: Object.fromEntries(others.map(({ id, value }) => [id, value])),
+})
+
 /**
  * The server stores its own result only, and only when the page showed the same.
  * @throws AppError when the page calculated with another version of the method, or to another number.
  */
-export function checkExpected(result: AnalysisResult, expected: AnalysisInput['expected']): void {
+export function checkExpected(result: AnyResult, expected: AnalysisInput['expected']): void {
   if (expected.methodVersion !== result.methodVersion) throw new AppError('analysis/method-version')
   if (differs(expected.T, result.T?.value ?? null))
     throw new AppError('analysis/result-differs', { quantity: 'transmissivity' })
   if (differs(expected.S, result.S?.value ?? null))
     throw new AppError('analysis/result-differs', { quantity: 'storativity' })
+  if (expected.K !== undefined && differs(expected.K, result.K?.value ?? null))
+    throw new AppError('analysis/result-differs', { quantity: 'hydraulic conductivity' })
+  const others = new Map(result.others?.map(({ id, value }) => [id, value]))
+  for (const [id, value] of Object.entries(expected.others ?? {})) {
+    if (differs(value, others.get(id) ?? null)) throw new AppError('analysis/result-differs', { quantity: id })
+  }
 }
 
 /**
@@ -91,9 +106,9 @@ export async function checkRepeats(
   packedInputs: Uint8Array,
   seconds = mostSeconds,
 ): Promise<void> {
-  const { methodVersion, T, S } = analysisResult.parse(result)
+  const before = analysisResult.parse(result)
   if (method === 'reported') return
   const again = await onThread<Analysed>(workers, 'repeat-analysis', { packedInputs, method, options }, seconds)
   if (!again.ok) throw refusal(again)
-  checkExpected(checkFinite(again.result), { methodVersion, T: T?.value ?? null, S: S?.value ?? null })
+  checkExpected(checkFinite(again.result), expectedOf(before))
 }

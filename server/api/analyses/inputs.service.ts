@@ -4,10 +4,11 @@ import type { createPumpingTestsService } from '../pumping-tests/pumping-tests.s
 import { openAt } from '../pumping-tests/tested-interval.ts'
 import type { createStreamsService } from '../streams/streams.service.ts'
 import type { WellsService } from '../wells/wells.service.ts'
-import { buildInputs, type BuiltInputs } from './build-inputs.ts'
+import { buildInputs, type BuiltInputs, type InputParts } from './build-inputs.ts'
 import { listEdits, listReadings } from './inputs.repository.ts'
+import { buildKindInputs, detailsOf, type BuiltKind } from './kind-inputs.ts'
 import type { Construction } from './placement.ts'
-import { settingOf, sha256Of, type Setting } from './setting.ts'
+import { settingOf, sha256Of, sha256OfKind, type Setting } from './setting.ts'
 
 export interface InputsNeeds {
   pumpingTests: Pick<ReturnType<typeof createPumpingTestsService>, 'whole' | 'maySee' | 'hold'>
@@ -17,10 +18,24 @@ export interface InputsNeeds {
 
 type WholeTest = Awaited<ReturnType<InputsNeeds['pumpingTests']['whole']>>
 
-export interface Snapshot extends BuiltInputs {
+interface Surroundings {
   setting: Setting
   sha256: string
   test: WholeTest
+}
+
+/** Inputs by the kind of the test; a reported test is as one at a constant rate without readings. */
+export type Snapshot = ((BuiltInputs & { kind: 'constant-rate' }) | BuiltKind) & Surroundings
+
+function snapshotOf(parts: InputParts, test: WholeTest): Snapshot {
+  const setting = settingOf(test)
+  const details = detailsOf(parts.test)
+  if (details) {
+    const built = buildKindInputs(parts, details)
+    return { ...built, setting, sha256: sha256OfKind(built.kind, built.inputs, setting), test }
+  }
+  const built = buildInputs(parts)
+  return { ...built, kind: 'constant-rate', setting, sha256: sha256Of(built.inputs, setting), test }
 }
 
 /** What analyses of a test are made from, as the viewer sees the test. */
@@ -57,16 +72,15 @@ export function createInputsService({ pumpingTests, streams, wells: wellsService
       const pumped = wells.find(({ row }) => row.role === 'pumped')
       const unitIds = units.map(({ unitId }) => unitId)
       const stream = pumped ? await streams.nearestConnected(executor, unitIds, pumped.position) : null
-      const built = buildInputs({
+      const parts = {
         test: test.found.test,
         ...test.parts,
         readings,
         edits,
         streamDistanceM: stream?.distanceM ?? null,
         constructions: await constructions(executor, test),
-      })
-      const setting = settingOf(test)
-      return { ...built, setting, sha256: sha256Of(built.inputs, setting), test }
+      }
+      return snapshotOf(parts, test)
     },
   }
 }

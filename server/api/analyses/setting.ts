@@ -24,6 +24,12 @@ export function settingOf({ found: { test }, parts: { units } }: WholeTest): Set
   return { wellId, year: localStart(startAt, zone, 'year'), intervalTopM, intervalBottomM, units: shares }
 }
 
+/** The same for a test of a kind of its own: names of well and repeats change nothing either. */
+export const sha256OfKind = (kind: string, inputs: object, setting: Setting): string =>
+  createHash('sha256')
+    .update(JSON.stringify([kind, inputs, setting], (key, value: unknown) => (key === 'label' ? undefined : value)))
+    .digest('hex')
+
 /**
  * Inputs and setting are written field by field in a fixed order, so their JSON text identifies them. The code of a
  * well is only its name: another one changes nothing.

@@ -1,5 +1,6 @@
 import type { Analysis } from '#shared/contracts/analyses.ts'
-import { analysisOptions, analysisResult } from '#shared/contracts/analysis-result.ts'
+import { analysisResult } from '#shared/contracts/analysis-result.ts'
+import { parseOptions } from '#shared/contracts/kind-analyses.ts'
 import { atLeast, can, type Viewer } from '#shared/contracts/permissions.ts'
 import { limitFindings } from '#shared/hydraulics/limits.ts'
 import type { AdoptedRow } from './adopted.repository.ts'
@@ -56,7 +57,7 @@ export function analysisView(viewer: Viewer, found: FoundAnalysis, around: Surro
     method: row.method as Analysis['method'],
     methodVersion: row.methodVersion,
     state: row.state,
-    options: row.method === 'reported' ? null : analysisOptions.parse(row.options),
+    options: row.method === 'reported' ? null : parseOptions(row.method, row.options),
     result,
     label: row.label,
     rationale: row.rationale,

@@ -1,5 +1,7 @@
 import type { Analysis } from '#shared/contracts/analyses.ts'
-import { analysisInputs } from '#shared/contracts/analysis-result.ts'
+import { analysisInputs, analysisOptions } from '#shared/contracts/analysis-result.ts'
+import type { AnalysisOptions } from '#shared/hydraulics/analysis.ts'
+import { kindOfMethod } from '#shared/hydraulics/any-kind.ts'
 
 /**
  * An analysis rests on all wells of its test; its reader is told nothing of those that are hidden from them.
@@ -8,6 +10,8 @@ import { analysisInputs } from '#shared/contracts/analysis-result.ts'
  */
 export function withoutHiddenWells(analysis: Analysis, inputs: unknown, seen: Set<string> | null): Analysis {
   if (seen === null || analysis.method === 'reported') return analysis
+  // A test of a kind of its own has one well, without which nobody sees the test.
+  if (kindOfMethod(analysis.method) !== 'constant-rate') return analysis
   const hidden = analysisInputs.parse(inputs).series.filter(({ wellId }) => !seen.has(wellId))
   if (hidden.length === 0) return analysis
   const codes = new Set<string | number>(hidden.map(({ label }) => label))
@@ -15,7 +19,7 @@ export function withoutHiddenWells(analysis: Analysis, inputs: unknown, seen: Se
   const visible = ({ wellId }: { wellId: string }) => seen.has(wellId)
   return {
     ...analysis,
-    options: options && { ...options, wellIds: options.wellIds.filter((id) => seen.has(id)) },
+    options: options && withWells(analysisOptions.parse(options), seen),
     result: {
       ...result,
       residuals: result.residuals.filter(visible),
@@ -25,3 +29,8 @@ export function withoutHiddenWells(analysis: Analysis, inputs: unknown, seen: Se
     },
   }
 }
+
+const withWells = (options: AnalysisOptions, seen: Set<string>): AnalysisOptions => ({
+  ...options,
+  wellIds: options.wellIds.filter((id) => seen.has(id)),
+})

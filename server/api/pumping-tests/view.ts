@@ -1,4 +1,5 @@
 import type { PumpingTest, PumpingTestSummary, SeriesSummary, TestWell } from '#shared/contracts/pumping-tests.ts'
+import { testDetails } from '#shared/contracts/test-details.ts'
 import { atLeast, type Viewer } from '#shared/contracts/permissions.ts'
 import type { countPumpingTests, listPumpingTests } from './list.repository.ts'
 import type {
@@ -61,6 +62,7 @@ export function pumpingTestView(viewer: Viewer, found: FoundTest, parts: TestPar
     createdBy: test.createdBy && createdByName ? { id: test.createdBy, name: createdByName } : null,
     units: parts.units,
     rateSteps: parts.steps,
+    details: test.details === null ? null : testDetails.parse(test.details),
     wells: parts.wells.map(testWellView),
     series: parts.series.filter(({ testWellId }) => seen.has(testWellId)).map(seriesView),
     mayEdit: mayEdit(viewer, test),

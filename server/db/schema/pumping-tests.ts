@@ -19,7 +19,7 @@ export const pumpingTests = mysqlTable(
   {
     id: id(),
     /** reported: only values came down to us, no readings. */
-    kind: mysqlEnum(['constant-rate', 'reported']).notNull(),
+    kind: mysqlEnum(['constant-rate', 'reported', 'step', 'slug', 'specific-capacity']).notNull(),
     wellId: reference().notNull(),
     startAt: instant().notNull(),
     /** year: only the year is known; startAt is then its first instant. */
@@ -34,6 +34,8 @@ export const pumpingTests = mysqlTable(
     thicknessBasis: mysqlEnum(['aquifer', 'screen', 'saturated', 'unknown']).notNull(),
     thicknessError: double().notNull(),
     rateError: double().notNull(),
+    /** What the kind needs beyond the rest, with a version literal; empty for a test at a constant rate. */
+    details: json().$type<unknown>(),
     conditions: text(),
     source: varchar({ length: 300 }),
     visibility: visibility(),

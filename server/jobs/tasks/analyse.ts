@@ -1,18 +1,12 @@
-import { fittedMethod } from '#shared/contracts/analyses.ts'
-import { analysisInputs, analysisOptions } from '#shared/contracts/analysis-result.ts'
-import {
-  AnalysisError,
-  type AnalysisInputs,
-  type AnalysisOptions,
-  type AnalysisResult,
-} from '#shared/hydraulics/analysis.ts'
-import { analyse, type MethodId } from '#shared/hydraulics/catalogue.ts'
+import { parseInputs, parseOptions } from '#shared/contracts/kind-analyses.ts'
+import { AnalysisError } from '#shared/hydraulics/analysis.ts'
+import { analyseAny, type AnyInputs, type AnyOptions, type AnyResult } from '#shared/hydraulics/any-kind.ts'
 import { packJson, unpackJson } from '../../db/packed-json.ts'
 
 export interface AnalyseInput {
-  inputs: AnalysisInputs
-  method: MethodId
-  options: AnalysisOptions
+  inputs: AnyInputs
+  method: string
+  options: AnyOptions
 }
 
 export interface RepeatInput {
@@ -28,12 +22,12 @@ export interface AnalysisRefusal {
   params: AnalysisError['params']
 }
 
-export type Analysed = { ok: true; result: AnalysisResult } | AnalysisRefusal
-export type AnalysedAndPacked = { ok: true; result: AnalysisResult; packedInputs: Uint8Array } | AnalysisRefusal
+export type Analysed = { ok: true; result: AnyResult } | AnalysisRefusal
+export type AnalysedAndPacked = { ok: true; result: AnyResult; packedInputs: Uint8Array } | AnalysisRefusal
 
 function outcomeOf({ method, inputs, options }: AnalyseInput): Analysed {
   try {
-    return { ok: true, result: analyse(method, inputs, options) }
+    return { ok: true, result: analyseAny(method, inputs, options) }
   } catch (error) {
     if (!(error instanceof AnalysisError)) throw error
     return { ok: false, code: error.code, params: error.params }
@@ -49,8 +43,8 @@ export function analyseTask(input: AnalyseInput): AnalysedAndPacked {
 /** Analyses a packed snapshot once more. */
 export async function repeatAnalysisTask({ packedInputs, method, options }: RepeatInput): Promise<Analysed> {
   return outcomeOf({
-    method: fittedMethod.parse(method),
-    inputs: analysisInputs.parse(await unpackJson(packedInputs)),
-    options: analysisOptions.parse(options),
+    method,
+    inputs: parseInputs(method, await unpackJson(packedInputs)),
+    options: parseOptions(method, options),
   })
 }

@@ -47,6 +47,14 @@ export const analysisErrors = {
     status: 400,
     sentence: () => 'This analysis gives no transmissivity that could be adopted.',
   },
+  'analysis/wrong-kind': {
+    status: 400,
+    sentence: () => 'This method is for another kind of test.',
+  },
+  'analysis/nothing-found': {
+    status: 400,
+    sentence: () => 'This analysis gives no value that could be adopted.',
+  },
   'analysis/outside-limits': { status: 400, sentence: ({ reason }) => `This value cannot be adopted: ${reason}` },
   'analysis/confirmation-needed': {
     status: 409,

@@ -43,6 +43,27 @@ export const pumpingTestErrors = {
   'pumping-test/shares': { status: 400, sentence: () => 'The shares of the aquifer units must add up to 1.' },
   'pumping-test/steps-order': { status: 400, sentence: () => 'Each step must start later than the one before.' },
   'pumping-test/no-pumping': { status: 400, sentence: () => 'No step has a rate above zero.' },
+  'pumping-test/slug-rates': { status: 400, sentence: () => 'A slug test has no pumping rate.' },
+  'pumping-test/single-rate': {
+    status: 400,
+    sentence: () => 'A specific capacity belongs to one rate, and to the time at which the drawdown was read.',
+  },
+  'pumping-test/only-one-well': {
+    status: 400,
+    sentence: () => 'A test of this kind is made in one well; it has no observation wells.',
+  },
+  'pumping-test/single-unit': {
+    status: 400,
+    sentence: () => 'A slug test belongs to one aquifer unit. Choose the one that the screen is open to.',
+  },
+  'pumping-test/zero-displacement': {
+    status: 400,
+    sentence: () => 'The first displacement cannot be zero. Leave it empty to take the largest of the log.',
+  },
+  'pumping-test/kind-stays': {
+    status: 400,
+    sentence: () => 'The kind of a test stays. Enter a new test of the other kind.',
+  },
   'pumping-test/same-well': {
     status: 400,
     sentence: ({ code }) => `Well ${code} is in this test already. A test has each well once.`,

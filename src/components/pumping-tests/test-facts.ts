@@ -19,6 +19,9 @@ export function testDate({ startLocal, startPrecision }: Started): string {
 
 export const kindWords: Record<PumpingTest['kind'], string> = {
   'constant-rate': 'Constant-rate test',
+  step: 'Step-drawdown test',
+  slug: 'Slug test',
+  'specific-capacity': 'Specific capacity',
   reported: 'Reported value',
 }
 

@@ -1,3 +1,4 @@
+import type { WorkbenchInputs } from '#shared/contracts/analyses.ts'
 import { Buffer } from 'node:buffer'
 import { analyse } from '#shared/hydraulics/catalogue.ts'
 import { AnalysisError, type AnalysisOptions } from '#shared/hydraulics/analysis.ts'
@@ -66,7 +67,7 @@ async function saveAnalysis(
   planned: DemoAnalysis,
   wellIds: WellIds,
 ) {
-  const { inputs, sha256 } = await analyses.workbench(analyst, testId)
+  const { inputs, sha256 } = (await analyses.workbench(analyst, testId)) as WorkbenchInputs
   const options = optionsOf(planned, wellIds)
   try {
     const result = analyse(planned.method, inputs, options)
