@@ -13,8 +13,9 @@ const bin = (/** @type {string} */ path) => inRoot(`node_modules/${path}`)
 const vueTsc = bin('vue-tsc/bin/vue-tsc.js')
 const tsc = bin('typescript/bin/tsc')
 
-/** Compilers and linter use one core each, so two run side by side. @type {Check[]} */
+/** Compilers, linter and seeding use one core each, so two run side by side. @type {Check[]} */
 export const singleCore = [
+  { title: 'Demo region and pages', args: ['--import', 'tsx', inRoot('tests/support/prepare-browser-tests.ts')] },
   { title: 'Types of the client', args: [vueTsc, '-p', 'src/tsconfig.json'] },
   { title: 'Types of the tests', args: [vueTsc, '-p', 'tests/tsconfig.json'] },
   { title: 'Types of the server', args: [tsc, '-p', 'server/tsconfig.json'] },

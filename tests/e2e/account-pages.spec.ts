@@ -1,7 +1,8 @@
 import type { Page } from '@playwright/test'
-import { expectAccessible, expectNoSidewaysScroll } from './support/accessible.ts'
+import { expectAccessible } from './support/accessible.ts'
 import { visitAs } from './support/sign-in.ts'
 import { expect, test } from './support/test.ts'
+import { expectFitInEachView } from './support/views.ts'
 
 const forVisitors = [
   ['/sign-in', 'Sign in'],
@@ -17,36 +18,22 @@ const forAdministrators = [
   ['/no-such-page', 'Nothing here'],
 ] as const
 
-const views = [
-  { colorScheme: 'light', width: 1440 },
-  { colorScheme: 'dark', width: 1440 },
-  { colorScheme: 'dark', width: 800 },
-  { colorScheme: 'light', width: 320 },
-] as const
-
 /** The page as it stands in each theme and width. */
-async function expectFitInEachView(page: Page, path: string, heading: string) {
+async function expectPageToFit(page: Page, path: string, heading: string) {
   await page.goto(path)
   await expect(page.getByRole('heading', { level: 1, name: heading })).toBeVisible()
-  await expect(page.getByText(/^Fetching /)).toHaveCount(0)
-  for (const { colorScheme, width } of views) {
-    await page.emulateMedia({ colorScheme, reducedMotion: 'reduce' })
-    await page.setViewportSize({ width, height: 800 })
-    await expect(page.locator('.v-application')).toHaveClass(new RegExp(`v-theme--${colorScheme}`))
-    await expectAccessible(page)
-    await expectNoSidewaysScroll(page)
-  }
+  await expectFitInEachView(page, () => expect(page.getByText(/^Fetching /)).toHaveCount(0))
 }
 
 for (const [path, heading] of forVisitors)
   test(`${path} is accessible and fits, light and dark, wide and narrow`, async ({ page }) => {
-    await expectFitInEachView(page, path, heading)
+    await expectPageToFit(page, path, heading)
   })
 
 for (const [path, heading] of forAdministrators)
   test(`${path} is accessible and fits, light and dark, wide and narrow`, async ({ page }) => {
     await visitAs(page, 'administrator')
-    await expectFitInEachView(page, path, heading)
+    await expectPageToFit(page, path, heading)
   })
 
 test('Menus and dialogs of the frame are accessible', async ({ page }) => {

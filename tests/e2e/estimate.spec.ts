@@ -1,7 +1,7 @@
-import { expectAccessible, expectNoSidewaysScroll } from './support/accessible.ts'
 import { choose, chooseUnits } from './support/choose.ts'
 import { signIn, visitAs } from './support/sign-in.ts'
 import { expect, test } from './support/test.ts'
+import { expectFitInEachView } from './support/views.ts'
 
 /** A place in the middle of the Tarrow Gravels. */
 const PLACE = '/map/place/-38.417200,-21.184000'
@@ -100,23 +100,11 @@ test('Where nothing can be estimated the sheet says why and what is near', async
   await expect(page.getByRole('heading', { level: 1, name: 'This is no place' })).toBeVisible()
 })
 
-const views = [
-  { colorScheme: 'light', width: 2560 },
-  { colorScheme: 'light', width: 1440 },
-  { colorScheme: 'dark', width: 800 },
-  { colorScheme: 'dark', width: 360 },
-  { colorScheme: 'light', width: 320 },
-] as const
-
 test('The sheet is accessible and fits, light and dark, wide and narrow', async ({ page }) => {
   await visitAs(page, 'reader')
-  for (const { colorScheme, width } of views) {
-    await page.emulateMedia({ colorScheme, reducedMotion: 'reduce' })
-    await page.setViewportSize({ width, height: 900 })
+  await expectFitInEachView(page, async () => {
     await page.goto(PLACE)
     await expect(sheetOf(page).getByText(/transmissivity, median/)).toBeVisible()
     await expect(sheetOf(page).getByText(/^Fetching /)).toHaveCount(0)
-    await expectAccessible(page)
-    await expectNoSidewaysScroll(page)
-  }
+  })
 })

@@ -3,6 +3,7 @@ import { expectAccessible, expectNoSidewaysScroll } from './support/accessible.t
 import { chooseUnits } from './support/choose.ts'
 import { visitAs } from './support/sign-in.ts'
 import { expect, test } from './support/test.ts'
+import { views } from './support/views.ts'
 
 const layers = (page: Page) => page.getByRole('region', { name: 'Layers' })
 const legend = (page: Page) => page.getByRole('region', { name: 'Legend' })
@@ -263,13 +264,6 @@ test('A steward embargoes a well, and a reader no longer finds it', async ({ pag
   await expect(other.getByText(/^Nothing is called/)).toBeVisible()
   await other.close()
 })
-
-const views = [
-  { colorScheme: 'light', width: 1440 },
-  { colorScheme: 'dark', width: 800 },
-  { colorScheme: 'light', width: 360 },
-  { colorScheme: 'dark', width: 320 },
-] as const
 
 for (const { colorScheme, width } of views)
   test(`The map and its sheets are accessible and fit, ${colorScheme} at ${width} px`, async ({ page }) => {

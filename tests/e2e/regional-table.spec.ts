@@ -1,8 +1,9 @@
 import { readFile } from 'node:fs/promises'
-import { expectAccessible, expectNoSidewaysScroll } from './support/accessible.ts'
 import { choose, chooseUnits } from './support/choose.ts'
 import { signIn, visitAs } from './support/sign-in.ts'
 import { expect, test } from './support/test.ts'
+import { expectAccessible } from './support/accessible.ts'
+import { expectFitInEachView } from './support/views.ts'
 
 test('A reader filters and sorts the regional table, and Back undoes it', async ({ page }) => {
   await signIn(page, 'reader')
@@ -122,24 +123,10 @@ test('A reader has no entry for reviews', async ({ page }) => {
   await expect(page.getByRole('region', { name: 'Latest decisions' })).toHaveCount(0)
 })
 
-const views = [
-  { colorScheme: 'light', width: 2560 },
-  { colorScheme: 'light', width: 1440 },
-  { colorScheme: 'dark', width: 800 },
-  { colorScheme: 'dark', width: 360 },
-  { colorScheme: 'light', width: 320 },
-] as const
-
 // Few rows: axe looks at every cell, and all rows are alike.
 for (const path of ['/regional-table?quantity=T&evidence=firm&from=2012', '/reviews'])
   test(`${path} is accessible and fits, light and dark, wide and narrow`, async ({ page }) => {
     await visitAs(page, 'reviewer')
     await page.goto(path)
-    await expect(page.getByText(/^Fetching /)).toHaveCount(0)
-    for (const { colorScheme, width } of views) {
-      await page.emulateMedia({ colorScheme, reducedMotion: 'reduce' })
-      await page.setViewportSize({ width, height: 800 })
-      await expectAccessible(page)
-      await expectNoSidewaysScroll(page)
-    }
+    await expectFitInEachView(page, () => expect(page.getByText(/^Fetching /)).toHaveCount(0))
   })
