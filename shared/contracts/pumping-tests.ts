@@ -1,6 +1,7 @@
 import { z } from 'zod'
 import { unitsOf } from '../quantities/units.ts'
 import { idInPath, instant, latitude, listOf, longitude, paging, recordId, rowVersion } from './common.ts'
+import { testChecklist } from './test-checklist.ts'
 import { checkKind, testDetails } from './test-details.ts'
 
 export const testKind = z.enum(['constant-rate', 'step', 'slug', 'specific-capacity', 'reported'])
@@ -81,6 +82,9 @@ const plainInput = z.object({
   observationWells: z.array(observationWellInput).max(60),
   /** Depth to water in the pumped well before pumping, m. Null: the mean of the readings before pumping. */
   staticLevelM: staticLevel,
+  /** Conditions that are asked for; left out or null: nothing was recorded. */
+  checklist: testChecklist.nullable().optional(),
+  /** Notes beside the checklist. */
   conditions: z.string().trim().max(5_000).nullable(),
   visibility: visibility.default('internal'),
   /** What a kind of its own needs; left out or null: a test at a constant rate. The kind of a test stays. */
@@ -145,6 +149,7 @@ export const pumpingTest = z.object({
   wells: z.array(testWell),
   series: z.array(seriesSummary),
   details: testDetails.nullable(),
+  checklist: testChecklist.nullable(),
   conditions: z.string().nullable(),
   source: z.string().nullable(),
   visibility,

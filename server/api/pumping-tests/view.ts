@@ -1,4 +1,5 @@
 import type { PumpingTest, PumpingTestSummary, SeriesSummary, TestWell } from '#shared/contracts/pumping-tests.ts'
+import { testChecklist } from '#shared/contracts/test-checklist.ts'
 import { testDetails } from '#shared/contracts/test-details.ts'
 import { atLeast, type Viewer } from '#shared/contracts/permissions.ts'
 import type { countPumpingTests, listPumpingTests } from './list.repository.ts'
@@ -63,6 +64,7 @@ export function pumpingTestView(viewer: Viewer, found: FoundTest, parts: TestPar
     units: parts.units,
     rateSteps: parts.steps,
     details: test.details === null ? null : testDetails.parse(test.details),
+    checklist: test.checklist === null ? null : testChecklist.parse(test.checklist),
     wells: parts.wells.map(testWellView),
     series: parts.series.filter(({ testWellId }) => seen.has(testWellId)).map(seriesView),
     mayEdit: mayEdit(viewer, test),

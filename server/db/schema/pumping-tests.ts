@@ -36,6 +36,8 @@ export const pumpingTests = mysqlTable(
     rateError: double().notNull(),
     /** What the kind needs beyond the rest, with a version literal; empty for a test at a constant rate. */
     details: json().$type<unknown>(),
+    /** Answers about the conditions of the test, with a version literal; empty where nothing was recorded. */
+    checklist: json().$type<unknown>(),
     conditions: text(),
     source: varchar({ length: 300 }),
     visibility: visibility(),

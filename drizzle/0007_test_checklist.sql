@@ -1,0 +1,1 @@
+ALTER TABLE `pumping_tests` ADD `checklist` json;
