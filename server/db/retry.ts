@@ -21,10 +21,15 @@ const unreachable = new Set([
   'ER_UNKNOWN_COM_ERROR',
 ])
 
-/** The driver's code of an error, looked for behind the wrappers that libraries put around it. */
+/**
+ * The driver's code of an error, looked for behind the wrappers that libraries put around it. A rollback on a connection
+ * that is gone fails without a code and hides why; whether the commit before it arrived is not known then, so that this
+ * is unreachable, and not to be done again.
+ */
 export function databaseCode(error: unknown): string | null {
   for (let cause = error; cause instanceof Error; cause = cause.cause) {
     if ('code' in cause && typeof cause.code === 'string') return cause.code
+    if ('fatal' in cause && cause.fatal === true) return 'PROTOCOL_ENQUEUE_AFTER_FATAL_ERROR'
   }
   return null
 }

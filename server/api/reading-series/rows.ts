@@ -8,6 +8,9 @@ type StoredRow = typeof readings.$inferSelect
 const mostRaw = 1_000
 const mostFlags = 300
 
+/** A character of two halves is not cut between them. */
+const beginning = (line: string) => line.slice(0, mostRaw).replace(/[\uD800-\uDBFF]$/, '')
+
 function issuesByRow(issues: RowIssue[]): Map<number, RowIssue[]> {
   const map = new Map<number, RowIssue[]>()
   for (const issue of issues) map.set(issue.row, [...(map.get(issue.row) ?? []), issue])
@@ -21,7 +24,7 @@ export function readingRows(seriesId: number, { rows, issues }: LogReading): Sto
     seriesId,
     seq,
     fileRow: row.row,
-    raw: row.raw.slice(0, mostRaw),
+    raw: beginning(row.raw),
     elapsedS: row.elapsed_s,
     valueM: row.value_m,
     taken: row.taken,

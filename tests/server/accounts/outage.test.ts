@@ -26,9 +26,29 @@ async function untilReady() {
   throw new Error('the application did not recover')
 }
 
-describe('while the database is away', () => {
-  beforeAll(() => server.stop())
+/** How many transactions wait for a row that another one holds. */
+const waiting = async () =>
+  Number(
+    (await server.query("SELECT count(*) FROM information_schema.innodb_trx WHERE trx_state = 'LOCK WAIT'"))[0]![0],
+  )
 
+describe('a request at work when the database is killed', () => {
+  it('is answered with 503, and had no effect', async () => {
+    const holder = await test.deps.connection.pool.getConnection()
+    await holder.beginTransaction()
+    await holder.query('SELECT * FROM region FOR UPDATE')
+    const answer = person
+      .patch('/api/region')
+      .send({ rowVersion: 1, name: 'Lost' })
+      .then(({ body }) => body)
+    await expect.poll(waiting, { timeout: 10_000 }).toBe(1)
+    await server.kill()
+    expect(await answer).toMatchObject({ status: 503, code: 'server/unavailable' })
+    holder.destroy()
+  }, 60_000)
+})
+
+describe('while the database is away', () => {
   it('every request says so with 503, and nobody is told to sign in', async () => {
     const visitor = request(test.app)
     const { email } = person

@@ -1,7 +1,8 @@
-import { existsSync, mkdirSync, readdirSync, utimesSync, writeFileSync } from 'node:fs'
-import { createServer } from 'node:http'
+import { existsSync, mkdirSync, readdirSync, statSync, utimesSync, writeFileSync } from 'node:fs'
+import { createServer, request, type IncomingMessage } from 'node:http'
 import { connect, type AddressInfo } from 'node:net'
 import { join } from 'node:path'
+import { Readable } from 'node:stream'
 import { beforeAll, describe, expect, it } from 'vitest'
 import { uploadFolder } from '../../../server/api/reading-series/upload.ts'
 import type { PumpingTest } from '#shared/contracts/pumping-tests.ts'
@@ -62,6 +63,37 @@ describe('An upload leaves nothing in the folder of uploads', () => {
     socket.write(`${head.join('\r\n')}\r\n\r\n${part}${'1,0.1\n'.repeat(20_000)}`)
     await expect.poll(() => left().length).toBe(1)
     socket.destroy()
+    await nothingLeft()
+    await new Promise((resolve) => server.close(resolve))
+  })
+
+  it('when 200 MB are sent, of which no more than is allowed is kept meanwhile', async () => {
+    const server = createServer(tested.app).listen(0, '127.0.0.1')
+    await new Promise((resolve) => server.once('listening', resolve))
+    const cookie = (await analyst.get('/api/session')).request.cookies as string
+    const headers = {
+      Cookie: cookie,
+      'X-CSRF-Token': analyst.csrfToken,
+      'Content-Type': 'multipart/form-data; boundary=long',
+    }
+    const megabyte = Buffer.alloc(1024 * 1024, '1,0.1\n')
+    const { port } = server.address() as AddressInfo
+    const sent = request({ host: '127.0.0.1', port, path: path(), method: 'POST', headers })
+    const answer = new Promise<IncomingMessage>((resolve, reject) => sent.on('response', resolve).on('error', reject))
+    let most = 0
+    function* body() {
+      yield '--long\r\nContent-Disposition: form-data; name="file"; filename="log.csv"\r\n\r\n'
+      for (let i = 0; i < 200; i += 1) {
+        const sizes = left().map((name) => statSync(join(folder(), name), { throwIfNoEntry: false })?.size ?? 0)
+        most = Math.max(most, ...sizes)
+        yield megabyte
+      }
+      yield '\r\n--long--\r\n'
+    }
+    Readable.from(body()).pipe(sent)
+    expect((await answer).statusCode).toBe(413)
+    expect(most).toBeLessThanOrEqual(41 * 1024 * 1024)
+    sent.destroy()
     await nothingLeft()
     await new Promise((resolve) => server.close(resolve))
   })
