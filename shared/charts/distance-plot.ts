@@ -1,4 +1,4 @@
-import type { AnalysisInputs, Series } from '#shared/hydraulics/analysis.ts'
+import type { AnalysisInputs, Series, TimeWindow } from '#shared/hydraulics/analysis.ts'
 import { interpolated } from '#shared/hydraulics/interpolate.ts'
 import { rateHistory } from '#shared/hydraulics/rates.ts'
 import { pumpingPhase, selectReadings } from '#shared/hydraulics/selection.ts'
@@ -22,6 +22,10 @@ export interface DistancePlot {
   units: PlotUnits
   /** Moment compared, elapsed seconds. */
   time_s: number
+  /** When pumping began, elapsed seconds. */
+  start_s: number
+  /** Times since then at which all wells have readings; null where there are none. */
+  common: TimeWindow | null
 }
 
 interface DistanceRequest {
@@ -52,6 +56,8 @@ export function distancePlot({ inputs, wellIds, units, direction, time_s }: Dist
     wells,
     units,
     time_s: start_s + at_s,
+    start_s,
+    common: commonTimes(reaches),
     x: widened(
       logAxis(
         points.map(({ x }) => x),
@@ -76,6 +82,12 @@ function observed(inputs: AnalysisInputs, wellIds: readonly string[]): Reach[] {
     const options = { wellIds: [wellId], window: null, readingsPerCycle: null }
     return selectReadings(inputs, options, phase).wells.filter(({ time_s }) => time_s.length > 0)
   })
+}
+
+function commonTimes(reaches: Reach[]): TimeWindow | null {
+  const from_s = Math.max(...reaches.map(({ time_s }) => time_s[0] as number))
+  const to_s = lastCommon(reaches)
+  return reaches.length > 0 && from_s < to_s ? { from_s, to_s } : null
 }
 
 const lastCommon = (reaches: Reach[]) => Math.min(...reaches.map(({ time_s }) => time_s.at(-1) ?? 0))
@@ -107,6 +119,7 @@ export function distanceDrawing(plot: DistancePlot, fit: Fit): FitDrawing | null
     span: null,
     shade: farShade(plot, fit),
     marks: lineMarks(plot, fit),
+    moments: [],
     residuals: { inside: plot.wells.flatMap(off), outside: [], unit },
   }
 }

@@ -3,6 +3,7 @@ import { methods, type MethodId } from '#shared/hydraulics/catalogue.ts'
 import { rateHistory } from '#shared/hydraulics/rates.ts'
 import { unitById } from '#shared/quantities/units.ts'
 import { shareOf } from './axis.ts'
+import { casingMoments, type Moment } from './casing-moments.ts'
 import { bandOf, modelled, type Fit, type HalfWidths } from './fit-band.ts'
 import { lineMarks, type LineMarks } from './line-marks.ts'
 import type { PlotPoint, XY } from './plot-wells.ts'
@@ -30,6 +31,8 @@ export interface FitDrawing {
   span: [number, number] | null
   shade: Shade | null
   marks: LineMarks | null
+  /** Moments that have a name, such as the end of casing storage. */
+  moments: Moment[]
   /** Measured less calculated, in the unit of the strip. */
   residuals: { inside: XY[]; outside: XY[]; unit: string }
 }
@@ -51,6 +54,14 @@ export function windowOf({ options, result: { extras } }: Fit): TimeWindow | nul
   return from_s === undefined || to_s === undefined ? null : { from_s, to_s }
 }
 
+/** Whether a moment lies in the window of an analysis. */
+export function inWindowOf(fit: Fit): (elapsed_s: number) => boolean {
+  const window = windowOf(fit)
+  if (window === null) return () => true
+  const origin_s = methodOrigin(fit.inputs, fit.result.method)
+  return (elapsed_s) => elapsed_s - origin_s >= window.from_s && elapsed_s - origin_s <= window.to_s
+}
+
 interface Drawn {
   plot: TimePlot
   fit: Fit
@@ -62,8 +73,7 @@ interface Drawn {
 export function fitDrawing(plot: TimePlot, fit: Fit, { withBand = true } = {}): FitDrawing {
   const window = windowOf(fit)
   const origin_s = methodOrigin(fit.inputs, fit.result.method)
-  const inWindow = (elapsed_s: number) =>
-    window === null || (elapsed_s - origin_s >= window.from_s && elapsed_s - origin_s <= window.to_s)
+  const inWindow = inWindowOf(fit)
   const drawn = { plot, fit, inWindow, halfWidths: withBand ? bandOf(fit) : null }
   const times_s = plot.curve_s
   const curves = plot.wells.map(({ wellId }) => modelled(fit, wellId, times_s))
@@ -71,16 +81,18 @@ export function fitDrawing(plot: TimePlot, fit: Fit, { withBand = true } = {}): 
     inside: plot.wells.map(({ points }) =>
       points.filter((point) => inWindow(point.elapsed_s)).map(({ x, y }) => [x, y]),
     ),
-    fitted: curves.map((curve) => line(plot, times_s, curve)),
+    fitted: curves.map((curve) => curveLine(plot, times_s, curve)),
     bands: plot.wells.map(({ wellId }, i) => band(drawn, wellId, times_s, curves[i] ?? [])),
     span: window && spanOf(plot, origin_s, window),
     shade: shadeOf(drawn, origin_s),
     marks: lineMarks(plot, fit),
+    moments: casingMoments(plot, fit, origin_s),
     residuals: residuals(drawn),
   }
 }
 
-function line(plot: TimePlot, times_s: number[], curve: (number | null)[]): XY[] {
+/** A modelled curve on the axes of a plot; nothing where the plot shows none. */
+export function curveLine(plot: TimePlot, times_s: number[], curve: (number | null)[]): XY[] {
   const length_m = unitById(plot.units.length).toSI
   return times_s.flatMap((time, i): XY[] => {
     const [x, value] = [plot.clock.place(time), curve[i]]
@@ -101,7 +113,7 @@ function band(
   const half = halfWidths && times.length > 1 ? halfWidths(wellId, times) : null
   if (!half) return null
   const edge = (sign: 1 | -1) =>
-    line(
+    curveLine(
       plot,
       times,
       within.map((i, k) => (curve[i] as number) + sign * (half[k] as number)),

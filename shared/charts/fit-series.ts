@@ -3,6 +3,7 @@ import { CHART_FONT_SIZE, faded, type ChartTheme } from './chart-theme.ts'
 import { dotsPath } from './dots-path.ts'
 import type { Band, FitDrawing } from './fit-drawing.ts'
 import { cycle, marks } from './mark-series.ts'
+import { momentSeries } from './moment-series.ts'
 import { symbolOf, type PlotWell, type XY } from './plot-wells.ts'
 import { quiet } from './quiet.ts'
 
@@ -22,6 +23,7 @@ const NO_FIT: FitDrawing = {
   span: null,
   shade: null,
   marks: null,
+  moments: [],
   residuals: { inside: [], outside: [], unit: '' },
 }
 
@@ -39,6 +41,7 @@ export function fitSeries({ wells, theme, withStrip, inverse }: SeriesFrame, giv
     ...wells.map((_, i) => band(drawing.bands[i] ?? null, i, theme)),
     ...wells.map(({ points }, i) => inside(drawing.inside[i] ?? [], i, theme, dotSize(points.length))),
     ...wells.map((_, i) => fitted(drawing.fitted[i] ?? [], i, theme)),
+    momentSeries(drawing.moments, theme),
     cycle(drawing, theme),
     marks(drawing, theme, inverse),
     ...(withStrip ? strip(drawing, theme) : []),

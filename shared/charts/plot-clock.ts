@@ -11,11 +11,9 @@ export interface PlotClock {
   elapsed(x: number): number
 }
 
-type TimePlot = Exclude<PlotKind, 'distance'>
-
-/** Plots against time; `unit_s` is the reader's unit of time in seconds. */
+/** Plots against time, the composite one before its times are divided by the squared distance; `unit_s` is the reader's unit of time in seconds. */
 export function plotClock(
-  kind: TimePlot,
+  kind: Exclude<PlotKind, 'distance'>,
   inputs: AnalysisInputs,
   options: Pick<AnalysisOptions, 'phase' | 'rateHistory'>,
   unit_s: number,

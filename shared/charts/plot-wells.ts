@@ -62,7 +62,7 @@ function plotWell({ kind, inputs, clock, length_m, smoothing }: WellsRequest, se
     points: thinned(kept, kind, clock.origin_s),
     readingCount: kept.length,
     leftOut: placed.filter(({ included }) => !included),
-    derivative: withDerivative(kind) ? derivativeOf(inputs, wellId, clock, { length_m, smoothing, kind }) : [],
+    derivative: hasDerivative(kind) ? derivativeOf(inputs, wellId, clock, { length_m, smoothing, kind }) : [],
   }
 }
 
@@ -92,7 +92,8 @@ export function drawnShare(wells: readonly PlotWell[]): { drawn: number; of: num
   return drawn < of ? { drawn, of } : null
 }
 
-const withDerivative = (kind: PlotKind) => kind === 'semi-log' || kind === 'log-log'
+/** Plots on which the derivative is drawn. */
+export const hasDerivative = (kind: PlotKind) => kind === 'semi-log' || kind === 'log-log'
 
 /** From the same readings that the evidence is judged by. */
 function derivativeOf(

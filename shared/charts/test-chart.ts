@@ -3,14 +3,16 @@ import { formatNumber } from '#shared/quantities/format.ts'
 import { unitById } from '#shared/quantities/units.ts'
 import { hiddenAxis, stripAxes, xAxisOption, yAxisOption } from './axis-option.ts'
 import { CHART_FONT, CHART_FONT_SIZE, faded, type ChartTheme } from './chart-theme.ts'
+import { compositeUnit, type CompositePlot } from './composite-plot.ts'
 import type { DistancePlot } from './distance-plot.ts'
 import type { FitDrawing } from './fit-drawing.ts'
 import { dotSize, fitSeries, residualLimit } from './fit-series.ts'
 import type { Margins, PlotFrame } from './plot-frame.ts'
 import { symbolOf, type PlotPoint, type PlotWell } from './plot-wells.ts'
+import { regimeSeries } from './regime-series.ts'
 import type { TimePlot } from './time-plot.ts'
 
-export type TestPlot = TimePlot | DistancePlot
+export type TestPlot = TimePlot | DistancePlot | CompositePlot
 
 /** Paler outside the window, and before there is one. */
 const PALE = 0.38
@@ -92,8 +94,10 @@ function stripOf({ x }: TestPlot, drawing: FitDrawing | null, frame: PlotFrame, 
   return { x: [axes.x], y: [axes.y] }
 }
 
-const standingSeries = ({ wells, kind }: TestPlot, theme: ChartTheme) =>
-  wells.flatMap((well, i) => standing(well, i, theme, kind === 'distance'))
+function standingSeries(plot: TestPlot, theme: ChartTheme): SeriesOption[] {
+  const wells = plot.wells.flatMap((well, i) => standing(well, i, theme, plot.kind === 'distance'))
+  return 'regimes' in plot ? [...wells, regimeSeries(plot.regimes, theme)] : wells
+}
 
 const movingSeries = ({ wells, y }: TestPlot, drawing: FitDrawing | null, frame: PlotFrame, theme: ChartTheme) =>
   fitSeries({ wells, theme, withStrip: frame.strip !== null, inverse: y.inverse }, drawing)
@@ -142,9 +146,16 @@ function standing(
   ]
 }
 
+/** Unit of a plot's abscissa; none for t/t'. */
+export function abscissaUnit({ kind, units }: TestPlot): string {
+  if (kind === 'recovery') return ''
+  if (kind === 'composite') return compositeUnit(units)
+  return unitById(kind === 'distance' ? units.length : units.time).label
+}
+
 function tooltip(plot: TestPlot, theme: ChartTheme): EChartsOption['tooltip'] {
   const length = unitById(plot.units.length).label
-  const abscissa = plot.kind === 'distance' ? length : plot.kind === 'recovery' ? '' : unitById(plot.units.time).label
+  const abscissa = abscissaUnit(plot)
   return {
     trigger: 'item',
     renderMode: 'richText',

@@ -3,7 +3,8 @@ import { unitById } from '#shared/quantities/units.ts'
 import { extentOf, linearAxis, logAxis, valueAt, type Axis } from './axis.ts'
 import { plotClock, type PlotClock } from './plot-clock.ts'
 import type { PlotKind } from './plot-kinds.ts'
-import { plotWells, type PlotWell } from './plot-wells.ts'
+import { hasDerivative, plotWells, type PlotWell } from './plot-wells.ts'
+import { drawnRegimes, type DrawnRegime } from './regimes.ts'
 
 /** Unit ids in which a plot is drawn. */
 export interface PlotUnits {
@@ -12,7 +13,7 @@ export interface PlotUnits {
 }
 
 export interface TimePlotRequest {
-  kind: Exclude<PlotKind, 'distance'>
+  kind: Exclude<PlotKind, 'distance' | 'composite'>
   inputs: AnalysisInputs
   wellIds: readonly string[]
   options: Pick<AnalysisOptions, 'phase' | 'rateHistory'>
@@ -21,6 +22,8 @@ export interface TimePlotRequest {
   direction: 'down' | 'up'
   /** Of the derivative, factors of ten in time to either side. */
   smoothing?: number
+  /** The well whose derivative is diagnosed, on plots that show one; null: none. */
+  diagnosed?: string | null
 }
 
 /** A plot against time before any analysis is drawn on it. */
@@ -33,13 +36,17 @@ export interface TimePlot {
   units: PlotUnits
   /** Times at which a curve is drawn, elapsed seconds. */
   curve_s: number[]
+  /** What the derivative of the diagnosed well shows. */
+  regimes: DrawnRegime[]
 }
 
 export function timePlot(request: TimePlotRequest): TimePlot {
-  const { kind, inputs, wellIds, options, units, direction, smoothing } = request
+  const { kind, inputs, wellIds, options, units, direction, smoothing, diagnosed = null } = request
   const clock = plotClock(kind, inputs, options, unitById(units.time).toSI)
   const length_m = unitById(units.length).toSI
-  const wells = plotWells({ kind, inputs, wellIds, clock, length_m, ...(smoothing === undefined ? {} : { smoothing }) })
+  const smoothed = smoothing === undefined ? {} : { smoothing }
+  const wells = plotWells({ kind, inputs, wellIds, clock, length_m, ...smoothed })
+  const wellId = hasDerivative(kind) && wells.some((well) => well.wellId === diagnosed) ? diagnosed : null
   const x = timeAxis(kind, wells, units)
   return {
     kind,
@@ -49,6 +56,7 @@ export function timePlot(request: TimePlotRequest): TimePlot {
     x,
     y: drawdownAxis(kind, wells, units, direction),
     curve_s: curveTimes(kind, x, clock),
+    regimes: drawnRegimes({ inputs, wellId, clock, ...smoothed }),
   }
 }
 

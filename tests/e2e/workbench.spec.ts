@@ -143,6 +143,67 @@ test('A log becomes a value of the regional table, from the file to the reviewer
   await theirs.close()
 })
 
+/** Draws around all of the plot with the mouse. */
+async function drawAround(page: Page) {
+  const box = (await page.getByRole('img', { name: /plot of drawdown/ }).boundingBox())!
+  const corners = [
+    [70, 18],
+    [box.width - 22, 18],
+    [box.width - 22, box.height - 160],
+    [70, box.height - 160],
+  ].map(([x, y]) => [box.x + x!, box.y + y!] as const)
+  await page.mouse.move(...corners[0]!)
+  await page.mouse.down()
+  for (const corner of [...corners.slice(1), corners[0]!]) await page.mouse.move(...corner, { steps: 6 })
+  await page.mouse.up()
+}
+
+test('Readings are left out on the plot with a reason, and taken back', async ({ page, watch }) => {
+  watch.expect(/400/)
+  await signIn(page, 'analyst')
+  const observation = await enterTest(page)
+  await uploadReadings(page, observation)
+  await page.getByRole('link', { name: 'Open the test' }).click()
+  await page.getByRole('button', { name: 'Choose readings' }).click()
+  await drawAround(page)
+  await expect(page.getByText('34 readings chosen')).toBeVisible()
+  await page.getByRole('button', { name: 'Choose none' }).click()
+  await page.getByLabel('Readings from').fill('0')
+  await page.getByLabel('to', { exact: true }).first().fill('0.3')
+  await page.getByRole('button', { name: 'Choose these' }).click()
+  await page.getByRole('button', { name: 'Leave out', exact: true }).click()
+  const dialog = page.getByRole('dialog')
+  await dialog.getByRole('button', { name: 'Leave out' }).click()
+  await expect(dialog.getByText('Say why, so that a reviewer can follow.')).toBeVisible()
+  await dialog.getByLabel('Reason').fill('The rate was not steady yet.')
+  await expectAccessible(page)
+  await dialog.getByRole('button', { name: 'Leave out' }).click()
+  await expect(page.getByText('are left out.')).toBeVisible()
+  await drawAround(page)
+  await page.getByRole('button', { name: 'Take back' }).click()
+  await dialog.getByLabel('Reason').fill('The rate was steady after all.')
+  await dialog.getByRole('button', { name: 'Take back' }).click()
+  await expect(page.getByText('are taken back.')).toBeVisible()
+  await expectAccessible(page)
+})
+
+test('A span of the diagnosis becomes the window, and is undone and redone by keys', async ({ page }) => {
+  await visitAs(page, 'analyst')
+  await openTest(page)
+  const edge = page.getByRole('slider', { name: 'Window begins at' })
+  const proposed = (await edge.getAttribute('aria-valuetext'))!
+  await page.getByRole('button', { name: 'Use this span: radial flow' }).click()
+  await expect(edge).not.toHaveAttribute('aria-valuetext', proposed)
+  const used = (await edge.getAttribute('aria-valuetext'))!
+  await page.keyboard.press('Control+z')
+  await expect(edge).toHaveAttribute('aria-valuetext', proposed)
+  await page.keyboard.press('Control+Shift+z')
+  await expect(edge).toHaveAttribute('aria-valuetext', used)
+  await page.getByRole('button', { name: 'Undo the last change' }).click()
+  await expect(edge).toHaveAttribute('aria-valuetext', proposed)
+  await expectAccessible(page)
+})
+
 test('The line is drawn by hand with the keyboard, and goes back to least squares', async ({ page }) => {
   await visitAs(page, 'analyst')
   await openTest(page)
@@ -174,10 +235,11 @@ async function openTest(page: Page) {
 test('Every plot of a test is drawn, read as a table and saved', async ({ page }) => {
   await visitAs(page, 'analyst')
   await openTest(page)
-  for (const kind of ['Linear', 'Log–log', 'Recovery', 'Distance', 'Semi-log']) {
-    await page.getByRole('button', { name: kind, exact: true }).click()
+  const plot = page.getByRole('region', { name: 'Plot', exact: true })
+  for (const kind of ['Linear', 'Log–log', 'Recovery', 'Composite t/r²', 'Distance', 'Semi-log']) {
+    await plot.getByRole('button', { name: kind, exact: true }).click()
     await expect(
-      page
+      plot
         .getByRole('img', { name: new RegExp(`^${kind} plot of drawdown`) })
         .locator('svg path')
         .nth(20),
@@ -195,6 +257,44 @@ test('Every plot of a test is drawn, read as a table and saved', async ({ page }
     const [download] = await Promise.all([page.waitForEvent('download'), page.getByText(way).click()])
     expect(download.suggestedFilename()).toMatch(ending)
   }
+})
+
+test('A barrier is taken into a curve, drawn on the sketch, and the analyses are compared', async ({ page }) => {
+  await visitAs(page, 'analyst')
+  await page.goto(await testAddress(page))
+  await page.getByRole('button', { name: 'New analysis' }).click()
+  await expect(page.getByText('Straight lines', { exact: true })).toBeVisible()
+  await page
+    .getByRole('listitem')
+    .filter({ hasText: /^Confined aquifer curve/ })
+    .click()
+  const card = page.getByRole('article', { name: /^Confined aquifer curve/ })
+  await card.getByRole('button', { name: 'Add a barrier' }).click()
+  const barrier = card.getByRole('group', { name: 'Barrier', exact: true })
+  await expect(barrier.getByLabel(/^Fit the distance/)).toBeChecked()
+  await expect(card.getByText('barrier', { exact: true })).toBeVisible()
+  await barrier.getByLabel(/^Fit the distance/).uncheck()
+  await barrier.getByLabel('Distance', { exact: true }).fill('250')
+  await barrier.getByLabel('Distance', { exact: true }).press('Enter')
+  await barrier.getByLabel('Direction').fill('135')
+  await barrier.getByLabel('Direction').press('Enter')
+  await expect(barrier.getByText('south-east')).toBeVisible()
+  await expect(
+    page.getByRole('img', { name: /Barrier, a barrier of the analysis, lies 250 m to the south-east/ }),
+  ).toBeVisible()
+
+  const comparison = page.getByRole('region', { name: 'Comparison', exact: true })
+  await expect(comparison.getByRole('row').filter({ hasText: 'Confined aquifer curve' }).first()).toBeVisible()
+  await expect(comparison.getByText(/compares fits, not geology/)).toBeVisible()
+  await expect(
+    comparison
+      .getByRole('img', { name: /^Drawdown with curves of/ })
+      .locator('svg path')
+      .nth(10),
+  ).toBeAttached()
+  await comparison.getByRole('button', { name: 'Read the curves as a table' }).click()
+  await expect(comparison.getByRole('columnheader', { name: /time since pumping began, min/ })).toBeVisible()
+  await expectAccessible(page)
 })
 
 const pages: Record<string, (address: string) => string> = {

@@ -1,5 +1,6 @@
 import { computed, type ComputedRef, type Ref } from 'vue'
 import type { Fit } from '#shared/charts/fit-band.ts'
+import { compositeDrawing, compositePlot } from '#shared/charts/composite-plot.ts'
 import { distanceDrawing, distancePlot } from '#shared/charts/distance-plot.ts'
 import { fitDrawing, type FitDrawing } from '#shared/charts/fit-drawing.ts'
 import { timePlot } from '#shared/charts/time-plot.ts'
@@ -16,8 +17,16 @@ const sameText = <Value>(make: () => Value) => {
   return computed(() => JSON.parse(text.value) as Value)
 }
 
+interface PlotSettings {
+  smoothing: Ref<number>
+  /** Moment at which a distance plot compares wells, elapsed seconds; null: the last common one. */
+  moment: Ref<number | null>
+  /** Well whose derivative is diagnosed. */
+  diagnosed: Ref<string | null>
+}
+
 /** The plot that stands, and the drawing that follows the mouse. The plot is made anew only when what it shows changes. */
-export function useTestPlot(smoothing: Ref<number>) {
+export function useTestPlot({ smoothing, moment, diagnosed }: PlotSettings) {
   const { snapshot, present, result, moving, plotKind } = useWorkbench()
   const units = useUnits()
   const preferences = usePreferences()
@@ -32,22 +41,23 @@ export function useTestPlot(smoothing: Ref<number>) {
   const wellIds = sameText(() => {
     const all = snapshot.value.inputs.series.map(({ wellId }) => wellId)
     const compares = present.value && drawsLine(present.value.method, 'distance')
-    return shownKind.value === 'distance' && !compares ? all : (present.value?.options.wellIds ?? all)
+    const comparesAll = shownKind.value === 'composite' || (shownKind.value === 'distance' && !compares)
+    return comparesAll ? all : (present.value?.options.wellIds ?? all)
   })
   const history = sameText(() => ({
     phase: present.value?.options.phase ?? 'pumping',
     rateHistory: present.value?.options.rateHistory ?? 'superposition',
   }))
-  const moment = computed(() => present.value?.options.time_s ?? null)
   const unitIds = computed(() => ({ time: units.id('time'), length: units.id('length') }))
 
   const plot: ComputedRef<TestPlot> = computed(() => {
     const { inputs } = snapshot.value
     const common = { inputs, wellIds: wellIds.value, units: unitIds.value, direction: preferences.drawdownDirection }
     const kind = shownKind.value
-    return kind === 'distance'
-      ? distancePlot({ ...common, time_s: moment.value })
-      : timePlot({ ...common, kind, options: history.value, smoothing: smoothing.value })
+    if (kind === 'distance') return distancePlot({ ...common, time_s: moment.value })
+    const options = history.value
+    if (kind === 'composite') return compositePlot({ ...common, options })
+    return timePlot({ ...common, kind, options, smoothing: smoothing.value, diagnosed: diagnosed.value })
   })
 
   const fit = computed<Fit | null>(() =>
@@ -60,6 +70,7 @@ export function useTestPlot(smoothing: Ref<number>) {
     if (!fit.value) return null
     try {
       if (plot.value.kind === 'distance') return distanceDrawing(plot.value, fit.value)
+      if (plot.value.kind === 'composite') return compositeDrawing(plot.value, fit.value)
       return fitDrawing(plot.value, fit.value, { withBand: !moving.value })
     } catch (error) {
       // A kept analysis of inputs that have changed since may have no curve on the present ones; its numbers stand.

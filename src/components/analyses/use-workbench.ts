@@ -9,6 +9,7 @@ import { firstOptions } from './first-options.ts'
 import { keepWhileOpen, readWork, type Work } from './kept-work.ts'
 import { isFitted, isPumped, outcomeOf, resultOf, type Outcome } from './outcome.ts'
 import { useResting } from './use-resting.ts'
+import { changedPart, useUndo, type Undo } from './use-undo.ts'
 
 export interface Workbench {
   test: ComputedRef<PumpingTest>
@@ -44,6 +45,8 @@ export interface Workbench {
   /** After saving: what was sent is no longer unsaved; what was changed meanwhile goes on as a change of the saved one. */
   settle(from: string, sent: Work | null, saved: Analysis): void
   mayCreate: ComputedRef<boolean>
+  /** Back and forth through unsaved changes. */
+  history: Undo
 }
 
 const key: InjectionKey<Workbench> = Symbol('workbench')
@@ -101,6 +104,8 @@ export function provideWorkbench(given: Given): Workbench {
     works.value = changed ? { ...others, [at]: changed } : others
   }
 
+  const history = useUndo(works, selected, put)
+
   function select(wanted: string | null) {
     selected.value = wanted
     const method = present.value?.method
@@ -128,6 +133,7 @@ export function provideWorkbench(given: Given): Workbench {
   function start(method: MethodId, rest: Partial<Work> = {}) {
     const begin = () => {
       asking.value = null
+      history.forget(NEW)
       put(NEW, { ...untouched(method), ...rest })
       select(NEW)
     }
@@ -137,6 +143,8 @@ export function provideWorkbench(given: Given): Workbench {
 
   function settle(from: string, sent: Work | null, saved: Analysis) {
     const now = unsavedOf(from)
+    history.forget(from)
+    history.forget(String(saved.id))
     put(from, null)
     if (now !== sent && now) put(String(saved.id), { ...now, rowVersion: saved.rowVersion })
     if (selected.value === from) select(String(saved.id))
@@ -153,10 +161,15 @@ export function provideWorkbench(given: Given): Workbench {
   }
 
   function setWork(change: Partial<Work>) {
-    if (selected.value !== null && present.value && editable.value) put(selected.value, { ...present.value, ...change })
+    if (selected.value === null || !present.value || !editable.value) return
+    const changed = { ...present.value, ...change }
+    history.remember(selected.value, unsavedOf(selected.value), changedPart(present.value, changed))
+    put(selected.value, changed)
   }
 
   function discard(at: string) {
+    if (at === NEW) history.forget(at)
+    else history.remember(at, unsavedOf(at))
     put(at, null)
     if (at === selected.value && at === NEW) select(firstKey(given, works.value))
   }
@@ -197,6 +210,7 @@ export function provideWorkbench(given: Given): Workbench {
     unsavedOf,
     settle,
     mayCreate,
+    history,
   }
   provide(key, bench)
   const canStart = snapshot.value.inputs.series.length > 0 && isPumped(snapshot.value.inputs)

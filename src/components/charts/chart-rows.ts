@@ -21,7 +21,8 @@ export function chartRows({ wells, units, kind }: TestPlot, fit: Fit | null): Ch
       ...leftOut.map((point) => ({ ...point, out: true })),
     ]
     const times = all.map(({ elapsed_s }) => elapsed_s)
-    const curve = fit && kind !== 'distance' ? modelled(fit, wellId, times) : times.map(() => null)
+    const isFitted = fit !== null && kind !== 'distance' && fit.options.wellIds.includes(wellId)
+    const curve = isFitted ? modelled(fit, wellId, times) : times.map(() => null)
     return all
       .map(({ x, y, out }, i): ChartRow => {
         const value = curve[i]

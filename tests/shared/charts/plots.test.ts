@@ -208,6 +208,13 @@ describe('The plot against distance', () => {
     expect(early.wells[0]!.points[0]!.y).toBeLessThan(distancePlot({ ...request, time_s: null }).wells[0]!.points[0]!.y)
   })
 
+  it('knows the times that all wells have in common, and none where they never overlap', () => {
+    expect(distancePlot({ ...request, time_s: null }).common).toEqual({ from_s: 60, to_s: 86_400 })
+    const late = { ...inputs.series[1]!, elapsed_s: inputs.series[1]!.elapsed_s.map((time) => time + 86_400) }
+    const apart = { ...inputs, series: [inputs.series[0]!, late] }
+    expect(distancePlot({ ...request, inputs: apart, time_s: null }).common).toBeNull()
+  })
+
   it('draws the line, where it meets zero, and how far it holds', () => {
     const plot = distancePlot({ ...request, time_s: null })
     const fit = makeFit('distance-drawdown', { wellIds: request.wellIds }, inputs)
