@@ -14,6 +14,8 @@ export const reviewQueueItem = z.object({
   rationale: z.string().nullable(),
   T: parameterEstimate.nullable(),
   S: parameterEstimate.nullable(),
+  /** Of a slug test, which measures it itself; it says more than the T that is derived from it. */
+  K: parameterEstimate.nullable().optional(),
   storageClass: storageClass.nullable(),
   author: z.string(),
   submittedAt: instant,

@@ -16,7 +16,11 @@ export const vocabulary: { role: ColumnRole; kinds: CellKind[]; words: RegExp; w
     words:
       /temp|°c|batter|volt|conduct|salin|press|baro|\bflow\b|\brate\b|discharge|comment|remark|\bnotes?\b|operator|quality|serial|record|\bno\b|\bnr\b|\bid\b|index|#|bemerkung|leitf|druck/,
   },
-  { role: 'drawdown', kinds: ['number'], words: /draw\s*-?down|residual|absenkung|rabattement|abatimiento|^s\d?$/ },
+  {
+    role: 'drawdown',
+    kinds: ['number'],
+    words: /draw\s*-?down|displacement|residual|absenkung|rabattement|abatimiento|^s\d?$/,
+  },
   {
     role: 'depth',
     kinds: ['number'],

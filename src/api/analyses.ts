@@ -2,7 +2,8 @@ import { adoptedHistory } from '#shared/contracts/adopted-values.ts'
 import {
   analysis,
   analysisList,
-  workbenchInputs,
+  anyWorkbenchInputs,
+  wellLossList,
   type AnalysisInput,
   type AnalysisUpdate,
   type ReviewInput,
@@ -12,7 +13,7 @@ import { nothing } from '#shared/contracts/common.ts'
 import { api } from './client.ts'
 
 export const fetchWorkbenchInputs = (testId: number, signal?: AbortSignal) =>
-  api.get(`/api/pumping-tests/${testId}/inputs`, { response: workbenchInputs, signal })
+  api.get(`/api/pumping-tests/${testId}/inputs`, { response: anyWorkbenchInputs, signal })
 
 export const fetchAnalyses = (testId: number, signal?: AbortSignal) =>
   api.get(`/api/pumping-tests/${testId}/analyses`, { response: analysisList, signal })
@@ -37,3 +38,7 @@ export const reviewAnalysis = (id: number, body: ReviewInput, idempotencyKey: st
 /** Every value that the test ever gave to the regional table, newest first. */
 export const fetchAdoptedHistory = (testId: number, signal?: AbortSignal) =>
   api.get(`/api/pumping-tests/${testId}/adopted-values`, { response: adoptedHistory, signal })
+
+/** Losses of a well by its accepted step-drawdown tests, newest test first. */
+export const fetchWellLosses = (wellId: number, signal?: AbortSignal) =>
+  api.get(`/api/wells/${wellId}/losses`, { response: wellLossList, signal })

@@ -3,6 +3,7 @@ import { analysisResult } from '#shared/contracts/analysis-result.ts'
 import type { Paging } from '#shared/contracts/common.ts'
 import { can, type Viewer } from '#shared/contracts/permissions.ts'
 import type { ReviewQueueItem } from '#shared/contracts/reviews.ts'
+import { kindOfMethod } from '#shared/hydraulics/any-kind.ts'
 import type { Executor } from '../../db/client.ts'
 import { inTransaction } from '../../db/transaction.ts'
 import type { Deps } from '../../deps.ts'
@@ -88,11 +89,12 @@ function queueItem(
   viewer: Viewer,
   { result, tookPart, author, startAt, zone, startPrecision, submittedAt, ...row }: QueueRow,
 ): ReviewQueueItem {
-  const { T, S, storageClass } = analysisResult.parse(result)
+  const { T, S, K, storageClass } = analysisResult.parse(result)
   return {
     ...row,
     T,
     S,
+    K: kindOfMethod(row.method) === 'slug' ? K : null,
     storageClass,
     method: row.method as ReviewQueueItem['method'],
     author: author ?? '',

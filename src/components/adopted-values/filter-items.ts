@@ -1,4 +1,5 @@
 import { evidence, fittedMethod } from '#shared/contracts/analyses.ts'
+import { kindMethodIds } from '#shared/contracts/kind-analyses.ts'
 import { methodLabel } from '#shared/words/methods.ts'
 import { storageClasses } from '#shared/words/values.ts'
 
@@ -14,7 +15,12 @@ export const quantityItems: Item[] = [
 ]
 export const classItems: Item[] = Object.entries(storageClasses).map(([value, { name }]) => ({ value, title: name }))
 export const evidenceItems: Item[] = evidence.options.map((value) => ({ value, title: value }))
-export const methodItems: Item[] = [...fittedMethod.options, 'reported'].map((value) => ({
+export const methodItems: Item[] = [
+  ...fittedMethod.options,
+  ...kindMethodIds.slug.options,
+  ...kindMethodIds['specific-capacity'].options,
+  'reported',
+].map((value) => ({
   value,
   title: methodLabel(value),
 }))

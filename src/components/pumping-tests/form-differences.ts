@@ -1,5 +1,7 @@
 import { formatElapsed } from '#shared/quantities/elapsed.ts'
 import { formatNumber } from '#shared/quantities/format.ts'
+import { checklistText } from './checklist-form.ts'
+import { kindWords } from './test-facts.ts'
 import type { TestForm } from './test-form.ts'
 import {
   aquiferWords,
@@ -16,6 +18,7 @@ const count = (many: readonly unknown[]) => String(many.length)
 
 /** Label and text of each field of a test, for telling two versions of it apart. */
 export const formShow: { [Key in keyof TestForm]: [label: string, text: (value: TestForm[Key]) => string] } = {
+  kind: ['Kind of test', (kind) => kindWords[kind]],
   wellId: ['Pumped well', (id) => `number ${id ?? '–'}`],
   precision: ['Start is known as', (precision) => precisionWords[precision]],
   date: ['Date', String],
@@ -44,7 +47,18 @@ export const formShow: { [Key in keyof TestForm]: [label: string, text: (value: 
       `${count(wells)}: ${wells.map(({ distanceBasis, distanceM }) => `${distanceWords[distanceBasis]} ${metres(distanceM)}`).join('; ')}`,
   ],
   staticLevelM: ['Static level in the pumped well', metres],
-  conditions: ['Conditions', String],
+  checklist: ['Conditions', checklistText],
+  conditions: ['Notes', String],
+  slug: [
+    'Slug test',
+    ({ casingRadiusM, screenLengthM, screenTopM, repeats }) =>
+      `casing ${metres(casingRadiusM)}, screen ${metres(screenLengthM)} long from ${metres(screenTopM)}, first displacements ${repeats.map(({ initialM }) => metres(initialM)).join(', ') || '–'}`,
+  ],
+  capacity: [
+    'Rate and drawdown',
+    ({ rate, unit, durationS, drawdownM }) =>
+      `${number(rate)} ${unit ?? ''}, ${metres(drawdownM)} after ${formatElapsed(durationS ?? 0)}`,
+  ],
   visibility: ['Who may see it', (who) => visibilityWords[who]],
 }
 

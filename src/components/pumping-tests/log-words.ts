@@ -1,3 +1,4 @@
+import type { PumpingTest } from '#shared/contracts/pumping-tests.ts'
 import type { DateOrder, DecimalMark, Delimiter, ElapsedUnit, Quantity } from '#shared/readings/model.ts'
 import { unitById } from '#shared/quantities/units.ts'
 
@@ -14,6 +15,9 @@ export const quantityWords: Record<Quantity, string> = {
   level: 'Water-level elevation',
   drawdown: 'Drawdown',
 }
+/** In a slug test the level moves both ways. */
+export const quantityWordsOf = (kind: PumpingTest['kind']): Record<Quantity, string> =>
+  kind === 'slug' ? { ...quantityWords, drawdown: 'Displacement from the static level' } : quantityWords
 export const timeKindWords = { elapsed: 'Elapsed time', clock: 'Clock time' } as const
 export const elapsedWords: Record<ElapsedUnit, string> = {
   s: 'Seconds',

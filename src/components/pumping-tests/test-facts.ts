@@ -48,3 +48,10 @@ export function observationText(count: number): string {
   if (count === 0) return 'no observation well'
   return count === 1 ? '1 observation well' : `${count} observation wells`
 }
+
+/** What was done in a test of a kind of its own, in place of rates and observation wells. */
+export function kindFacts({ kind, rateSteps, series }: Pick<PumpingTest, 'kind' | 'rateSteps' | 'series'>): string[] {
+  if (kind === 'reported') return []
+  if (kind !== 'slug') return [pumpingText(rateSteps)]
+  return [series.length === 1 ? '1 repeat' : `${series.length} repeats`]
+}

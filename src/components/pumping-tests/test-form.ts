@@ -1,8 +1,22 @@
 import type { PumpingTest, PumpingTestInput } from '#shared/contracts/pumping-tests.ts'
+import { emptyChecklist, type TestChecklist } from '#shared/contracts/test-checklist.ts'
+import type { TestDetails } from '#shared/contracts/test-details.ts'
 import type { Well } from '#shared/contracts/wells.ts'
+import {
+  capacityDetailsOf,
+  capacityFormOf,
+  capacitySteps,
+  capacitySuggestions,
+  emptyCapacity,
+  type CapacityForm,
+} from '../specific-capacity-tests/capacity-form.ts'
+import { emptySlug, slugDetailsOf, slugFormOf, slugSuggestions, type SlugForm } from '../slug-tests/slug-form.ts'
+import { checklistFormOf, checklistOf } from './checklist-form.ts'
 
 type Input = PumpingTestInput
 export type Precision = PumpingTest['startPrecision']
+/** Kinds of test that are entered with a form. */
+export type FormKind = Exclude<PumpingTest['kind'], 'reported'>
 
 export interface StepForm {
   startS: number | null
@@ -29,6 +43,7 @@ export interface TestForm extends Pick<
   Input,
   'zone' | 'aquifer' | 'intervalBasis' | 'thicknessBasis' | 'visibility' | 'intervalTopM' | 'intervalBottomM'
 > {
+  kind: FormKind
   wellId: number | null
   precision: Precision
   date: string
@@ -41,10 +56,14 @@ export interface TestForm extends Pick<
   rateSteps: StepForm[]
   observationWells: ObservationForm[]
   staticLevelM: number | null
+  checklist: TestChecklist
   conditions: string
+  slug: SlugForm
+  capacity: CapacityForm
 }
 
 export const emptyForm = (zone: string, dischargeUnit: string): TestForm => ({
+  kind: 'constant-rate',
   wellId: null,
   precision: 'instant',
   date: '',
@@ -63,9 +82,31 @@ export const emptyForm = (zone: string, dischargeUnit: string): TestForm => ({
   rateSteps: [{ startS: 0, value: null, unit: dischargeUnit }],
   observationWells: [],
   staticLevelM: null,
+  checklist: emptyChecklist(),
   conditions: '',
   visibility: 'internal',
+  slug: emptySlug(),
+  capacity: emptyCapacity(dischargeUnit),
 })
+
+/** What the kind needs, of all that was typed. */
+const detailsOf: Record<FormKind, (form: TestForm) => TestDetails | null> = {
+  'constant-rate': () => null,
+  step: () => ({ version: 1, kind: 'step' }),
+  slug: ({ slug }) => slugDetailsOf(slug),
+  'specific-capacity': ({ capacity }) => capacityDetailsOf(capacity),
+}
+
+const stepsOf = ({ rateSteps }: TestForm) =>
+  rateSteps.map(({ startS, value, unit }) => ({ startS, rate: { value, unit } })) as Input['rateSteps']
+
+/** Rates as the kind has them. */
+const ratesOf: Record<FormKind, (form: TestForm) => Input['rateSteps']> = {
+  'constant-rate': stepsOf,
+  step: stepsOf,
+  slug: () => [],
+  'specific-capacity': ({ capacity }) => capacitySteps(capacity),
+}
 
 const starts: Record<Precision, (form: TestForm) => string> = {
   instant: ({ date, time }) => `${date}T${time}`,
@@ -82,18 +123,21 @@ export const typesInterval = ({ intervalBasis }: Pick<TestForm, 'intervalBasis'>
  * path; the types say otherwise only until it has answered.
  */
 export function inputOf(form: TestForm): Input {
-  const { precision: _p, date: _d, time: _t, year: _y, conditions, units, rateSteps, observationWells, ...rest } = form
+  const { precision: _p, date: _d, time: _t, year: _y, kind, slug: _s, capacity: _c, ...typed } = form
+  const { checklist, conditions, units, rateSteps: _r, observationWells, ...rest } = typed
   return {
     ...rest,
     ...(typesInterval(form) ? {} : { intervalTopM: null, intervalBottomM: null }),
     startLocal: starts[form.precision](form),
     units: units.length === 1 ? [{ ...units[0], share: 1 }] : units,
-    rateSteps: rateSteps.map(({ startS, value, unit }) => ({ startS, rate: { value, unit } })),
-    observationWells: observationWells.map(({ reason, ...well }) => ({
+    rateSteps: ratesOf[kind](form),
+    details: detailsOf[kind](form),
+    observationWells: (kind === 'constant-rate' ? observationWells : []).map(({ reason, ...well }) => ({
       ...well,
       distanceM: well.distanceBasis === 'map' ? null : well.distanceM,
       reason: reason.trim() || null,
     })),
+    checklist: checklistOf(checklist),
     conditions: conditions.trim() || null,
   } as Input
 }
@@ -110,8 +154,10 @@ function startOf({ startLocal, startPrecision }: PumpingTest) {
 /** A saved test, to be changed. */
 export function formOf(test: PumpingTest): TestForm {
   const { zone, aquifer, intervalBasis, intervalTopM, intervalBottomM, wellId } = test
-  const { thicknessM, thicknessBasis, thicknessError, rateError, visibility } = test
+  const { thicknessM, thicknessBasis, thicknessError, rateError, visibility, details } = test
+  const fresh = emptyForm(zone, test.rateSteps[0]?.enteredUnit ?? 'L/s')
   return {
+    kind: details?.kind ?? 'constant-rate',
     ...{ wellId, zone, aquifer, intervalBasis, intervalTopM, intervalBottomM },
     ...{ thicknessM, thicknessBasis, thicknessError, rateError, visibility },
     ...startOf(test),
@@ -131,12 +177,30 @@ export function formOf(test: PumpingTest): TestForm {
         staticLevelM: well.staticLevelM,
       })),
     staticLevelM: test.wells.find(({ role }) => role === 'pumped')?.staticLevelM ?? null,
+    checklist: checklistFormOf(test.checklist),
     conditions: test.conditions ?? '',
+    slug:
+      details?.kind === 'slug'
+        ? slugFormOf(
+            details,
+            test.series.map(({ id }) => id),
+          )
+        : fresh.slug,
+    capacity: details?.kind === 'specific-capacity' ? capacityFormOf(details, test.rateSteps) : fresh.capacity,
   }
 }
 
 /** Fields that a pumped well may say something about. */
-const suggestible = ['intervalBasis', 'visibility', 'units', 'thicknessM', 'thicknessBasis', 'aquifer'] as const
+const suggestible = [
+  'intervalBasis',
+  'visibility',
+  'units',
+  'thicknessM',
+  'thicknessBasis',
+  'aquifer',
+  'slug',
+  'capacity',
+] as const
 type Suggested = Pick<TestForm, (typeof suggestible)[number]>
 
 /**
@@ -144,7 +208,7 @@ type Suggested = Pick<TestForm, (typeof suggestible)[number]>
  * that no thickness of one well stands in the test of another. `before` is what the form was given before this.
  */
 export function suggest(form: TestForm, before: Suggested, suggestions: Partial<TestForm>): Suggested {
-  const fresh = emptyForm(form.zone, '')
+  const fresh = emptyForm(form.zone, form.capacity.unit ?? '')
   const next = Object.fromEntries(suggestible.map((field) => [field, suggestions[field] ?? fresh[field]])) as unknown
   const given = next as Suggested
   const same = (field: keyof Suggested) => JSON.stringify(form[field]) === JSON.stringify(before[field])
@@ -165,7 +229,12 @@ export interface UnitFacts {
  * What the pumped well suggests: the unit that its screens are open to, that unit's thickness and kind, who may see it.
  * A test of a published well is published by a steward.
  */
-export function suggestionsOf(well: Well, units: readonly UnitFacts[], mayPublish: boolean): Partial<TestForm> {
+export function suggestionsOf(
+  well: Well,
+  units: readonly UnitFacts[],
+  mayPublish: boolean,
+  unit = '',
+): Partial<TestForm> {
   const top = Math.min(...well.screens.map(({ topM }) => topM))
   const bottom = Math.max(...well.screens.map(({ bottomM }) => bottomM))
   const open = well.picks.find(
@@ -176,6 +245,8 @@ export function suggestionsOf(well: Well, units: readonly UnitFacts[], mayPublis
   )
   const kind = units.find(({ id }) => id === open?.unitId)?.kind
   return {
+    slug: slugSuggestions(well),
+    capacity: capacitySuggestions(well, unit),
     intervalBasis: well.screens.length > 0 ? 'screens' : 'unknown',
     visibility: well.visibility === 'published' && !mayPublish ? 'internal' : well.visibility,
     ...(open ? { units: [{ unitId: open.unitId, share: 1, basis: 'single-unit' as const }] } : {}),

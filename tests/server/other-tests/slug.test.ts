@@ -1,3 +1,4 @@
+import { readFileSync } from 'node:fs'
 import { eq } from 'drizzle-orm'
 import { beforeAll, describe, expect, it } from 'vitest'
 import type { AdoptedValueList } from '#shared/contracts/adopted-values.ts'
@@ -29,33 +30,10 @@ const fieldsOf = ({ body }: { body: unknown }) =>
   Object.fromEntries((body as Problem).fields.map(({ path, code }) => [path, code]))
 
 /**
- * Readings of the slug test near Dawsonville, Georgia, with its well: radius 7.6 cm, open for 98 m. Source: Cooper,
- * Bredehoeft & Papadopulos 1967, table 3, from memory. They found T 5.3 cm²/s and S about 1e-3 by type curve.
+ * The slug test near Dawsonville, Georgia, in a well with a radius of 7.6 cm, open for 98 m. Source: Cooper, Bredehoeft &
+ * Papadopulos 1967, from memory. They found T 5.3 cm²/s and S about 1e-3 by type curve.
  */
-const dawsonville: [number, number][] = [
-  [0, 0.56],
-  [3, 0.457],
-  [6, 0.392],
-  [9, 0.345],
-  [12, 0.308],
-  [15, 0.28],
-  [18, 0.252],
-  [21, 0.224],
-  [24, 0.205],
-  [27, 0.187],
-  [30, 0.168],
-  [33, 0.149],
-  [36, 0.14],
-  [39, 0.131],
-  [42, 0.112],
-  [45, 0.108],
-  [48, 0.093],
-  [51, 0.089],
-  [54, 0.082],
-  [57, 0.075],
-  [60, 0.071],
-  [63, 0.065],
-]
+const dawsonville = readFileSync(new URL('../../reference/dawsonville.csv', import.meta.url), 'utf8')
 const openLength = 98
 const dawsonvilleWell = () =>
   makeSlugDetails({
@@ -70,7 +48,8 @@ const published = () =>
     unitId,
     details: dawsonvilleWell(),
     input: { thicknessM: openLength, thicknessError: 0 },
-    logs: [logOf(dawsonville)],
+    logs: [dawsonville],
+    firstDataRow: 4,
   })
 const all = { repeatIds: null }
 

@@ -31,13 +31,12 @@ interface Wanted {
   /** Logs in seconds and metres. */
   logs?: string[]
   quantity?: 'depth' | 'level' | 'drawdown'
+  firstDataRow?: number
 }
 
 /** A test of a kind of its own in a new well, with its logs. */
-export async function enterKind(
-  person: SignedIn,
-  { unitId, details, input, logs = [], quantity = 'drawdown' }: Wanted,
-) {
+export async function enterKind(person: SignedIn, wanted: Wanted) {
+  const { unitId, details, input, logs = [], quantity = 'drawdown', firstDataRow = 2 } = wanted
   const wellId = await createWell(person)
   const body = makeTestInput({
     wellId,
@@ -49,6 +48,7 @@ export async function enterKind(
   const { id } = (await person.post('/api/pumping-tests').send(body).expect(201)).body as { id: number }
   const test = await readTest(person, id)
   const mapping = makeMapping({
+    firstDataRow,
     time: { kind: 'elapsed', column: 0, unit: 's', zero_s: 0 },
     value: { column: 1, quantity, unit: 'm' },
   })

@@ -26,6 +26,8 @@ const makeTest = (overrides: Partial<PumpingTest> = {}): PumpingTest => ({
   rateSteps: [],
   wells: [],
   series: [],
+  details: null,
+  checklist: null,
   conditions: null,
   source: null,
   visibility: 'internal',
