@@ -21,9 +21,10 @@ import type { createInputsService } from './inputs.service.ts'
 import { checkDraft, lockDraft } from './lock-draft.ts'
 import { readInputs } from './packed-inputs.repository.ts'
 import { reportedFacts, reportedResult, type ReportedValue } from './reported.ts'
-import { listStepAnalyses, wellLossView } from './well-losses.repository.ts'
 import { createSubmissions } from './submissions.ts'
 import { analysisView, type Surroundings } from './view.ts'
+import { wellLossView } from './well-loss-view.ts'
+import { isWellSeen, listStepAnalyses } from './well-losses.repository.ts'
 import { withoutHiddenWells } from './without-hidden-wells.ts'
 
 export function createAnalysesService(deps: Deps, inputs: ReturnType<typeof createInputsService>) {
@@ -247,9 +248,10 @@ export function createAnalysesService(deps: Deps, inputs: ReturnType<typeof crea
     testsOfWell: repository.analysedTestsOf,
 
     /** Losses of a well by its accepted step-drawdown tests that the viewer may see, newest test first. */
-    wellLosses: async (viewer: Viewer, wellId: number) => ({
-      items: (await listStepAnalyses(db, viewer, wellId)).map(wellLossView),
-    }),
+    async wellLosses(viewer: Viewer, wellId: number) {
+      if (!(await isWellSeen(db, viewer, wellId))) throw notFound()
+      return { items: (await listStepAnalyses(db, viewer, wellId)).map(wellLossView) }
+    },
 
     /** The last of its values left the regional table: nothing rests on it any more. */
     withdraw: (executor: Executor, id: number) => repository.setWithdrawn(executor, id),

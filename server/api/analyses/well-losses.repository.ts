@@ -1,13 +1,9 @@
 import { and, desc, eq, inArray } from 'drizzle-orm'
-import type { WellLoss } from '#shared/contracts/analyses.ts'
-import { analysisResult } from '#shared/contracts/analysis-result.ts'
 import type { Viewer } from '#shared/contracts/permissions.ts'
 import { methodIdsOf } from '#shared/hydraulics/kinds.ts'
-import { lossOf } from '#shared/hydraulics/step/step-method.ts'
 import type { Executor } from '../../db/client.ts'
 import { readable } from '../../db/readable.ts'
-import { analyses, pumpingTests } from '../../db/schema/index.ts'
-import { localStart } from '../pumping-tests/start-time.ts'
+import { analyses, pumpingTests, wells } from '../../db/schema/index.ts'
 
 /** Accepted analyses of the step-drawdown tests of a well that the viewer may see, newest test first. */
 export const listStepAnalyses = (executor: Executor, viewer: Viewer, wellId: number) =>
@@ -35,17 +31,8 @@ export const listStepAnalyses = (executor: Executor, viewer: Viewer, wellId: num
     )
     .orderBy(desc(pumpingTests.startAt), desc(analyses.id))
 
-export function wellLossView(row: Awaited<ReturnType<typeof listStepAnalyses>>[number]): WellLoss {
-  const { others = [], extras } = analysisResult.parse(row.result)
-  const { low: low_m3_s, high: high_m3_s } = lossOf(extras).rates
-  return {
-    analysisId: row.id,
-    pumpingTestId: row.pumpingTestId,
-    method: row.method,
-    startLocal: localStart(row.startAt, row.zone, row.startPrecision),
-    startPrecision: row.startPrecision,
-    losses: others,
-    rates: { low_m3_s, high_m3_s },
-    inputsChanged: row.inputsChanged,
-  }
-}
+export type StepAnalysisRow = Awaited<ReturnType<typeof listStepAnalyses>>[number]
+
+/** Whether the viewer may see the well at all. */
+export const isWellSeen = async (executor: Executor, viewer: Viewer, wellId: number): Promise<boolean> =>
+  (await executor.$count(wells, and(eq(wells.id, wellId), readable.wells(viewer)))) > 0
