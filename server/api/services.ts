@@ -27,6 +27,7 @@ import { createWellsService, type WellsService } from './wells/wells.service.ts'
 export function createServices(deps: Deps) {
   const region = createRegionService(deps)
   const streams = createStreamsService(deps)
+  const boundaries = createBoundariesService(deps)
   const adoptedValues = createAdoptedValuesService(deps, {
     withdrawAnalysis: (executor, id) => analyses.withdraw(executor, id),
   })
@@ -46,7 +47,10 @@ export function createServices(deps: Deps) {
     valuesChanged: (executor, testId) => adoptedValues.changedAt(executor, 'pumping-test', testId),
   })
   // A well shows its tests, and a change of a test concerns its analyses: services that know each other have named types.
-  const analyses: AnalysesService = createAnalysesService(deps, createInputsService({ pumpingTests, streams, wells }))
+  const analyses: AnalysesService = createAnalysesService(
+    deps,
+    createInputsService({ pumpingTests, streams, boundaries, wells }),
+  )
   const { markInputsChanged, isInUse } = analyses
   return {
     account: createAccountService(deps, region),
@@ -54,7 +58,7 @@ export function createServices(deps: Deps) {
     analyses,
     aquiferUnits: createAquiferUnitsService(deps),
     auditTrail: createAuditTrailService(deps),
-    boundaries: createBoundariesService(deps),
+    boundaries,
     estimates: createEstimatesService(deps, { region, streams, adoptedValues }),
     health: createHealthService(deps),
     jobs: createJobsService(deps),

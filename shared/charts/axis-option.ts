@@ -18,6 +18,8 @@ function common({ scale, min, max, title, inverse, step }: Axis, theme: ChartThe
     ...(step === undefined ? {} : { interval: step }),
     name: title,
     nameLocation: 'middle' as const,
+    // Long tick labels would push the title out of the picture.
+    nameMoveOverlap: false,
     nameTextStyle: { color: theme.inkSoft, fontSize: CHART_FONT_SIZE },
     axisLine: { show: true, onZero: false, ...line },
     axisTick: { show: true, ...line },

@@ -20,6 +20,7 @@ export interface PlotFrame {
   strip: Margins | null
 }
 
+/** On the left, tick labels and the title of the axis; a narrow window needs as much. */
 const SIDE = { left: 66, right: 18 }
 const STRIP_HEIGHT = 62
 const STRIP_BOTTOM = 12
@@ -29,12 +30,10 @@ const TOP = 16
 
 /** The plot takes what the strip leaves. */
 export function plotFrame(size: Size, { withStrip }: { withStrip: boolean }): PlotFrame {
-  const left = size.width < 480 ? 54 : SIDE.left
-  const side = { left, right: SIDE.right }
-  if (!withStrip) return { size, plot: { ...side, top: TOP, bottom: 52 }, strip: null }
+  if (!withStrip) return { size, plot: { ...SIDE, top: TOP, bottom: 52 }, strip: null }
   const bottom = STRIP_BOTTOM + STRIP_HEIGHT + BETWEEN
-  const strip = { ...side, top: size.height - STRIP_BOTTOM - STRIP_HEIGHT, bottom: STRIP_BOTTOM }
-  return { size, plot: { ...side, top: TOP, bottom }, strip }
+  const strip = { ...SIDE, top: size.height - STRIP_BOTTOM - STRIP_HEIGHT, bottom: STRIP_BOTTOM }
+  return { size, plot: { ...SIDE, top: TOP, bottom }, strip }
 }
 
 export const plotWidth = ({ size, plot }: PlotFrame) => size.width - plot.left - plot.right

@@ -11,6 +11,7 @@ import {
 import { instant, recordId, rowVersion } from './common.ts'
 import { anyOptions, kindMethodIds, kindSchemas, ownMethod } from './kind-analyses.ts'
 import { evidence } from './kinds.ts'
+import { surrounding } from './surroundings.ts'
 
 /** Registering a method in the hydraulics catalogue is all that is needed for it to be accepted here. */
 export const fittedMethod = z.enum(Object.keys(methods) as [keyof typeof methods])
@@ -131,7 +132,11 @@ const workbenchParts = z.object({
   ),
 })
 
-export const workbenchInputs = workbenchParts.extend({ inputs: analysisInputs })
+export const workbenchInputs = workbenchParts.extend({
+  inputs: analysisInputs,
+  /** Offered as boundaries; no part of what analyses rest on. */
+  surroundings: z.array(surrounding),
+})
 export type WorkbenchInputs = z.infer<typeof workbenchInputs>
 
 /** The same for a test of a kind of its own. */

@@ -48,6 +48,12 @@ export function agreementOf(a: ComparedAnalysis, b: ComparedAnalysis): Agreement
   }
 }
 
+/** Whether another analysis confirms one by the recovery: not where both look at the same readings of it. */
+export function recoveryConfirms(mine: ComparedAnalysis, other: ComparedAnalysis): boolean {
+  const { code, shared } = agreementOf(mine, other)
+  return other.phase === 'recovery' && code !== 'disagree' && !shared.includes('same-readings')
+}
+
 /** Two analyses of one test always share the pumping rate, so that their agreement never confirms it. */
 function sharedBasis(a: ComparedAnalysis, b: ComparedAnalysis): SharedBasis[] {
   const sameWell = a.wellIds.some((wellId) => b.wellIds.includes(wellId))

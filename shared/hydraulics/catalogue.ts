@@ -49,6 +49,10 @@ export const methods = {
 export type MethodId = keyof typeof methods
 export const methodIds = Object.keys(methods) as MethodId[]
 
+/** Which readings a method looks at; values of no method of this catalogue come from pumping. */
+export const phaseOfMethod = (id: string): Method['needs']['phase'] =>
+  Object.hasOwn(methods, id) ? methods[id as MethodId].needs.phase : 'pumping'
+
 /**
  * Analyses a pumping test.
  * @returns parameters with 95 % intervals in SI, findings, residuals (thinned where a well has very many, see

@@ -155,8 +155,8 @@ const refusals: Sentences<AnalysisErrorCode> = {
   'analysis/boundaries-angle': () =>
     'Image wells cannot stand for two boundaries that meet at this angle: it must be 180° divided by a whole number, or by an even one where a stream meets a barrier. Choose one of them.',
   'analysis/boundary-place': () => 'A boundary needs a distance above zero and a direction.',
-  'analysis/bearing-unknown': ({ text }) =>
-    `The direction of ${text('well')} from the pumped well is not known, so its distance from the boundary is not either. Enter the position of both wells.`,
+  'analysis/bearing-unknown': () =>
+    'The direction of an observation well from the pumped well is not known, so its distance from the boundary is not either. Enter the position of both wells.',
   'analysis/no-fit': () => 'No curve could be fitted. Check rate, distance and units.',
 }
 

@@ -6,9 +6,10 @@ import {
   type StoredResult,
 } from '#shared/contracts/analysis-result.ts'
 import { parseInputs } from '#shared/contracts/kind-analyses.ts'
-import { agreementOf } from '#shared/hydraulics/agreement.ts'
+import { recoveryConfirms } from '#shared/hydraulics/agreement.ts'
 import type { AnalysisResult } from '#shared/hydraulics/analysis.ts'
 import { kindOfMethod } from '#shared/hydraulics/any-kind.ts'
+import { phaseOfMethod } from '#shared/hydraulics/catalogue.ts'
 import { evidenceFacts } from '#shared/hydraulics/evidence-facts.ts'
 import { evidenceOf, type EvidenceFacts } from '#shared/hydraulics/evidence.ts'
 import type { KindShapes } from '#shared/hydraulics/kinds.ts'
@@ -29,8 +30,7 @@ function compared(row: Weighed) {
   const { T } = resultOf(row)
   if (kindOfMethod(row.method) !== 'constant-rate') return null
   const { wellIds } = analysisOptions.parse(row.options)
-  const phase = row.method === 'recovery' ? ('recovery' as const) : ('pumping' as const)
-  return T && { id: String(row.id), label: '', T, wellIds, phase, usesDistances: false }
+  return T && { id: String(row.id), label: '', T, wellIds, phase: phaseOfMethod(row.method), usesDistances: false }
 }
 
 /** An analysis that a reviewer sent back, or whose value was withdrawn, is evidence of nothing. */
@@ -40,9 +40,10 @@ const refused = new Set<Weighed['state']>(['returned', 'withdrawn'])
 function recoveryAgrees(row: Weighed, siblings: Weighed[]): boolean {
   const mine = compared(row)
   return siblings.some((sibling) => {
-    if (sibling.id === row.id || sibling.method !== 'recovery' || refused.has(sibling.state)) return false
+    if (sibling.id === row.id || phaseOfMethod(sibling.method) !== 'recovery' || refused.has(sibling.state))
+      return false
     const other = compared(sibling)
-    return mine !== null && other !== null && agreementOf(mine, other).code !== 'disagree'
+    return mine !== null && other !== null && recoveryConfirms(mine, other)
   })
 }
 

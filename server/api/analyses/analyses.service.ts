@@ -114,10 +114,12 @@ export function createAnalysesService(deps: Deps, inputs: ReturnType<typeof crea
     isInUse: repository.isInUse,
 
     async workbench(viewer: Viewer, testId: number) {
-      const { kind, inputs: built, sha256, readings, problems } = await inputs.snapshot(db, viewer, testId)
+      const { kind, inputs: built, sha256, readings, problems, test } = await inputs.snapshot(db, viewer, testId)
       const shown = { inputs: built, sha256, readings, problems }
+      const answer =
+        kind === 'constant-rate' ? { ...shown, surroundings: await inputs.surroundings(db, test) } : { kind, ...shown }
       // The kind and its inputs go together, which taking them apart hides.
-      return (kind === 'constant-rate' ? shown : { kind, ...shown }) as z.input<typeof anyWorkbenchInputs>
+      return answer as z.input<typeof anyWorkbenchInputs>
     },
 
     async list(viewer: Viewer, testId: number) {

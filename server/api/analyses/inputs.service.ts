@@ -1,5 +1,6 @@
 import { atLeast, type Viewer } from '#shared/contracts/permissions.ts'
 import type { Executor } from '../../db/client.ts'
+import type { createBoundariesService } from '../boundaries/boundaries.service.ts'
 import type { createPumpingTestsService } from '../pumping-tests/pumping-tests.service.ts'
 import { openAt } from '../pumping-tests/tested-interval.ts'
 import type { createStreamsService } from '../streams/streams.service.ts'
@@ -8,11 +9,13 @@ import { buildInputs, type BuiltInputs, type InputParts } from './build-inputs.t
 import { listEdits, listReadings } from './inputs.repository.ts'
 import { buildKindInputs, detailsOf, type BuiltKind } from './kind-inputs.ts'
 import type { Construction } from './placement.ts'
+import { edgeOfBoundary, surroundingsOf } from './surroundings.ts'
 import { settingOf, sha256Of, sha256OfKind, type Setting } from './setting.ts'
 
 export interface InputsNeeds {
   pumpingTests: Pick<ReturnType<typeof createPumpingTestsService>, 'whole' | 'maySee' | 'hold'>
-  streams: Pick<ReturnType<typeof createStreamsService>, 'nearestConnected'>
+  streams: Pick<ReturnType<typeof createStreamsService>, 'nearestConnected' | 'pathsConnected'>
+  boundaries: Pick<ReturnType<typeof createBoundariesService>, 'affecting'>
   wells: Pick<WellsService, 'screensOf' | 'picksOf'>
 }
 
@@ -39,7 +42,7 @@ function snapshotOf(parts: InputParts, test: WholeTest): Snapshot {
 }
 
 /** What analyses of a test are made from, as the viewer sees the test. */
-export function createInputsService({ pumpingTests, streams, wells: wellsService }: InputsNeeds) {
+export function createInputsService({ pumpingTests, streams, boundaries, wells: wellsService }: InputsNeeds) {
   /** By well: screens that were open at the test's date, and depths of the units. */
   async function constructions(executor: Executor, { found: { test }, parts }: WholeTest) {
     const found = new Map<number, Construction>()
@@ -61,6 +64,17 @@ export function createInputsService({ pumpingTests, streams, wells: wellsService
       if (atLeast(viewer, 'analyst')) return null
       const { parts } = await pumpingTests.whole(executor, viewer, testId)
       return new Set(parts.wells.map(({ row }) => String(row.wellId)))
+    },
+
+    /** Streams and edges of the aquifer near the pumped well: offered to analyses, and no part of what they rest on. */
+    async surroundings(executor: Executor, { parts }: WholeTest) {
+      const pumped = parts.wells.find(({ row }) => row.role === 'pumped')
+      const unitIds = parts.units.map(({ unitId }) => unitId)
+      if (!pumped || unitIds.length === 0) return []
+      const fed = await streams.pathsConnected(executor, unitIds)
+      const bounded = await boundaries.affecting(executor, unitIds)
+      const watered = fed.map(({ name, path }) => ({ kind: 'recharge' as const, name, path }))
+      return surroundingsOf(pumped.position, [...watered, ...bounded.map(edgeOfBoundary)])
     },
 
     async snapshot(executor: Executor, viewer: Viewer, testId: number): Promise<Snapshot> {

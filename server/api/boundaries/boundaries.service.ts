@@ -3,7 +3,7 @@ import type { Position } from '../../db/spatial.ts'
 import { inTransaction } from '../../db/transaction.ts'
 import type { Deps } from '../../deps.ts'
 import { recordAudit } from '../audit-trail/record-audit.ts'
-import { insertBoundary, listBoundaries, listBoundaryUnits } from './boundaries.repository.ts'
+import { boundariesOfUnits, insertBoundary, listBoundaries, listBoundaryUnits } from './boundaries.repository.ts'
 
 export interface NewBoundary {
   name: string
@@ -24,6 +24,9 @@ export function createBoundariesService(deps: Deps) {
         await recordAudit(tx, { viewer, at: now(), action: 'boundaries/create', subject: 'boundary', subjectId: id })
         return { id }
       }),
+
+    /** Boundaries of any of the units, at least one. */
+    affecting: boundariesOfUnits,
 
     async list() {
       const [rows, units] = await Promise.all([listBoundaries(db), listBoundaryUnits(db)])

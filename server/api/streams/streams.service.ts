@@ -35,6 +35,7 @@ export function createStreamsService(deps: Deps) {
 
   return {
     connected,
+    pathsConnected: connectedStreams,
 
     create: (viewer: Viewer, stream: NewStream) =>
       inTransaction(deps, async (tx) => {

@@ -7,7 +7,7 @@ import {
   type AnalysisResult,
   type Finding,
 } from '#shared/hydraulics/analysis.ts'
-import { agreementOf, type ComparedAnalysis } from '#shared/hydraulics/agreement.ts'
+import { recoveryConfirms, type ComparedAnalysis } from '#shared/hydraulics/agreement.ts'
 import { analyse, methods, type MethodId } from '#shared/hydraulics/catalogue.ts'
 import { evidenceFacts } from '#shared/hydraulics/evidence-facts.ts'
 import { evidenceOf, type Evidence } from '#shared/hydraulics/evidence.ts'
@@ -64,14 +64,13 @@ export function evidencePreview(
   const mine = comparedOf('', '', { ...work, wellIds: work.options.wellIds })
   if (!mine) return null
   const recoveryAgrees = kept.some((other) => {
-    if (other.id === work.id || other.method !== 'recovery' || !isEvidence(other.state) || !isFitted(other))
-      return false
+    if (other.id === work.id || !isEvidence(other.state) || !isFitted(other)) return false
     const theirs = comparedOf('', '', {
       ...other,
       wellIds: other.options.wellIds,
       result: other.result as AnalysisResult,
     })
-    return theirs !== null && agreementOf(mine, theirs).code !== 'disagree'
+    return theirs !== null && recoveryConfirms(mine, theirs)
   })
   return evidenceOf(evidenceFacts(inputs, work.options, work.result, { recoveryAgrees }))
 }

@@ -21,14 +21,14 @@ function useKeptList() {
 
 /** Saving, deleting and the conflict of two editors. */
 export function useAnalysisWrites() {
-  const { test, snapshot, present, result, kept, selected, select, discard, setWork, unsavedOf, settle } =
+  const { test, snapshot, present, result, waiting, kept, selected, select, discard, setWork, unsavedOf, settle } =
     useWorkbench()
   const messages = useMessages()
   const changed = useDataChanged()
   const enter = useKeptList()
 
   const body = computed<AnalysisInput | null>(() => {
-    if (!present.value || !result.value) return null
+    if (!present.value || !result.value || waiting.value) return null
     const { method, options, label } = present.value
     const { methodVersion, T, S } = result.value
     const expected = { methodVersion, T: T?.value ?? null, S: S?.value ?? null }

@@ -27,7 +27,7 @@ interface PlotSettings {
 
 /** The plot that stands, and the drawing that follows the mouse. The plot is made anew only when what it shows changes. */
 export function useTestPlot({ smoothing, moment, diagnosed }: PlotSettings) {
-  const { snapshot, present, result, moving, plotKind } = useWorkbench()
+  const { snapshot, present, result, calculated, moving, plotKind } = useWorkbench()
   const units = useUnits()
   const preferences = usePreferences()
 
@@ -61,8 +61,8 @@ export function useTestPlot({ smoothing, moment, diagnosed }: PlotSettings) {
   })
 
   const fit = computed<Fit | null>(() =>
-    present.value && result.value
-      ? { inputs: snapshot.value.inputs, options: present.value.options, result: result.value }
+    calculated.value && result.value
+      ? { inputs: snapshot.value.inputs, options: calculated.value.options, result: result.value }
       : null,
   )
 

@@ -7,7 +7,8 @@ import { plotOfMethod, type PlotKind } from '#shared/charts/plot-kinds.ts'
 import { useSession } from '../../stores/session.ts'
 import { firstOptions } from './first-options.ts'
 import { keepWhileOpen, readWork, type Work } from './kept-work.ts'
-import { isFitted, isPumped, outcomeOf, resultOf, type Outcome } from './outcome.ts'
+import { isFitted, isPumped, resultOf, type Outcome } from './outcome.ts'
+import { isSame, useCalculation, type Asked } from './use-calculation.ts'
 import { useResting } from './use-resting.ts'
 import { changedPart, useUndo, type Undo } from './use-undo.ts'
 
@@ -26,6 +27,10 @@ export interface Workbench {
   editable: ComputedRef<boolean>
   outcome: ComputedRef<Outcome | null>
   result: ComputedRef<AnalysisResult | null>
+  /** What the result belongs to; behind `present` while a slow fit waits for the hand to rest. */
+  calculated: ComputedRef<Asked | null>
+  /** The result belongs to earlier options than the present ones. */
+  waiting: Readonly<Ref<boolean>>
   /** Work and result while nothing moves: what takes longer, or stands aside, follows them and not the mouse. */
   resting: Readonly<Ref<{ work: Work; result: AnalysisResult } | null>>
   moving: ComputedRef<boolean>
@@ -91,13 +96,16 @@ export function provideWorkbench(given: Given): Workbench {
   const unsaved = computed(() => (selected.value !== null && editable.value ? unsavedOf(selected.value) : null))
   const present = computed(() => unsaved.value ?? workOf(kept.value))
 
-  const outcome = computed<Outcome | null>(() => {
+  const asked = computed<Asked | null>((before) => {
     if (!present.value) return null
     // A draft of inputs that have changed is calculated anew, so that saving it can keep what the page shows.
     const stands = kept.value && !unsaved.value && !(kept.value.inputsChanged && editable.value)
-    if (stands && kept.value) return { result: kept.value.result as AnalysisResult }
-    return outcomeOf(present.value.method, snapshot.value.inputs, present.value.options)
+    const { method, options } = present.value
+    const result = stands && kept.value ? (kept.value.result as AnalysisResult) : null
+    const now = { key: selected.value, method, options, inputs: snapshot.value.inputs, kept: result }
+    return before && isSame(before, now) ? before : now
   })
+  const { outcome, calculated, waiting } = useCalculation(asked)
 
   function put(at: string, changed: Work | null) {
     const { [at]: _gone, ...others } = works.value
@@ -182,7 +190,13 @@ export function provideWorkbench(given: Given): Workbench {
 
   const result = computed(() => resultOf(outcome.value))
   const resting = useResting(
-    computed(() => (present.value && result.value ? { work: present.value, result: result.value } : null)),
+    computed<{ work: Work; result: AnalysisResult } | null>((before) =>
+      waiting.value && before
+        ? before
+        : present.value && result.value
+          ? { work: present.value, result: result.value }
+          : null,
+    ),
   )
 
   const bench: Workbench = {
@@ -197,8 +211,10 @@ export function provideWorkbench(given: Given): Workbench {
     editable,
     outcome,
     result,
+    calculated,
+    waiting,
     resting,
-    moving: computed(() => (resting.value?.result ?? null) !== result.value),
+    moving: computed(() => waiting.value || (resting.value?.result ?? null) !== result.value),
     hasNew: computed(() => NEW in works.value),
     isChanged: (at) => at in works.value && (analyses.value.find(({ id }) => String(id) === at)?.mayEdit ?? false),
     select,

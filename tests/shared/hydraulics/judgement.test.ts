@@ -1,5 +1,5 @@
 import { describe, expect, it } from 'vitest'
-import { agreementOf, agreements, type ComparedAnalysis } from '#shared/hydraulics/agreement.ts'
+import { agreementOf, agreements, recoveryConfirms, type ComparedAnalysis } from '#shared/hydraulics/agreement.ts'
 import { analyse } from '#shared/hydraulics/catalogue.ts'
 import { evidenceFacts } from '#shared/hydraulics/evidence-facts.ts'
 import { defaultEvidenceErrors, evidenceOf, type EvidenceFacts } from '#shared/hydraulics/evidence.ts'
@@ -140,6 +140,16 @@ describe('agreement', () => {
       'other-well',
       'distances',
     ])
+  })
+
+  it('confirms a value by the recovery, unless both look at the same readings of it', () => {
+    const pumping = makeCompared()
+    const recovery = makeCompared({ phase: 'recovery' })
+    const far = makeCompared({ phase: 'recovery', T: { ...pumping.T, value: 2e-2 } })
+    expect(recoveryConfirms(pumping, recovery)).toBe(true)
+    expect(recoveryConfirms(recovery, pumping)).toBe(false)
+    expect(recoveryConfirms(recovery, recovery)).toBe(false)
+    expect(recoveryConfirms(pumping, far)).toBe(false)
   })
 
   it('looks at every pair once', () => {

@@ -1,5 +1,6 @@
 import { describe, expect, it } from 'vitest'
-import { metresPerPixel, scaleBar } from '../../../src/components/map/scale-bar.ts'
+import { scaleBar } from '#shared/charts/scale-bar.ts'
+import { metresPerPixel } from '../../../src/components/map/metres-per-pixel.ts'
 
 describe('the scale bar', () => {
   it('is a round distance that fits', () => {

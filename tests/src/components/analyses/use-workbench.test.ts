@@ -18,6 +18,7 @@ const makeSnapshot = (inputs = makeTestInputs()): WorkbenchInputs => ({
   sha256: 'a'.repeat(64),
   readings: [],
   problems: [],
+  surroundings: [],
 })
 
 /** The workbench of a test whose analyses and inputs the test can change. */

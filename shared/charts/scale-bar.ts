@@ -32,7 +32,3 @@ export function scaleBar(metresPerPx: number, mostPx: number, lengthUnit: string
   const round = roundDown(most / unit.metres)
   return { px: (round * unit.metres) / metresPerPx, label: `${formatNumber(round, { trim: true })} ${unit.label}` }
 }
-
-/** Metres in a pixel of the Web Mercator map at a latitude. */
-export const metresPerPixel = (lat: number, zoom: number): number =>
-  (40_075_016.686 * Math.cos((lat * Math.PI) / 180)) / (256 * 2 ** zoom)

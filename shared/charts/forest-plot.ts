@@ -1,0 +1,63 @@
+import type { OtherEstimate } from '#shared/hydraulics/analysis.ts'
+import { logAxis, powersIn, shareOf, tickText, type Axis } from './axis.ts'
+
+/** A positive quantity with its interval, in the reader's unit. */
+export interface ForestEstimate extends Pick<OtherEstimate, 'value' | 'low' | 'high' | 'determined'> {
+  key: string
+}
+
+/** Where value and interval stand along the axis, 0 to 1; an end that lies beyond the axis is cut off there. */
+export interface ForestMark {
+  key: string
+  value: number
+  low: number
+  high: number
+  cutLow: boolean
+  cutHigh: boolean
+  determined: boolean
+}
+
+export interface ForestPlot {
+  marks: ForestMark[]
+  ticks: { share: number; text: string }[]
+}
+
+/** Intervals are drawn to this factor beyond the outermost values: one without end would flatten all others. */
+const BEYOND = 10
+const MOST_TICKS = 7
+
+/** Estimates of one quantity under each other on one logarithmic axis; null where there is none. */
+export function forestPlot(estimates: readonly ForestEstimate[]): ForestPlot | null {
+  const values = estimates.map(({ value }) => value).filter((value) => value > 0)
+  if (values.length === 0) return null
+  const [least, most] = [Math.min(...values) / BEYOND, Math.max(...values) * BEYOND]
+  const cut = (value: number) => Math.max(least, Math.min(most, value))
+  const axis = logAxis(
+    estimates.flatMap(({ low, high, value }) => [cut(low), cut(high), value]),
+    '',
+    { air: 0.06 },
+  )
+  const marks = estimates
+    .filter(({ value }) => value > 0)
+    .map(({ key, value, low, high, determined }) => ({
+      key,
+      value: shareOf(axis, value),
+      low: shareOf(axis, cut(low)),
+      high: shareOf(axis, cut(high)),
+      cutLow: low < least,
+      cutHigh: high > most,
+      determined,
+    }))
+  return { marks, ticks: ticksOf(axis).map((value) => ({ share: shareOf(axis, value), text: tickText(value) })) }
+}
+
+/** Round numbers: 1, 2 and 5 of every power of ten, or 1 alone where that is too many. */
+function ticksOf(axis: Axis): number[] {
+  const first = Math.floor(Math.log10(axis.min))
+  const last = Math.floor(Math.log10(axis.max))
+  const all = Array.from({ length: last - first + 1 }, (_, i) => first + i).flatMap((power) =>
+    [1, 2, 5].map((digit) => Number(`${digit}e${power}`)),
+  )
+  const inside = all.filter((value) => value >= axis.min && value <= axis.max)
+  return inside.length > MOST_TICKS ? powersIn(axis) : inside
+}

@@ -1,0 +1,153 @@
+import type { AnalysisInputs, ChosenBoundary, Series } from '#shared/hydraulics/analysis.ts'
+import { sketchEdge, type DrawnEdge } from './sketch-edges.ts'
+import { besides, insideFrame, type SketchLabel } from './sketch-labels.ts'
+import type { Size } from './plot-frame.ts'
+
+/** A stream or barrier near the test: one that an analysis takes in, or one that the map knows. */
+export interface SketchEdge {
+  kind: ChosenBoundary['kind']
+  name: string
+  distance_m: number
+  bearing_deg: number
+  chosen: boolean
+}
+
+export interface XYPx {
+  x: number
+  y: number
+}
+
+export interface SketchWell extends XYPx {
+  wellId: string
+  role: Series['role']
+  label: SketchLabel
+}
+
+/** A well whose direction is not known: it stands somewhere on a ring. */
+export interface SketchRing {
+  wellId: string
+  radius: number
+  label: SketchLabel
+}
+
+/** The test from above, north up, px from the upper left corner. */
+export interface TestSketch {
+  size: Size
+  centre: XYPx
+  wells: SketchWell[]
+  rings: SketchRing[]
+  edges: DrawnEdge[]
+  metresPerPx: number
+}
+
+/** Room for labels, the scale bar and the arrow. */
+const MARGIN = { side: 34, top: 26, bottom: 34 }
+/** An edge farther than this many times the farthest well is drawn at the frame: the wells would vanish in a corner. */
+const FAR = 2.5
+/** Half the width shown where a test has one well and nothing else, m. */
+const ALONE_M = 25
+
+interface Metres {
+  east: number
+  north: number
+}
+
+const offset = (distance_m: number, bearing_deg: number): Metres => {
+  const angle = (bearing_deg * Math.PI) / 180
+  return { east: distance_m * Math.sin(angle), north: distance_m * Math.cos(angle) }
+}
+
+/** Lays out a test. `distance` writes a distance in the reader's unit. */
+export function testSketch(
+  { series }: Pick<AnalysisInputs, 'series'>,
+  edges: readonly SketchEdge[],
+  size: Size,
+  distance: (metres: number) => string,
+): TestSketch {
+  const observed = series.filter(({ role }) => role === 'observation')
+  const placed = observed.filter(({ bearing_deg }) => bearing_deg != null)
+  const farthest = Math.max(0, ...observed.map(({ distance_m }) => distance_m))
+  const isFar = (edge: SketchEdge) => farthest > 0 && edge.distance_m > FAR * farthest
+  const near = edges.filter((edge) => !isFar(edge))
+  const shown = [...placed.map(positionOf), ...near.map((edge) => offset(edge.distance_m, edge.bearing_deg))]
+  const unplaced = observed.filter(({ bearing_deg }) => bearing_deg == null)
+  const view = viewOf([...shown, ...unplaced.flatMap(({ distance_m }) => ringCorners(distance_m))], size)
+  const centre = view.at({ east: 0, north: 0 })
+  const wells = sketchWells(series, view.at, { size, distance })
+  return {
+    size,
+    centre,
+    wells,
+    rings: unplaced.map((one) => ringOf(one, { size, centre, metresPerPx: view.metresPerPx, distance })),
+    edges: edges.map((edge) =>
+      sketchEdge(edge, { size, centre, metresPerPx: view.metresPerPx, far: isFar(edge), wells, distance }),
+    ),
+    metresPerPx: view.metresPerPx,
+  }
+}
+
+function sketchWells(
+  series: readonly Series[],
+  at: (point: Metres) => XYPx,
+  { size, distance }: { size: Size; distance: (metres: number) => string },
+): SketchWell[] {
+  const pumped = series.find(({ role }) => role === 'pumped')
+  const placed = series.filter(({ role, bearing_deg }) => role === 'observation' && bearing_deg != null)
+  const points = [
+    {
+      wellId: pumped?.wellId ?? '',
+      role: 'pumped' as const,
+      text: pumped ? `${pumped.label}, pumped` : 'pumped well',
+      ...at({ east: 0, north: 0 }),
+    },
+    ...placed.map((one) => ({
+      wellId: one.wellId,
+      role: one.role,
+      text: `${one.label}, ${distance(one.distance_m)}`,
+      ...at(positionOf(one)),
+    })),
+  ]
+  const labels = besides(points, size)
+  return points.map(({ wellId, role, x, y }, i) => ({ wellId, role, x, y, label: labels[i] as SketchLabel }))
+}
+
+const positionOf = ({ distance_m, bearing_deg }: Series) => offset(distance_m, bearing_deg ?? 0)
+
+const ringCorners = (radius: number): Metres[] => [
+  { east: -radius, north: -radius },
+  { east: radius, north: radius },
+]
+
+interface Laid {
+  size: Size
+  centre: XYPx
+  metresPerPx: number
+  distance: (metres: number) => string
+}
+
+function ringOf({ wellId, label, distance_m }: Series, { size, centre, metresPerPx, distance }: Laid): SketchRing {
+  const radius = distance_m / metresPerPx
+  const text = `${label}, ${distance(distance_m)}, direction not known`
+  const above: SketchLabel = { text, x: centre.x, y: centre.y - radius - 4, anchor: 'middle' }
+  return { wellId, radius, label: insideFrame(above, size) }
+}
+
+/** The scale and place at which all points, the pumped well among them, fit the frame. */
+function viewOf(points: Metres[], { width, height }: Size) {
+  const all = [{ east: 0, north: 0 }, ...points]
+  const span = (pick: (point: Metres) => number) => {
+    const values = all.map(pick)
+    return { low: Math.min(...values), high: Math.max(...values) }
+  }
+  const east = span((point) => point.east)
+  const north = span((point) => point.north)
+  const inner = { width: width - 2 * MARGIN.side, height: height - MARGIN.top - MARGIN.bottom }
+  const fitting = Math.max((east.high - east.low) / inner.width, (north.high - north.low) / inner.height)
+  const metresPerPx = fitting > 0 ? fitting : (2 * ALONE_M) / inner.height
+  const middle = { east: (east.low + east.high) / 2, north: (north.low + north.high) / 2 }
+  const at = (point: Metres): XYPx => ({
+    x: width / 2 + (point.east - middle.east) / metresPerPx,
+    y: MARGIN.top + inner.height / 2 - (point.north - middle.north) / metresPerPx,
+  })
+  return { at, metresPerPx }
+}
