@@ -12,6 +12,7 @@ import { healthRoutes } from './health/health.routes.ts'
 import { jobsRoutes } from './jobs/jobs.routes.ts'
 import { adoptedValuesRoutes } from './adopted-values/adopted-values.routes.ts'
 import { analysesRoutes } from './analyses/analyses.routes.ts'
+import { analysisReportsRoutes } from './analysis-reports/analysis-reports.routes.ts'
 import { estimatesRoutes } from './estimates/estimates.routes.ts'
 import { pumpingTestsRoutes } from './pumping-tests/pumping-tests.routes.ts'
 import { readingSeriesRoutes } from './reading-series/reading-series.routes.ts'
@@ -53,6 +54,7 @@ export function allRoutes(services: Services, deps: Deps): Route[] {
     ...pumpingTestsRoutes(services, deps),
     ...readingSeriesRoutes(services, deps),
     ...analysesRoutes(services, deps),
+    ...analysisReportsRoutes(services),
     ...reviewsRoutes(services),
     ...adoptedValuesRoutes(services),
     ...estimatesRoutes(services),

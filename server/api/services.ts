@@ -2,6 +2,7 @@ import type { Deps } from '../deps.ts'
 import { createAccountService } from './account/account.service.ts'
 import { createAdoptedValuesService } from './adopted-values/adopted-values.service.ts'
 import { createAnalysesService, type AnalysesService } from './analyses/analyses.service.ts'
+import { createAnalysisReportsService } from './analysis-reports/analysis-reports.service.ts'
 import { createInputsService } from './analyses/inputs.service.ts'
 import { createAquiferUnitsService } from './aquifer-units/aquifer-units.service.ts'
 import { createAuditTrailService } from './audit-trail/audit-trail.service.ts'
@@ -56,6 +57,7 @@ export function createServices(deps: Deps) {
     account: createAccountService(deps, region),
     adoptedValues,
     analyses,
+    analysisReports: createAnalysisReportsService(deps, { analyses, pumpingTests, region }),
     aquiferUnits: createAquiferUnitsService(deps),
     auditTrail: createAuditTrailService(deps),
     boundaries,

@@ -43,6 +43,7 @@ export const toPlace = (place: { lat: number; lon: number }, unitId: number | nu
 })
 
 export const toPumpingTests = (): Link => named('pumping-tests')
+export const toPumpingTestReport = (id: number): Link => named('pumping-test-report', { id })
 /** With the pumped well filled in. */
 export const toNewPumpingTest = (wellId: number | null = null): Link => ({
   name: 'new-pumping-test',

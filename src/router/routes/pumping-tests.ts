@@ -26,6 +26,12 @@ export const pumpingTestRoutes: RouteRecordRaw[] = [
     component: () => import('../../views/EditPumpingTestView.vue'),
   },
   {
+    path: '/pumping-tests/:id(\\d+)/report',
+    name: 'pumping-test-report',
+    meta: { title: 'Analysis report', action: 'analyses/read' },
+    component: () => import('../../views/PumpingTestReportView.vue'),
+  },
+  {
     path: '/pumping-tests/:id(\\d+)/readings',
     name: 'readings',
     meta: { title: 'Readings', action: 'pumping-tests/read' },
