@@ -25,6 +25,7 @@ const references = [
     'leaky-fits',
     'leaky-functions',
     'numerics-functions',
+    'published-cases',
     'readings-filters',
     'readings-zones',
     'test-kinds',

@@ -11,9 +11,11 @@ import { withDrawdown } from '../make-readings.ts'
 import { countsOf, withNoise } from './curve-families.ts'
 import type { Family } from './family.ts'
 
-const [T, S, SIGMA_M] = [5e-3, 2e-4, 0.01]
+export const lineTruth = { T: 5e-3, S: 2e-4 }
+const SIGMA_M = 0.01
 
-interface Synthetic {
+/** A synthetic test of one straight-line method. */
+export interface LineTest {
   method: Method
   inputs: AnalysisInputs
   options?: Partial<AnalysisOptions>
@@ -21,14 +23,13 @@ interface Synthetic {
 }
 
 /** Late readings of the confined curve, so that the line itself is off by less than its interval is wide. */
-function lineFamily({ method, inputs, options = {}, found }: Synthetic): Family {
-  const exact = withDrawdown(theis, [T, S], inputs)
+function lineFamily({ method, inputs, options = {}, found }: LineTest): Family {
+  const exact = withDrawdown(theis, [lineTruth.T, lineTruth.S], inputs)
   const chosen = makeOptions({ wellIds: inputs.series.map(({ wellId }) => wellId), ...options })
-  const truth = { T, S }
   return {
     id: method.id,
     laplace: false,
-    truth: Object.fromEntries(found.map((id) => [id, truth[id]])),
+    truth: Object.fromEntries(found.map((id) => [id, lineTruth[id]])),
     counts: countsOf(inputs),
     find: (noise) => {
       const outcome = method.run(withNoise(exact, noise, SIGMA_M), chosen)
@@ -49,10 +50,12 @@ const recovered = makeInputs({
 const wells = (elapsed_s: number[]): Series[] =>
   [5, 8, 12, 18, 27, 40].map((distance_m, i) => makeSeries({ wellId: `o${i}`, distance_m, elapsed_s }))
 
-export const lineFamilies: Family[] = [
+export const lineTests: LineTest[] = [
   { method: cooperJacob, inputs: makeInputs({ series: [near(logSpaced(40, 600, DAY))] }), found: ['T', 'S'] },
   { method: distanceDrawdown, inputs: makeInputs({ series: wells([DAY - 60, DAY]) }), options: { time_s: DAY }, found: ['T', 'S'] }, // prettier-ignore
   { method: steadyState, inputs: makeInputs({ series: wells(logSpaced(10, 0.9 * DAY, DAY)) }), found: ['T'] },
   { method: recovery, inputs: recovered, found: ['T'] },
   { method: recoveryEquivalentTime, inputs: recovered, found: ['T', 'S'] },
-].map((one) => lineFamily(one as Synthetic))
+]
+
+export const lineFamilies: Family[] = lineTests.map(lineFamily)
