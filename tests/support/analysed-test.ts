@@ -1,4 +1,5 @@
 import type { Analysis, WorkbenchInputs } from '#shared/contracts/analyses.ts'
+import { analysisOptions } from '#shared/contracts/analysis-result.ts'
 import type { PumpingTest, PumpingTestInput } from '#shared/contracts/pumping-tests.ts'
 import type { WellInput } from '#shared/contracts/wells.ts'
 import { analyse, type MethodId } from '#shared/hydraulics/catalogue.ts'
@@ -74,7 +75,7 @@ export async function recalculate(person: SignedIn, draft: Analysis): Promise<An
   const answer = await person.get(`/api/pumping-tests/${pumpingTestId}/inputs`).expect(200)
   const { inputs, sha256: inputsSha256 } = answer.body as WorkbenchInputs
   const method = draft.method as MethodId
-  const options = draft.options!
+  const options = analysisOptions.parse(draft.options)
   const { methodVersion, T, S } = analyse(method, inputs, options)
   const expected = { methodVersion, T: T?.value ?? null, S: S?.value ?? null }
   const update = { method, options, label: 'Calculated again', expected, inputsSha256, rowVersion }

@@ -1,4 +1,5 @@
 import { beforeAll, describe, expect, it } from 'vitest'
+import { analysisOptions } from '#shared/contracts/analysis-result.ts'
 import type { AdoptedValueList } from '#shared/contracts/adopted-values.ts'
 import type { Analysis } from '#shared/contracts/analyses.ts'
 import type { Problem } from '#shared/contracts/problem.ts'
@@ -145,7 +146,7 @@ describe('a reader', () => {
     expect(seen.result.T!.value).toBe(submitted.result.T!.value)
     expect(seen.result.residuals).toEqual([])
     expect(JSON.stringify(seen)).not.toContain(`"${hidden.code}"`)
-    expect(seen.options!.wellIds).not.toContain(String(hidden.wellId))
+    expect(analysisOptions.parse(seen.options).wellIds).not.toContain(String(hidden.wellId))
     const { items } = (await reader.get(`/api/pumping-tests/${id}/analyses`).expect(200)).body as { items: Analysis[] }
     expect(items).toEqual([seen])
   })

@@ -233,7 +233,7 @@ describe('What was adopted', () => {
     await saveAnalysis(analyst, test.id, 'recovery')
     const proposed = (await saveAnalysis(analyst, test.id, 'cooper-jacob')).body as Analysis
     expect(codes(proposed)).toEqual(['recovery-agrees'])
-    expect(proposed.adoption!.log10ErrorT).toBeLessThan(adoption!.log10ErrorT)
+    expect(proposed.adoption!.log10ErrorT).toBeLessThan(adoption!.log10ErrorT!)
     const list = (await analyst.get(`/api/pumping-tests/${test.id}/analyses`)).body as { items: Analysis[] }
     expect(list.items.find(({ id }) => id === accepted.id)!.adoption).toEqual(adoption)
     expect((await reload(accepted.id)).adoption).toEqual(adoption)
