@@ -3,7 +3,7 @@ import { dampedStep, evaluate, normalEquations, project, unknownAt, type State }
 import { invertSymmetric } from './small-matrix.ts'
 
 export interface LeastSquaresOptions {
-  /** Starting points in natural parameters; each is followed to its end and the lowest objective wins. */
+  /** Starting points in natural parameters; each is followed to a minimum and the lowest objective wins. */
   starts: number[][]
   /** Longest way from one start, default 200 iterations. */
   mostIterations?: number
@@ -34,8 +34,12 @@ export interface LeastSquaresFit {
 
 /** Objectives that differ by less than this relative amount belong to the same minimum. */
 const SAME_MINIMUM = 1e-6
+/** A search this near to a minimum in every transformed parameter, and higher by no more than this share, would end in it. */
+const NEARLY = 0.05
 /** Once a step promises a smaller relative reduction than this, rounding decides whether the objective falls. */
 const ROUNDING_FLOOR = 1e-12
+
+const LEAST_DAMPING = 1e-15
 
 interface Path extends State {
   iterations: number
@@ -52,16 +56,22 @@ export function levenbergMarquardt(problem: LeastSquaresProblem, options: LeastS
   const { starts, mostIterations = 200, tolerance = 1e-11 } = options
   if (starts.length === 0) throw new RangeError('A fit needs a starting point')
   if (problem.count < problem.unknowns.length) throw new RangeError('A fit needs as many readings as unknowns')
-  const paths = starts
-    .map((start) => follow(problem, start, mostIterations, tolerance))
-    .filter((path) => Number.isFinite(path.objective))
-    .sort((a, b) => a.objective - b.objective)
+  const found: Path[] = []
+  for (const start of starts) found.push(follow(problem, start, found, mostIterations, tolerance))
+  const paths = found.filter((path) => Number.isFinite(path.objective)).sort((a, b) => a.objective - b.objective)
   const best = paths[0]
   if (!best) throw new RangeError('The model gives no finite value at any starting point')
   return describe(problem, best, paths)
 }
 
-function follow(problem: LeastSquaresProblem, start: number[], mostIterations: number, tolerance: number): Path {
+/** One start to its end, or to a minimum that an earlier one has found, so that no way is gone twice. */
+function follow(
+  problem: LeastSquaresProblem,
+  start: number[],
+  found: readonly Path[],
+  mostIterations: number,
+  tolerance: number,
+): Path {
   let state = evaluate(
     problem,
     project(
@@ -72,19 +82,29 @@ function follow(problem: LeastSquaresProblem, start: number[], mostIterations: n
   let damping = 1e-3
   let growth = 2
   let lastStep = Infinity
+  let undamped = false
   for (let iteration = 1; iteration <= mostIterations && Number.isFinite(state.objective); iteration++) {
     const move = dampedStep(problem, state, damping)
     if (move && move.length <= tolerance) return { ...state, iterations: iteration, converged: true }
     const next = move && evaluate(problem, move.x)
     const gain = next ? state.objective - next.objective : NaN
     const settling = move !== null && move.promised <= ROUNDING_FLOOR * state.objective
-    if (settling && move.length >= lastStep) return { ...state, iterations: iteration, converged: true }
+    if (settling && move.length >= lastStep) {
+      if (undamped) return { ...state, iterations: iteration, converged: true }
+      // Damping may have held the last step short, so that only one without it tells that rounding is reached.
+      undamped = true
+      damping = LEAST_DAMPING
+      lastStep = Infinity
+      continue
+    }
     if (next && (gain > 0 || (settling && Number.isFinite(next.objective)))) {
       const quality = move.promised > 0 ? gain / move.promised : 1
-      damping = Math.max(1e-15, damping * Math.max(1 / 10, Math.min(2, 1 - (2 * quality - 1) ** 3)))
+      damping = Math.max(LEAST_DAMPING, damping * Math.max(1 / 10, Math.min(2, 1 - (2 * quality - 1) ** 3)))
       growth = 2
       lastStep = move.length
       state = next
+      const met = found.find((path) => path.converged && meets(next, path))
+      if (met) return met
     } else {
       damping *= growth
       growth *= 2
@@ -93,6 +113,11 @@ function follow(problem: LeastSquaresProblem, start: number[], mostIterations: n
   }
   return { ...state, iterations: mostIterations, converged: false }
 }
+
+const meets = (state: State, { x, objective }: Path) =>
+  state.objective >= objective &&
+  state.objective <= (1 + NEARLY) * objective &&
+  state.x.every((value, k) => Math.abs(value - (x[k] as number)) <= NEARLY)
 
 function describe(problem: LeastSquaresProblem, best: Path, paths: Path[]): LeastSquaresFit {
   const { unknowns, count } = problem
