@@ -1,16 +1,10 @@
-import type { AnalysisInputs, ChosenBoundary, Series } from '#shared/hydraulics/analysis.ts'
+import type { AnalysisInputs, Series } from '#shared/hydraulics/analysis.ts'
+import type { SketchEdge } from '#shared/words/test-sketch.ts'
 import { sketchEdge, type DrawnEdge } from './sketch-edges.ts'
 import { besides, insideFrame, type SketchLabel } from './sketch-labels.ts'
 import type { Size } from './plot-frame.ts'
 
-/** A stream or barrier near the test: one that an analysis takes in, or one that the map knows. */
-export interface SketchEdge {
-  kind: ChosenBoundary['kind']
-  name: string
-  distance_m: number
-  bearing_deg: number
-  chosen: boolean
-}
+export type { SketchEdge }
 
 export interface XYPx {
   x: number

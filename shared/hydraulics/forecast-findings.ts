@@ -60,9 +60,9 @@ function thinningFindings(
 
 function bandFindings({ result }: AnalysedCurve, points: readonly ForecastPoint[]): Finding[] {
   const factor = Math.max(1, ...points.map(({ low_m, high_m }) => (low_m && high_m ? high_m / low_m : 1)))
-  const loose = (result.others ?? []).filter(({ determined }) => !determined)
+  const isLoose = (result.others ?? []).some(({ determined }) => !determined)
   return [
     ...(factor > WIDE_BAND ? [{ code: 'forecast-wide', severity: 'caution' as const, params: { factor } }] : []),
-    ...loose.map(({ id }) => ({ code: 'forecast-loose', severity: 'caution' as const, params: { parameter: id } })),
+    ...(isLoose ? [{ code: 'forecast-loose', severity: 'caution' as const, params: {} }] : []),
   ]
 }

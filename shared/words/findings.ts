@@ -4,6 +4,7 @@ import { kindMethods } from '#shared/hydraulics/kinds.ts'
 import { formatElapsed } from '#shared/quantities/elapsed.ts'
 import { formatNumber, formatQuantity } from '#shared/quantities/format.ts'
 import { defaultUnitSystemId, unitSystemById, type UnitSystem } from '#shared/quantities/systems.ts'
+import { forecastFindings } from './forecast.ts'
 import { kindFindings, kindOptionNames, kindRefusals } from './kind-findings.ts'
 import { leakageFindings, penetrationRefusals } from './leakage-findings.ts'
 import { storageFindings, storageRefusals } from './storage-findings.ts'
@@ -34,6 +35,7 @@ const optionNames: Record<string, string> = {
 
 /** Every finding of an analysis. */
 const findings: Sentences<string> = {
+  ...forecastFindings,
   ...kindFindings,
   ...leakageFindings,
   ...storageFindings,

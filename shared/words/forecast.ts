@@ -1,9 +1,7 @@
-import type { Finding } from '#shared/hydraulics/analysis.ts'
 import type { ForecastPoint, ForecastRefusal } from '#shared/hydraulics/forecast.ts'
-import { methods, type MethodId } from '#shared/hydraulics/catalogue.ts'
-import { formatElapsed } from '#shared/quantities/elapsed.ts'
-import { formatInterval, formatNumber, formatQuantity } from '#shared/quantities/format.ts'
+import { formatInterval, formatQuantity } from '#shared/quantities/format.ts'
 import type { UnitSystem } from '#shared/quantities/systems.ts'
+import type { Sentences } from './findings.ts'
 
 const refusals: Record<ForecastRefusal, string> = {
   'no-curve': 'A straight line says nothing at other distances and times. Choose an analysis by a curve.',
@@ -17,42 +15,25 @@ export const forecastRefusalText = (refusal: ForecastRefusal): string => refusal
 export const forecastBasis =
   'The 95 % band holds the scatter of the readings and the errors of rate and distance in the test. It does not hold boundaries that the test did not feel, pumping of others, recharge, or losses in a pumped well.'
 
-type Params = Finding['params']
-type Sentence = (params: Params, units: UnitSystem, method: MethodId) => string
-
-const length = (params: Params, name: string, units: UnitSystem) =>
-  formatQuantity(Number(params[name]), units.length, { trim: true })
-const percent = (value: unknown) => `${formatNumber(100 * Number(value), { figures: 2, trim: true })} %`
-const parameterName = (method: MethodId, id: unknown) =>
-  methods[method].unknowns.find((unknown) => unknown.id === id)?.label ?? 'The distance to a boundary'
-
-const sentences: Record<string, Sentence> = {
-  'forecast-longer': ({ asked, tested }) =>
-    `${formatElapsed(Number(asked))} of pumping is longer than the ${formatElapsed(Number(tested))} that the analysis rests on: what the test did not feel may matter by then.`,
-  'forecast-farther': (params, units) =>
-    `${length(params, 'asked', units)} is farther than the ${length(params, 'tested', units)} of the farthest well analysed: the aquifer may differ there.`,
+/** What to bear in mind about a forecast. */
+export const forecastFindings: Sentences<string> = {
+  'forecast-longer': ({ span }) =>
+    `${span('asked')} of pumping is longer than the ${span('tested')} that the analysis rests on: what the test did not feel may matter by then.`,
+  'forecast-farther': ({ length }) =>
+    `${length('asked')} is farther than the ${length('tested')} of the farthest well analysed: the aquifer may differ there.`,
   'forecast-apparent-storage': () =>
     'The storage found is apparent, because the test was too short to tell. Over a longer time drawdown grows more slowly than forecast.',
-  'forecast-thinning': ({ share }) =>
-    `Drawdown may reach ${percent(share)} of the saturated thickness, where thinning of the aquifer makes it larger than forecast.`,
-  'forecast-thinning-much': ({ share }) =>
-    `Drawdown may reach ${percent(share)} of the saturated thickness, more than half. The solution does not hold there.`,
-  'forecast-drained': (params, units) =>
-    `Drawdown would exceed half of the saturated thickness of ${length(params, 'thickness_m', units)}. The solution does not hold there.`,
-  'forecast-wide': ({ factor }) =>
-    `The band spans a factor of ${formatNumber(Number(factor), { figures: 2, trim: true })}: this analysis tells little about that place and time.`,
-  'forecast-loose': ({ parameter }, _units, method) =>
-    `${parameterName(method, parameter)} is not determined by the analysis, and the band is first order in it.`,
+  'forecast-thinning': ({ percent }) =>
+    `Drawdown may reach ${percent('share')} of the saturated thickness, where thinning of the aquifer makes it larger than forecast.`,
+  'forecast-thinning-much': ({ percent }) =>
+    `Drawdown may reach ${percent('share')} of the saturated thickness, more than half. The solution does not hold there.`,
+  'forecast-drained': ({ length }) =>
+    `Drawdown would exceed half of the saturated thickness of ${length('thickness_m')}. The solution does not hold there.`,
+  'forecast-wide': ({ number }) =>
+    `The band spans a factor of ${number('factor')}: this analysis tells little about that place and time.`,
+  'forecast-loose': () =>
+    'A quantity of the solution beside T and S is not determined by the analysis, and the band is first order in it.',
 }
-
-/** @throws RangeError for a code without a sentence */
-export function forecastFindingText({ code, params }: Finding, units: UnitSystem, method: MethodId): string {
-  const sentence = sentences[code]
-  if (!sentence) throw new RangeError(`No sentence for the finding ${code}`)
-  return sentence(params, units, method)
-}
-
-export const forecastFindingCodes = Object.keys(sentences)
 
 /** Drawdown below this is as none: no level is read finer. */
 const READABLE_M = 0.001

@@ -1,6 +1,14 @@
-import type { SketchEdge } from '#shared/charts/test-sketch.ts'
-import type { AnalysisInputs, Series } from '#shared/hydraulics/analysis.ts'
+import type { AnalysisInputs, ChosenBoundary, Series } from '#shared/hydraulics/analysis.ts'
 import { directionText } from './directions.ts'
+
+/** A stream or barrier near the test: one that an analysis takes in, or one that the map knows. */
+export interface SketchEdge {
+  kind: ChosenBoundary['kind']
+  name: string
+  distance_m: number
+  bearing_deg: number
+  chosen: boolean
+}
 
 type Distance = (metres: number) => string
 

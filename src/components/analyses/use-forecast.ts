@@ -4,8 +4,8 @@ import { forecastDrawdown, forecastRefusal } from '#shared/hydraulics/forecast.t
 import type { AnalysedCurve } from '#shared/hydraulics/forecast-uncertainty.ts'
 import { formatElapsed } from '#shared/quantities/elapsed.ts'
 import { toSI } from '#shared/quantities/units.ts'
-import { analysisErrorText } from '#shared/words/findings.ts'
-import { drawdownText, forecastFindingText, forecastRefusalText } from '#shared/words/forecast.ts'
+import { analysisErrorText, findingText } from '#shared/words/findings.ts'
+import { drawdownText, forecastRefusalText } from '#shared/words/forecast.ts'
 import { usePreferences } from '../../stores/preferences.ts'
 import { bySeverity } from './outcome.ts'
 import { useWorkbench } from './use-workbench.ts'
@@ -54,7 +54,7 @@ export function useForecast() {
       })),
       findings: bySeverity(findings).map((finding) => ({
         ...finding,
-        text: forecastFindingText(finding, preferences.unitSystem, given.result.method),
+        text: findingText(finding, preferences.unitSystem),
       })),
     }
   }
