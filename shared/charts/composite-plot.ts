@@ -6,7 +6,7 @@ import { modelled, type Fit } from './fit-band.ts'
 import { inWindowOf, residualUnit, type FitDrawing } from './fit-drawing.ts'
 import { plotClock } from './plot-clock.ts'
 import { plotWells, type PlotPoint, type PlotWell, type XY } from './plot-wells.ts'
-import type { PlotUnits } from './time-plot.ts'
+import { withoutNoise, type PlotUnits } from './time-plot.ts'
 
 /**
  * Drawdown of all observation wells against time over distance squared. In a uniform confined aquifer they fall on one
@@ -66,11 +66,9 @@ export function compositePlot({ inputs, wellIds, options, units, direction }: Co
       points.map(({ x }) => x),
       `time since pumping began over distance squared, ${compositeUnit(units)}`,
     ),
-    y: linearAxis(
-      points.map(({ y }) => y),
-      `drawdown, ${unitById(units.length).label}`,
-      { inverse: direction === 'down' },
-    ),
+    y: linearAxis(withoutNoise(points.map(({ y }) => y)), `drawdown, ${unitById(units.length).label}`, {
+      inverse: direction === 'down',
+    }),
   }
 }
 

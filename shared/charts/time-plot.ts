@@ -96,7 +96,7 @@ function ratioAxis(ratios: number[]): Axis {
 /** Readings that scatter a little about zero before the level falls do not open a part of the axis below it. */
 const NOISE = 0.04
 
-function withoutNoise(values: number[]): number[] {
+export function withoutNoise(values: number[]): number[] {
   const [least, most] = extentOf(values) ?? [0, 1]
   return least < 0 && -least <= NOISE * most ? values.filter((value) => value >= 0) : values
 }
