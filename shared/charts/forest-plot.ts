@@ -51,13 +51,25 @@ export function forestPlot(estimates: readonly ForestEstimate[]): ForestPlot | n
   return { marks, ticks: ticksOf(axis).map((value) => ({ share: shareOf(axis, value), text: tickText(value) })) }
 }
 
-/** Round numbers: 1, 2 and 5 of every power of ten, or 1 alone where that is too many. */
+/** Digits of every power of ten that are written, coarse first. */
+const DIGITS = [
+  [1, 2, 5],
+  [1, 1.5, 2, 3, 4, 5, 6, 7, 8, 9],
+]
+const FEWEST_TICKS = 3
+
+/** Round numbers: the coarsest that are enough to read by, powers of ten alone where those are too many. */
 function ticksOf(axis: Axis): number[] {
+  const [coarse = [], fine = []] = DIGITS.map((digits) => ticksBy(axis, digits))
+  if (coarse.length > MOST_TICKS) return powersIn(axis)
+  return coarse.length < FEWEST_TICKS ? fine : coarse
+}
+
+function ticksBy(axis: Axis, digits: number[]): number[] {
   const first = Math.floor(Math.log10(axis.min))
   const last = Math.floor(Math.log10(axis.max))
   const all = Array.from({ length: last - first + 1 }, (_, i) => first + i).flatMap((power) =>
-    [1, 2, 5].map((digit) => Number(`${digit}e${power}`)),
+    digits.map((digit) => Number(`${digit}e${power}`)),
   )
-  const inside = all.filter((value) => value >= axis.min && value <= axis.max)
-  return inside.length > MOST_TICKS ? powersIn(axis) : inside
+  return all.filter((value) => value >= axis.min && value <= axis.max)
 }

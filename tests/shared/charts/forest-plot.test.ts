@@ -44,6 +44,11 @@ describe('A forest plot', () => {
     }
   })
 
+  it('has enough ticks to read by where estimates agree', () => {
+    const { ticks } = forestPlot([makeEstimate({ value: 365, low: 330, high: 450 })])!
+    expect(ticks.map(({ text }) => text)).toEqual(['400', '500', '600'])
+  })
+
   it('is none without values', () => {
     expect(forestPlot([])).toBeNull()
     expect(forestPlot([makeEstimate({ value: Number.NaN })])).toBeNull()
