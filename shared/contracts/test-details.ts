@@ -63,7 +63,8 @@ interface Described {
   units: unknown[]
 }
 
-const pumping = ({ rateSteps }: Described) => rateSteps.some(({ rate }) => rate.value > 0)
+/** A negative rate has an error of its own. */
+const pumping = ({ rateSteps }: Described) => rateSteps.some(({ rate }) => rate.value !== 0)
 
 /** What each kind asks of the rest of the form: path and code of what is wrong. */
 const demands: Record<
