@@ -9,6 +9,7 @@ import { createServices } from '../../../server/api/services.ts'
 import { seedAccounts } from '../../../server/db/seed/accounts.ts'
 import { draws } from '../../../server/db/seed/random.ts'
 import { demoRecords } from '../../../server/db/seed/records/index.ts'
+import { openPart } from '../../../server/db/seed/records/open-part.ts'
 import type { DemoAnalysis, DemoFullTest, DemoSeries } from '../../../server/db/seed/records/types.ts'
 import { writeFullTest } from '../../../server/db/seed/write/full-test.ts'
 import { writeGeography } from '../../../server/db/seed/write/geography.ts'
@@ -27,16 +28,17 @@ interface Chosen {
   planned: DemoAnalysis
 }
 
+/** The first of each method in the order of the lots, then whatever comes next. */
 function choose(): Chosen[] {
   const uniform = draws(10, 'recomputed analyses')
-  const all = records.tests
+  const drawn = records.tests
     .filter((test): test is DemoFullTest => test.kind === 'constant-rate')
     .flatMap((test) => test.analyses.map((planned) => ({ test, planned })))
-  return all
     .map((one) => ({ one, lot: uniform.uniform() }))
     .sort((a, b) => a.lot - b.lot)
-    .slice(0, HOW_MANY)
     .map(({ one }) => one)
+  const firsts = drawn.filter((one, i) => drawn.findIndex(({ planned }) => planned.method === one.planned.method) === i)
+  return [...firsts, ...drawn.filter((one) => !firsts.includes(one))].slice(0, HOW_MANY)
 }
 
 const chosen = choose()
@@ -65,7 +67,7 @@ const wellOf = (code: string) => records.wells.find((well) => well.code === code
 /** Drawdown of one log, read from its text again, without anything of the server. */
 function seriesOf(test: DemoFullTest, { wellCode, text, mapping }: DemoSeries): Series {
   const observation = test.observationWells.find((well) => well.wellCode === wellCode)
-  const { wellRadiusM, casingRadiusM } = wellOf(wellCode)
+  const well = wellOf(wellCode)
   const start = { instant: new Date(`${test.startLocal}:00-01:00`).toISOString(), zone: test.zone }
   const log = readLog(text, mapping, { start, events_s: test.rateSteps.map(({ startS }) => startS) })
   if (!log.ok) throw new Error(log.code)
@@ -80,8 +82,9 @@ function seriesOf(test: DemoFullTest, { wellCode, text, mapping }: DemoSeries): 
     distance_m: observation?.distanceM ?? 0,
     // A taped distance: known to a decimetre (common practice).
     distanceSd_m: observation ? 0.1 : 0,
-    wellRadius_m: wellRadiusM,
-    casingRadius_m: casingRadiusM,
+    wellRadius_m: well.wellRadiusM,
+    casingRadius_m: well.casingRadiusM,
+    screen: test.unit === 'TG' ? openPart(well, test.thicknessM, test.startLocal) : null,
     elapsed_s: rows.map(({ elapsed_s }) => elapsed_s),
     drawdown_m: rows.map(({ drawdown_m }) => drawdown_m),
     included: rows.map(() => true),
@@ -135,9 +138,10 @@ describe('analyses of the demo region', () => {
     },
   )
 
-  it('are ten, of several methods and units', () => {
+  it('are ten, of several methods and all units, leakage and delayed drainage among them', () => {
     expect(chosen).toHaveLength(HOW_MANY)
-    expect(new Set(chosen.map(({ planned }) => planned.method)).size).toBeGreaterThan(1)
-    expect(new Set(chosen.map(({ test }) => test.unit)).size).toBeGreaterThan(1)
+    const used = chosen.map(({ planned }) => planned.method)
+    for (const method of ['leaky', 'unconfined', 'recovery']) expect(used).toContain(method)
+    expect(new Set(chosen.map(({ test }) => test.unit)).size).toBe(3)
   })
 })

@@ -1,4 +1,4 @@
-import { describe, expect, it } from 'vitest'
+import { describe, expect, it, vi } from 'vitest'
 import { headAt } from '../../../server/db/seed/fields/heads.ts'
 import { toLocal } from '../../../server/db/seed/island/frame.ts'
 import { inland } from '../../../server/db/seed/island/shape.ts'
@@ -7,6 +7,9 @@ import { demoRecords, demoValues, makePlan } from '../../../server/db/seed/recor
 import type { DemoFullTest, DemoReportedTest } from '../../../server/db/seed/records/types.ts'
 import { pumpingTestInput } from '#shared/contracts/pumping-tests.ts'
 import { logMapping } from '#shared/contracts/reading-series.ts'
+
+// A region takes seconds to make: slow on a machine that does other things too.
+vi.setConfig({ testTimeout: 120_000 })
 
 const plan = makePlan(1)
 const records = demoRecords(1, plan)

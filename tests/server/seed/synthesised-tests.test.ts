@@ -1,16 +1,28 @@
-import { describe, expect, it } from 'vitest'
+import { describe, expect, it, vi } from 'vitest'
 import type { AnalysisInputs, Series } from '#shared/hydraulics/analysis.ts'
 import { analyse } from '#shared/hydraulics/catalogue.ts'
 import { readLog } from '#shared/readings/read.ts'
 import type { LogReading } from '#shared/readings/model.ts'
 import { unitById } from '#shared/quantities/units.ts'
-import { drawdownAt, imagesOf, undisturbedUntil } from '../../../server/db/seed/records/drawdown.ts'
+import { alikeFrom, alikeUntil } from '../../../server/db/seed/records/alike.ts'
+import {
+  drawdownCurve,
+  imagesOf,
+  pumpingCurve,
+  type Image,
+  type Observed,
+} from '../../../server/db/seed/records/drawdown.ts'
+import { groundUnder } from '../../../server/db/seed/records/ground.ts'
 import { demoRecords, makePlan } from '../../../server/db/seed/records/index.ts'
 import { levelNoise } from '../../../server/db/seed/records/level-noise.ts'
+import { openPart } from '../../../server/db/seed/records/open-part.ts'
 import type { Design } from '../../../server/db/seed/records/test-design.ts'
 import type { DemoFullTest, DemoSeries } from '../../../server/db/seed/records/types.ts'
 import { draws } from '../../../server/db/seed/random.ts'
 import { toLocal } from '../../../server/db/seed/island/frame.ts'
+
+// Synthesis and fits of delayed drainage: slow on a machine that does other things too.
+vi.setConfig({ testTimeout: 120_000 })
 
 const plan = makePlan(1)
 const records = demoRecords(1, plan)
@@ -39,6 +51,7 @@ function seriesOf(test: DemoFullTest, file: DemoSeries): Series {
     distanceSd_m: 0.1,
     wellRadius_m: well.wellRadiusM,
     casingRadius_m: well.casingRadiusM,
+    screen: test.unit === 'TG' ? openPart(well, test.thicknessM, test.startLocal) : null,
     elapsed_s: rows.map(({ elapsed_s }) => elapsed_s!),
     drawdown_m: rows.map(({ value_m }) => value_m! - offset),
     included: rows.map(() => true),
@@ -91,34 +104,53 @@ describe('a synthesised test', () => {
     }
   })
 
-  it('gives back the hidden T and storage by the analysis put forward', () => {
-    const offT: number[] = []
-    const offS: number[] = []
-    for (const test of accepted) {
-      const { T, S } = run(test, 0)
-      const truth = truthOf(test)
-      offT.push(offBy(T!.value, truth.T))
-      offS.push(offBy(S!.value, truth.storage))
+  const found = accepted.flatMap((test) =>
+    test.analyses.map((analysis, i) => ({ test, analysis, result: run(test, i), truth: truthOf(test) })),
+  )
+  const by = (method: string) => found.filter(({ analysis }) => analysis.method === method)
+
+  it('gives back the hidden T and storage by the curves of its own unit', () => {
+    expect([by('theis').length, by('leaky').length, by('unconfined').length].every((count) => count > 2)).toBe(true)
+    const curves = [...by('theis'), ...by('leaky'), ...by('unconfined')]
+    for (const { result, truth } of curves) expect(offBy(result.T!.value, truth.T)).toBeLessThan(0.06)
+    for (const { result, truth } of curves) expect(offBy(result.S!.value, truth.storage)).toBeLessThan(0.12)
+  })
+
+  it('has the kind of storage that its unit gives, which estimates may use', () => {
+    for (const { test, result } of [...by('theis'), ...by('leaky'), ...by('unconfined')])
+      expect(result.storageClass).toBe(test.unit === 'TG' ? 'specific-yield' : 'elastic')
+  })
+
+  it('shows leakage and delayed drainage: a confined curve through all readings is off', () => {
+    const all = { window: null, phase: 'pumping', afterDrainage: null } as const
+    const misfit = (test: DemoFullTest, method: 'theis' | 'leaky' | 'unconfined', wellIds: string[]) =>
+      analyse(method, inputsOf(test), { ...all, wellIds }).fit.rmse_m
+    const near = (method: 'leaky' | 'unconfined') =>
+      by(method).filter(({ test }) => test.faults.length === 0 && (test.conditions ?? '') === '')
+    for (const method of ['leaky', 'unconfined'] as const) {
+      const ratios = near(method)
+        .slice(0, 5)
+        .map(
+          ({ test, analysis }) => misfit(test, 'theis', analysis.wellCodes) / misfit(test, method, analysis.wellCodes),
+        )
+      expect(Math.max(...ratios)).toBeGreaterThan(2)
     }
-    expect(Math.max(...offT)).toBeLessThan(0.06)
-    expect(Math.max(...offS)).toBeLessThan(0.12)
   })
 
   it('gives back T by the straight line and by recovery too', () => {
-    const lines = accepted.flatMap((test) =>
-      test.analyses.map((analysis, i) => ({ test, analysis, i })).filter(({ analysis }) => analysis.method !== 'theis'),
-    )
-    expect(lines.filter(({ analysis }) => analysis.method === 'cooper-jacob').length).toBeGreaterThan(25)
-    expect(lines.filter(({ analysis }) => analysis.method === 'recovery').length).toBeGreaterThan(25)
-    for (const { test, i } of lines) expect(offBy(run(test, i).T!.value, truthOf(test).T)).toBeLessThan(0.1)
+    expect(by('cooper-jacob').length).toBeGreaterThan(20)
+    expect(by('recovery').length).toBeGreaterThan(20)
+    for (const { result, truth } of [...by('cooper-jacob'), ...by('recovery')])
+      expect(offBy(result.T!.value, truth.T)).toBeLessThan(0.1)
   })
 
   it('is told from a good one when its log drifts', () => {
     const drifting = full.filter(({ faults }) => faults.includes('drift'))
     expect(drifting.length).toBeGreaterThan(0)
+    const firsts = found.filter(({ test, analysis }) => analysis === test.analyses[0])
     for (const test of drifting) {
-      const clean = accepted.filter(({ faults, unit }) => faults.length === 0 && unit === test.unit)
-      const worst = Math.max(...clean.map((other) => run(other, 0).fit.rmse_m))
+      const clean = firsts.filter(({ test: other }) => other.faults.length === 0 && other.unit === test.unit)
+      const worst = Math.max(...clean.map(({ result }) => result.fit.rmse_m))
       expect(run(test, 0).fit.rmse_m).toBeGreaterThan(worst)
     }
   })
@@ -139,39 +171,71 @@ describe('synthetic drawdown', () => {
     wellLoss: 3_000,
     ...overrides,
   })
-  const observer = { place: [30, 0], pumped: false } as const
+  const makeObserved = (overrides: Partial<Observed> = {}): Observed => ({
+    place: [30, 0],
+    pumped: false,
+    pumpedScreen: null,
+    screen: null,
+    ...overrides,
+  })
+  const under = (design: Design) => groundUnder(design, draws(1, 'ground'))
+  const curve = (design: Design, images: Image[] = [], where = makeObserved()) =>
+    drawdownCurve(design, under(design), images, where)
 
   it('is zero before the start, grows while pumping and falls afterwards', () => {
-    const at = (time: number) => drawdownAt(makeDesign(), [], observer, time)
-    expect(at(-60)).toBe(0)
-    expect(at(3_600)).toBeLessThan(at(86_400))
-    expect(at(2 * 86_400)).toBeLessThan(at(86_400))
+    for (const unit of ['TG', 'FL', 'BS'] as const) {
+      const at = curve(makeDesign({ unit, storage: unit === 'TG' ? 0.1 : 2e-4 }))
+      expect(at(-60)).toBe(0)
+      expect(at(3_600)).toBeLessThan(at(86_400))
+      expect(at(2 * 86_400)).toBeLessThan(at(86_400))
+    }
   })
 
   it('is nothing on a stream, and twice its own on a barrier', () => {
-    const image = { at: [100, 0], kind: 'stream' } as const
-    const midway = { place: [50, 0], pumped: false } as const
-    const alone = drawdownAt(makeDesign(), [], midway, 86_400)
-    expect(drawdownAt(makeDesign(), [{ ...image, sign: -1 }], midway, 86_400)).toBeCloseTo(0, 12)
-    expect(drawdownAt(makeDesign(), [{ ...image, sign: 1, kind: 'barrier' }], midway, 86_400)).toBeCloseTo(
-      2 * alone,
-      12,
-    )
+    const midway = makeObserved({ place: [50, 0] })
+    const image = (sign: 1 | -1): Image[] => [{ at: [100, 0], sign, kind: sign === 1 ? 'barrier' : 'stream' }]
+    const alone = curve(makeDesign(), [], midway)(86_400)
+    expect(curve(makeDesign(), image(-1), midway)(86_400)).toBeCloseTo(0, 12)
+    expect(curve(makeDesign(), image(1), midway)(86_400)).toBeCloseTo(2 * alone, 12)
   })
 
   it('carries the turbulent loss in the pumped well only', () => {
     const lossless = makeDesign({ wellLoss: 0 })
-    const pumped = { place: [0, 0], pumped: true } as const
-    const loss = drawdownAt(makeDesign(), [], pumped, 86_400) - drawdownAt(lossless, [], pumped, 86_400)
+    const pumped = makeObserved({ place: [0, 0], pumped: true })
+    const loss = curve(makeDesign(), [], pumped)(86_400) - curve(lossless, [], pumped)(86_400)
     expect(loss).toBeCloseTo(3_000 * 0.01 ** 2, 6)
-    expect(drawdownAt(makeDesign(), [], observer, 86_400)).toBe(drawdownAt(lossless, [], observer, 86_400))
+    expect(curve(makeDesign())(86_400)).toBe(curve(lossless)(86_400))
   })
 
   it('feels a boundary later the farther it is', () => {
+    const design = makeDesign()
+    const { real } = under(design)
+    const free = pumpingCurve(design, real, [], makeObserved())
     const until = (x: number) =>
-      undisturbedUntil(makeDesign(), [{ at: [x, 0], sign: -1, kind: 'stream' }], observer.place)
+      alikeUntil(
+        pumpingCurve(design, real, [{ at: [x, 0], sign: -1, kind: 'stream' }], makeObserved()),
+        free,
+        86_400,
+        0.02,
+      )
     expect(until(150)).toBeLessThan(until(300))
-    expect(undisturbedUntil(makeDesign(), [], observer.place)).toBe(86_400)
+    expect(alikeUntil(free, free, 86_400, 0.02)).toBe(86_400)
+  })
+
+  it('leaves the confined curve of all storage early in the gravels, and late under a leaking clay', () => {
+    const curves = (design: Design) => {
+      const { real, plain } = under(design)
+      return [real, plain].map((one) => pumpingCurve(design, one, [], makeObserved())) as [
+        ReturnType<typeof pumpingCurve>,
+        ReturnType<typeof pumpingCurve>,
+      ]
+    }
+    const [drained, all] = curves(makeDesign())
+    expect(drained(600)).toBeGreaterThan(1.5 * all(600))
+    expect(alikeFrom(drained, all, 10 * 86_400, 0.02)).toBeLessThan(10 * 86_400)
+    const [leaking, confined] = curves(makeDesign({ unit: 'FL', storage: 2e-4 }))
+    expect(leaking(60) / confined(60)).toBeCloseTo(1, 2)
+    expect(leaking(5 * 86_400)).toBeLessThan(0.9 * confined(5 * 86_400))
   })
 
   it('has images only of boundaries that the unit knows', () => {

@@ -1,9 +1,11 @@
-import { theisDrawdown } from '#shared/hydraulics/theis.ts'
+import type { Interval } from '#shared/hydraulics/analysis.ts'
+import type { ResponsePlace } from '#shared/hydraulics/place.ts'
 import { fault } from '../island/fault.ts'
 import type { Point } from '../island/frame.ts'
 import { distanceBetween, footOn } from '../island/lines.ts'
 import { streams } from '../island/streams.ts'
 import { unitOf } from '../island/units.ts'
+import type { Ground } from './ground.ts'
 import type { Design } from './test-design.ts'
 
 /** A well that stands for a boundary: a stream recharges (−1), a barrier doubles (+1). Source: Ferris et al. 1962. */
@@ -42,44 +44,67 @@ export function imagesOf({ unit, at }: Pick<Design, 'unit' | 'at'>): Image[] {
   ]
 }
 
-function pumpingDrawdown(design: Design, images: readonly Image[], place: Point, time: number): number {
-  if (time <= 0) return 0
-  const { T, storage, rate, wellRadius } = design
-  const from = (source: Point) =>
-    theisDrawdown(rate.m3s, T, storage, Math.max(wellRadius, distanceBetween(source, place)), time)
-  return images.reduce((sum, image) => sum + image.sign * from(image.at), from(design.at))
+/** A place where the level is wanted, and the open parts of both wells below the top of the saturated aquifer. */
+export interface Observed {
+  place: Point
+  pumped: boolean
+  pumpedScreen: Interval | null
+  screen: Interval | null
+}
+
+/** Drawdown in metres at a time since the pump started, or since pumping began and goes on. */
+export type Curve = (time_s: number) => number
+
+function placeAt(design: Design, where: Observed, from: Point, real: boolean): ResponsePlace {
+  return {
+    pumped: real && where.pumped,
+    distance_m: Math.max(design.wellRadius, distanceBetween(from, where.place)),
+    bearing_deg: null,
+    wellRadius_m: design.wellRadius,
+    casingRadius_m: design.wellRadius,
+    thickness_m: design.thickness,
+    pumpedScreen: where.pumpedScreen,
+    observedScreen: where.screen,
+  }
+}
+
+/** Drawdown of the aquifer at a place while pumping goes on, images superposed. */
+export function pumpingCurve(
+  design: Design,
+  { solution, parameters }: Ground['real'],
+  images: readonly Image[],
+  where: Observed,
+): Curve {
+  const out = new Float64Array(parameters.length + 1)
+  const sources = [{ at: design.at, sign: 1, real: true }, ...images.map((image) => ({ ...image, real: false }))]
+  const parts = sources.map(({ at, sign, real }) => {
+    const respond = solution.respond(parameters, placeAt(design, where, at, real))
+    return { sign, respond }
+  })
+  return (time_s) => {
+    if (time_s <= 0) return 0
+    return parts.reduce((sum, { sign, respond }) => {
+      respond(time_s, out)
+      return sum + sign * design.rate.m3s * (out[0] ?? 0)
+    }, 0)
+  }
 }
 
 /** Share of its final drawdown that casing storage lets a pumped well show: near 1 after 25 r²/T. */
 const storageShare = ({ T, wellRadius }: Design, time: number) =>
   time <= 0 ? 0 : 1 - Math.exp((-time * T) / (7 * wellRadius ** 2))
 
-export interface DrawdownAt {
-  place: Point
-  pumped: boolean
-}
-
 /**
- * Drawdown in metres at a time since the pump started: Theis superposed for the stop and for boundaries; in the pumped
- * well also turbulent loss (Jacob 1947) and, early, the water of the casing.
+ * Drawdown over a whole test: the ground's own answer, superposed for the stop and for boundaries; in the pumped well
+ * also turbulent loss (Jacob 1947) and, early, the water of the casing.
  */
-export function drawdownAt(design: Design, images: readonly Image[], where: DrawdownAt, time: number): number {
-  const stopped = time - design.pumping_s
+export function drawdownCurve(design: Design, { real }: Ground, images: readonly Image[], where: Observed): Curve {
+  const pumping = pumpingCurve(design, real, images, where)
   const part = (since: number) => {
     if (since <= 0) return 0
-    const aquifer = pumpingDrawdown(design, images, where.place, since)
+    const aquifer = pumping(since)
     if (!where.pumped) return aquifer
     return (aquifer + design.wellLoss * design.rate.m3s ** 2) * storageShare(design, since)
   }
-  return part(time) - part(stopped)
-}
-
-/** Last time of pumping at which boundaries change the drawdown of a place by less than `share`. */
-export function undisturbedUntil(design: Design, images: readonly Image[], place: Point, share = 0.02): number {
-  for (let time = design.pumping_s; time > 60; time /= 1.15) {
-    const alone = pumpingDrawdown(design, [], place, time)
-    const effect = Math.abs(pumpingDrawdown(design, images, place, time) - alone)
-    if (effect <= share * alone) return time
-  }
-  return 60
+  return (time_s) => part(time_s) - part(time_s - design.pumping_s)
 }

@@ -2,15 +2,15 @@ import { distanceBetween } from '../island/lines.ts'
 import type { Point } from '../island/frame.ts'
 import type { Draws } from '../random.ts'
 import { draws } from '../random.ts'
-import type { Image } from './drawdown.ts'
-import { drawdownAt, imagesOf } from './drawdown.ts'
+import { drawdownCurve, imagesOf, type Observed } from './drawdown.ts'
 import { region } from './geography.ts'
+import { groundUnder } from './ground.ts'
 import { levelNoise } from './level-noise.ts'
-import type { FormatName } from './log-files.ts'
-import { writeLog } from './log-files.ts'
+import { writeLog, type FormatName } from './log-files.ts'
 import { spoiled } from './log-faults.ts'
+import { openPart } from './open-part.ts'
 import type { PlannedTest } from './plan.ts'
-import { planAnalyses } from './planned-analyses.ts'
+import { planAnalyses, type Known } from './planned-analyses.ts'
 import type { Recorder } from './reading-times.ts'
 import { readingTimes } from './reading-times.ts'
 import { settingOf } from './reported.ts'
@@ -32,24 +32,34 @@ function chooseRecording(stream: Draws, year: number): { recorder: Recorder; for
   return { recorder: 'hand', format }
 }
 
-interface Recording {
-  test: PlannedTest
-  images: readonly Image[]
+interface Recording extends Known {
   startLocal: string
   recorder: Recorder
   format: FormatName
   seed: number
 }
 
+/** Where a participant sees the test from; in the gravels it matters how deep the wells are open. */
+function observedBy({ design, site }: PlannedTest, pumped: Participant, date: string): Known['observed'] {
+  const open = ({ well }: Participant) => (site.unit === 'TG' ? openPart(well, design.thickness, date) : null)
+  return (participant, isPumped): Observed => ({
+    place: participant.at,
+    pumped: isPumped,
+    pumpedScreen: open(pumped),
+    screen: open(participant),
+  })
+}
+
 function record(recording: Recording, participant: Participant, pumped: boolean): DemoSeries {
-  const { test, images, startLocal, recorder, format, seed } = recording
-  const { well, at } = participant
+  const { test, ground, images, observed, startLocal, recorder, format, seed } = recording
+  const { well } = participant
   const stream = draws(seed, `log/${well.code}/${startLocal}`)
   const times = readingTimes(recorder, test.design.pumping_s, test.design.recovery_s)
   const noise = levelNoise(stream, recorder, times)
+  const drawdown = drawdownCurve(test.design, ground, images, observed(participant, pumped))
   const readings = times.map((time_s, i) => ({
     time_s,
-    depth_m: well.staticDepthM + drawdownAt(test.design, images, { place: at, pumped }, time_s) + noise[i]!,
+    depth_m: well.staticDepthM + drawdown(time_s) + noise[i]!,
   }))
   // The crew looks after the pumped well; trouble is with loggers left alone.
   const kept = pumped ? readings : spoiled(stream, test.faults, readings)
@@ -58,7 +68,7 @@ function record(recording: Recording, participant: Participant, pumped: boolean)
   return { wellCode: well.code, fileName, text: log.text, mapping: log.mapping }
 }
 
-function describe({ faults }: PlannedTest, images: readonly Image[], at: Point): string | null {
+function describe({ faults }: PlannedTest, images: Known['images'], at: Point): string | null {
   const parts = [
     ...images.map((image) => {
       const metres = Math.round(distanceBetween(at, image.at) / 2)
@@ -74,7 +84,7 @@ function describe({ faults }: PlannedTest, images: readonly Image[], at: Point):
 }
 
 const RATIONALES: Record<DemoOutcome, string> = {
-  adopted: 'Observation wells fitted together; recovery in the pumped well agrees.',
+  adopted: 'Curve of the observation wells; the other analyses of the test agree.',
   submitted: 'Joint fit of the observation wells, boundary effects left out by the window.',
   returned: 'Joint fit of the observation wells.',
   draft: 'First look at the readings.',
@@ -100,11 +110,15 @@ export function makeFullTest(
   const stream = draws(seed, `test/${index}`)
   const day = `${String(stream.whole(1, 12)).padStart(2, '0')}-${String(stream.whole(1, 28)).padStart(2, '0')}`
   const startLocal = `${year}-${day}T${String(stream.whole(7, 11)).padStart(2, '0')}:00`
-  const images = imagesOf(design)
-  const analyses = planAnalyses(test, images, participants)
+  const recording: Recording = {
+    ...{ test, startLocal, seed, ...chooseRecording(stream, year) },
+    ground: groundUnder(design, draws(seed, `ground/${index}`)),
+    images: imagesOf(design),
+    observed: observedBy(test, pumped, startLocal),
+  }
+  const analyses = planAnalyses(recording, participants)
   // A boundary so near that no curve holds leaves a test without a value.
   const outcome = analyses.length > 0 ? test.outcome : 'draft'
-  const recording: Recording = { test, images, startLocal, seed, ...chooseRecording(stream, year) }
   return {
     kind: 'constant-rate',
     wellCode: pumped.well.code,
@@ -126,7 +140,7 @@ export function makeFullTest(
     analyses,
     outcome,
     rationale: RATIONALES[outcome],
-    conditions: describe(test, images, site.at),
+    conditions: describe(test, recording.images, site.at),
     visibility: pumped.well.visibility,
     embargoUntil: pumped.well.embargoUntil,
   }
