@@ -236,6 +236,7 @@ export type AnalysisErrorCode =
   | 'analysis/no-fit'
   | 'analysis/boundaries-too-many'
   | 'analysis/boundaries-behind'
+  | 'analysis/boundaries-facing'
   | 'analysis/boundaries-angle'
   | 'analysis/boundary-place'
   | 'analysis/bearing-unknown'

@@ -3,7 +3,7 @@ import type { Unknown } from '../method.ts'
 import type { ResponsePlace } from '../place.ts'
 import type { Solution, SolutionReadings } from '../solution.ts'
 import type { Respond } from '../superposition.ts'
-import { imageWells, type ImageWell } from './image-wells.ts'
+import { faceEachOther, imageWells, type ImageWell } from './image-wells.ts'
 
 /** An image whose drawdown is a smaller share of the real well's, and all farther ones, change no digit. */
 const NEGLIGIBLE = 1e-13
@@ -14,6 +14,8 @@ const STEP = 1e-4
 export function boundedSolution(solution: Solution, boundaries: readonly ChosenBoundary[]): Solution {
   if (boundaries.length === 0) return solution
   const fitted = boundaries.flatMap((boundary, i) => (boundary.distance_m === null ? [distanceTo(boundary, i)] : []))
+  // Thousands of images in every step of a search would take minutes.
+  if (fitted.length > 0 && faceEachOther(boundaries)) throw new AnalysisError('analysis/boundaries-facing')
   const own = solution.unknowns.length
   return {
     ...solution,

@@ -42,8 +42,14 @@ export function imageWells(boundaries: readonly Boundary[]): ImageWell[] {
   if (boundaries.length > 2) throw new AnalysisError('analysis/boundaries-too-many', { found: boundaries.length })
   const edges = boundaries.map(edgeOf)
   if (isPair(edges) && cosine(...edges) > 1 - 1e-9) throw new AnalysisError('analysis/boundaries-behind')
-  const images = isPair(edges) && cosine(...edges) < -1 + 1e-9 ? betweenParallels(edges) : inWedge(edges)
+  const images = isPair(edges) && isOpposite(...edges) ? betweenParallels(edges) : inWedge(edges)
   return images.sort((one, other) => reach(one) - reach(other))
+}
+
+/** Whether two boundaries run parallel, with the pumped well between them. */
+export function faceEachOther(boundaries: readonly Pick<Boundary, 'bearing_deg'>[]): boolean {
+  const edges = boundaries.map(({ bearing_deg }) => edgeOf({ kind: 'barrier', distance_m: 1, bearing_deg }))
+  return isPair(edges) && isOpposite(...edges)
 }
 
 function edgeOf({ kind, distance_m, bearing_deg }: Boundary): Edge {
@@ -54,6 +60,7 @@ function edgeOf({ kind, distance_m, bearing_deg }: Boundary): Edge {
 
 const isPair = (edges: Edge[]): edges is [Edge, Edge] => edges.length === 2
 const cosine = (one: Edge, other: Edge) => one.east * other.east + one.north * other.north
+const isOpposite = (one: Edge, other: Edge) => cosine(one, other) < -1 + 1e-9
 const reach = ({ east_m, north_m }: ImageWell) => Math.hypot(east_m, north_m)
 const realWell: ImageWell = { east_m: 0, north_m: 0, sign: 1 }
 

@@ -107,6 +107,12 @@ describe('A fit with a boundary', () => {
     expect(result.others?.[0]?.value).toBeCloseTo(120, 1)
   })
 
+  it('refuses to fit the distances of boundaries that face each other', () => {
+    const inputs = observed(30)
+    const facing = [barrier(null), { ...barrier(90), bearing_deg: 180 }]
+    expect(() => analyse('theis', inputs, options(inputs, facing))).toThrow('analysis/boundaries-facing')
+  })
+
   it('refuses a boundary while the direction of the well is not known', () => {
     const inputs = observed(null)
     expect(() => analyse('theis', inputs, options(inputs, [barrier(null)]))).toThrow('analysis/bearing-unknown')
