@@ -182,7 +182,11 @@ export function provideKindBench(given: Given): KindBench {
     settle,
   }
   provide(key, bench)
-  if (selected.value === null && mayCreate.value && isAnalysable(snapshot.value)) start(firstMethod(snapshot.value))
+  /** A first analysis stands ready as soon as there are readings, also when they come while the page is open. */
+  const begin = (ready: boolean) => {
+    if (ready && selected.value === null && mayCreate.value) start(firstMethod(snapshot.value))
+  }
+  watch(() => isAnalysable(snapshot.value), begin, { immediate: true })
   return bench
 }
 

@@ -23,18 +23,19 @@ const makeSlugAnalysis = (overrides: Partial<Analysis> = {}): Analysis => ({
   ...overrides,
 })
 
-async function makeBench(snapshot: KindWorkbenchInputs, first: Analysis[] = []) {
+async function makeBench(given: KindWorkbenchInputs, first: Analysis[] = []) {
+  const snapshot = shallowRef(given)
   const analyses = shallowRef<readonly Analysis[]>(first)
   const made: KindBench[] = []
   const page = defineComponent({
     setup() {
-      const given = { test: () => makeTest(), snapshot: () => snapshot, analyses: () => analyses.value }
-      made.push(provideKindBench({ ...given, opened: () => null }))
+      const from = { test: () => makeTest(), snapshot: () => snapshot.value, analyses: () => analyses.value }
+      made.push(provideKindBench({ ...from, opened: () => null }))
       return () => null
     },
   })
   await mountWith(page)
-  return { bench: made[0]!, analyses }
+  return { bench: made[0]!, analyses, snapshot }
 }
 
 describe('The workbench of a test of a kind of its own', () => {
@@ -50,6 +51,14 @@ describe('The workbench of a test of a kind of its own', () => {
     expect(await begun(slugSnapshot(makeSlugInputs({ repeats: [swinging] })))).toBe('slug-oscillating')
     expect(await begun({ kind: 'step', inputs: makeStepInputs(), ...rest })).toBe('step-linear')
     expect(await begun(slugSnapshot(makeSlugInputs({ repeats: [] })))).toBeUndefined()
+  })
+
+  it('begins once the first readings come while it is open', async () => {
+    const { bench, snapshot } = await makeBench(slugSnapshot(makeSlugInputs({ repeats: [] })))
+    expect(bench.present.value).toBeNull()
+    snapshot.value = slugSnapshot()
+    await settle()
+    expect(bench.present.value?.method).toBe('bouwer-rice')
   })
 
   it('calculates as settings change, and tells what a method refuses', async () => {
