@@ -63,7 +63,7 @@ export function compositePlot({ inputs, wellIds, options, units, direction }: Co
     perSecond,
     end_s: options.phase === 'all' ? null : rateHistory(inputs.rates).stop_s,
     x: logAxis(
-      points.map(({ x }) => x),
+      wells.flatMap((well) => [...well.points, ...well.leftOut].map(({ x }) => x)),
       `time since pumping began over distance squared, ${compositeUnit(units)}`,
     ),
     y: linearAxis(withoutNoise(points.map(({ y }) => y)), `drawdown, ${unitById(units.length).label}`, {

@@ -128,6 +128,8 @@ function standing(
     },
     {
       ...dots,
+      // A sentinel value lies far off.
+      clip: true,
       id: `left-out-${i}`,
       name: `${label}, left out`,
       z: 2,

@@ -60,7 +60,8 @@ export function timePlot(request: TimePlotRequest): TimePlot {
   }
 }
 
-const xs = (wells: PlotWell[]) => wells.flatMap(({ points }) => points.map(({ x }) => x))
+/** Readings that were left out keep their place in time, so that they can be taken back; their levels may be anything. */
+const xs = (wells: PlotWell[]) => wells.flatMap(({ points, leftOut }) => [...points, ...leftOut].map(({ x }) => x))
 const CURVE_POINTS = 100
 
 /** Times across the plot, evenly along its axis. */

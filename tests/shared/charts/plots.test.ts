@@ -53,6 +53,17 @@ describe('A plot against time', () => {
     expect([well!.points.length, well!.leftOut.length]).toEqual([59, 1])
   })
 
+  it('keeps the time of readings that were left out on its axis, whatever their level, so that they can be taken back', () => {
+    const inputs = makeTestInputs()
+    const { elapsed_s, drawdown_m } = inputs.series[0]!
+    const whole = makePlot({ inputs })
+    inputs.series[0]!.included = elapsed_s.map((_, i) => i > 1)
+    drawdown_m[0] = 9999
+    const plot = makePlot({ inputs })
+    expect(plot.x.min).toBe(whole.x.min)
+    expect(plot.y.max).toBeCloseTo(whole.y.max, 6)
+  })
+
   it('thins what a screen cannot show, and keeps the last reading', () => {
     const elapsed_s = Array.from({ length: 20_000 }, (_, i) => 5 * (i + 1))
     const series = makeTheisSeries(truth, { elapsed_s, included: elapsed_s.map(() => true) })
