@@ -22,6 +22,8 @@ const BASELINE = 4
 /** Width of a letter of the labels on average, and how far labels stay inside the frame, px. */
 const LETTER = 6
 const INSET = 8
+/** The scale bar has the lowest line to itself. */
+const SCALE_LINE = 20
 const before = { start: 0, middle: 0.5, end: 1 }
 
 /** Moves a label into the frame, by the width that its letters have on average. */
@@ -29,7 +31,7 @@ export function insideFrame(label: SketchLabel, { width, height }: Size): Sketch
   const long = label.text.length * LETTER
   const left = label.x - before[label.anchor] * long
   const moved = Math.max(INSET, Math.min(width - INSET - long, left)) - left
-  return { ...label, x: label.x + moved, y: Math.max(LINE, Math.min(height - INSET, label.y)) }
+  return { ...label, x: label.x + moved, y: Math.max(LINE, Math.min(height - INSET - SCALE_LINE, label.y)) }
 }
 
 /** Labels beside points: to the right in the left part of the frame, else to the left; none over another of its side. */
