@@ -2,6 +2,7 @@ import { AnalysisError, type ChosenBoundary } from '../analysis.ts'
 import type { Unknown } from '../method.ts'
 import type { ResponsePlace } from '../place.ts'
 import type { Solution, SolutionReadings } from '../solution.ts'
+import { shapeStarts } from '../solutions/shape-starts.ts'
 import type { Respond } from '../superposition.ts'
 import { faceEachOther, imageWells, type ImageWell } from './image-wells.ts'
 
@@ -17,10 +18,10 @@ export function boundedSolution(solution: Solution, boundaries: readonly ChosenB
   // Thousands of images in every step of a search would take minutes.
   if (fitted.length > 0 && faceEachOther(boundaries)) throw new AnalysisError('analysis/boundaries-facing')
   const own = solution.unknowns.length
-  return {
+  const bounded: Solution = {
     ...solution,
     unknowns: [...solution.unknowns, ...fitted],
-    guess: (readings) => guess(solution, fitted.length, readings),
+    guess: (readings) => guess(solution, bounded.respond, fitted.length, readings),
     judge: (parameters, readings) => solution.judge(parameters.slice(0, own), readings),
     respond(parameters, place) {
       const direct = solution.respond(parameters, place)
@@ -41,6 +42,7 @@ export function boundedSolution(solution: Solution, boundaries: readonly ChosenB
       }
     },
   }
+  return bounded
 }
 
 /** Sum over the images, value and derivatives, at a time; `real` is the drawdown of the real well then. */
@@ -99,12 +101,22 @@ const distanceTo = ({ kind }: ChosenBoundary, index: number): Unknown => ({
   scale: 'log',
 })
 
-/** Each start of the solution with boundaries at a few times the farthest well's distance. */
-function guess(solution: Solution, fitted: number, readings: SolutionReadings): number[][] {
-  const starts = solution.guess(readings)
-  if (fitted === 0) return starts
+/** Distances that are tried, in times that of the farthest well. */
+const TRIED = [2, 10, 50]
+
+/**
+ * Shapes of the bounded response that come nearest to the readings. Starts of the boundless solution would not do: near
+ * a stream the late slope, which they take T from, is nearly level.
+ */
+function guess(
+  solution: Solution,
+  respond: Solution['respond'],
+  fitted: number,
+  readings: SolutionReadings,
+): number[][] {
   const farthest = Math.max(10, ...readings.wells.map(({ series }) => series.distance_m))
-  return starts.flatMap((start) =>
-    [2, 10, 50].map((times) => [...start, ...new Array<number>(fitted).fill(times * farthest)]),
-  )
+  const distances = fitted === 0 ? [[]] : TRIED.map((times) => new Array<number>(fitted).fill(times * farthest))
+  const others = solution.guess(readings).map((start) => start.slice(2))
+  const unlike = [...new Map(others.map((rest) => [rest.join(), rest])).values()]
+  return shapeStarts(respond, readings, () => unlike.flatMap((rest) => distances.map((tried) => [...rest, ...tried])))
 }
