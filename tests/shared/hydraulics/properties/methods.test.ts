@@ -51,8 +51,8 @@ const noisy = ({ exact }: Case, seed: number) =>
     ),
     0.002,
   )
-/** A fit in Laplace space takes a third of a second, one of a line no time. */
-const runs = ({ laplace }: Case) => ({ numRuns: laplace ? 2 : 8 })
+/** A fit in Laplace space takes a third of a second, one of a line no time. The same cases at every run. */
+const runs = ({ laplace }: Case) => ({ numRuns: laplace ? 2 : 8, seed: 1 })
 /** Inversions begin at other times in other units, so that their own error, 1e-8, comes in. */
 const allowed = ({ laplace }: Case) => (laplace ? 1e-6 : 1e-9)
 
