@@ -123,6 +123,8 @@ test('The list of keys opens with "?" and Esc gives the focus back to the page',
   await expect(page.getByRole('heading', { name: 'People' })).toBeVisible()
   await page.keyboard.press('?')
   await expect(page.getByRole('heading', { name: 'Keys' })).toBeVisible()
+  // It takes keys from when it has the focus, a frame after it is seen.
+  await expect(page.locator('.v-overlay--active :focus, .v-overlay--active:focus')).toHaveCount(1)
   await page.keyboard.press('Escape')
   await expect(page.getByRole('heading', { name: 'Keys' })).toBeHidden()
   await page.getByLabel('Name or address').fill('what?')
