@@ -176,7 +176,7 @@ const cases: Record<string, { bad: Case[]; good: Case[] }> = {
       ['server/a.ts', `// methods.${'md'} says why`],
       ['tests/a.ts', `const file = '/${'work'}/main/a.csv'`],
     ],
-    good: [['server/a.ts', "import { a } from '../shared/designs.ts'"]],
+    good: [['server/a.ts', "import { a } from '../shared/numerics/bessel.ts'"]],
   },
   'compiler settings are in their places': {
     bad: [['tsconfig.build.json', '{}']],
