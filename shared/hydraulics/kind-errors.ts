@@ -13,3 +13,4 @@ export type KindErrorCode =
   | 'analysis/correction-readings'
   | 'analysis/correction-cover'
   | 'analysis/correction-level'
+  | 'analysis/correction-alike'

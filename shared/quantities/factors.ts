@@ -22,5 +22,7 @@ export const acreFoot = 43560 * surveyFoot ** 3
 export const standardGravity = 9.80665
 /** Pound-force: avoirdupois pound of 0.453 592 37 kg under standard gravity. */
 export const poundForce = 0.45359237 * standardGravity
+/** Conventional mercury: 13 595.1 kg/m³ under standard gravity, pressure of one metre, Pa. */
+export const metreOfMercury = 13595.1 * standardGravity
 /** Conventional water: 1000 kg/m³ under standard gravity, pressure of one metre, Pa. */
 export const metreOfWater = 1000 * standardGravity

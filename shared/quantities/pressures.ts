@@ -1,4 +1,4 @@
-import { foot, inch, metreOfWater, poundForce } from './factors.ts'
+import { foot, inch, metreOfMercury, metreOfWater, poundForce } from './factors.ts'
 import type { Unit } from './unit.ts'
 
 const pressure = (id: string, toSI: number, aliases: string[], source: string, label = id): Unit => ({
@@ -23,6 +23,18 @@ export const pressures: Unit[] = [
   pressure('kPa', 1e3, ['kilopascal'], 'SI prefix'),
   pressure('bar', 1e5, ['bars'], 'NIST SP 811 B.8 "bar (bar)", exact'),
   pressure('psi', poundForce / inch ** 2, ['psia', 'psig', 'lbf/in2', 'lb/in2'], 'NIST SP 811 B.8 "psi"'),
+  pressure(
+    'mmHg',
+    metreOfMercury / 1000,
+    ['mm hg', 'millimeter of mercury', 'millimetre of mercury'],
+    'NIST SP 811 B.8 "millimeter of mercury, conventional (mmHg)"',
+  ),
+  pressure(
+    'inHg',
+    metreOfMercury * inch,
+    ['in hg', 'inch of mercury', 'inches of mercury'],
+    'NIST SP 811 B.8 "inch of mercury, conventional (inHg)"',
+  ),
   pressure('mH2O', metreOfWater, water('m'), '100 times NIST SP 811 B.8 "centimeter of water, conventional"', 'm H₂O'),
   pressure(
     'cmH2O',

@@ -30,13 +30,13 @@ export interface ClockMapping {
   zone: string | null
 }
 
-/** How to read a log. Columns count from 0, lines of the file from 1. */
-export interface LogMapping {
+/** How to read a log. Columns count from 0, lines of the file from 1. What is measured decides nothing about reading. */
+export interface LogMapping<Measured extends string = Quantity> {
   delimiter: Delimiter
   decimalMark: DecimalMark
   firstDataRow: number
   time: ElapsedMapping | ClockMapping
-  value: { column: number; quantity: Quantity; unit: string }
+  value: { column: number; quantity: Measured; unit: string }
 }
 
 /** A proposed mapping: what could not be told from the file is null. */
@@ -98,7 +98,7 @@ export interface ReadingRow {
   raw: string
   /** Seconds after the test's start; null when the time could not be read. */
   elapsed_s: number | null
-  /** The value in metres; null when it could not be read. */
+  /** The value in SI: metres for a level, pascals for a pressure; null when it could not be read. */
   value_m: number | null
   flags: ReadingFlag[]
   /** Whether the line gives a reading of the series. */

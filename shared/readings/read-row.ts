@@ -50,7 +50,12 @@ export const stepOf = (text: string) => 10 ** -decimalsOf(text)
 type ReadClock = (timeText: string, dateText: string | null) => ClockReading
 
 /** The time of a row in seconds after the test's start. */
-export function readTime(cells: string[], mapping: LogMapping, clock: ReadClock | null, startMs: number): FieldReading {
+export function readTime(
+  cells: string[],
+  mapping: LogMapping<string>,
+  clock: ReadClock | null,
+  startMs: number,
+): FieldReading {
   const { time, decimalMark } = mapping
   const text = cells[time.column] ?? ''
   if (time.kind === 'elapsed') {

@@ -11,7 +11,7 @@ import { summarise } from './summary.ts'
 
 const refuse = (code: Refusal['code'], params: Refusal['params']): Refusal => ({ ok: false, code, params })
 
-const columnsOf = ({ time, value }: LogMapping) => [
+const columnsOf = ({ time, value }: LogMapping<string>) => [
   time.column,
   value.column,
   ...(time.kind === 'clock' && time.dateColumn !== null ? [time.dateColumn] : []),
@@ -20,7 +20,7 @@ const columnsOf = ({ time, value }: LogMapping) => [
 type Clock = Exclude<ReturnType<typeof setUpClock>, Refusal>
 
 /** What one line says; a line that lacks the mapped columns altogether is told so once, not once per field. */
-function findings(cells: string[], mapping: LogMapping, clock: Clock | null, startMs: number) {
+function findings(cells: string[], mapping: LogMapping<string>, clock: Clock | null, startMs: number) {
   const needed = Math.max(...columnsOf(mapping)) + 1
   if (cells.length < needed) {
     const short: Finding = { code: 'readings/too-few-columns', field: 'row', params: { found: cells.length, needed } }
@@ -50,7 +50,7 @@ const furniture = (row: number, raw: string, flag: ReadingFlag): ReadingRow => (
   taken: false,
 })
 
-function readRows({ lines, cells, clock, startMs }: Prepared, mapping: LogMapping) {
+function readRows({ lines, cells, clock, startMs }: Prepared, mapping: LogMapping<string>) {
   const issues: RowIssue[] = []
   const rows = lines.map((raw, i): ReadingRow => {
     const row = i + 1
@@ -73,7 +73,7 @@ function refuseRows(rows: ReadingRow[], column: number): Refusal | null {
 }
 
 /** Splits the text and makes its clock, or says why the file as a whole cannot be read. */
-function prepare(text: string, mapping: LogMapping, { start }: LogContext): Prepared | Refusal {
+function prepare(text: string, mapping: LogMapping<string>, { start }: LogContext): Prepared | Refusal {
   const instant = DateTime.fromISO(start.instant, { zone: 'utc' })
   if (!instant.isValid) throw new RangeError(`Not an instant: ${start.instant}`)
   const refusal = refuseText(text)
@@ -90,10 +90,10 @@ function prepare(text: string, mapping: LogMapping, { start }: LogContext): Prep
 
 /**
  * Reads a log by a mapping. Every line of the file is a row with its fate: taken, or not and why; nothing is dropped,
- * reordered or rounded. Times are seconds after the test's start, values metres.
+ * reordered or rounded. Times are seconds after the test's start, values SI: metres, or pascals of a pressure.
  * @throws RangeError for a unit that the catalogue lacks or a start that is no instant: both come from code, not from files
  */
-export function readLog(text: string, mapping: LogMapping, context: LogContext): LogReading | Refusal {
+export function readLog(text: string, mapping: LogMapping<string>, context: LogContext): LogReading | Refusal {
   const prepared = prepare(text, mapping, context)
   if ('code' in prepared) return prepared
   const { rows, issues } = readRows(prepared, mapping)

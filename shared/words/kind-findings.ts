@@ -117,6 +117,8 @@ export const kindFindings: Sentences<string> = {
   'lag-at-end': ({ span }) => `The best lag is the longest tried, ${span('lag_s')}. Try longer ones.`,
   'tides-inseparable': ({ text, span }) =>
     `The record before pumping is too short to tell ${text('one')} and ${text('other')} apart (it takes ${span('needed_s')}). Only ${text('one')} is fitted.`,
+  'outside-gap': ({ span }) =>
+    `The series that is followed has no value for ${span('gap_s')}; the correction is interpolated over more than ${span('limit_s')}.`,
 }
 
 /** Every reason for which these methods refuse their inputs. */
@@ -140,11 +142,13 @@ export const kindRefusals: Sentences<KindErrorCode> = {
   'analysis/step-increment': ({ span }) =>
     `The time after each change must be within the shortest step, ${span('shortest_s')}.`,
   'analysis/correction-readings': ({ text }) =>
-    `This correction needs ${text('needed')} readings before pumping; there are ${text('found')}.`,
+    `This correction needs ${text('needed')} readings before pumping; there are ${text('found')}. Enter its figures instead, or upload an earlier log.`,
   'analysis/correction-cover': ({ span }) =>
-    `The uploaded series does not cover all readings: it is missing from ${span('from_s')} to ${span('to_s')}.`,
+    `The uploaded series does not cover all readings: it is missing from ${span('from_s')} to ${span('to_s')}, the lag included. Upload a longer one, or leave those readings out.`,
   'analysis/correction-level': () =>
     'The uploaded series does not move before pumping, so that nothing can be learned from it. Enter the efficiency.',
+  'analysis/correction-alike': () =>
+    'Two corrections move alike before pumping, so that one cannot be told from the other. Enter the figures of one of them, or leave it out.',
 }
 
 export const kindOptionNames: Record<string, string> = {
@@ -155,4 +159,6 @@ export const kindOptionNames: Record<string, string> = {
   storativity: 'The storativity assumed must be above zero, and its error not below.',
   efficiency: 'The efficiency must be a number.',
   lag: 'The longest lag cannot be below zero, and its step must be above.',
+  lagCount: 'More than 400 lags would be tried. Shorten the longest lag, or widen the step.',
+  trend: 'The slope of the trend must be a number.',
 }

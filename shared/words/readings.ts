@@ -32,7 +32,7 @@ const refusals: Sentences<RefusalCode> = {
     `The file has ${text('lines')} lines; a series may have ${text('limit')}. Thin the log or upload the part that covers the test.`,
   'readings/no-numeric-column': ({ text }) =>
     text('column')
-      ? `Column ${text('column')} holds no numbers. Choose the column with the water levels.`
+      ? `Column ${text('column')} holds no numbers. Choose the column with the readings.`
       : 'No column of numbers was found. Check that the file holds readings and that its delimiter is a comma, semicolon, tab, bar or space.',
   'readings/no-such-column': ({ text }) =>
     `The file has no column ${text('column')}. Choose the columns and the delimiter again.`,
@@ -56,7 +56,7 @@ const flags: Sentences<ReadingFlag> = {
   'readings/gap-before': ({ span }) =>
     `no reading for ${span('gap_s')} before this one; the usual step is ${span('usual_s')}. Check whether a part of the log is missing.`,
   'readings/spike': ({ length }) =>
-    `the value ${length('value_m')} stands out from the readings around it (${length('median_m')}). Remove it if it is no water level.`,
+    `the value ${length('value_m')} stands out from the readings around it (${length('median_m')}). Remove it if it is no true reading.`,
   'readings/ambiguous-hour': ({ text }) =>
     `the time ${text('text')} occurs twice in ${text('zone')}, as clocks are set back. The order of the rows decided; check it.`,
   'readings/next-day': ({ text }) =>

@@ -17,6 +17,7 @@ acre_ft = 43560 * survey**3
 minute, hour, day, litre = 60, 3600, 86400, F(1, 1000)
 psi = F(45359237, 10**8) * F(980665, 10**5) / inch**2
 water = 1000 * F(980665, 10**5)
+mercury = F(135951, 10) * F(980665, 10**5)
 
 discharge = {
     'm3/s': (F(1), 'm'), 'L/s': (litre, 'm'), 'L/min': (litre / minute, 'm'), 'm3/h': (F(1, hour), 'm'),
@@ -32,6 +33,7 @@ rational = {
     'm/s': F(1), 'm/d': F(1, day), 'cm/s': F(1, 100), 'ft/d': ft / day,
     'gpd-us/ft2': gal_us / day / ft**2, 'gpd-imp/ft2': gal_imp / day / ft**2,
     'Pa': F(1), 'hPa': F(100), 'kPa': F(1000), 'bar': F(10**5), 'psi': psi,
+    'mmHg': mercury / 1000, 'inHg': mercury * inch,
     'mH2O': water, 'cmH2O': water / 100, 'ftH2O': water * ft, '1': F(1), '%': F(1, 100),
 }
 for unit, (factor, per) in discharge.items():

@@ -4,7 +4,7 @@ import { readLog } from '#shared/readings/read.ts'
 
 export interface ReadLogInput {
   bytes: Uint8Array
-  mapping: LogMapping
+  mapping: LogMapping<string>
   context: LogContext
 }
 

@@ -1,21 +1,34 @@
-import { AnalysisError, type Finding } from '../analysis.ts'
+import type { Finding } from '../analysis.ts'
+import type { CorrectionKind } from './kinds.ts'
 
 /** Readings of one well as drawdown, on the clock on which pumping begins at zero. */
 export interface Readings {
-  elapsed_s: number[]
-  drawdown_m: number[]
+  elapsed_s: readonly number[]
+  drawdown_m: readonly number[]
+  /** Left out: all of them. What is not included teaches nothing and need not be covered. */
+  included?: readonly boolean[]
 }
 
-/** A series from elsewhere, on the same clock: air pressure as metres of water, a river's stage. */
+/** A series from elsewhere, on the same clock: air pressure as metres of water, the stage of a river or of the sea. */
 export interface Outside {
-  elapsed_s: number[]
-  value_m: number[]
+  elapsed_s: readonly number[]
+  value_m: readonly number[]
 }
 
-/** What a correction did. Raw readings stay: drawdown = corrected + effect, reading by reading. */
+/** How a level follows an outside series: given, or learned from the readings before pumping. */
+export type Efficiency =
+  | { given: number; lag_s: number }
+  | {
+      /** Longest lag tried, and the step between lags; a longest of 0 tries none. */
+      longestLag_s: number
+      lagStep_s: number
+    }
+
+/** What one correction did. */
 export interface Correction {
-  id: 'trend' | 'barometric' | 'river' | 'tides'
-  corrected_m: number[]
+  kind: CorrectionKind
+  /** Its figures were given; otherwise they were learned from the readings before pumping. */
+  given: boolean
   /** What was taken off each reading. */
   effect_m: number[]
   /** Figures of the correction by name, in SI, for the record. */
@@ -23,62 +36,23 @@ export interface Correction {
   findings: Finding[]
 }
 
-/** Readings of before pumping, from which corrections learn. */
-export interface Antecedent extends Readings {
-  /** Length of the record before pumping, and of the test. */
-  antecedent_s: number
-  test_s: number
+/** A correction as it is kept with the readings that it was applied to. */
+export interface AppliedCorrection extends Omit<Correction, 'effect_m'> {
+  /** Name of the series that caused it; null where there is none. */
+  outside: string | null
 }
 
-/** @throws AnalysisError with columns of different length, or fewer readings before pumping than needed */
-export function antecedentOf({ elapsed_s, drawdown_m }: Readings, needed: number): Antecedent {
-  if (elapsed_s.length !== drawdown_m.length) throw new AnalysisError('analysis/uneven-series', { wellId: '' })
-  const before = elapsed_s.flatMap((time, i) =>
-    time <= 0 && Number.isFinite(drawdown_m[i]) ? [{ time, drawdown: drawdown_m[i] as number }] : [],
-  )
-  if (new Set(before.map(({ time }) => time)).size < needed) {
-    throw new AnalysisError('analysis/correction-readings', { needed, found: before.length })
-  }
-  return {
-    elapsed_s: before.map(({ time }) => time),
-    drawdown_m: before.map(({ drawdown }) => drawdown),
-    antecedent_s: -before.reduce((least, { time }) => Math.min(least, time), 0),
-    test_s: elapsed_s.reduce((most, time) => (time > most ? time : most), 0),
-  }
-}
-
-/** A correction carried through the test needs as long a record before it. */
-export function lengthFindings({ antecedent_s, test_s }: Antecedent): Finding[] {
-  return antecedent_s < test_s
-    ? [{ code: 'antecedent-short', severity: 'caution', params: { antecedent_s, test_s } }]
-    : []
-}
-
-/** A correction that explains less than this share of the movement before pumping is weak (common practice). */
-const WEAK = 0.5
-
-/** Share of the squares about their mean that a correction explains. */
-export function explainedFindings(explained: number): Finding[] {
-  return explained < WEAK ? [{ code: 'correction-weak', severity: 'caution', params: { explained } }] : []
-}
-
-/** Assembles a correction from its effect on each reading. */
-export function correctionOf(
-  id: Correction['id'],
-  { drawdown_m }: Readings,
-  effect_m: number[],
-  record: Record<string, number>,
-  findings: Finding[],
-): Correction {
-  return {
-    id,
-    corrected_m: drawdown_m.map((drawdown, i) => drawdown - (effect_m[i] as number)),
-    effect_m,
-    record,
-    findings,
-  }
+/** Readings after all corrections. Raw readings stay: drawdown = corrected + shift + the sum of all effects. */
+export interface Corrected {
+  drawdown_m: number[]
+  /** Taken off beside the effects, so that the mean before pumping is zero once more. */
+  shift_m: number
+  /** In the order in which they were wanted. */
+  corrections: Correction[]
 }
 
 /** The raw drawdowns again. */
-export const undone = ({ corrected_m, effect_m }: Correction): number[] =>
-  corrected_m.map((value, i) => value + (effect_m[i] as number))
+export const undone = ({ drawdown_m, shift_m, corrections }: Corrected): number[] =>
+  drawdown_m.map((value, i) =>
+    corrections.reduce((sum, { effect_m }) => sum + (effect_m[i] as number), value + shift_m),
+  )

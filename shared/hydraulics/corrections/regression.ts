@@ -1,39 +1,49 @@
+import { correlatedCovariance } from '#shared/numerics/correlated-residuals.ts'
 import { invertSymmetric } from '#shared/numerics/small-matrix.ts'
 
 export interface Regression {
   coefficients: number[]
-  /** Standard deviations for independent residuals. */
-  sd: number[]
+  residuals: number[]
   squares: number
-  /** Share of the squares about the mean that the model explains; 0 where nothing moves. */
-  explained: number
+  /** (X'X)⁻¹ */
+  normalInverse: number[][]
   singular: boolean
 }
 
 /**
- * Ordinary least squares of y on the columns of `rows`, columns scaled to unit length; directions that the readings do
- * not determine are left at zero.
+ * Ordinary least squares of y on columns, which are scaled to unit length; directions that the readings do not determine
+ * are left at zero.
  */
-export function regression(rows: number[][], y: number[]): Regression {
-  const size = rows[0]?.length ?? 0
-  const column = (i: number) => rows.map((row) => row[i] as number)
-  const scale = Array.from({ length: size }, (_, i) => Math.hypot(...column(i)) || 1)
-  const normal = scale.map((a, i) => scale.map((b, j) => dot(column(i), column(j)) / (a * b)))
-  const right = scale.map((a, i) => dot(column(i), y) / a)
+export function regression(columns: readonly (readonly number[])[], y: readonly number[]): Regression {
+  const scale = columns.map((column) => Math.sqrt(dot(column, column)) || 1)
+  const normal = columns.map((a, i) => columns.map((b, j) => dot(a, b) / ((scale[i] as number) * (scale[j] as number))))
+  const right = columns.map((column, i) => dot(column, y) / (scale[i] as number))
   const { inverse, singular } = invertSymmetric(normal)
-  const scaled = inverse.map((row) => dot(row, right))
-  const coefficients = scaled.map((value, i) => value / (scale[i] as number))
-  const squares = rows.reduce((sum, row, k) => sum + ((y[k] as number) - dot(row, coefficients)) ** 2, 0)
-  const mean = y.reduce((sum, value) => sum + value, 0) / y.length
-  const about = y.reduce((sum, value) => sum + (value - mean) ** 2, 0)
-  const variance = squares / Math.max(1, y.length - size)
+  const coefficients = inverse.map((row, i) => dot(row, right) / (scale[i] as number))
+  const residuals = y.map((value, k) =>
+    columns.reduce((left, column, i) => left - (coefficients[i] as number) * (column[k] as number), value),
+  )
   return {
     coefficients,
-    sd: inverse.map((row, i) => Math.sqrt(Math.max(0, variance * (row[i] as number))) / (scale[i] as number)),
-    squares,
-    explained: about > 0 ? Math.max(0, 1 - squares / about) : 0,
+    residuals,
+    squares: dot(residuals, residuals),
+    normalInverse: inverse.map((row, i) => row.map((value, j) => value / (scale[i] as number) / (scale[j] as number))),
     singular,
   }
 }
 
-const dot = (a: number[], b: number[]) => a.reduce((sum, value, i) => sum + value * (b[i] as number), 0)
+/** Covariance of the coefficients, widened for residuals that stray together; `time_s` rises. */
+export function regressionCovariance(
+  { residuals, normalInverse }: Regression,
+  columns: readonly (readonly number[])[],
+  time_s: number[],
+): number[][] {
+  const jacobian = residuals.flatMap((_, k) => columns.map((column) => column[k] as number))
+  return correlatedCovariance([{ residuals, jacobian, axes: [time_s] }], normalInverse).covariance
+}
+
+function dot(a: readonly number[], b: readonly number[]): number {
+  let sum = 0
+  for (let i = 0; i < a.length; i++) sum += (a[i] as number) * (b[i] as number)
+  return sum
+}

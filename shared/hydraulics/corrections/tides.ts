@@ -1,14 +1,6 @@
 import type { Finding } from '../analysis.ts'
-import {
-  antecedentOf,
-  correctionOf,
-  explainedFindings,
-  lengthFindings,
-  type Antecedent,
-  type Correction,
-  type Readings,
-} from './correction.ts'
-import { regression } from './regression.ts'
+import { lengthFindings, type Antecedent } from './antecedent.ts'
+import type { Term } from './term.ts'
 
 /** Degrees per hour. Source: Schureman 1958; the IHO list of constituents. */
 export const tidalSpeeds = {
@@ -27,47 +19,39 @@ const order: TideId[] = ['M2', 'K1', 'O1', 'S2', 'N2']
 export const tidalFrequency = (id: TideId) => (tidalSpeeds[id] * Math.PI) / 180 / 3600
 
 /**
- * Takes off tides: level, trend and the five constituents M2, S2, N2, K1 and O1 by least squares on the readings before
- * pumping, the constituents then carried through the test. Two whose beat takes longer than the record are not told
- * apart, and only the larger of them is fitted (Rayleigh's criterion).
- * @throws AnalysisError with too few readings before pumping
+ * Tides: the five constituents M2, S2, N2, K1 and O1 by least squares on the readings before pumping, carried through
+ * the test. Two whose beat takes longer than the record are not told apart, and only the larger of them is fitted
+ * (Rayleigh's criterion).
  * Source: harmonic analysis, Schureman 1958, from memory.
  */
-export function removeTides(readings: Readings): Correction {
-  const whole = antecedentOf(readings, 2)
-  const { fitted, findings } = separable(whole)
-  const before = antecedentOf(readings, 2 * fitted.length + 4)
-  const fit = regression(
-    before.elapsed_s.map((time) => [1, time, ...waves(fitted, time)]),
-    before.drawdown_m,
-  )
-  const trend = regression(
-    before.elapsed_s.map((time) => [1, time]),
-    before.drawdown_m,
-  )
-  const amplitudes = fit.coefficients.slice(2)
-  const explained = trend.squares > 0 ? Math.max(0, 1 - fit.squares / trend.squares) : 0
-  return correctionOf(
-    'tides',
-    readings,
-    readings.elapsed_s.map((time) =>
-      waves(fitted, time).reduce((sum, wave, k) => sum + wave * (amplitudes[k] as number), 0),
-    ),
-    { ...recordOf(fitted, amplitudes), explained },
-    [...findings, ...lengthFindings(before), ...explainedFindings(explained)],
-  )
+export function tidesTerm(before: Antecedent): Term {
+  const { fitted, findings } = separable(before)
+  return {
+    kind: 'tides',
+    given: null,
+    needed: 2 * fitted.length + 4,
+    lags_s: [0],
+    columns: (times) =>
+      fitted.flatMap((id) => {
+        const frequency = tidalFrequency(id)
+        return [times.map((time) => Math.cos(frequency * time)), times.map((time) => Math.sin(frequency * time))]
+      }),
+    record: ({ coefficients, covariance }) => recordOf(fitted, coefficients, covariance),
+    findings: () => [...findings, ...lengthFindings(before)],
+  }
 }
 
-const waves = (fitted: TideId[], time: number) =>
-  fitted.flatMap((id) => [Math.cos(tidalFrequency(id) * time), Math.sin(tidalFrequency(id) * time)])
-
-/** Amplitude in metres and phase in radians at the start of pumping, as amplitude·cos(ωt − phase). */
-function recordOf(fitted: TideId[], amplitudes: number[]): Record<string, number> {
+/** Amplitude in metres, its standard deviation, and phase in radians at the start of pumping: amplitude·cos(ωt − phase). */
+function recordOf(fitted: TideId[], coefficients: number[], covariance: number[][]): Record<string, number> {
   return Object.fromEntries(
     fitted.flatMap((id, k) => {
-      const [cosine = 0, sine = 0] = amplitudes.slice(2 * k, 2 * k + 2)
+      const [cosine = 0, sine = 0] = coefficients.slice(2 * k, 2 * k + 2)
+      const at = (i: number, j: number) => covariance[2 * k + i]?.[2 * k + j] as number
+      const squares = cosine * cosine * at(0, 0) + 2 * cosine * sine * at(0, 1) + sine * sine * at(1, 1)
+      const amplitude = Math.hypot(cosine, sine)
       return [
-        [`${id}_amplitude_m`, Math.hypot(cosine, sine)],
+        [`${id}_amplitude_m`, amplitude],
+        [`${id}_amplitudeSd_m`, Math.sqrt(Math.max(0, squares)) / (amplitude || 1)],
         [`${id}_phase`, Math.atan2(sine, cosine)],
       ]
     }),

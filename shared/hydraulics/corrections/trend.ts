@@ -1,32 +1,33 @@
-import {
-  antecedentOf,
-  correctionOf,
-  explainedFindings,
-  lengthFindings,
-  type Correction,
-  type Readings,
-} from './correction.ts'
-import { regression } from './regression.ts'
+import { AnalysisError } from '../analysis.ts'
+import { lengthFindings, type Antecedent } from './antecedent.ts'
+import type { Term } from './term.ts'
 
-const FEWEST_READINGS = 3
+const sdAt = (covariance: number[][], i: number) => Math.sqrt(Math.max(0, covariance[i]?.[i] ?? 0))
+const ones = (times: readonly number[]) => times.map(() => 1)
 
 /**
- * Takes off the linear trend of the readings before pumping, carried through the test.
- * @throws AnalysisError with fewer than three readings before pumping
+ * The linear trend of the readings before pumping, carried through the test: level and slope learned, or a slope that is
+ * given and counts from the start of pumping.
+ * @param slope_m_s rise of drawdown; null: learned
+ * @throws AnalysisError for a slope that is no number
  * Source: common practice; Kruseman & de Ridder, ILRI 47, from memory.
  */
-export function removeTrend(readings: Readings): Correction {
-  const before = antecedentOf(readings, FEWEST_READINGS)
-  const fit = regression(
-    before.elapsed_s.map((time) => [1, time]),
-    before.drawdown_m,
-  )
-  const [start_m = 0, slope_m_s = 0] = fit.coefficients
-  return correctionOf(
-    'trend',
-    readings,
-    readings.elapsed_s.map((time) => start_m + slope_m_s * time),
-    { start_m, slope_m_s, slopeSd_m_s: fit.sd[1] as number, explained: fit.explained },
-    [...lengthFindings(before), ...explainedFindings(fit.explained)],
-  )
+export function trendTerm(before: Antecedent, slope_m_s: number | null): Term {
+  if (slope_m_s !== null && !Number.isFinite(slope_m_s)) {
+    throw new AnalysisError('analysis/bad-option', { option: 'trend' })
+  }
+  return {
+    kind: 'trend',
+    given: slope_m_s === null ? null : [0, slope_m_s],
+    needed: 3,
+    lags_s: [0],
+    columns: (times) => [ones(times), [...times]],
+    remaining: (times) => [ones(times)],
+    record: ({ coefficients: [start_m = 0, slope = 0], covariance }) => ({
+      start_m,
+      slope_m_s: slope,
+      ...(slope_m_s === null ? { slopeSd_m_s: sdAt(covariance, 1) } : {}),
+    }),
+    findings: () => (slope_m_s === null ? lengthFindings(before) : []),
+  }
 }

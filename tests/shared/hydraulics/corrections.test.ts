@@ -1,10 +1,10 @@
 import fc from 'fast-check'
 import { describe, expect, it } from 'vitest'
-import { removeBarometric } from '#shared/hydraulics/corrections/barometric.ts'
-import { undone, type Readings } from '#shared/hydraulics/corrections/correction.ts'
-import { removeRiverStage } from '#shared/hydraulics/corrections/river.ts'
-import { removeTides, tidalFrequency, tidalSpeeds } from '#shared/hydraulics/corrections/tides.ts'
-import { removeTrend } from '#shared/hydraulics/corrections/trend.ts'
+import type { WantedCorrection } from '#shared/hydraulics/corrections/catalogue.ts'
+import { correctReadings } from '#shared/hydraulics/corrections/correct-readings.ts'
+import { undone, type Efficiency, type Outside, type Readings } from '#shared/hydraulics/corrections/correction.ts'
+import { tidalFrequency, tidalSpeeds } from '#shared/hydraulics/corrections/tides.ts'
+import together from '../../reference/corrections.json'
 import reference from '../../reference/test-kinds.json'
 import { DAY, relative } from './make-inputs.ts'
 
@@ -24,6 +24,18 @@ const stageSeries = (from: number, to: number) => {
   const elapsed_s = Array.from({ length: (to - from) * 96 + 1 }, (_, i) => from * DAY + i * 900)
   return { elapsed_s, value_m: elapsed_s.map(stage) }
 }
+
+/** One correction alone, with what is left. */
+function only(readings: Readings, wanted: WantedCorrection) {
+  const { drawdown_m, corrections } = correctReadings(readings, [wanted])
+  return { corrected_m: drawdown_m, ...corrections[0]! }
+}
+const removeTrend = (readings: Readings) => only(readings, { kind: 'trend', slope_m_s: null })
+const removeTides = (readings: Readings) => only(readings, { kind: 'tides' })
+const removeBarometric = (readings: Readings, outside: Outside, efficiency: Efficiency) =>
+  only(readings, { kind: 'barometric', outside, efficiency })
+const removeRiverStage = (readings: Readings, outside: Outside, efficiency: Efficiency) =>
+  only(readings, { kind: 'river', outside, efficiency })
 
 describe('an antecedent trend', () => {
   it('is taken off the whole record, and leaves the drawdown of pumping', () => {
@@ -62,7 +74,7 @@ describe('air pressure', () => {
   })
 
   it('may be given, adds to drawdown where it rises, and is zero when pumping begins', () => {
-    const correction = removeBarometric(readings, pressure, { given: 0.5 })
+    const correction = removeBarometric(readings, pressure, { given: 0.5, lag_s: 0 })
     const start = antecedent.t.indexOf(0)
     expect(correction.effect_m[start]).toBeCloseTo(0, 12)
     const rise = (antecedent.pressure[start + 50] as number) - (antecedent.pressure[start] as number)
@@ -74,7 +86,7 @@ describe('air pressure', () => {
     const level = { elapsed_s: antecedent.t, value_m: antecedent.t.map(() => 10) }
     expect(() => removeBarometric(within, level, learn)).toThrow('analysis/correction-level')
     expect(() => removeBarometric(within, pressure, { longestLag_s: 0, lagStep_s: 0 })).toThrow('analysis/bad-option')
-    expect(() => removeBarometric(within, pressure, { given: NaN })).toThrow('analysis/bad-option')
+    expect(() => removeBarometric(within, pressure, { given: NaN, lag_s: 0 })).toThrow('analysis/bad-option')
     const few = { elapsed_s: [-HOUR, 0, HOUR], drawdown_m: [0, 0, 1] }
     expect(() => removeBarometric(few, pressure, { longestLag_s: 0, lagStep_s: HOUR })).toThrow(
       'analysis/correction-readings',
@@ -82,7 +94,7 @@ describe('air pressure', () => {
   })
 
   it('says that an efficiency is odd, a lag the longest tried, and a correction weak', () => {
-    expect(codes(removeBarometric(readings, pressure, { given: 1.4 }))).toContain('correction-odd')
+    expect(codes(removeBarometric(readings, pressure, { given: 1.4, lag_s: 0 }))).toContain('correction-odd')
     expect(codes(removeBarometric(within, pressure, { longestLag_s: HOUR, lagStep_s: HOUR }))).toContain('lag-at-end')
     const noise = { ...within, drawdown_m: within.elapsed_s.map((_, i) => Math.sin(i * i)) }
     expect(codes(removeBarometric(noise, pressure, learn))).toContain('correction-weak')
@@ -155,14 +167,17 @@ describe('every correction', () => {
         fc.array(fc.double({ min: -5, max: 5, noNaN: true }), { minLength: 120, maxLength: 120 }),
         (values) => {
           const readings = { elapsed_s: values.map((_, i) => (i - 80) * HOUR), drawdown_m: values }
-          const corrections = [
-            removeTrend(readings),
-            removeTides(readings),
-            removeRiverStage(readings, stageSeries(-9, 6), { longestLag_s: HOUR, lagStep_s: HOUR }),
-            removeBarometric(readings, stageSeries(-9, 6), { given: 0.4 }),
+          const outside = stageSeries(-9, 6)
+          const wanted: WantedCorrection[] = [
+            { kind: 'trend', slope_m_s: null },
+            { kind: 'tides' },
+            { kind: 'river', outside, efficiency: { longestLag_s: HOUR, lagStep_s: HOUR } },
+            { kind: 'barometric', outside, efficiency: { given: 0.4, lag_s: 0 } },
           ]
-          for (const correction of corrections)
-            undone(correction).forEach((value, i) => expect(Math.abs(value - (values[i] as number))).toBeLessThan(1e-9))
+          for (const some of [...wanted.map((one) => [one]), wanted]) {
+            const corrected = correctReadings(readings, some, { meanBefore: true })
+            undone(corrected).forEach((value, i) => expect(Math.abs(value - (values[i] as number))).toBeLessThan(1e-9))
+          }
         },
       ),
       { numRuns: 20 },
@@ -184,5 +199,73 @@ describe('every correction', () => {
     const a = removeRiverStage(readings, outside, { longestLag_s: 2 * HOUR, lagStep_s: HOUR })
     const b = removeRiverStage(imperial, scaledOutside, { longestLag_s: 120, lagStep_s: 60 })
     b.corrected_m.forEach((value, i) => expect(value * foot).toBeCloseTo(a.corrected_m[i] as number, 9))
+  })
+})
+
+describe('several corrections', () => {
+  const { t, level, pressure, stage: river, found } = together
+  const readings = { elapsed_s: t, drawdown_m: level }
+  const learned = { longestLag_s: 0, lagStep_s: HOUR }
+  const wanted: WantedCorrection[] = [
+    { kind: 'trend', slope_m_s: null },
+    { kind: 'barometric', outside: { elapsed_s: t, value_m: pressure }, efficiency: learned },
+    { kind: 'river', outside: { elapsed_s: t, value_m: river }, efficiency: learned },
+    { kind: 'tides' },
+  ]
+
+  it('are learned together, as scipy does by one least squares, with its standard errors for white noise', () => {
+    const { corrections } = correctReadings(readings, wanted)
+    const record = Object.fromEntries(corrections.map((one) => [one.kind, one.record]))
+    expect(relative(record.trend!.slope_m_s!, found.slope)).toBeLessThan(1e-7)
+    expect(relative(record.barometric!.efficiency!, found.barometric)).toBeLessThan(1e-7)
+    expect(relative(record.river!.efficiency!, found.river)).toBeLessThan(1e-7)
+    expect(relative(record.tides!.M2_amplitude_m!, found.M2)).toBeLessThan(1e-7)
+    // The errors allow for residuals that stray together, and hardly widen where these do not.
+    expect(record.barometric!.efficiencySd! / found.barometricSd).toBeGreaterThan(0.9)
+    expect(record.barometric!.efficiencySd! / found.barometricSd).toBeLessThan(1.4)
+  })
+
+  it('are near the truth where each alone is led astray by the others', () => {
+    const efficiencyOf = (some: WantedCorrection[]) =>
+      correctReadings(readings, some).corrections.find(({ kind }) => kind === 'barometric')!.record.efficiency!
+    expect(Math.abs(efficiencyOf(wanted) - together.truth.barometric)).toBeLessThan(0.01)
+    expect(Math.abs(efficiencyOf([wanted[1]!]) - together.truth.barometric)).toBeGreaterThan(0.05)
+  })
+
+  it('are refused where two series say the same, and not where one of them is given', () => {
+    const outside = { elapsed_s: t, value_m: pressure }
+    const alike: WantedCorrection[] = [
+      { kind: 'barometric', outside, efficiency: learned },
+      { kind: 'river', outside, efficiency: learned },
+    ]
+    expect(() => correctReadings(readings, alike)).toThrow('analysis/correction-alike')
+    const given: WantedCorrection = { kind: 'river', outside, efficiency: { given: 0.2, lag_s: 0 } }
+    expect(correctReadings(readings, [alike[0]!, given]).corrections).toHaveLength(2)
+  })
+
+  it('leave the mean before pumping at zero where the static level is that mean', () => {
+    const { drawdown_m } = correctReadings(readings, [wanted[1]!], { meanBefore: true })
+    const before = drawdown_m.filter((_, i) => t[i]! <= 0)
+    expect(Math.abs(before.reduce((sum, value) => sum + value, 0) / before.length)).toBeLessThan(1e-12)
+  })
+
+  it('learn nothing from readings that are left out, and need no series there', () => {
+    const included = t.map((time) => time >= -10 * DAY)
+    const spoilt = level.map((value, i) => (included[i] ? value : 99))
+    const from = t.findIndex((time) => time >= -10 * DAY)
+    const outside = { elapsed_s: t.slice(from), value_m: pressure.slice(from) }
+    const correct = (part: Partial<Readings>) =>
+      correctReadings({ ...readings, ...part }, [{ kind: 'barometric', outside, efficiency: learned }])
+    const used = correct({ drawdown_m: spoilt, included })
+    const cut = correct({ elapsed_s: t.slice(from), drawdown_m: level.slice(from) })
+    expect(used.corrections[0]!.record).toEqual(cut.corrections[0]!.record)
+    expect(() => correct({})).toThrow('analysis/correction-cover')
+  })
+
+  it('warn of a gap in the series that is followed', () => {
+    const kept = t.flatMap((time, i) => (time > DAY && time < DAY + 8 * HOUR ? [] : [i]))
+    const outside = { elapsed_s: kept.map((i) => t[i]!), value_m: kept.map((i) => pressure[i]!) }
+    expect(codes(removeBarometric(readings, outside, learned))).toContain('outside-gap')
+    expect(codes(removeBarometric(readings, { elapsed_s: t, value_m: pressure }, learned))).not.toContain('outside-gap')
   })
 })

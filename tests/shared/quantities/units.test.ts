@@ -26,7 +26,7 @@ const relativeError = (value: number, expected: number) => Math.abs(value / expe
  *   foot; Table 6 and 7.10.2: minute, hour, day, litre, per cent. From memory.
  * - The gallons by their definitions, 231 cubic inches and 4.546 09 L; 1728 cubic inches in a cubic foot; the acre of
  *   43 560 square survey feet; standard gravity 9.806 65 m/s²; the pound of 0.453 592 37 kg; conventional water of
- *   1000 kg/m³. From memory; units-factors.py composes every unit from these in exact rational arithmetic.
+ *   1000 kg/m³, mercury of 13 595.1 kg/m³. From memory; units-factors.py composes every unit from these in exact rational arithmetic.
  * - scipy.constants (version in units-factors.json), for every unit that it has.
  */
 
@@ -41,6 +41,8 @@ const printed: [unit: string, entry: string, factor: number, how: 'read' | 'from
   ['ftH2O', 'foot of water, conventional (ftH2O)', 2.989067e3, 'read'],
   ['ft3/s', 'cubic foot per second (ft³/s)', 2.831685e-2, 'read'],
   ['cmH2O', 'centimeter of water, conventional (cmH2O)', 9.80665e1, 'from memory'],
+  ['mmHg', 'millimeter of mercury, conventional (mmHg)', 1.333224e2, 'from memory'],
+  ['inHg', 'inch of mercury, conventional (inHg)', 3.386389e3, 'from memory'],
   ['bar', 'bar (bar)', 1e5, 'from memory'],
   ['hPa', 'millibar (mbar)', 1e2, 'from memory'],
   ['min', 'minute (min)', 60, 'from memory'],
