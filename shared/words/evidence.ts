@@ -24,3 +24,7 @@ export function evidenceText(code: string): string {
   if (!sentence) throw new RangeError(`No sentence for the evidence rule ${code}`)
   return sentence
 }
+
+/** What a step-drawdown test is evidence of. */
+export const lossesText =
+  'A step-drawdown test gives the losses of the well. They are kept with the well, and are no value of the aquifer.'

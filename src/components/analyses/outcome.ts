@@ -1,41 +1,13 @@
 import type { Analysis } from '#shared/contracts/analyses.ts'
-import type { UnitSystem } from '#shared/quantities/systems.ts'
-import {
-  AnalysisError,
-  type AnalysisInputs,
-  type AnalysisOptions,
-  type AnalysisResult,
-  type Finding,
-} from '#shared/hydraulics/analysis.ts'
+import type { AnalysisInputs, AnalysisOptions, AnalysisResult, Finding } from '#shared/hydraulics/analysis.ts'
 import { recoveryConfirms, type ComparedAnalysis } from '#shared/hydraulics/agreement.ts'
-import { analyse, methods, type MethodId } from '#shared/hydraulics/catalogue.ts'
+import { methods, type MethodId } from '#shared/hydraulics/catalogue.ts'
 import { evidenceFacts } from '#shared/hydraulics/evidence-facts.ts'
 import { evidenceOf, type Evidence } from '#shared/hydraulics/evidence.ts'
-import { analysisErrorText } from '#shared/words/findings.ts'
-
-/** What a calculation gave: a result, or why there is none. */
-export type Outcome = { result: AnalysisResult } | { error: AnalysisError }
-
-export function outcomeOf(method: MethodId, inputs: AnalysisInputs, options: AnalysisOptions): Outcome {
-  try {
-    return { result: analyse(method, inputs, options) }
-  } catch (error) {
-    if (error instanceof AnalysisError) return { error }
-    // Readings far from anything a well can do: the page says so and stays usable.
-    if (error instanceof RangeError) return { error: new AnalysisError('analysis/no-fit') }
-    throw error
-  }
-}
 
 /** Plots and methods count from the moment at which pumping begins. */
 export const isPumped = ({ rates }: Pick<AnalysisInputs, 'rates'>): boolean =>
   rates.some(({ rate_m3_s }) => rate_m3_s > 0)
-
-export const resultOf = (outcome: Outcome | null): AnalysisResult | null =>
-  outcome && 'result' in outcome ? outcome.result : null
-
-export const refusalText = (outcome: Outcome | null, units: UnitSystem): string =>
-  outcome && 'error' in outcome ? analysisErrorText(outcome.error.code, outcome.error.params, units) : ''
 
 /** What agreement needs to know; null where there is no transmissivity. */
 export function comparedOf(

@@ -2,6 +2,7 @@ import { unparse } from 'papaparse'
 import { modelled, type Fit } from '#shared/charts/fit-band.ts'
 import type { TestPlot } from '#shared/charts/test-chart.ts'
 import { unitById } from '#shared/quantities/units.ts'
+import type { NumbersColumn, NumbersRow } from './numbers-table.ts'
 
 export interface ChartRow {
   well: string
@@ -36,6 +37,22 @@ export function chartRows({ wells, units, kind }: TestPlot, fit: Fit | null): Ch
 export function chartHeads({ x, y, units }: TestPlot) {
   const length = unitById(units.length).label
   return { well: 'well', x: x.title, measured: y.title, fitted: `fitted, ${length}`, residual: `residual, ${length}` }
+}
+
+/** The same for the page. */
+export function chartTable(plot: TestPlot, fit: Fit | null): { columns: NumbersColumn[]; rows: NumbersRow[] } {
+  const { well, ...numbers } = chartHeads(plot)
+  return {
+    columns: [
+      { key: 'well', title: well, numeric: false },
+      ...Object.entries(numbers).map(([key, title]) => ({ key, title, numeric: true })),
+      { key: 'state', title: 'state', numeric: false },
+    ],
+    rows: chartRows(plot, fit).map(({ leftOut, ...row }) => ({
+      ...row,
+      state: leftOut ? 'left out' : 'used or outside the window',
+    })),
+  }
 }
 
 /** As CSV with units in the header; a well called "=1+1" stays text in a spreadsheet. */

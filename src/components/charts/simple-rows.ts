@@ -1,5 +1,6 @@
 import { unparse } from 'papaparse'
 import type { SimplePlot, SimplePoint } from '#shared/charts/simple-plot.ts'
+import type { NumbersColumn, NumbersRow } from './numbers-table.ts'
 
 export interface SimpleRow {
   label: string
@@ -30,6 +31,16 @@ export const simpleHeads = ({ x, y }: SimplePlot) => ({
   fitted: 'fitted',
   state: 'state',
 })
+
+/** The same for the page. */
+export function simpleTable(plot: SimplePlot): { columns: NumbersColumn[]; rows: NumbersRow[] } {
+  const columns = Object.entries(simpleHeads(plot)).map(([key, title]) => ({
+    key,
+    title,
+    numeric: key !== 'label' && key !== 'state',
+  }))
+  return { columns, rows: simpleRows(plot).map((row) => ({ ...row })) }
+}
 
 /** As CSV with units in the header; a name like "=1+1" stays text in a spreadsheet. */
 export function simpleCsv(plot: SimplePlot): string {

@@ -1,7 +1,5 @@
 import type { Analysis, KindWorkbenchInputs } from '#shared/contracts/analyses.ts'
-import { AnalysisError } from '#shared/hydraulics/analysis.ts'
 import {
-  analyseOwn,
   isOwnKind,
   kindOfMethod,
   methodsOf,
@@ -11,24 +9,6 @@ import {
 } from '#shared/hydraulics/any-kind.ts'
 import type { KindResult } from '#shared/hydraulics/kinds.ts'
 import type { SlugInputs } from '#shared/hydraulics/slug/slug-test.ts'
-import type { KindWork } from './kept-kind-work.ts'
-
-/** What a calculation gave: a result, or why there is none. */
-export type KindOutcome = { result: KindResult } | { error: AnalysisError }
-
-export function kindOutcomeOf(
-  { kind, inputs }: KindWorkbenchInputs,
-  { method, options }: Pick<KindWork, 'method' | 'options'>,
-): KindOutcome {
-  try {
-    return { result: analyseOwn(kind, method, inputs, options) }
-  } catch (error) {
-    if (error instanceof AnalysisError) return { error }
-    // Readings far from anything a well can do: the page says so and stays usable.
-    if (error instanceof RangeError) return { error: new AnalysisError('analysis/no-fit') }
-    throw error
-  }
-}
 
 export type OwnAnalysis = Analysis & { options: OwnOptions; result: KindResult }
 

@@ -8,6 +8,7 @@ import type { SlugOptions } from '#shared/hydraulics/slug/slug-test.ts'
 import type { SpecificCapacityOptions } from '#shared/hydraulics/specific-capacity/specific-capacity-test.ts'
 import { useUnits } from '../../composables/useUnits.ts'
 import { usePreferences } from '../../stores/preferences.ts'
+import { useHeadRange } from '../slug-tests/use-head-range.ts'
 import { useKindBench } from './use-kind-bench.ts'
 
 export type KindPlotId = 'head-log' | 'head-linear' | 'per-rate' | 'step-time' | 'storage'
@@ -34,7 +35,7 @@ export function useKindPlot(): {
   kind: Ref<KindPlotId>
   kinds: ComputedRef<(typeof kindPlots)[OwnKindId]>
 } {
-  const { snapshot, present, method, result } = useKindBench()
+  const { snapshot, present, result } = useKindBench()
   const units = useUnits()
   const preferences = usePreferences()
   const kinds = computed(() => kindPlots[snapshot.value.kind])
@@ -55,11 +56,7 @@ export function useKindPlot(): {
     return curveOwn(ofTest, { method: work.method, inputs, options: work.options, result: result.value }, times_s)
   }
 
-  const heads = computed(() => {
-    const spec = method.value?.options.find((option) => option.kind === 'heads')
-    if (spec?.kind !== 'heads') return null
-    return (present.value?.options as SlugOptions).heads ?? spec.default
-  })
+  const { heads } = useHeadRange()
 
   const plot = computed<SimplePlot>(() => {
     const given = snapshot.value

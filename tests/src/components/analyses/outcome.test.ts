@@ -1,12 +1,7 @@
 import { describe, expect, it } from 'vitest'
 import { unitSystemById } from '#shared/quantities/systems.ts'
-import {
-  bySeverity,
-  evidencePreview,
-  outcomeOf,
-  refusalText,
-  resultOf,
-} from '../../../../src/components/analyses/outcome.ts'
+import { bySeverity, evidencePreview } from '../../../../src/components/analyses/outcome.ts'
+import { outcomeOf, refusalText, resultOf } from '../../../../src/components/workbench/outcome.ts'
 import { firstOptions } from '../../../../src/components/analyses/first-options.ts'
 import { makeAnalysis } from './make.ts'
 import { makeSeries } from '../../../shared/hydraulics/make-inputs.ts'

@@ -86,7 +86,7 @@ describe('The workbench of a test of a kind of its own', () => {
     const first = await makeBench(slugSnapshot())
     first.bench.start('hvorslev')
     first.bench.setWork({ label: 'Second thoughts' })
-    await settle()
+    window.dispatchEvent(new Event('pagehide'))
     const { bench } = await makeBench(slugSnapshot())
     expect(bench.present.value).toMatchObject({ method: 'hvorslev', label: 'Second thoughts' })
   })
@@ -111,5 +111,19 @@ describe('The workbench of a test of a kind of its own', () => {
     expect(bench.present.value?.label).toBe('Mine')
     bench.asking.value!()
     expect(bench.present.value).toMatchObject({ method: 'hvorslev', label: null })
+  })
+
+  it('undoes and redoes its changes', async () => {
+    const { bench } = await makeBench({ kind: 'step', inputs: makeStepInputs(), ...rest }, [])
+    const before = bench.result.value!.others!.find(({ id }) => id === 'C')!.value
+    bench.setOptions({ increment_s: 600 })
+    bench.setOptions({ trendFrom: 0.5 })
+    bench.history.undo()
+    bench.history.undo()
+    expect(bench.present.value?.options).toEqual({})
+    expect(bench.result.value!.others!.find(({ id }) => id === 'C')!.value).toBe(before)
+    bench.history.redo()
+    expect(bench.present.value?.options).toEqual({ increment_s: 600 })
+    expect(bench.history.canRedo.value).toBe(true)
   })
 })

@@ -1,0 +1,22 @@
+import type { KindWorkbenchInputs, WorkbenchInputs } from '#shared/contracts/analyses.ts'
+import type { PumpingTest } from '#shared/contracts/pumping-tests.ts'
+import type { UnitSystem } from '#shared/quantities/systems.ts'
+import type { ReadingCode } from '#shared/readings/codes.ts'
+import { readingIssueText } from '#shared/words/readings.ts'
+
+export interface InputProblem {
+  well: string
+  text: string
+}
+
+/** Logs that give no drawdown yet, and what is missing; without a well of its own a log is the pumped well's. */
+export const problemsOf = (
+  { problems }: Pick<WorkbenchInputs | KindWorkbenchInputs, 'problems'>,
+  { wells, wellCode }: PumpingTest,
+  units: UnitSystem,
+): InputProblem[] =>
+  problems.map(({ wellId, code, params }) => ({
+    well: wells.find((well) => String(well.wellId) === wellId)?.code ?? wellCode,
+    // Codes of the readings travel as plain strings.
+    text: readingIssueText(code as ReadingCode, params, units),
+  }))
