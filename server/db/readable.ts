@@ -1,9 +1,9 @@
 import { and, eq, exists, inArray, isNull, ne, or, sql, type SQL } from 'drizzle-orm'
 import { alias, QueryBuilder, type AnyMySqlColumn } from 'drizzle-orm/mysql-core'
 import { atLeast, type Viewer } from '#shared/contracts/permissions.ts'
-import { analyses, pumpingTests, wells } from './schema/index.ts'
+import { analyses, pumpingTests, wellCells, wells } from './schema/index.ts'
 
-type Guarded = Record<'visibility' | 'embargoUntil' | 'createdBy', AnyMySqlColumn>
+type Guarded = Record<'visibility' | 'createdBy', AnyMySqlColumn>
 
 /**
  * What estimates, statistics and maps are computed from. Embargoes end through a job, which clears the date and moves
@@ -21,19 +21,24 @@ export const viewerOfScope = (scope: Scope): Viewer => ({
   mayReview: false,
 })
 
-function rows(table: Guarded, viewer: Viewer): SQL {
+function rowsWhere(table: Guarded, notEmbargoed: SQL, viewer: Viewer): SQL {
   if (atLeast(viewer, 'steward')) return sql`true`
   const open = atLeast(viewer, 'analyst')
     ? ne(table.visibility, 'private')
-    : and(eq(table.visibility, 'published'), isNull(table.embargoUntil))
+    : and(eq(table.visibility, 'published'), notEmbargoed)
   return (viewer.id === null ? open : or(open, eq(table.createdBy, viewer.id))) ?? sql`false`
 }
+
+const rows = (table: Guarded & { embargoUntil: AnyMySqlColumn }, viewer: Viewer): SQL =>
+  rowsWhere(table, isNull(table.embargoUntil), viewer)
 
 const parent = alias(wells, 'readable_parent')
 
 /** The rows of a table that the viewer may see; a pumping test is never more visible than its well. */
 export const readable = {
   wells: (viewer: Viewer): SQL => rows(wells, viewer),
+  /** Counts of wells, by the same rule. */
+  wellCells: (viewer: Viewer): SQL => rowsWhere(wellCells, eq(wellCells.embargoed, false), viewer),
   pumpingTests(viewer: Viewer): SQL {
     if (atLeast(viewer, 'steward')) return sql`true`
     const well = new QueryBuilder()

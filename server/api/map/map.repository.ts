@@ -1,50 +1,37 @@
-import { and, asc, eq, gte, inArray, isNotNull, isNull, lt, sql, type SQL } from 'drizzle-orm'
+import { and, asc, eq, gte, inArray, isNotNull, isNull, lt, or, sql, type SQL } from 'drizzle-orm'
 import type { AnyMySqlColumn } from 'drizzle-orm/mysql-core'
 import type { MapWellQuery } from '#shared/contracts/map.ts'
 import type { Viewer } from '#shared/contracts/permissions.ts'
-import { mercatorBits, mercatorInts } from '#shared/geodesy/index.ts'
+import { mercatorBits } from '#shared/geodesy/index.ts'
 import type { Executor } from '../../db/client.ts'
 import { readable } from '../../db/readable.ts'
-import { adoptedValues, pumpingTests, wells } from '../../db/schema/index.ts'
+import { adoptedValues, pumpingTests, wellCells, wells } from '../../db/schema/index.ts'
+import { countedBits } from '../../db/well-cells.ts'
+import type { MapView, Span } from './map-view.ts'
 
-const world = 2 ** mercatorBits
-/** As many cells as a screen of 8 K needs with the margin that the map asks for. */
-const mostCells = 128 * 128
-
-/** A box as ranges of the Mercator index, ends included; across the date line `left` is more than `right`. */
-function rangesOf([west, south, east, north]: MapWellQuery['bbox']) {
-  const a = mercatorInts(west, north)
-  const b = mercatorInts(east, south)
-  // The date line as the eastern edge is the end of the map, not its beginning.
-  return { left: a.mx, right: east === 180 ? world - 1 : b.mx, top: a.my, bottom: b.my }
+/** Places of a table: columns and rows of squares whose side is 2^bits of the Mercator integers. */
+interface Grid {
+  x: AnyMySqlColumn
+  y: AnyMySqlColumn
+  bits: number
 }
 
-/** Wells of a box; a box across the date line wraps. */
-function inBox(bbox: MapWellQuery['bbox']): SQL {
-  const { left, right, top, bottom } = rangesOf(bbox)
-  const x =
-    left <= right
-      ? sql`${wells.mx} between ${left} and ${right}`
-      : sql`(${wells.mx} >= ${left} or ${wells.mx} <= ${right})`
-  return sql`${x} and ${wells.my} between ${top} and ${bottom}`
+const wellGrid: Grid = { x: wells.mx, y: wells.my, bits: 0 }
+
+function inView({ bits, columns, rows }: MapView, grid: Grid): SQL | undefined {
+  const finer = bits - grid.bits
+  const within = (column: AnyMySqlColumn, [from, to]: Span) =>
+    sql`${column} between ${from << finer} and ${((to + 1) << finer) - 1}`
+  return and(or(...columns.map((span) => within(grid.x, span))), within(grid.y, rows))
 }
 
-function cellsOf(bbox: MapWellQuery['bbox'], bits: number): number {
-  const { left, right, top, bottom } = rangesOf(bbox)
-  const between = (from: number, to: number) => (to >> bits) - (from >> bits) + 1
-  const columns = left <= right ? between(left, right) : between(left, world - 1) + between(0, right)
-  return columns * Math.max(0, between(top, bottom))
+/** One number for the cell of the view that a place lies in; queries group by it as `cell`. */
+function cellOf({ bits }: MapView, { x, y, bits: own }: Grid) {
+  const finer = bits - own
+  return sql<number>`((${x} >> ${finer}) << ${mercatorBits}) | (${y} >> ${finer})`.mapWith(Number).as('cell')
 }
 
-/**
- * Side of a cluster cell in pixels is 64 = 2^6; a pixel at zoom z is 2^(24 − 8 − z) of the Mercator integers. Cells are
- * coarser where a box has more of them than any screen shows: the world at street level would answer with every well.
- */
-function cellBits({ bbox, zoom }: MapWellQuery): number {
-  let bits = Math.max(0, mercatorBits - 8 - zoom + 6)
-  while (cellsOf(bbox, bits) > mostCells) bits += 1
-  return bits
-}
+const byCell = sql`cell`
 
 const log10 = (value: number | undefined, within: (log: number) => SQL) =>
   value === undefined ? undefined : within(Math.log10(value))
@@ -71,70 +58,84 @@ function valuesOf(executor: Executor, viewer: Viewer, { unitId, quantity, storag
     .as('newest_values')
 }
 
-function filtered(executor: Executor, viewer: Viewer, query: MapWellQuery) {
-  const newest = valuesOf(executor, viewer, query)
-  const only: Record<NonNullable<MapWellQuery['only']>, SQL | undefined> = {
+/** What the query's filter leaves of a well and its newest value. */
+function kept({ only, from, below }: MapWellQuery): SQL | undefined {
+  const byValue: Record<NonNullable<MapWellQuery['only']>, SQL> = {
     firm: eq(adoptedValues.evidence, 'firm'),
     fair: eq(adoptedValues.evidence, 'fair'),
     slight: eq(adoptedValues.evidence, 'slight'),
     none: isNull(adoptedValues.id),
     valued: isNotNull(adoptedValues.id),
   }
-  const where = and(
-    inBox(query.bbox),
-    readable.wells(viewer),
-    query.only ? only[query.only] : undefined,
-    log10(query.from, (log) => gte(adoptedValues.log10Value, log)),
-    log10(query.below, (log) => lt(adoptedValues.log10Value, log)),
+  return and(
+    only && byValue[only],
+    log10(from, (log) => gte(adoptedValues.log10Value, log)),
+    log10(below, (log) => lt(adoptedValues.log10Value, log)),
   )
-  return { newest, where }
 }
 
-/**
- * Per grid cell: how many wells, and their mean place. Sums of doubles and one expression to group by, because averages
- * of whole numbers are decimals and cost four times as much.
- */
-function measuresOf(query: MapWellQuery) {
-  const bits = cellBits(query)
-  const cell = sql<number>`((${wells.mx} >> ${bits}) << ${mercatorBits}) | (${wells.my} >> ${bits})`
-  const mean = (column: AnyMySqlColumn) => sql<number>`sum(${column} + 0e0) / count(*)`.mapWith(Number)
-  const measures = {
-    cell: cell.mapWith(Number).as('cell'),
-    count: sql<number>`count(*)`.mapWith(Number),
-    mx: mean(wells.mx),
-    my: mean(wells.my),
-    /** One of its wells; the only one where the count is 1. */
-    wellId: sql<number>`min(${wells.id})`.mapWith(Number),
-  }
-  return { measures, by: sql`cell` }
-}
+/** Sums of doubles: sums of whole numbers are decimals, which cost four times as much. All here are exact below 2⁵³. */
+const total = (column: AnyMySqlColumn) => sql<number>`sum(${column} + 0e0)`.mapWith(Number)
 
-/** All wells of the box, grouped: answered by one index alone, always fresh. */
-export function groupWells(executor: Executor, viewer: Viewer, query: MapWellQuery) {
-  const { measures, by } = measuresOf(query)
-  return executor
-    .select(measures)
+/** All wells of a view's cells, counted one by one: answered by one index alone. */
+const countEach = (executor: Executor, viewer: Viewer, view: MapView) =>
+  executor
+    .select({
+      cell: cellOf(view, wellGrid),
+      count: sql<number>`count(*)`.mapWith(Number),
+      sumId: total(wells.id),
+      sumMx: total(wells.mx),
+      sumMy: total(wells.my),
+    })
     .from(wells)
-    .where(and(inBox(query.bbox), readable.wells(viewer)))
-    .groupBy(by)
-}
+    .where(and(inView(view, wellGrid), readable.wells(viewer)))
+    .groupBy(byCell)
 
-/** The wells that the query's filter leaves, grouped; without a filter this is `groupWells` and slower. */
-export function groupFilteredWells(executor: Executor, viewer: Viewer, query: MapWellQuery) {
-  const { newest, where } = filtered(executor, viewer, query)
-  const { measures, by } = measuresOf(query)
+/** The same from the counts of cells that are no larger than the view's. */
+function addCounts(executor: Executor, viewer: Viewer, view: MapView, bits: number) {
+  const grid = { x: wellCells.cx, y: wellCells.cy, bits }
+  const count = total(wellCells.wellCount)
   return executor
-    .select(measures)
-    .from(wells)
-    .leftJoin(newest, eq(newest.wellId, wells.id))
-    .leftJoin(adoptedValues, eq(adoptedValues.id, newest.newest))
-    .where(where)
-    .groupBy(by)
+    .select({
+      cell: cellOf(view, grid),
+      count,
+      sumId: total(wellCells.sumId),
+      sumMx: total(wellCells.sumMx),
+      sumMy: total(wellCells.sumMy),
+    })
+    .from(wellCells)
+    .where(and(eq(wellCells.bits, bits), inView(view, grid), readable.wellCells(viewer)))
+    .groupBy(byCell)
+    .having(sql`${count} > 0`)
 }
 
-/** Single wells, all or those with these ids; those with a value first. */
-export function listMapWells(executor: Executor, viewer: Viewer, query: MapWellQuery, ids?: number[]) {
-  const { newest, where } = filtered(executor, viewer, query)
+/** Per cell of a view: how many wells, and the sums of their ids and places. */
+export function groupWells(executor: Executor, viewer: Viewer, view: MapView) {
+  const counted = countedBits.filter((bits) => bits <= view.bits).at(-1)
+  return counted === undefined ? countEach(executor, viewer, view) : addCounts(executor, viewer, view, counted)
+}
+
+/** The same of those wells that have a value which the query's filter leaves. */
+export function groupValuedWells(executor: Executor, viewer: Viewer, query: MapWellQuery, view: MapView) {
+  const newest = valuesOf(executor, viewer, query)
+  return executor
+    .select({
+      cell: cellOf(view, wellGrid),
+      count: sql<number>`count(*)`.mapWith(Number),
+      sumId: total(wells.id),
+      sumMx: total(wells.mx),
+      sumMy: total(wells.my),
+    })
+    .from(newest)
+    .innerJoin(adoptedValues, eq(adoptedValues.id, newest.newest))
+    .innerJoin(wells, eq(wells.id, newest.wellId))
+    .where(and(inView(view, wellGrid), readable.wells(viewer), kept(query)))
+    .groupBy(byCell)
+}
+
+/** Single wells of a view, all or those with these ids; those with a value first. */
+export function listMapWells(executor: Executor, viewer: Viewer, query: MapWellQuery, view: MapView, ids?: number[]) {
+  const newest = valuesOf(executor, viewer, query)
   return executor
     .select({
       id: wells.id,
@@ -147,6 +148,6 @@ export function listMapWells(executor: Executor, viewer: Viewer, query: MapWellQ
     .from(wells)
     .leftJoin(newest, eq(newest.wellId, wells.id))
     .leftJoin(adoptedValues, eq(adoptedValues.id, newest.newest))
-    .where(and(where, ids && inArray(wells.id, ids)))
+    .where(and(ids ? inArray(wells.id, ids) : inView(view, wellGrid), readable.wells(viewer), kept(query)))
     .orderBy(asc(isNull(adoptedValues.id)), asc(wells.code))
 }

@@ -2,11 +2,18 @@ import { and, eq, inArray, isNotNull, lte, ne, type SQL } from 'drizzle-orm'
 import type { Executor } from '../../db/client.ts'
 import { readable } from '../../db/readable.ts'
 import { pumpingTests, testWells, wells } from '../../db/schema/index.ts'
+import { recountingWells } from '../../db/well-cells.ts'
 import type { Viewer } from '#shared/contracts/permissions.ts'
 import type { Exposure } from './exposure.ts'
 
 const tables = { well: wells, 'pumping-test': pumpingTests }
 export type Subject = keyof typeof tables
+
+/** What counts the rows by how visible they are keeps pace with a change. */
+const recounting: Record<Subject, typeof recountingWells> = {
+  well: recountingWells,
+  'pumping-test': (_executor, _ids, change) => change(),
+}
 
 const fragment = { well: readable.wells, 'pumping-test': readable.pumpingTests }
 
@@ -29,10 +36,12 @@ export async function saveExposure(
   exposure: Exposure,
 ) {
   const table = tables[subject]
-  const [result] = await executor
-    .update(table)
-    .set({ ...exposure, rowVersion: version + 1 })
-    .where(and(eq(table.id, id), eq(table.rowVersion, version)))
+  const [result] = await recounting[subject](executor, [id], () =>
+    executor
+      .update(table)
+      .set({ ...exposure, rowVersion: version + 1 })
+      .where(and(eq(table.id, id), eq(table.rowVersion, version))),
+  )
   return result.affectedRows === 1
 }
 
@@ -92,6 +101,9 @@ export async function liftEmbargoes(executor: Executor, subject: Subject, now: D
   const found = (await due(isDue)).map(({ id }) => id)
   if (found.length === 0) return []
   const ids = (await due(and(inArray(table.id, found), isDue)).for('update')).map(({ id }) => id)
-  if (ids.length > 0) await executor.update(table).set({ embargoUntil: null }).where(inArray(table.id, ids))
+  if (ids.length > 0)
+    await recounting[subject](executor, ids, () =>
+      executor.update(table).set({ embargoUntil: null }).where(inArray(table.id, ids)),
+    )
   return ids
 }

@@ -5,6 +5,7 @@ import type { Executor } from '../../db/client.ts'
 import { containing } from '../../db/like.ts'
 import { readable } from '../../db/readable.ts'
 import { aquiferUnits, unitPicks, wells, wellScreens } from '../../db/schema/index.ts'
+import { addToCells, recountingWells } from '../../db/well-cells.ts'
 
 export type WellRow = typeof wells.$inferSelect
 export type NewWell = typeof wells.$inferInsert
@@ -38,15 +39,19 @@ export async function findWell(executor: Executor, viewer: Viewer, id: number): 
 
 export async function insertWell(executor: Executor, row: NewWell): Promise<number> {
   const [inserted] = await executor.insert(wells).values(row).$returningId()
-  return inserted!.id
+  const { id } = inserted!
+  await addToCells(executor, eq(wells.id, id))
+  return id
 }
 
 /** False when the row version is stale. */
 export async function updateWell(executor: Executor, id: number, version: number, change: Partial<NewWell>) {
-  const [result] = await executor
-    .update(wells)
-    .set({ ...change, rowVersion: version + 1 })
-    .where(and(eq(wells.id, id), eq(wells.rowVersion, version)))
+  const [result] = await recountingWells(executor, [id], () =>
+    executor
+      .update(wells)
+      .set({ ...change, rowVersion: version + 1 })
+      .where(and(eq(wells.id, id), eq(wells.rowVersion, version))),
+  )
   return result.affectedRows === 1
 }
 

@@ -1,4 +1,16 @@
-import { double, index, int, mysqlEnum, mysqlTable, text, uniqueIndex, varchar } from 'drizzle-orm/mysql-core'
+import {
+  bigint,
+  boolean,
+  double,
+  index,
+  int,
+  mysqlEnum,
+  mysqlTable,
+  primaryKey,
+  text,
+  uniqueIndex,
+  varchar,
+} from 'drizzle-orm/mysql-core'
 import { point } from '../spatial.ts'
 import { id, instant, reference, rowVersion } from './columns.ts'
 
@@ -43,6 +55,35 @@ export const wells = mysqlTable(
     uniqueIndex('wells_code').on(table.code),
     // Everything that the map's groups and `readable` ask for, so that a grouped query reads the index alone.
     index('wells_mercator').on(table.mx, table.my, table.visibility, table.embargoUntil, table.createdBy),
+  ],
+)
+
+const sum = () => bigint({ mode: 'number' }).notNull()
+
+/**
+ * How many wells stand in a square of the map, and the sums of their places: a view of a whole region adds up some cells
+ * instead of all wells. Wells that not everybody sees alike are counted apart, by all that `readable` asks for. Written
+ * by well-cells.ts alone, in the transaction that writes a well.
+ */
+export const wellCells = mysqlTable(
+  'well_cells',
+  {
+    /** The side of the square is 2^bits of the Mercator integers; `cx` and `cy` count squares. */
+    bits: int().notNull(),
+    cx: int().notNull(),
+    cy: int().notNull(),
+    visibility: visibility(),
+    embargoed: boolean().notNull(),
+    /** 0 where nobody is known. */
+    createdBy: reference().notNull(),
+    wellCount: int().notNull(),
+    /** The id itself where the well is alone. */
+    sumId: sum(),
+    sumMx: sum(),
+    sumMy: sum(),
+  },
+  ({ bits, cx, cy, visibility: seenBy, embargoed, createdBy }) => [
+    primaryKey({ columns: [bits, cx, cy, seenBy, embargoed, createdBy] }),
   ],
 )
 

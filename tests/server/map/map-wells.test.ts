@@ -1,6 +1,8 @@
+import { like } from 'drizzle-orm'
 import { beforeAll, describe, expect, it } from 'vitest'
 import type { MapWells } from '#shared/contracts/map.ts'
 import { wells } from '../../../server/db/schema/index.ts'
+import { addToCells } from '../../../server/db/well-cells.ts'
 import { mercatorInts } from '#shared/geodesy/index.ts'
 import { useApp, type SignedIn } from '../../support/app.ts'
 import { createPublishedWell, createWell, makeRegion, makeUnit } from '../../support/domain.ts'
@@ -39,7 +41,9 @@ async function insertWells(count: number, place: (i: number) => [lon: number, la
       ...exposure,
     }
   })
-  await app.deps.connection.db.insert(wells).values(rows)
+  const { db } = app.deps.connection
+  await db.insert(wells).values(rows)
+  await addToCells(db, like(wells.code, `${prefix}%`))
 }
 
 beforeAll(async () => {
