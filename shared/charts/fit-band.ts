@@ -19,7 +19,7 @@ const parametersOf = ({ extras }: AnalysisResult) =>
 
 /** A line drawn by hand has no scatter of its own, and a fit of logarithms weighs readings unlike this band. */
 const hasBand = ({ options, result }: Fit) =>
-  !options.line && options.objective !== 'log-drawdown' && result.fit.n > parametersOf(result).length
+  !options.line && !options.match && options.objective !== 'log-drawdown' && result.fit.n > parametersOf(result).length
 
 /** Modelled drawdown of one well; null where the model says nothing. */
 export function modelled({ inputs, options, result }: Fit, wellId: string, times_s: number[]): (number | null)[] {

@@ -123,6 +123,7 @@ export const analysisOptions = z.object({
   wellIds: z.array(z.string()).max(60),
   window: window.nullable(),
   line: z.object({ slope: z.number(), intercept: z.number() }).nullable().optional(),
+  match: z.record(z.string().max(40), z.number()).nullable().optional(),
   objective: z.enum(['drawdown', 'log-drawdown']).optional(),
   thinning: z.boolean().optional(),
   afterDrainage: z.boolean().nullable().optional(),

@@ -1,5 +1,6 @@
 import type { MethodId } from './catalogue.ts'
 import type { KindErrorCode } from './kind-errors.ts'
+import type { CurveMatch } from './laid-curve.ts'
 import type { PenetrationErrorCode } from './penetration-errors.ts'
 import type { StorageErrorCode } from './storage-errors.ts'
 
@@ -78,6 +79,8 @@ export interface AnalysisOptions {
   window: TimeWindow | null
   /** Replaces the regression of straight-line methods. Default null. */
   line?: HandLine | null
+  /** A curve laid over the readings by hand, by the ids of its unknowns; replaces the search of curve methods. Default null. */
+  match?: CurveMatch | null
   /** What the least squares of curve methods are taken of. Default 'drawdown'. */
   objective?: 'drawdown' | 'log-drawdown'
   /** Replace s by s − s²/2b in an unconfined aquifer. Default false. */
@@ -234,6 +237,8 @@ export type AnalysisErrorCode =
   | 'analysis/thinning-too-large'
   | 'analysis/thinning-early'
   | 'analysis/no-fit'
+  | 'analysis/match-incomplete'
+  | 'analysis/match-outside'
   | 'analysis/boundaries-too-many'
   | 'analysis/boundaries-behind'
   | 'analysis/boundaries-facing'

@@ -1,4 +1,5 @@
 import type { AnalysisInputs, AnalysisOptions, FittedCurve, MethodOutcome } from './analysis.ts'
+import type { CurveShift } from './laid-curve.ts'
 import type { Requirement } from './requirements.ts'
 
 /** A quantity that a method finds. Bounds are those of the search, far outside what may be adopted. */
@@ -21,6 +22,7 @@ export type OptionSpec = OptionBase &
   (
     | { kind: 'window'; axis: 'elapsed' | 'since-stop' }
     | { kind: 'line'; abscissa: 'elapsed' | 'distance' | 'time-ratio' }
+    | { kind: 'match'; shift: CurveShift }
     | { kind: 'choice'; values: readonly string[]; default: string }
     | { kind: 'flag'; default: boolean }
     | { kind: 'answer' }

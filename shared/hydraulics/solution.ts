@@ -1,4 +1,5 @@
 import type { AnalysisInputs, Finding, StorageClass } from './analysis.ts'
+import type { CurveShift } from './laid-curve.ts'
 import type { Unknown, ValidityRule } from './method.ts'
 import type { ResponsePlace } from './place.ts'
 import type { RateHistory } from './rates.ts'
@@ -28,6 +29,8 @@ export interface Solution {
   known?: readonly Requirement[]
   /** The storage that may be adopted, with its class; left out: S, classed by the aquifer and the length of the test. */
   storage?: { unknown: string; storageClass: StorageClass }
+  /** Lets its curve be laid by hand; left out where its shape changes with S, so that no move leaves it as it is. */
+  shift?: CurveShift
   /** In the order in which `respond` takes them; the first two are T and S. */
   unknowns: readonly Unknown[]
   /** @throws AnalysisError where the place lacks what the solution needs */

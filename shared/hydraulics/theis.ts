@@ -72,6 +72,7 @@ export const theis: Solution = {
   version: 1,
   source: 'Theis 1935; ASTM D4106',
   aquifers: ['confined'],
+  shift: { storages: ['S'] },
   unknowns: [transmissivity, storativity],
   respond: theisRespond,
   guess,

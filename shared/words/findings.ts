@@ -29,6 +29,7 @@ const parameterName = (id: string): string =>
 const optionNames: Record<string, string> = {
   ...kindOptionNames,
   window: 'The time window must end after it begins, and cannot begin before zero.',
+  match: 'The curve of this method cannot be laid by hand, because its shape changes with storativity.',
   line: 'The line drawn by hand needs a slope and a height.',
   readingsPerCycle: 'The number of readings used per factor of ten in time must be at least 1.',
 }
@@ -56,6 +57,8 @@ const findings: Sentences<string> = {
   'pumped-well-in-joint-fit': () =>
     'The pumped well is fitted together with observation wells. Losses at the well pull the result; try without it.',
   'hand-line': () => 'The line was drawn by hand; the interval rests on the scatter of the readings about it.',
+  'hand-curve': () =>
+    'The curve was laid over the readings by hand, and nothing was searched. Its interval holds the scatter of the readings, and how far least squares would move the curve.',
   'rate-varied': ({ percent }) =>
     `The rate differed by up to ${percent('variation')} from its mean, more than ${percent('limit')}. A curve fit with the whole rate history is safer.`,
   'aquifer-leaky': () =>
@@ -162,6 +165,10 @@ const refusals: Sentences<AnalysisErrorCode> = {
   'analysis/bearing-unknown': () =>
     'The direction of an observation well from the pumped well is not known, so its distance from the boundary is not either. Enter the position of both wells.',
   'analysis/no-fit': () => 'No curve could be fitted. Check rate, distance and units.',
+  'analysis/match-incomplete': ({ text }) =>
+    `The curve laid by hand has no value of “${parameterName(text('parameter'))}”. Type one, or go back to least squares.`,
+  'analysis/match-outside': ({ text }) =>
+    `“${parameterName(text('parameter'))}” of the curve laid by hand is outside what this method can find. Move the curve back, or go back to least squares.`,
 }
 
 /** A finding as a sentence in the reader's units. @throws RangeError for a code without a sentence */

@@ -46,6 +46,7 @@ export const leakyPartialPenetration: Solution = {
   source: 'Hantush 1964',
   aquifers: ['leaky'],
   known: ['thickness', 'short-screen'],
+  shift: { storages: ['S'] },
   unknowns: [transmissivity, storativity, leakageFactor, anisotropyRatio],
   respond: leakyPartialPenetrationRespond,
   guess: (readings) =>

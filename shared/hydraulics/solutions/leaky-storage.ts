@@ -94,6 +94,7 @@ export const leakyStorage: Solution = {
   version: 1,
   source: 'Hantush 1960; ASTM D6028',
   aquifers: ['leaky'],
+  shift: { storages: ['S'] },
   unknowns: [transmissivity, storativity, aquitardStorageLength],
   respond: leakyStorageRespond,
   guess,

@@ -93,6 +93,7 @@ export const leaky: Solution = {
   version: 1,
   source: 'Hantush & Jacob 1955; ASTM D6029',
   aquifers: ['leaky'],
+  shift: { storages: ['S'] },
   unknowns: [transmissivity, storativity, leakageFactor],
   respond: leakyRespond,
   guess,

@@ -81,6 +81,7 @@ const shared = {
   source: 'Hantush 1961',
   aquifers: ['confined'],
   known: ['thickness', 'short-screen'],
+  shift: { storages: ['S'] },
   respond: partialPenetrationRespond,
   validity: [
     ...theis.validity,

@@ -146,6 +146,7 @@ export const unconfined: Solution = {
   aquifers: ['unconfined'],
   known: ['saturated-thickness'],
   storage: { unknown: 'Sy', storageClass: 'specific-yield' },
+  shift: { storages: ['S', 'Sy'] },
   unknowns: [transmissivity, storativity, specificYield, anisotropy],
   respond,
   guess,
