@@ -64,7 +64,7 @@ export function createServices(deps: Deps) {
     estimates: createEstimatesService(deps, { region, streams, adoptedValues }),
     health: createHealthService(deps),
     jobs: createJobsService(deps),
-    map: createMapService(deps),
+    map: createMapService(deps, { adoptedValues }),
     outbox: createOutboxService(deps),
     password: createPasswordService(deps),
     people: createPeopleService(deps, region),

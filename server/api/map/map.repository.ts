@@ -1,4 +1,4 @@
-import { and, asc, eq, gte, inArray, isNotNull, isNull, lt, or, sql, type SQL } from 'drizzle-orm'
+import { and, asc, eq, inArray, isNull, or, sql, type SQL } from 'drizzle-orm'
 import type { AnyMySqlColumn } from 'drizzle-orm/mysql-core'
 import type { MapWellQuery } from '#shared/contracts/map.ts'
 import type { Viewer } from '#shared/contracts/permissions.ts'
@@ -32,47 +32,6 @@ function cellOf({ bits }: MapView, { x, y, bits: own }: Grid) {
 }
 
 const byCell = sql`cell`
-
-const log10 = (value: number | undefined, within: (log: number) => SQL) =>
-  value === undefined ? undefined : within(Math.log10(value))
-
-/** The newest current value of each well in the chosen unit and quantity, from tests the viewer may see. */
-function valuesOf(executor: Executor, viewer: Viewer, { unitId, quantity, storageClass }: MapWellQuery) {
-  return executor
-    .select({
-      wellId: adoptedValues.wellId,
-      newest: sql<number>`max(${adoptedValues.id})`.as('newest'),
-    })
-    .from(adoptedValues)
-    .innerJoin(pumpingTests, eq(pumpingTests.id, adoptedValues.pumpingTestId))
-    .where(
-      and(
-        eq(adoptedValues.unitId, unitId ?? 0),
-        eq(adoptedValues.quantity, quantity),
-        isNull(adoptedValues.validTo),
-        storageClass ? eq(adoptedValues.storageClass, storageClass) : undefined,
-        readable.pumpingTests(viewer),
-      ),
-    )
-    .groupBy(adoptedValues.wellId)
-    .as('newest_values')
-}
-
-/** What the query's filter leaves of a well and its newest value. */
-function kept({ only, from, below }: MapWellQuery): SQL | undefined {
-  const byValue: Record<NonNullable<MapWellQuery['only']>, SQL> = {
-    firm: eq(adoptedValues.evidence, 'firm'),
-    fair: eq(adoptedValues.evidence, 'fair'),
-    slight: eq(adoptedValues.evidence, 'slight'),
-    none: isNull(adoptedValues.id),
-    valued: isNotNull(adoptedValues.id),
-  }
-  return and(
-    only && byValue[only],
-    log10(from, (log) => gte(adoptedValues.log10Value, log)),
-    log10(below, (log) => lt(adoptedValues.log10Value, log)),
-  )
-}
 
 /** Sums of doubles: sums of whole numbers are decimals, which cost four times as much. All here are exact below 2⁵³. */
 const total = (column: AnyMySqlColumn) => sql<number>`sum(${column} + 0e0)`.mapWith(Number)
@@ -115,39 +74,41 @@ export function groupWells(executor: Executor, viewer: Viewer, view: MapView) {
   return counted === undefined ? countEach(executor, viewer, view) : addCounts(executor, viewer, view, counted)
 }
 
-/** The same of those wells that have a value which the query's filter leaves. */
-export function groupValuedWells(executor: Executor, viewer: Viewer, query: MapWellQuery, view: MapView) {
-  const newest = valuesOf(executor, viewer, query)
-  return executor
-    .select({
-      cell: cellOf(view, wellGrid),
-      count: sql<number>`count(*)`.mapWith(Number),
-      sumId: total(wells.id),
-      sumMx: total(wells.mx),
-      sumMy: total(wells.my),
-    })
-    .from(newest)
-    .innerJoin(adoptedValues, eq(adoptedValues.id, newest.newest))
-    .innerJoin(wells, eq(wells.id, newest.wellId))
-    .where(and(inView(view, wellGrid), readable.wells(viewer), kept(query)))
-    .groupBy(byCell)
+interface Pair {
+  unitId: number
+  quantity: MapWellQuery['quantity']
+  storageClass: MapWellQuery['storageClass']
 }
 
-/** Single wells of a view, all or those with these ids; those with a value first. */
-export function listMapWells(executor: Executor, viewer: Viewer, query: MapWellQuery, view: MapView, ids?: number[]) {
-  const newest = valuesOf(executor, viewer, query)
-  return executor
+/** Current values of a unit and quantity at wells, from tests the viewer may see; oldest first. */
+export const listValues = (executor: Executor, viewer: Viewer, { unitId, quantity, storageClass }: Pair) =>
+  executor
     .select({
-      id: wells.id,
-      code: wells.code,
-      kind: wells.kind,
-      position: wells.position,
+      wellId: wells.id,
+      mx: wells.mx,
+      my: wells.my,
       log10: adoptedValues.log10Value,
       evidence: adoptedValues.evidence,
     })
+    .from(adoptedValues)
+    .innerJoin(pumpingTests, eq(pumpingTests.id, adoptedValues.pumpingTestId))
+    .innerJoin(wells, eq(wells.id, adoptedValues.wellId))
+    .where(
+      and(
+        eq(adoptedValues.unitId, unitId),
+        eq(adoptedValues.quantity, quantity),
+        isNull(adoptedValues.validTo),
+        storageClass ? eq(adoptedValues.storageClass, storageClass) : undefined,
+        readable.pumpingTests(viewer),
+        readable.wells(viewer),
+      ),
+    )
+    .orderBy(asc(adoptedValues.id))
+
+/** Single wells by their code: those with these ids, or all of a view. */
+export const listMapWells = (executor: Executor, viewer: Viewer, which: number[] | MapView) =>
+  executor
+    .select({ id: wells.id, code: wells.code, kind: wells.kind, position: wells.position })
     .from(wells)
-    .leftJoin(newest, eq(newest.wellId, wells.id))
-    .leftJoin(adoptedValues, eq(adoptedValues.id, newest.newest))
-    .where(and(ids ? inArray(wells.id, ids) : inView(view, wellGrid), readable.wells(viewer), kept(query)))
-    .orderBy(asc(isNull(adoptedValues.id)), asc(wells.code))
-}
+    .where(and(Array.isArray(which) ? inArray(wells.id, which) : inView(which, wellGrid), readable.wells(viewer)))
+    .orderBy(asc(wells.code))

@@ -1,5 +1,6 @@
 import { makeTestInput } from '../../support/domain.ts'
 import type { SignedIn, TestApp } from '../../support/app.ts'
+import { bumpDataVersions } from '../../../server/api/adopted-values/data-versions.repository.ts'
 import { adoptedValues, analyses } from '../../../server/db/schema/index.ts'
 
 type Row = typeof adoptedValues.$inferInsert
@@ -43,5 +44,6 @@ export async function makeAdoptedValue(
     ...rest,
   }
   const [inserted] = await deps.connection.db.insert(adoptedValues).values(row).$returningId()
+  await bumpDataVersions(deps.connection.db, [row.unitId])
   return { valueId: inserted!.id, testId: pumpingTestId }
 }
