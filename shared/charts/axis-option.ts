@@ -1,5 +1,5 @@
 import type { XAXisComponentOption, YAXisComponentOption } from 'echarts'
-import { powersIn, tickText, type Axis } from './axis.ts'
+import { logLabels, tickText, type Axis } from './axis.ts'
 import { CHART_FONT_SIZE, faded, type ChartTheme } from './chart-theme.ts'
 
 /** Strength of the grid lines between powers of ten. */
@@ -30,12 +30,8 @@ function common({ scale, min, max, title, inverse, step }: Axis, theme: ChartThe
   }
 }
 
-/** Only whole powers of ten are written on a logarithmic axis; on a short one, its ends too. */
-function logLabels(axis: Axis) {
-  if (axis.scale !== 'log') return {}
-  const powers = powersIn(axis)
-  return powers.length >= 2 ? { showMinLabel: powers[0] === axis.min, showMaxLabel: powers.at(-1) === axis.max } : {}
-}
+/** A logarithmic axis is labelled by round numbers, never by its raw ends. */
+const labelsOf = (axis: Axis) => (axis.scale === 'log' ? { customValues: logLabels(axis) } : {})
 
 export function xAxisOption(axis: Axis, theme: ChartTheme): XAXisComponentOption {
   const option = common(axis, theme)
@@ -45,7 +41,7 @@ export function xAxisOption(axis: Axis, theme: ChartTheme): XAXisComponentOption
     gridIndex: 0,
     position: 'bottom',
     nameGap: 30,
-    axisLabel: { ...option.axisLabel, ...logLabels(axis) },
+    axisLabel: { ...option.axisLabel, ...labelsOf(axis) },
   } as XAXisComponentOption
 }
 
@@ -57,7 +53,7 @@ export function yAxisOption(axis: Axis, theme: ChartTheme, nameGap: number): YAX
     gridIndex: 0,
     position: 'left',
     nameGap,
-    axisLabel: { ...option.axisLabel, ...logLabels(axis) },
+    axisLabel: { ...option.axisLabel, ...labelsOf(axis) },
   } as YAXisComponentOption
 }
 

@@ -79,4 +79,21 @@ export function powersIn({ min, max }: Axis): number[] {
   return Array.from({ length: Math.max(0, last - first + 1) }, (_, i) => Number(`1e${first + i}`))
 }
 
+/** Multiples of a power of ten that are written on an axis too short for whole powers, fewest first. */
+const MULTIPLES = [[1, 2, 5], [1, 2, 3, 4, 5, 6, 7, 8, 9], Array.from({ length: 90 }, (_, i) => 1 + i / 10)]
+const FEWEST_LABELS = 2
+
+/** What is written on a logarithmic axis: whole powers of ten, or the roundest numbers of which two or more lie on it. */
+export function logLabels(axis: Axis): number[] {
+  const { min, max } = axis
+  const lowest = Math.floor(Math.log10(min))
+  const decades = Array.from({ length: Math.ceil(Math.log10(max)) - lowest + 1 }, (_, i) => lowest + i)
+  const within = (multiples: readonly number[]) =>
+    decades
+      .flatMap((power) => multiples.map((multiple) => Number(`${Number(multiple.toFixed(1))}e${power}`)))
+      .filter((value) => value >= min && value <= max)
+  const choices = [powersIn(axis), ...MULTIPLES.map(within)]
+  return choices.find(({ length }) => length >= FEWEST_LABELS) ?? (choices.at(-1) as number[])
+}
+
 export const tickText = (value: number) => formatNumber(value, { figures: 6, trim: true })

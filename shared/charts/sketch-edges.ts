@@ -1,5 +1,5 @@
 import type { Size } from './plot-frame.ts'
-import { insideFrame, type SketchLabel } from './sketch-labels.ts'
+import type { SketchLabel } from './sketch-labels.ts'
 import type { SketchEdge, XYPx } from './test-sketch.ts'
 
 export interface DrawnEdge {
@@ -18,7 +18,6 @@ interface Sketched {
   centre: XYPx
   metresPerPx: number
   far: boolean
-  wells: readonly XYPx[]
   distance: (metres: number) => string
 }
 
@@ -31,8 +30,8 @@ const ASIDE = 9
 /** Below the middle of a line of text its baseline lies this far, px. */
 const BASELINE = 4
 
-/** A straight edge across the direction in which it lies nearest. */
-export function sketchEdge(edge: SketchEdge, sketched: Sketched): DrawnEdge {
+/** A straight edge across the direction in which it lies nearest, with the places of its label. */
+export function sketchEdge(edge: SketchEdge, sketched: Sketched): Omit<DrawnEdge, 'label'> & { places: SketchLabel[] } {
   const { size, centre, metresPerPx, far } = sketched
   const angle = (edge.bearing_deg * Math.PI) / 180
   const out = { x: Math.sin(angle), y: -Math.cos(angle) }
@@ -47,7 +46,7 @@ export function sketchEdge(edge: SketchEdge, sketched: Sketched): DrawnEdge {
     far,
     path: `M${at(from)}L${at(to)}`,
     hatch: edge.kind === 'barrier' ? hatched(along, half, out, size) : '',
-    label: labelled(`${edge.name}, ${sketched.distance(edge.distance_m)}`, along, out, sketched),
+    places: placesAlong(`${edge.name}, ${sketched.distance(edge.distance_m)}`, along, out, sketched),
   }
 }
 
@@ -72,13 +71,18 @@ function hatched(along: (step: number) => XYPx, half: number, out: XYPx, size: S
     .join('')
 }
 
-/** The label stands on the near side, where along the line the wells leave most room. */
-function labelled(text: string, along: (step: number) => XYPx, out: XYPx, { size, wells, far }: Sketched): SketchLabel {
-  const steps = far ? [0] : [0, -0.2, 0.2, -0.35, 0.35].map((share) => share * size.width)
-  const room = (point: XYPx) => Math.min(...wells.map(({ x, y }) => Math.hypot(x - point.x, y - point.y)))
-  const candidates = steps.map(along).filter((point) => isInside(point, size, 0))
-  const best = candidates.sort((a, b) => room(b) - room(a))[0] ?? along(0)
+/** On the near side first, from the middle of the line outwards, then beyond it. */
+function placesAlong(text: string, along: (step: number) => XYPx, out: XYPx, { size, far }: Sketched): SketchLabel[] {
+  const steps = (far ? [0, 0.1, -0.1] : [0, -0.2, 0.2, -0.35, 0.35, -0.45, 0.45]).map((share) => share * size.width)
   const anchor = out.x > 0.3 ? 'end' : out.x < -0.3 ? 'start' : 'middle'
-  const beside: SketchLabel = { text, x: best.x - ASIDE * out.x, y: best.y - ASIDE * out.y + BASELINE, anchor }
-  return insideFrame(beside, size)
+  const opposite = { start: 'end', middle: 'middle', end: 'start' } as const
+  const beside = ({ x, y }: XYPx, side: 1 | -1): SketchLabel => ({
+    text,
+    x: x - side * ASIDE * out.x,
+    y: y - side * ASIDE * out.y + BASELINE,
+    anchor: side === 1 ? anchor : opposite[anchor],
+  })
+  const points = steps.map(along).filter((point) => isInside(point, size, 0))
+  const onLine = points.length > 0 ? points : [along(0)]
+  return ([1, -1] as const).flatMap((side) => onLine.map((point) => beside(point, side)))
 }

@@ -1,7 +1,7 @@
 import type { AnalysisInputs, Series } from '#shared/hydraulics/analysis.ts'
 import type { SketchEdge } from '#shared/words/test-sketch.ts'
 import { sketchEdge, type DrawnEdge } from './sketch-edges.ts'
-import { besides, insideFrame, type SketchLabel } from './sketch-labels.ts'
+import { around, placeLabels, symbolBox, type SketchLabel } from './sketch-labels.ts'
 import type { Size } from './plot-frame.ts'
 
 export type { SketchEdge }
@@ -51,6 +51,9 @@ const offset = (distance_m: number, bearing_deg: number): Metres => {
   return { east: distance_m * Math.sin(angle), north: distance_m * Math.cos(angle) }
 }
 
+/** A thing of the sketch before its label has found its place. */
+type Placed<Item extends { label: SketchLabel }> = Omit<Item, 'label'> & { places: SketchLabel[] }
+
 /** Lays out a test. `distance` writes a distance in the reader's unit. */
 export function testSketch(
   { series }: Pick<AnalysisInputs, 'series'>,
@@ -67,16 +70,25 @@ export function testSketch(
   const unplaced = observed.filter(({ bearing_deg }) => bearing_deg == null)
   const view = viewOf([...shown, ...unplaced.flatMap(({ distance_m }) => ringCorners(distance_m))], size)
   const centre = view.at({ east: 0, north: 0 })
+  const { metresPerPx } = view
   const wells = sketchWells(series, view.at, { size, distance })
+  const rings = unplaced.map((one) => ringOf(one, { centre, metresPerPx, distance }))
+  const drawn = edges.map((edge) => sketchEdge(edge, { size, centre, metresPerPx, far: isFar(edge), distance }))
+  const all = [...wells, ...rings, ...drawn]
+  const labels = placeLabels(
+    all.map(({ places }) => places),
+    wells.map(symbolBox),
+    size,
+  )
+  const labelled = <Item extends { places: SketchLabel[] }>(items: Item[], from: number) =>
+    items.map(({ places: _tried, ...item }, i) => ({ ...item, label: labels[from + i] as SketchLabel }))
   return {
     size,
     centre,
-    wells,
-    rings: unplaced.map((one) => ringOf(one, { size, centre, metresPerPx: view.metresPerPx, distance })),
-    edges: edges.map((edge) =>
-      sketchEdge(edge, { size, centre, metresPerPx: view.metresPerPx, far: isFar(edge), wells, distance }),
-    ),
-    metresPerPx: view.metresPerPx,
+    wells: labelled(wells, 0),
+    rings: labelled(rings, wells.length),
+    edges: labelled(drawn, wells.length + rings.length),
+    metresPerPx,
   }
 }
 
@@ -84,7 +96,7 @@ function sketchWells(
   series: readonly Series[],
   at: (point: Metres) => XYPx,
   { size, distance }: { size: Size; distance: (metres: number) => string },
-): SketchWell[] {
+): Placed<SketchWell>[] {
   const pumped = series.find(({ role }) => role === 'pumped')
   const placed = series.filter(({ role, bearing_deg }) => role === 'observation' && bearing_deg != null)
   const points = [
@@ -101,8 +113,7 @@ function sketchWells(
       ...at(positionOf(one)),
     })),
   ]
-  const labels = besides(points, size)
-  return points.map(({ wellId, role, x, y }, i) => ({ wellId, role, x, y, label: labels[i] as SketchLabel }))
+  return points.map(({ wellId, role, x, y, text }) => ({ wellId, role, x, y, places: around({ text, x, y }, size) }))
 }
 
 const positionOf = ({ distance_m, bearing_deg }: Series) => offset(distance_m, bearing_deg ?? 0)
@@ -113,17 +124,16 @@ const ringCorners = (radius: number): Metres[] => [
 ]
 
 interface Laid {
-  size: Size
   centre: XYPx
   metresPerPx: number
   distance: (metres: number) => string
 }
 
-function ringOf({ wellId, label, distance_m }: Series, { size, centre, metresPerPx, distance }: Laid): SketchRing {
+function ringOf({ wellId, label, distance_m }: Series, { centre, metresPerPx, distance }: Laid): Placed<SketchRing> {
   const radius = distance_m / metresPerPx
   const text = `${label}, ${distance(distance_m)}, direction not known`
-  const above: SketchLabel = { text, x: centre.x, y: centre.y - radius - 4, anchor: 'middle' }
-  return { wellId, radius, label: insideFrame(above, size) }
+  const at = (y: number): SketchLabel => ({ text, x: centre.x, y, anchor: 'middle' })
+  return { wellId, radius, places: [at(centre.y - radius - 4), at(centre.y + radius + 14), at(centre.y - radius + 14)] }
 }
 
 /** The scale and place at which all points, the pumped well among them, fit the frame. */

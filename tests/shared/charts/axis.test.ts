@@ -1,6 +1,6 @@
 import fc from 'fast-check'
 import { describe, expect, it } from 'vitest'
-import { linearAxis, logAxis, powersIn, shareOf, valueAt } from '#shared/charts/axis.ts'
+import { linearAxis, logAxis, logLabels, powersIn, shareOf, valueAt } from '#shared/charts/axis.ts'
 import { plotFrame, xPixel, xValue, yPixel, yValue } from '#shared/charts/plot-frame.ts'
 
 const axes = [
@@ -29,6 +29,15 @@ describe('An axis', () => {
   it('is not empty where all values are one', () => {
     const { min, max } = logAxis([60], '')
     expect(max / min).toBeGreaterThan(1.9)
+  })
+
+  it('is labelled by whole powers of ten, and where it is short by the roundest numbers on it', () => {
+    const labels = (min: number, max: number) => logLabels({ scale: 'log', min, max, title: '', inverse: false })
+    expect(labels(1.3, 2_400)).toEqual([10, 100, 1_000])
+    expect(labels(1.60244, 31)).toEqual([2, 5, 10, 20])
+    expect(labels(0.0012, 0.0078)).toEqual([0.002, 0.005])
+    expect(labels(5.2, 8.4)).toEqual([6, 7, 8])
+    expect(labels(6.1, 6.49)).toEqual([6.1, 6.2, 6.3, 6.4])
   })
 
   it('finds the value back from its share, in either direction', () => {

@@ -1,4 +1,5 @@
 import { describe, expect, it } from 'vitest'
+import { boxOf, type Box } from '#shared/charts/sketch-labels.ts'
 import { testSketch, type SketchEdge } from '#shared/charts/test-sketch.ts'
 import { sketchText } from '#shared/words/test-sketch.ts'
 import { makeSeries } from '../hydraulics/make-inputs.ts'
@@ -42,13 +43,18 @@ describe('The sketch of a test', () => {
     }
   })
 
-  it('writes no label over another on its side', () => {
-    const close = [pumped, at('a', 50, 10), at('b', 51, 12), at('c', 52, 14), at('d', 200, 180)]
-    const { wells } = sketchOf(close)
-    for (const [i, one] of wells.entries())
-      for (const other of wells.slice(i + 1))
-        if (one.label.anchor === other.label.anchor)
-          expect(Math.abs(one.label.y - other.label.y)).toBeGreaterThanOrEqual(14 - 1e-9)
+  it('writes no label over another, or over a well', () => {
+    const close = [pumped, at('a', 50, 10), at('b', 51, 12), at('c', 52, 14), at('d', 200, 180), at('e', 60, null)]
+    const beside = [makeEdge({ distance_m: 45, bearing_deg: 15 }), makeEdge({ kind: 'barrier', distance_m: 4000 })]
+    const { wells, rings, edges } = sketchOf(close, beside)
+    const boxes = [...wells, ...rings, ...edges].map(({ label }) => boxOf(label))
+    const apart = (one: Box, other: Box) =>
+      one.right <= other.left || other.right <= one.left || one.bottom <= other.top || other.bottom <= one.top
+    for (const [i, one] of boxes.entries()) {
+      for (const other of boxes.slice(i + 1)) expect(apart(one, other)).toBe(true)
+      for (const [k, { x, y }] of wells.entries())
+        if (k !== i) expect(apart(one, { left: x, right: x, top: y, bottom: y })).toBe(true)
+    }
   })
 
   it('draws a well whose direction is not known as a ring', () => {
