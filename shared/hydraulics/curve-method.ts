@@ -33,7 +33,7 @@ import { placeOf } from './place.ts'
 import { rateHistory, type RateHistory } from './rates.ts'
 import { chosenSeries, largest, pumpingPhase, requireReadings, selectReadings, type Selected } from './selection.ts'
 import type { Solution } from './solution.ts'
-import { drawdownHistory } from './superposition.ts'
+import { askedSpan, drawdownHistory } from './superposition.ts'
 import { drawnDrawdown, thinningFindings, thinningGuard } from './unconfined.ts'
 
 /** A catalogue method that fits one analytical solution to any number of wells jointly, under any rate history. */
@@ -177,10 +177,10 @@ function curve(
   const { increments } = rateHistory(inputs.rates)
   const size = solution.unknowns.length
   const parameters = solution.unknowns.map(({ id }) => extras[`fitted_${id}`] as number)
-  return chosenSeries(inputs, options).map((series) => ({
-    wellId: series.wellId,
-    drawdown_m: drawdownHistory(solution.respond(parameters, placeOf(series, inputs)), size, increments, times_s).map(
-      (value) => drawnDrawdown(value, inputs, options),
-    ),
-  }))
+  const span = askedSpan(increments, times_s)
+  return chosenSeries(inputs, options).map((series) => {
+    const respond = solution.respond(parameters, placeOf(series, inputs), span)
+    const modelled = drawdownHistory(respond, size, increments, times_s)
+    return { wellId: series.wellId, drawdown_m: modelled.map((value) => drawnDrawdown(value, inputs, options)) }
+  })
 }

@@ -3,7 +3,7 @@ import type { ResponsePlace } from './place.ts'
 import type { RateIncrement } from './rates.ts'
 import type { Selected } from './selection.ts'
 import type { Solution } from './solution.ts'
-import { superpose } from './superposition.ts'
+import { askedSpan, superpose } from './superposition.ts'
 
 /** The readings of one well with their place, as the fitter takes them. */
 export interface PlacedReadings {
@@ -25,10 +25,11 @@ export function curveProblem(
   const size = unknowns.length
   const out = new Float64Array(size + 1)
   const scratch = new Float64Array(size + 1)
+  const spans = wells.map(({ elapsed_s }) => askedSpan(increments, elapsed_s))
   const fill = (parameters: ArrayLike<number>, residuals: Float64Array, jacobian: Float64Array | null) => {
     let row = 0
-    for (const { place, elapsed_s, drawdown_m } of wells) {
-      const atPlace = respond(parameters, place)
+    for (const [w, { place, elapsed_s, drawdown_m }] of wells.entries()) {
+      const atPlace = respond(parameters, place, spans[w])
       for (let i = 0; i < elapsed_s.length; i++, row++) {
         superpose(atPlace, increments, elapsed_s[i] as number, out, scratch)
         const model = out[0] as number

@@ -1,4 +1,5 @@
 import type { AnalysisInputs, Finding, StorageClass } from './analysis.ts'
+import type { TimeSpan } from '#shared/numerics/laplace-inversion.ts'
 import type { CurveShift } from './laid-curve.ts'
 import type { Unknown, ValidityRule } from './method.ts'
 import type { ResponsePlace } from './place.ts'
@@ -33,8 +34,13 @@ export interface Solution {
   shift?: CurveShift
   /** In the order in which `respond` takes them; the first two are T and S. */
   unknowns: readonly Unknown[]
-  /** @throws AnalysisError where the place lacks what the solution needs */
-  respond(parameters: ArrayLike<number>, place: ResponsePlace): Respond
+  /**
+   * @param span the times that will be asked for, if known: what is solved in Laplace space then takes far less
+   * @throws AnalysisError where the place lacks what the solution needs
+   */
+  respond(parameters: ArrayLike<number>, place: ResponsePlace, span?: TimeSpan | null): Respond
+  /** Share of a drawdown of 1/(4πT) that is noise of the inversion, in solutions in Laplace space; left out: rounding. */
+  noise?: number
   /** Starting points, natural parameters in the order of `unknowns`. */
   guess(readings: SolutionReadings): number[][]
   validity: readonly ValidityRule[]

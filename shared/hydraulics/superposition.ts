@@ -1,3 +1,4 @@
+import type { TimeSpan } from '#shared/numerics/laplace-inversion.ts'
 import type { RateIncrement } from './rates.ts'
 
 /**
@@ -23,6 +24,18 @@ export function superpose(
     respond(elapsed_s - start_s, scratch)
     for (let k = 0; k < out.length; k++) out[k] = (out[k] as number) + change_m3_s * (scratch[k] as number)
   }
+}
+
+/** First and last of the times since a change of rate at which superposition asks for a response; null without any. */
+export function askedSpan(increments: RateIncrement[], elapsed_s: readonly number[]): TimeSpan | null {
+  let [from, to] = [Infinity, 0]
+  for (const { start_s } of increments)
+    for (const time of elapsed_s) {
+      const since = time - start_s
+      if (since > 0 && since < from) from = since
+      if (since > to) to = since
+    }
+  return to > 0 ? { from, to } : null
 }
 
 /**

@@ -1,3 +1,5 @@
+import { decay, meanDecay, meanOf, series, times } from '#shared/numerics/exponential-means.ts'
+
 /**
  * A layer of unit thickness with a tight base at z = 0 and a free water table at z = 1 that yields water as it falls:
  * the response at height z to a source at height z' after transforms over time (p) and radius (x). With
@@ -19,15 +21,12 @@ export interface OpenInterval {
  */
 export type LayerMean = (etaRe: number, etaIm: number, gRe: number, gIm: number, out: Float64Array) => void
 
-/** An exponential below e^-40 adds nothing. */
-const SPENT = 40
-/** Differences of exponentials of arguments below this are summed as series. */
+/** Means of exponentials of arguments below this are summed as series. */
 const SERIES_BELOW = 0.1
-const SERIES_TERMS = 9
 
 /** Scratch for complex numbers, each as Re and Im at an even index. */
-const work = new Float64Array(16)
-const [STIFF, INVERSE, E1, E2, E3, E4, SUM, TOP] = [0, 2, 4, 6, 8, 10, 12, 14]
+const work = new Float64Array(18)
+const [STIFF, INVERSE, E1, E2, E3, E4, SUM, TOP, MEAN] = [0, 2, 4, 6, 8, 10, 12, 14, 16]
 
 /**
  * g·cosh(ηz)/(η·sinh η + g·cosh η) averaged over the place: the share of the response 1/η² of a confined layer, with a
@@ -37,10 +36,10 @@ export function waterTableShare(place: OpenInterval): LayerMean {
   return (etaRe, etaIm, gRe, gIm, out) => {
     denominator(etaRe, etaIm, gRe, gIm)
     atTop(etaRe, etaIm, place, TOP)
-    times(TOP, gRe, gIm)
+    times(work, TOP, gRe, gIm)
     write(TOP, out, 0)
-    times(TOP, work[STIFF] as number, work[STIFF + 1] as number)
-    times(TOP, work[INVERSE] as number, work[INVERSE + 1] as number)
+    times(work, TOP, work[STIFF] as number, work[STIFF + 1] as number)
+    times(work, TOP, work[INVERSE] as number, work[INVERSE + 1] as number)
     write(TOP, out, 2)
   }
 }
@@ -65,13 +64,13 @@ export function layerMean(source: OpenInterval, place: OpenInterval): LayerMean 
       work[SUM] = (work[SUM] as number) + weight * (work[TOP] as number)
       work[SUM + 1] = (work[SUM + 1] as number) + weight * (work[TOP + 1] as number)
     }
-    times(SUM, work[INVERSE] as number, work[INVERSE + 1] as number)
+    times(work, SUM, work[INVERSE] as number, work[INVERSE + 1] as number)
     write(SUM, out, 0)
     // A stiffer table takes off −g·G(z, 1)·G(1, z').
     atTop(etaRe, etaIm, source, TOP)
     atTop(etaRe, etaIm, place, SUM)
-    times(TOP, work[SUM] as number, work[SUM + 1] as number)
-    times(TOP, -gRe, -gIm)
+    times(work, TOP, work[SUM] as number, work[SUM + 1] as number)
+    times(work, TOP, -gRe, -gIm)
     write(TOP, out, 2)
   }
 }
@@ -103,19 +102,18 @@ const shareOf = (piece: OpenInterval, whole: OpenInterval) =>
 /** Mean of 2·cosh(ηz)·ψ(z') over one interval below another, times e^-η, into TOP. */
 function apart(etaRe: number, etaIm: number, gRe: number, gIm: number, below: OpenInterval, above: OpenInterval): void {
   // cosh(ηm)·[sinh ηh]/ηh below; (cosh + (g/η)·sinh)(η(1 − m))·[sinh ηh]/ηh above.
-  decay(etaRe, etaIm, above.low - below.high, TOP)
-  decay(etaRe, etaIm, below.low + below.high, E1)
-  times(TOP, 1 + (work[E1] as number), work[E1 + 1] as number)
-  meanDecay((below.high - below.low) * etaRe, (below.high - below.low) * etaIm, E1)
-  times(TOP, work[E1] as number, work[E1 + 1] as number)
-  meanDecay((above.high - above.low) * etaRe, (above.high - above.low) * etaIm, E1)
-  times(TOP, work[E1] as number, work[E1 + 1] as number)
+  decay(work, etaRe, etaIm, above.low - below.high, TOP)
+  decay(work, etaRe, etaIm, below.low + below.high, E1)
+  times(work, TOP, 1 + (work[E1] as number), work[E1 + 1] as number)
+  timesMeanDecay(TOP, etaRe, etaIm, below.high - below.low)
+  timesMeanDecay(TOP, etaRe, etaIm, above.high - above.low)
   const rest = 2 - above.low - above.high
-  decay(etaRe, etaIm, rest, E1)
-  meanDecay(rest * etaRe, rest * etaIm, E2)
-  times(E2, (rest * gRe) / 2, (rest * gIm) / 2)
+  decay(work, etaRe, etaIm, rest, E1)
+  meanOf(work, rest * etaRe, rest * etaIm, E1, E2)
+  times(work, E2, (rest * gRe) / 2, (rest * gIm) / 2)
   // ½(1 + e^-2w) + g·(1 − m)·(1 − e^-2w)/(2w), of which TOP holds the factor ½·2.
   times(
+    work,
     TOP,
     (1 + (work[E1] as number)) / 2 + (work[E2] as number),
     (work[E1 + 1] as number) / 2 + (work[E2 + 1] as number),
@@ -126,10 +124,10 @@ function apart(etaRe: number, etaIm: number, gRe: number, gIm: number, below: Op
 function alike(etaRe: number, etaIm: number, gRe: number, gIm: number, low: number, high: number): void {
   const length = high - low
   const [vRe, vIm] = [length * etaRe, length * etaIm]
-  meanDecay(vRe, vIm, E1)
-  times(E1, work[E1] as number, work[E1 + 1] as number)
-  decay(etaRe, etaIm, 2 * low, E2)
-  decay(etaRe, etaIm, 2 * (1 - high), E3)
+  meanDecay(work, vRe, vIm, E1)
+  times(work, E1, work[E1] as number, work[E1 + 1] as number)
+  decay(work, etaRe, etaIm, 2 * low, E2)
+  decay(work, etaRe, etaIm, 2 * (1 - high), E3)
   const [lowRe, lowIm, highRe, highIm] = [
     work[E2] as number,
     work[E2 + 1] as number,
@@ -138,15 +136,15 @@ function alike(etaRe: number, etaIm: number, gRe: number, gIm: number, low: numb
   ]
   const [squareRe, squareIm] = [work[E1] as number, work[E1 + 1] as number]
   secondMeans(vRe, vIm)
-  decay(etaRe, etaIm, 2 - length, E1)
-  times(E3, work[E1] as number, work[E1 + 1] as number)
+  decay(work, etaRe, etaIm, 2 - length, E1)
+  times(work, E3, work[E1] as number, work[E1 + 1] as number)
   // D + e^(−η(2−ℓ))·U + (e^(−2η·low) + e^(−2η(1−high)))·a², and with minus signs for the part of g/η.
   const [plusRe, plusIm] = [lowRe + highRe, lowIm + highIm]
   const [minusRe, minusIm] = [lowRe - highRe, lowIm - highIm]
   work[TOP] = (work[E2] as number) - (work[E3] as number) + minusRe * squareRe - minusIm * squareIm
   work[TOP + 1] = (work[E2 + 1] as number) - (work[E3 + 1] as number) + minusRe * squareIm + minusIm * squareRe
   const size = etaRe * etaRe + etaIm * etaIm
-  times(TOP, (gRe * etaRe + gIm * etaIm) / size, (gIm * etaRe - gRe * etaIm) / size)
+  times(work, TOP, (gRe * etaRe + gIm * etaIm) / size, (gIm * etaRe - gRe * etaIm) / size)
   work[TOP] =
     ((work[TOP] as number) + (work[E2] as number) + (work[E3] as number) + plusRe * squareRe - plusIm * squareIm) / 2
   work[TOP + 1] =
@@ -158,12 +156,19 @@ function alike(etaRe: number, etaIm: number, gRe: number, gIm: number, low: numb
     2
 }
 
-/** 1/(η(1 − q) + g(1 + q)) with q = e^-2η, that is e^η/2 over η·sinh η + g·cosh η, into INVERSE; η(1 − q) into STIFF. */
+/**
+ * 1/(η(1 − q) + g(1 + q)) with q = e^-2η, that is e^η/2 over η·sinh η + g·cosh η, into INVERSE; (1 − q)/η into MEAN and
+ * η(1 − q) into STIFF.
+ */
 function denominator(etaRe: number, etaIm: number, gRe: number, gIm: number): void {
-  // η(1 − q) = 2η²·(1 − q)/(2η), which keeps its figures where η is small.
-  meanDecay(2 * etaRe, 2 * etaIm, STIFF)
-  times(STIFF, 2 * (etaRe * etaRe - etaIm * etaIm), 4 * etaRe * etaIm)
-  decay(etaRe, etaIm, 2, E1)
+  // (1 − q)/η is twice a mean that keeps its figures where η is small.
+  decay(work, etaRe, etaIm, 2, E1)
+  meanOf(work, 2 * etaRe, 2 * etaIm, E1, MEAN)
+  work[MEAN] = 2 * (work[MEAN] as number)
+  work[MEAN + 1] = 2 * (work[MEAN + 1] as number)
+  work[STIFF] = work[MEAN] as number
+  work[STIFF + 1] = work[MEAN + 1] as number
+  times(work, STIFF, etaRe * etaRe - etaIm * etaIm, 2 * etaRe * etaIm)
   const [qRe, qIm] = [work[E1] as number, work[E1 + 1] as number]
   const re = (work[STIFF] as number) + gRe * (1 + qRe) - gIm * qIm
   const im = (work[STIFF + 1] as number) + gIm * (1 + qRe) + gRe * qIm
@@ -172,14 +177,20 @@ function denominator(etaRe: number, etaIm: number, gRe: number, gIm: number): vo
   work[INVERSE + 1] = -im / size
 }
 
-/** Mean of cosh(ηz)/(η·sinh η + g·cosh η) over an interval, G with one end at the water table; needs INVERSE. */
+/**
+ * Mean of cosh(ηz)/(η·sinh η + g·cosh η) over an interval, G with one end at the water table; needs INVERSE and MEAN.
+ */
 function atTop(etaRe: number, etaIm: number, { low, high }: OpenInterval, at: number): void {
-  decay(etaRe, etaIm, 1 - high, at)
-  decay(etaRe, etaIm, low + high, E1)
-  times(at, 1 + (work[E1] as number), work[E1 + 1] as number)
-  meanDecay((high - low) * etaRe, (high - low) * etaIm, E1)
-  times(at, work[E1] as number, work[E1 + 1] as number)
-  times(at, work[INVERSE] as number, work[INVERSE + 1] as number)
+  if (low === 0 && high === 1) {
+    work[at] = work[MEAN] as number
+    work[at + 1] = work[MEAN + 1] as number
+  } else {
+    decay(work, etaRe, etaIm, 1 - high, at)
+    decay(work, etaRe, etaIm, low + high, E1)
+    times(work, at, 1 + (work[E1] as number), work[E1 + 1] as number)
+    timesMeanDecay(at, etaRe, etaIm, high - low)
+  }
+  times(work, at, work[INVERSE] as number, work[INVERSE + 1] as number)
 }
 
 function write(from: number, out: Float64Array, to: number): void {
@@ -187,58 +198,27 @@ function write(from: number, out: Float64Array, to: number): void {
   out[to + 1] = work[from + 1] as number
 }
 
-/** e^(−ηc). */
-function decay(etaRe: number, etaIm: number, length: number, at: number): void {
-  const size = etaRe * length > SPENT ? 0 : Math.exp(-etaRe * length)
-  work[at] = size === 0 ? 0 : size * Math.cos(etaIm * length)
-  work[at + 1] = size === 0 ? 0 : -size * Math.sin(etaIm * length)
-}
-
-/** (1 − e^-v)/v, the mean of e^-u from 0 to v. */
-function meanDecay(vRe: number, vIm: number, at: number): void {
-  const size = vRe * vRe + vIm * vIm
-  if (size < SERIES_BELOW * SERIES_BELOW) return series(vRe, vIm, 1, 0, at)
-  decay(vRe, vIm, 1, at)
-  const [re, im] = [1 - (work[at] as number), -(work[at + 1] as number)]
-  work[at] = (re * vRe + im * vIm) / size
-  work[at + 1] = (im * vRe - re * vIm) / size
-}
-
 /** D = 2(e^-v − 1 + v)/v² into E2 and U = 2(1 − (1 + v)e^-v)/v² into E3. */
 function secondMeans(vRe: number, vIm: number): void {
   const size = vRe * vRe + vIm * vIm
   if (size < SERIES_BELOW * SERIES_BELOW) {
-    series(vRe, vIm, 2, 0, E2)
-    return series(vRe, vIm, 2, 1, E3)
+    series(work, vRe, vIm, 2, 0, E2)
+    return series(work, vRe, vIm, 2, 1, E3)
   }
-  decay(vRe, vIm, 1, E4)
+  decay(work, vRe, vIm, 1, E4)
   const [decayRe, decayIm] = [work[E4] as number, work[E4 + 1] as number]
   const [inverseRe, inverseIm] = [(2 * (vRe * vRe - vIm * vIm)) / (size * size), (-4 * vRe * vIm) / (size * size)]
   work[E2] = decayRe - 1 + vRe
   work[E2 + 1] = decayIm + vIm
   work[E3] = 1 - (1 + vRe) * decayRe + vIm * decayIm
   work[E3 + 1] = -(1 + vRe) * decayIm - vIm * decayRe
-  times(E2, inverseRe, inverseIm)
-  times(E3, inverseRe, inverseIm)
+  times(work, E2, inverseRe, inverseIm)
+  times(work, E3, inverseRe, inverseIm)
 }
 
-/** order!·Σ (−v)^k·(1 + k·rising)/(k + order)!: the means above for small v. */
-function series(vRe: number, vIm: number, order: number, rising: number, at: number): void {
-  let [termRe, termIm] = [1, 0]
-  let [re, im] = [1, 0]
-  for (let k = 1; k < SERIES_TERMS; k++) {
-    const real = -(termRe * vRe - termIm * vIm) / (k + order)
-    termIm = -(termRe * vIm + termIm * vRe) / (k + order)
-    termRe = real
-    re += termRe * (1 + k * rising)
-    im += termIm * (1 + k * rising)
-  }
-  work[at] = re
-  work[at + 1] = im
-}
-
-function times(at: number, re: number, im: number): void {
-  const [real, imaginary] = [work[at] as number, work[at + 1] as number]
-  work[at] = real * re - imaginary * im
-  work[at + 1] = real * im + imaginary * re
+/** Multiplies by the mean of e^-u from 0 to η times a length, which is 1 for a point. */
+function timesMeanDecay(at: number, etaRe: number, etaIm: number, length: number): void {
+  if (length === 0) return
+  meanDecay(work, length * etaRe, length * etaIm, E1)
+  times(work, at, work[E1] as number, work[E1 + 1] as number)
 }

@@ -19,8 +19,11 @@ export interface WaterTablePlace {
   place: OpenInterval
 }
 
-/** Points below this share of the radius at which a transform has its first feature add nothing to it. */
-const NEGLIGIBLE = 3e-6
+/**
+ * Below this share of the x at which the layer has its first feature its response is level: what it still changes, of
+ * the order of the share's square, weighs as the square of x, so that the whole is off by the fourth power.
+ */
+const LEVEL_BELOW = 2e-3
 /** An exponential of a larger argument adds nothing. */
 const SPENT = 40
 
@@ -67,7 +70,7 @@ function transform(layer: Layer): LaplaceTransform {
   const sums = new Float64Array(6)
   return (re, im, out) => {
     const scale = lowest * Math.hypot(re, im)
-    const first = firstPoint(NEGLIGIBLE * rho * Math.sqrt(scale / (1 + scale)))
+    const first = firstPoint(LEVEL_BELOW * rho * Math.sqrt(scale / (1 + scale)))
     quadrature(layer, rule, first, Math.min(end, rule.y.length), re, im, sums)
     const size = 1 / (2 * Math.PI * T * rho * rho)
     const [overRe, overIm] = [(size * re) / (re * re + im * im), (-size * im) / (re * re + im * im)]
@@ -86,7 +89,7 @@ const values = new Float64Array(4)
 /** Sums of the mean, of its derivative by ln g, and of the mean with the weights of the slope in ρ. */
 function quadrature(
   { mean, rho, kappa, g }: Layer,
-  { y, weight, slopeWeight }: HankelRule,
+  { y, weight, slopeWeight, below, slopeBelow }: HankelRule,
   first: number,
   end: number,
   re: number,
@@ -102,7 +105,11 @@ function quadrature(
     const smaller = (kappa * im) / (2 * larger)
     if (squareRe >= 0) mean(larger, smaller, g * re, g * im, values)
     else mean(Math.abs(smaller), im < 0 ? -larger : larger, g * re, g * im, values)
-    const [w, s] = [weight[j] as number, slopeWeight[j] as number]
+    let [w, s] = [weight[j] as number, slopeWeight[j] as number]
+    if (j === first) {
+      w += below[j] as number
+      s += slopeBelow[j] as number
+    }
     const [real, imaginary] = [values[0] as number, values[1] as number]
     valueRe += w * real
     valueIm += w * imaginary

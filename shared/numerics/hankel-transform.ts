@@ -11,6 +11,9 @@ export interface HankelRule {
   y: Float64Array
   weight: Float64Array
   slopeWeight: Float64Array
+  /** Sums of the weights of all points below: where F no longer changes it is taken once for all of them. */
+  below: Float64Array
+  slopeBelow: Float64Array
 }
 
 const STEP = 0.25
@@ -46,11 +49,14 @@ function makeRule(): HankelRule {
   })
   const times = (factor: (value: number) => number) =>
     Float64Array.from(y, (value, j) => (share[j] as number) * factor(value))
-  return {
-    y: Float64Array.from(y),
-    weight: times((value) => meanOverHalfTurn(value, Math.cos)),
-    slopeWeight: times((value) => -value * meanOverHalfTurn(value, (angle, sine) => Math.sin(angle) * sine)),
-  }
+  const weight = times((value) => meanOverHalfTurn(value, Math.cos))
+  const slopeWeight = times((value) => -value * meanOverHalfTurn(value, (angle, sine) => Math.sin(angle) * sine))
+  return { y: Float64Array.from(y), weight, slopeWeight, below: sumsBelow(weight), slopeBelow: sumsBelow(slopeWeight) }
+}
+
+function sumsBelow(weights: Float64Array): Float64Array {
+  let sum = 0
+  return weights.map((weight) => (sum += weight) - weight)
 }
 
 /**

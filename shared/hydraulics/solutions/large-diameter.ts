@@ -9,7 +9,7 @@ import {
   writeComplex,
   type Complex,
 } from '#shared/numerics/complex.ts'
-import { laplaceInverter, type LaplaceTransform } from '#shared/numerics/laplace-inversion.ts'
+import { laplaceInverter, type LaplaceTransform, type TimeSpan } from '#shared/numerics/laplace-inversion.ts'
 import { AnalysisError, type Finding } from '../analysis.ts'
 import { CASING_STORAGE } from '../casing-storage.ts'
 import { storativity, transmissivity, type Unknown } from '../method.ts'
@@ -38,13 +38,13 @@ const VALUES = 4
  * @returns writes value and derivatives by ln T, ln S and skin; error ≤ 1e-8 of the value, or 1e-11/(4πT) if that is more
  * Source: Papadopulos & Cooper 1967; skin as Agarwal, Al-Hussainy & Ramey 1970.
  */
-export function largeDiameterRespond(well: StoringWell, distance_m: number | null): Respond {
+export function largeDiameterRespond(well: StoringWell, distance_m: number | null, span?: TimeSpan | null): Respond {
   const { T, S } = well
   const radius = effectiveRadius(well)
   // Between the screen and the effective radius of a negative skin the level is that of the well.
   const beyond = distance_m !== null && distance_m > radius ? distance_m : null
   const front = beyond === null ? 0 : ((beyond - radius) ** 2 * S) / (4 * T)
-  return laplaceInverter(beyond === null ? inWell(well) : inAquifer(well, beyond), VALUES, front)
+  return laplaceInverter(beyond === null ? inWell(well) : inAquifer(well, beyond), VALUES, { front, span })
 }
 
 const effectiveRadius = ({ wellRadius_m, skin }: StoringWell) => wellRadius_m * Math.exp(Math.max(0, -skin))
@@ -108,11 +108,11 @@ function flows(well: StoringWell, p: Complex): Flows {
   }
 }
 
-function respond([T = NaN, S = NaN, skin = 0]: number[], place: ResponsePlace): Respond {
+function respond([T = NaN, S = NaN, skin = 0]: number[], place: ResponsePlace, span?: TimeSpan | null): Respond {
   const { wellRadius_m, casingRadius_m, pumped, distance_m } = place
   if (!wellRadius_m) throw new AnalysisError('analysis/no-well-radius')
   if (!casingRadius_m) throw new AnalysisError('analysis/no-casing-radius')
-  return largeDiameterRespond({ T, S, skin, wellRadius_m, casingRadius_m }, pumped ? null : distance_m)
+  return largeDiameterRespond({ T, S, skin, wellRadius_m, casingRadius_m }, pumped ? null : distance_m, span)
 }
 
 const skin: Unknown = { id: 'skin', label: 'Skin', dimension: 'dimensionless', low: -6, high: 200, scale: 'linear' }
@@ -144,7 +144,8 @@ export const largeDiameter: Solution = {
   aquifers: ['confined'],
   known: ['well-radius', 'casing-radius'],
   unknowns: [transmissivity, storativity],
-  respond: (parameters, place) => respond([parameters[0] as number, parameters[1] as number], place),
+  respond: (parameters, place, span) => respond([parameters[0] as number, parameters[1] as number], place, span),
+  noise: 1e-9,
   guess: (readings) => largeDiameterStarts(readings).map(([T, S]) => [T, S]),
   validity,
   judge: judgeStorage,
@@ -159,7 +160,8 @@ export const largeDiameterSkin: Solution = {
   aquifers: ['confined'],
   known: ['well-radius', 'casing-radius'],
   unknowns: [transmissivity, storativity, skin],
-  respond: (parameters, place) => respond(Array.from(parameters), place),
+  respond: (parameters, place, span) => respond(Array.from(parameters), place, span),
+  noise: 1e-9,
   guess: largeDiameterStarts,
   validity: [
     ...validity,

@@ -3,7 +3,7 @@ import type { ResponsePlace } from '../place.ts'
 import { placeOf } from '../place.ts'
 import type { Selected } from '../selection.ts'
 import type { Solution, SolutionReadings } from '../solution.ts'
-import { drawdownHistory } from '../superposition.ts'
+import { askedSpan, drawdownHistory } from '../superposition.ts'
 
 /** u at the last reading of the typical well, from a test that only begins to respond to one long since steady. */
 const LAST_U = [3, 1, 0.3, 0.1, 0.03, 0.01, 1e-3, 1e-4, 1e-5, 1e-7]
@@ -42,7 +42,12 @@ export function shapeStarts(
 function fitOf(respond: Solution['respond'], shape: number[], wells: Compared[], { increments }: RateHistory) {
   let [product, square, total] = [0, 0, 0]
   for (const { place, elapsed_s, drawdown_m } of wells) {
-    const model = drawdownHistory(respond(shape, place), shape.length, increments, elapsed_s)
+    const model = drawdownHistory(
+      respond(shape, place, askedSpan(increments, elapsed_s)),
+      shape.length,
+      increments,
+      elapsed_s,
+    )
     model.forEach((value, i) => {
       const measured = drawdown_m[i] as number
       product += value * measured

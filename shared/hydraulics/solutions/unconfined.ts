@@ -1,5 +1,5 @@
 import { inverseExponentialIntegral } from '#shared/numerics/exponential-integral.ts'
-import { laplaceInverter } from '#shared/numerics/laplace-inversion.ts'
+import { laplaceInverter, type TimeSpan } from '#shared/numerics/laplace-inversion.ts'
 import { AnalysisError, type Finding, type Interval } from '../analysis.ts'
 import { storativity, transmissivity, type Unknown } from '../method.ts'
 import type { ResponsePlace } from '../place.ts'
@@ -22,9 +22,9 @@ const VALUES = 4
  * that is more (see the tests)
  * Source: Neuman 1974; in Laplace space as Moench 1997, with a Hankel integral in place of the series of roots.
  */
-export function unconfinedRespond(aquifer: WaterTableAquifer, at: WaterTablePlace): Respond {
+export function unconfinedRespond(aquifer: WaterTableAquifer, at: WaterTablePlace, span?: TimeSpan | null): Respond {
   const { T, S } = aquifer
-  const invert = laplaceInverter(waterTableTransform(aquifer, at), VALUES)
+  const invert = laplaceInverter(waterTableTransform(aquifer, at), VALUES, { span })
   const confined = isWhole(at.source) || isWhole(at.place) ? theisRespond([T, S], at) : null
   const values = new Float64Array(VALUES)
   return (time_s, out) => {
@@ -50,13 +50,13 @@ export function unconfinedRespond(aquifer: WaterTableAquifer, at: WaterTablePlac
 
 type Numbers = [number, number, number, number]
 
-function respond(parameters: ArrayLike<number>, place: ResponsePlace): Respond {
+function respond(parameters: ArrayLike<number>, place: ResponsePlace, span?: TimeSpan | null): Respond {
   const [T, S, Sy, anisotropy] = [0, 1, 2, 3].map((k) => parameters[k] as number) as Numbers
   const { thickness_m, distance_m, pumped, pumpedScreen, observedScreen } = place
   if (!thickness_m) throw new AnalysisError('analysis/water-table-thickness')
   const source = openInterval(pumpedScreen, thickness_m)
   const observed = pumped ? source : openInterval(observedScreen, thickness_m)
-  return unconfinedRespond({ T, S, Sy, anisotropy, thickness_m }, { distance_m, source, place: observed })
+  return unconfinedRespond({ T, S, Sy, anisotropy, thickness_m }, { distance_m, source, place: observed }, span)
 }
 
 /** The open part that lies in the aquifer, from depths below its top. @throws AnalysisError when none does */
@@ -149,6 +149,7 @@ export const unconfined: Solution = {
   shift: { storages: ['S', 'Sy'] },
   unknowns: [transmissivity, storativity, specificYield, anisotropy],
   respond,
+  noise: 1e-9,
   guess,
   validity: [
     {
