@@ -158,7 +158,7 @@ const refusals: Sentences<AnalysisErrorCode> = {
   'analysis/boundaries-behind': () =>
     'Both boundaries lie on the same side of the pumped well, one behind the other. Choose the nearer.',
   'analysis/boundaries-facing': () =>
-    'The distances of two boundaries that face each other cannot be fitted. Enter both, or choose one of them.',
+    'This method cannot fit the distances of two boundaries that face each other: it would take minutes. Fit them by a confined or leaky curve, and enter what it finds.',
   'analysis/boundaries-angle': () =>
     'Image wells cannot stand for two boundaries that meet at this angle: it must be 180° divided by a whole number, or by an even one where a stream meets a barrier. Choose one of them.',
   'analysis/boundary-place': () => 'A boundary needs a distance above zero and a direction.',

@@ -1,13 +1,15 @@
+import type { TimeSpan } from '#shared/numerics/laplace-inversion.ts'
 import { AnalysisError, type ChosenBoundary } from '../analysis.ts'
 import type { Unknown } from '../method.ts'
 import type { ResponsePlace } from '../place.ts'
 import type { Solution, SolutionReadings } from '../solution.ts'
 import { shapeStarts } from '../solutions/shape-starts.ts'
 import type { Respond } from '../superposition.ts'
-import { faceEachOther, imageWells, type ImageWell } from './image-wells.ts'
+import { faceEachOther, imageRows, type ImageRow } from './image-wells.ts'
+import { rowPoints } from './parallel-images.ts'
 
 /** An image whose drawdown is a smaller share of the real well's, and all farther ones, change no digit. */
-const NEGLIGIBLE = 1e-13
+const ROUNDING = 1e-13
 /** Step in ln of a fitted distance. */
 const STEP = 1e-4
 
@@ -15,17 +17,18 @@ const STEP = 1e-4
 export function boundedSolution(solution: Solution, boundaries: readonly ChosenBoundary[]): Solution {
   if (boundaries.length === 0) return solution
   const fitted = boundaries.flatMap((boundary, i) => (boundary.distance_m === null ? [distanceTo(boundary, i)] : []))
-  // Thousands of images in every step of a search would take minutes.
-  if (fitted.length > 0 && faceEachOther(boundaries)) throw new AnalysisError('analysis/boundaries-facing')
+  // Inversions for a hundred images in every step of a search would take minutes.
+  if (fitted.length > 0 && solution.noise !== undefined && faceEachOther(boundaries))
+    throw new AnalysisError('analysis/boundaries-facing')
   const own = solution.unknowns.length
   const bounded: Solution = {
     ...solution,
     unknowns: [...solution.unknowns, ...fitted],
     guess: (readings) => guess(solution, bounded.respond, fitted.length, readings),
     judge: (parameters, readings) => solution.judge(parameters.slice(0, own), readings),
-    respond(parameters, place) {
-      const direct = solution.respond(parameters, place)
-      const at = (distances: number[]) => imageSum(solution, parameters, place, wellsAt(boundaries, distances))
+    respond(parameters, place, span) {
+      const direct = solution.respond(parameters, place, span)
+      const at = (distances: number[]) => imageSum(solution, parameters, place, rowsAt(boundaries, distances), span)
       const distances = fitted.map((_, k) => parameters[own + k] as number)
       const images = at(distances)
       const moved = distances.map((_, k) => [at(stretched(distances, k, STEP)), at(stretched(distances, k, -STEP))])
@@ -49,25 +52,44 @@ export function boundedSolution(solution: Solution, boundaries: readonly ChosenB
 type ImageSum = (time_s: number, real: number, out: Float64Array) => void
 
 function imageSum(
-  { respond, unknowns }: Solution,
+  { respond, unknowns, noise = ROUNDING }: Solution,
   parameters: ArrayLike<number>,
   place: ResponsePlace,
-  images: ImageWell[],
+  rows: ImageRow[],
+  span: TimeSpan | null | undefined,
 ): ImageSum {
-  const { east_m, north_m } = positionOf(place)
-  const ordered = images
-    .map((image) => ({ sign: image.sign, distance_m: Math.hypot(image.east_m - east_m, image.north_m - north_m) }))
-    .sort((one, other) => one.distance_m - other.distance_m)
-  const responds: Respond[] = []
+  const ordered = rows
+    .map((row) => ({
+      images: imagesOf(row, place),
+      count: row.step ? rowPoints().length : 1,
+      responds: [] as Respond[],
+    }))
+    .sort((one, other) => one.images(0).distance_m - other.images(0).distance_m)
   const one = new Float64Array(unknowns.length + 1)
   return (time_s, real, out) => {
     out.fill(0)
-    for (const [i, { sign, distance_m }] of ordered.entries()) {
-      const atImage = (responds[i] ??= respond(parameters, { ...place, pumped: false, distance_m }))
-      atImage(time_s, one)
-      for (let k = 0; k < one.length; k++) out[k] = (out[k] as number) + sign * (one[k] as number)
-      if (Math.abs(one[0] as number) <= NEGLIGIBLE * Math.abs(real)) return
+    for (const { images, count, responds } of ordered) {
+      for (let j = 0; j < count; j++) {
+        const { weight, distance_m } = images(j)
+        const atImage = (responds[j] ??= respond(parameters, { ...place, pumped: false, distance_m }, span))
+        atImage(time_s, one)
+        for (let k = 0; k < one.length; k++) out[k] = (out[k] as number) + weight * (one[k] as number)
+        if (Math.abs(weight * (one[0] as number)) > noise * Math.abs(real)) continue
+        if (j === 0) return
+        break
+      }
     }
+  }
+}
+
+/** Images of a row, nearest first: what each counts for and how far it is from a place. */
+function imagesOf({ east_m, north_m, sign, step }: ImageRow, place: ResponsePlace) {
+  const at = positionOf(place)
+  const points = rowPoints()
+  return (index: number) => {
+    const { n, weight } = points[index] as (typeof points)[number]
+    const [east, north] = step ? [east_m + n * step.east_m, north_m + n * step.north_m] : [east_m, north_m]
+    return { weight: sign * weight, distance_m: Math.hypot(east - at.east_m, north - at.north_m) }
   }
 }
 
@@ -79,9 +101,9 @@ function positionOf({ pumped, distance_m, bearing_deg }: ResponsePlace) {
 }
 
 /** Images with the fitted distances put in, in the order of the boundaries that lack one. */
-function wellsAt(boundaries: readonly ChosenBoundary[], distances: number[]): ImageWell[] {
+function rowsAt(boundaries: readonly ChosenBoundary[], distances: number[]): ImageRow[] {
   let next = 0
-  return imageWells(
+  return imageRows(
     boundaries.map((boundary) => ({
       ...boundary,
       distance_m: boundary.distance_m ?? (distances[next++] as number),
@@ -115,7 +137,10 @@ function guess(
   readings: SolutionReadings,
 ): number[][] {
   const farthest = Math.max(10, ...readings.wells.map(({ series }) => series.distance_m))
-  const distances = fitted === 0 ? [[]] : TRIED.map((times) => new Array<number>(fitted).fill(times * farthest))
+  const distances = Array.from({ length: fitted }).reduce<number[][]>(
+    (known) => known.flatMap((some) => TRIED.map((times) => [...some, times * farthest])),
+    [[]],
+  )
   const others = solution.guess(readings).map((start) => start.slice(2))
   const unlike = [...new Map(others.map((rest) => [rest.join(), rest])).values()]
   return shapeStarts(respond, readings, () => unlike.flatMap((rest) => distances.map((tried) => [...rest, ...tried])))

@@ -1,4 +1,5 @@
 import { AnalysisError } from '../analysis.ts'
+import { parallelRows } from './parallel-images.ts'
 
 /** A straight, fully penetrating edge of the aquifer, as seen from the pumped well. */
 export interface Boundary {
@@ -14,7 +15,12 @@ export interface Boundary {
 export interface ImageWell {
   east_m: number
   north_m: number
-  sign: 1 | -1
+  sign: number
+}
+
+/** Image wells at equal steps, endlessly many; a single one where there is no step. */
+export interface ImageRow extends ImageWell {
+  step: { east_m: number; north_m: number } | null
 }
 
 interface Edge {
@@ -24,26 +30,24 @@ interface Edge {
   sign: 1 | -1
 }
 
-/** Two parallel edges have infinitely many images; those beyond so many act later than any test lasts. */
-const MOST_BETWEEN_PARALLELS = 4000
 /** Mirrors of two edges that meet close after at most so many images, or never. */
 const MOST_IN_A_WEDGE = 200
 /** Positions closer than this share of the nearer edge's distance are one place. */
 const SAME_PLACE = 1e-6
 
 /**
- * Image wells of one or two straight boundaries, nearest first. The edges mirror every well, images among them, until
- * nothing new appears; between two parallel edges, until they are too many to matter.
+ * Image wells of one or two straight boundaries. The edges mirror every well, images among them, until nothing new
+ * appears; between two parallel edges they never end.
  * @throws AnalysisError for an edge without distance, more than two edges, one edge behind another, or an angle whose
  * mirrors contradict each other
  * Sources: Ferris et al. 1962; Stallman 1963; ASTM D5270.
  */
-export function imageWells(boundaries: readonly Boundary[]): ImageWell[] {
+export function imageRows(boundaries: readonly Boundary[]): ImageRow[] {
   if (boundaries.length > 2) throw new AnalysisError('analysis/boundaries-too-many', { found: boundaries.length })
   const edges = boundaries.map(edgeOf)
   if (isPair(edges) && cosine(...edges) > 1 - 1e-9) throw new AnalysisError('analysis/boundaries-behind')
-  const images = isPair(edges) && isOpposite(...edges) ? betweenParallels(edges) : inWedge(edges)
-  return images.sort((one, other) => reach(one) - reach(other))
+  if (isPair(edges) && isOpposite(...edges)) return betweenParallels(edges)
+  return inWedge(edges).map((image) => ({ ...image, step: null }))
 }
 
 /** Whether two boundaries run parallel, with the pumped well between them. */
@@ -61,18 +65,16 @@ function edgeOf({ kind, distance_m, bearing_deg }: Boundary): Edge {
 const isPair = (edges: Edge[]): edges is [Edge, Edge] => edges.length === 2
 const cosine = (one: Edge, other: Edge) => one.east * other.east + one.north * other.north
 const isOpposite = (one: Edge, other: Edge) => cosine(one, other) < -1 + 1e-9
-const reach = ({ east_m, north_m }: ImageWell) => Math.hypot(east_m, north_m)
 const realWell: ImageWell = { east_m: 0, north_m: 0, sign: 1 }
 
-/** Mirrors of each edge in turn, in both directions. */
-function betweenParallels(edges: [Edge, Edge]): ImageWell[] {
-  return [0, 1].flatMap((first) => {
-    let image = realWell
-    return Array.from({ length: MOST_BETWEEN_PARALLELS / 2 }, (_, i) => {
-      image = mirror(image, edges[(first + i) % 2] as Edge)
-      return image
-    })
-  })
+function betweenParallels(edges: [Edge, Edge]): ImageRow[] {
+  const [{ east, north }] = edges
+  return parallelRows(edges).map(({ first_m, step_m, sign }) => ({
+    east_m: first_m * east,
+    north_m: first_m * north,
+    sign,
+    step: { east_m: step_m * east, north_m: step_m * north },
+  }))
 }
 
 /** Mirrors of mirrors until all of them are known. */
@@ -97,7 +99,7 @@ function mirror({ east_m, north_m, sign }: ImageWell, edge: Edge): ImageWell {
   return {
     east_m: east_m + beyond * edge.east,
     north_m: north_m + beyond * edge.north,
-    sign: (sign * edge.sign) as 1 | -1,
+    sign: sign * edge.sign,
   }
 }
 

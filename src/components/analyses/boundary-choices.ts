@@ -30,19 +30,6 @@ export const fittedDistance = (result: Pick<AnalysisResult, 'others'> | null, in
 
 const FIRST_DISTANCE_M = 100
 
-/** Whether two boundaries have the well between them, face to face. */
-export const faceEachOther = ([one, other]: readonly ChosenBoundary[]): boolean =>
-  one !== undefined && other !== undefined && Math.abs(one.bearing_deg - other.bearing_deg) % 360 === 180
-
-/**
- * Boundaries as they can be reckoned with: images of two that face each other never end, and a search for their distance
- * would take minutes, so that those are typed.
- */
-export const settled = (boundaries: ChosenBoundary[], fitted: readonly (number | null)[]): ChosenBoundary[] =>
-  faceEachOther(boundaries)
-    ? boundaries.map((one, i) => (one.distance_m === null ? withFitting(one, false, fitted[i] ?? null) : one))
-    : boundaries
-
 /** Goes from a fitted distance to a typed one, which begins where the fit ended, and back. */
 export function withFitting(boundary: ChosenBoundary, isFitted: boolean, fitted_m: number | null): ChosenBoundary {
   const typed_m = Number((fitted_m ?? FIRST_DISTANCE_M).toPrecision(3))

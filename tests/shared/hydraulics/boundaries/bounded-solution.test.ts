@@ -4,7 +4,7 @@ import { boundedSolution } from '#shared/hydraulics/boundaries/bounded-solution.
 import { analyse } from '#shared/hydraulics/catalogue.ts'
 import type { ResponsePlace } from '#shared/hydraulics/place.ts'
 import { theis, theisDrawdown } from '#shared/hydraulics/theis.ts'
-import { makeInputs, makeSeries } from '../make-inputs.ts'
+import { DAY, logSpaced, makeInputs, makeSeries, relative } from '../make-inputs.ts'
 
 const T = 4e-3
 const S = 3e-4
@@ -107,10 +107,27 @@ describe('A fit with a boundary', () => {
     expect(result.others?.[0]?.value).toBeCloseTo(120, 1)
   })
 
-  it('refuses to fit the distances of boundaries that face each other', () => {
-    const inputs = observed(30)
+  it('finds T, S and both distances of edges that face each other, from exact readings in two wells', () => {
+    const facing = [barrier(150), { ...stream(300), bearing_deg: 180 }]
+    const series = [place(20, 25), place(-30, 40)].map((at, i) => {
+      const { distance_m, bearing_deg } = at
+      const elapsed_s = logSpaced(40, 60, 5 * DAY)
+      const drawdown_m = elapsed_s.map((time) => 0.01 * drawdown(facing, at, time))
+      return makeSeries({ wellId: `o${i + 1}`, distance_m, bearing_deg, elapsed_s, drawdown_m })
+    })
+    const inputs = makeInputs({ rates, series })
+    const free = facing.map((one) => ({ ...one, distance_m: null }))
+    const result = analyse('theis', inputs, options(inputs, free))
+    expect(relative(result.T?.value ?? NaN, T)).toBeLessThan(1e-6)
+    expect(relative(result.S?.value ?? NaN, S)).toBeLessThan(1e-6)
+    expect(relative(result.others?.[0]?.value ?? NaN, 150)).toBeLessThan(1e-6)
+    expect(relative(result.others?.[1]?.value ?? NaN, 300)).toBeLessThan(1e-6)
+  })
+
+  it('refuses to fit the distances of edges that face each other in Laplace space, where it would take minutes', () => {
+    const inputs = { ...observed(30), thickness_m: 20 }
     const facing = [barrier(null), { ...barrier(90), bearing_deg: 180 }]
-    expect(() => analyse('theis', inputs, options(inputs, facing))).toThrow('analysis/boundaries-facing')
+    expect(() => analyse('unconfined', inputs, options(inputs, facing))).toThrow('analysis/boundaries-facing')
   })
 
   it('refuses a boundary while the direction of the well is not known', () => {

@@ -1,6 +1,8 @@
 import { describe, expect, it } from 'vitest'
 import { AnalysisError } from '#shared/hydraulics/analysis.ts'
-import { imageWells, type Boundary } from '#shared/hydraulics/boundaries/image-wells.ts'
+import { imageRows, type Boundary } from '#shared/hydraulics/boundaries/image-wells.ts'
+import { rowPoints } from '#shared/hydraulics/boundaries/parallel-images.ts'
+import { exponentialIntegral } from '#shared/numerics/exponential-integral.ts'
 
 const edge = (kind: Boundary['kind'], distance_m: number, bearing_deg: number): Boundary => ({
   kind,
@@ -8,10 +10,18 @@ const edge = (kind: Boundary['kind'], distance_m: number, bearing_deg: number): 
   bearing_deg,
 })
 const rounded = (boundaries: Boundary[]) =>
-  imageWells(boundaries).map(({ east_m, north_m, sign }) => [Math.round(east_m), Math.round(north_m), sign])
+  imageRows(boundaries)
+    .flatMap(({ east_m, north_m, sign, step }) =>
+      (step ? [0, 1] : [0]).map((n) => [
+        Math.round(east_m + n * (step?.east_m ?? 0)),
+        Math.round(north_m + n * (step?.north_m ?? 0)),
+        sign,
+      ]),
+    )
+    .sort(([a = NaN, b = NaN], [c = NaN, d = NaN]) => Math.hypot(a, b) - Math.hypot(c, d))
 const refusal = (boundaries: Boundary[]) => {
   try {
-    imageWells(boundaries)
+    imageRows(boundaries)
   } catch (error) {
     return (error as AnalysisError).code
   }
@@ -34,7 +44,7 @@ describe('Image wells (Ferris et al. 1962)', () => {
 
   it('of barriers that meet at 60° are five', () => {
     // The normals of edges that meet at 60° stand 120° apart.
-    expect(imageWells([edge('barrier', 40, 0), edge('barrier', 60, 120)])).toHaveLength(5)
+    expect(imageRows([edge('barrier', 40, 0), edge('barrier', 60, 120)])).toHaveLength(5)
   })
 
   it('between parallel edges repeat at every second width, with the signs of their mirrors', () => {
@@ -48,11 +58,21 @@ describe('Image wells (Ferris et al. 1962)', () => {
     ])
   })
 
+  it('between parallel edges add up as if each stood for itself, to nine digits', () => {
+    // Mirrors at every second width, all pumping, and in turns pumping and injecting.
+    for (const u of [3e-3, 1e-4, 3e-6, 1e-7]) {
+      const response = (n: number) => exponentialIntegral(u * (n + 0.3) ** 2)
+      const all = Array.from({ length: 8192 }, (_, n) => response(n)).reduce((sum, value) => sum + value, 0)
+      const found = rowPoints().reduce((sum, { n, weight }) => sum + weight * response(n), 0)
+      expect(Math.abs(found / all - 1)).toBeLessThan(1e-9)
+    }
+  })
+
   it('make no flow across a barrier and no drawdown on a stream, by symmetry', () => {
     // Any function of distance stands for the response of one well.
     const response = (east: number, north: number) => Math.exp(-Math.hypot(east, north) / 300)
     const boundaries = [edge('barrier', 100, 0), edge('recharge', 50, 90)]
-    const wells = [{ east_m: 0, north_m: 0, sign: 1 }, ...imageWells(boundaries)]
+    const wells = [{ east_m: 0, north_m: 0, sign: 1 }, ...imageRows(boundaries)]
     const s = (east: number, north: number) =>
       wells.reduce((sum, well) => sum + well.sign * response(east - well.east_m, north - well.north_m), 0)
     for (const along of [-300, 0, 40]) {

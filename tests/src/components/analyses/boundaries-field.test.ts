@@ -5,7 +5,6 @@ import {
   addedBoundary,
   boundaryOf,
   notTaken,
-  settled,
   withFitting,
 } from '../../../../src/components/analyses/boundary-choices.ts'
 import { provideWorkbench, type Workbench } from '../../../../src/components/analyses/use-workbench.ts'
@@ -81,12 +80,6 @@ describe('A boundary', () => {
     const fitted = addedBoundary('barrier', [])
     expect(withFitting(fitted, false, 431.26)).toEqual({ ...fitted, distance_m: 431 })
     expect(withFitting({ ...fitted, distance_m: 431 }, true, null)).toEqual(fitted)
-  })
-
-  it('has a typed distance where another faces it, and a fitted one elsewhere', () => {
-    const [north, east, south] = [0, 90, 180].map((bearing_deg) => ({ ...addedBoundary('barrier', []), bearing_deg }))
-    expect(settled([north!, east!], [null, null])).toEqual([north, east])
-    expect(settled([north!, south!], [431.26, null]).map(({ distance_m }) => distance_m)).toEqual([431, 100])
   })
 
   it('is offered until it is taken', () => {
