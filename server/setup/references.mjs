@@ -28,6 +28,7 @@ const references = [
     'published-cases',
     'readings-filters',
     'readings-zones',
+    'robust-fits',
     'test-kinds',
     'units-factors',
   ].map((name) => ({ name, command: python, script: `${name}.py`, prints: true })),

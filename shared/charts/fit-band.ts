@@ -17,9 +17,13 @@ export interface Fit {
 const parametersOf = ({ extras }: AnalysisResult) =>
   Object.keys(extras).filter((name) => name === 'slope_m' || name === 'intercept_m' || name.startsWith('fitted_'))
 
-/** A line drawn by hand has no scatter of its own, and a fit of logarithms weighs readings unlike this band. */
+/** A line or a curve laid by hand has no scatter of its own, and a fit of logarithms, or by Huber, weighs readings unlike this band. */
 const hasBand = ({ options, result }: Fit) =>
-  !options.line && !options.match && options.objective !== 'log-drawdown' && result.fit.n > parametersOf(result).length
+  !options.line &&
+  !options.match &&
+  options.objective !== 'log-drawdown' &&
+  options.weighting !== 'huber' &&
+  result.fit.n > parametersOf(result).length
 
 /** Modelled drawdown of one well; null where the model says nothing. */
 export function modelled({ inputs, options, result }: Fit, wellId: string, times_s: number[]): (number | null)[] {

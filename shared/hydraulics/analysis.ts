@@ -83,6 +83,8 @@ export interface AnalysisOptions {
   match?: CurveMatch | null
   /** What the least squares of curve methods are taken of. Default 'drawdown'. */
   objective?: 'drawdown' | 'log-drawdown'
+  /** How readings far off the curve count in curve methods: like all others, or less (Huber). Default 'equal'. */
+  weighting?: 'equal' | 'huber'
   /** Replace s by s − s²/2b in an unconfined aquifer. Default false. */
   thinning?: boolean
   /** The analyst's word that the window lies after delayed drainage; null: judged by its end (72 h). Default null. */
@@ -173,10 +175,12 @@ export interface FitSummary {
   iterations: number
   converged: boolean
   singular: boolean
-  /** Sum of squared residuals of the objective. */
+  /** Sum of squared residuals of the objective, of those weighed less by Huber's function. */
   objective: number
   /** Correlation of ln T and ln S. */
   correlation?: number
+  /** Readings so far off that they were weighed less; left out where all weighed the same. */
+  weighedLess?: number
   /** Akaike's criterion for small samples, from the effective number of readings; null where too few for it. */
   aicc?: number | null
 }

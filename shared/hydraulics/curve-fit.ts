@@ -1,7 +1,7 @@
 import { lagOneAutocorrelation } from '#shared/numerics/autocorrelation.ts'
 import { correlatedCovariance, type CorrelatedCovariance } from '#shared/numerics/correlated-residuals.ts'
 import type { ResidualSeries } from '#shared/numerics/fading-noise.ts'
-import type { LeastSquaresFit } from '#shared/numerics/levenberg-marquardt.ts'
+import type { RobustFit } from '#shared/numerics/robust-least-squares.ts'
 import type {
   AnalysisInputs,
   AnalysisOptions,
@@ -36,7 +36,7 @@ export interface Fitted {
   wells: Selected[]
   places: ResponsePlace[]
   logarithmic: boolean
-  fit: LeastSquaresFit
+  fit: RobustFit
 }
 
 /** Step in ln of a distance for its effect on the residuals. */
@@ -74,6 +74,7 @@ export function curveSummary(fitted: Fitted, { covariance, effectiveNumber }: Co
     objective: fit.objective,
     aicc: smallSampleCriterion(fit.objective / n, effectiveNumber, fit.parameters.length),
     ...(tt * ss > 0 ? { correlation: ts / Math.sqrt(tt * ss) } : {}),
+    ...(fit.limit === null ? {} : { weighedLess: fit.residuals.filter(beyond(fit.limit)).length }),
   }
 }
 
@@ -146,24 +147,30 @@ function residualsAt(
   return residuals
 }
 
-/** First-order move −(J'J)⁻¹J'v of the minimum when residuals change by v. */
-function parameterShift({ normalInverse, jacobian }: LeastSquaresFit, effect: number[]): number[] {
+const beyond = (limit: number) => (residual: number) => Math.abs(residual) > limit
+
+/** First-order move −(J'J)⁻¹J'v of the minimum when residuals change by v; those beyond the limit pull no harder. */
+function parameterShift({ normalInverse, jacobian, residuals, limit }: RobustFit, effect: number[]): number[] {
   const size = normalInverse.length
+  const isBeyond = beyond(limit ?? Infinity)
+  const pulling = effect.map((value, i) => (isBeyond(residuals[i] as number) ? 0 : value))
   const projected = normalInverse.map((_, k) =>
-    effect.reduce((sum, value, i) => sum + value * (jacobian[i * size + k] as number), 0),
+    pulling.reduce((sum, value, i) => sum + value * (jacobian[i * size + k] as number), 0),
   )
   return normalInverse.map((row) => -row.reduce((sum, value, k) => sum + value * (projected[k] as number), 0))
 }
 
-/** Residuals of each well apart, alike along time or along its logarithm. */
+/** Residuals of each well apart, as far as they pull at the fit, alike along time or along its logarithm. */
 function residualSeries({ fit, wells }: Fitted): ResidualSeries[] {
   const size = fit.normalInverse.length
+  const limit = fit.limit ?? Infinity
+  const residuals = fit.residuals.map((residual) => Math.max(-limit, Math.min(limit, residual)))
   let from = 0
   return wells.map(({ time_s }) => {
     const first = from
     from += time_s.length
     return {
-      residuals: fit.residuals.subarray(first, from),
+      residuals: residuals.subarray(first, from),
       jacobian: fit.jacobian.subarray(first * size, from * size),
       axes: [time_s, time_s.map(Math.log)],
     }

@@ -1,4 +1,6 @@
+import type { LeastSquaresProblem } from '#shared/numerics/least-squares-problem.ts'
 import { levenbergMarquardt } from '#shared/numerics/levenberg-marquardt.ts'
+import { robustLeastSquares } from '#shared/numerics/robust-least-squares.ts'
 import {
   AnalysisError,
   type AnalysisInputs,
@@ -70,6 +72,13 @@ const curveOptions: Method['options'] = [
     values: ['drawdown', 'log-drawdown'],
     default: 'drawdown',
   },
+  {
+    name: 'weighting',
+    label: 'Readings far off the curve',
+    kind: 'choice',
+    values: ['equal', 'huber'],
+    default: 'equal',
+  },
   { name: 'phase', label: 'Readings fitted', kind: 'choice', values: ['pumping', 'all'], default: 'pumping' },
   { name: 'boundaries', label: 'Streams and barriers', kind: 'boundaries', most: 2 },
   sharedOptions.thinning,
@@ -130,13 +139,18 @@ function fit(
   if (wells.every((well) => well.drawdown_m.every((value) => !(value > 0))))
     throw new AnalysisError('analysis/no-drawdown')
   try {
-    const result = levenbergMarquardt(problem, { starts: solution.guess({ inputs, wells, history }) })
+    const result = searched(problem, options, solution.guess({ inputs, wells, history }))
     return { inputs, options, solution, history, wells, places, logarithmic, fit: result }
   } catch (error) {
     if (error instanceof RangeError) throw new AnalysisError('analysis/no-fit')
     throw error
   }
 }
+
+const searched = (problem: LeastSquaresProblem, { weighting }: AnalysisOptions, starts: number[][]): Fitted['fit'] =>
+  weighting === 'huber'
+    ? robustLeastSquares(problem, { starts })
+    : { ...levenbergMarquardt(problem, { starts }), limit: null }
 
 /** The fitted parameters beyond T and S by their id, the raw S of a pumped well for drawing, and the window used. */
 function extrasOf({ solution, fit, wells }: Fitted): Record<string, number> {

@@ -48,6 +48,9 @@ export function fitFindings(fit: FitSummary): Finding[] {
     const params = { autocorrelation: fit.autocorrelation, n: fit.n, effectiveN: fit.effectiveN }
     findings.push({ code: 'residuals-correlated', severity: 'note', params })
   }
+  if (fit.weighedLess) {
+    findings.push({ code: 'readings-weighed-less', severity: 'note', params: { count: fit.weighedLess, n: fit.n } })
+  }
   if (!fit.converged) findings.push({ code: 'not-converged', severity: 'bad', params: { iterations: fit.iterations } })
   return findings
 }

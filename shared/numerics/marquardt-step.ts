@@ -48,7 +48,7 @@ export function dampedStep(problem: LeastSquaresProblem, state: State, damping: 
   return { x, promised, length: Math.max(0, ...delta.map(Math.abs)) }
 }
 
-export function normalEquations({ residuals, jacobian }: State, size: number) {
+export function normalEquations({ residuals, jacobian }: Pick<State, 'residuals' | 'jacobian'>, size: number) {
   const gradient = new Array<number>(size).fill(0)
   const normal = Array.from({ length: size }, () => new Array<number>(size).fill(0))
   for (let j = 0; j < size; j++) {

@@ -84,6 +84,8 @@ const findings: Sentences<string> = {
   'few-readings': ({ text }) => `Only ${text('n')} readings are used.`,
   'residuals-correlated': ({ text, number }) =>
     `The ${text('n')} readings stray from the model together, not one by one: they tell as much as ${number('effectiveN')} independent readings, and the intervals are widened for it.`,
+  'readings-weighed-less': ({ text }) =>
+    `${text('count')} of ${text('n')} readings lie so far off the curve that they were weighed less. Look at them on the plot: one that is wrong is better left out with its reason.`,
   'not-converged': ({ text }) =>
     `The search did not come to an end after ${text('iterations')} steps. Do not use the result.`,
   'not-determined': ({ text, number }) =>

@@ -7,6 +7,8 @@ const sentences: Record<string, string> = {
   ...shapes,
   drawdown: 'Drawdown',
   'log-drawdown': 'Logarithm of drawdown',
+  equal: 'Count like all others',
+  huber: 'Count less (Huber)',
   pumping: 'During pumping',
   all: 'Pumping and recovery',
   superposition: 'Every step, superposed',

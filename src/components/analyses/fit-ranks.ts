@@ -25,6 +25,7 @@ function readingsOf({ options, result }: RankedFit): string {
     from_s,
     to_s,
     options.objective ?? 'drawdown',
+    options.weighting ?? 'equal',
     options.phase ?? 'pumping',
     options.thinning ?? false,
     result.fit.n,
@@ -35,11 +36,12 @@ const unknownCount = ({ extras }: AnalysisResult) =>
   Object.keys(extras).filter((name) => name.startsWith('fitted_')).length
 
 /**
- * Differences of AICc among the curve fits of the same readings. The residuals of each fit tell another number of
- * independent readings; the least of them stands for all, because values by different numbers have no common scale.
+ * Differences of AICc among the curve fits of the same readings; one laid by hand is no fit. The residuals
+ * of each fit tell another number of independent readings; the least of them stands for all, because values by different
+ * numbers have no common scale.
  */
 export function fitRanks(items: readonly RankedFit[]): Map<string, FitRank> {
-  const curves = items.filter(({ method }) => methods[method].family === 'curve')
+  const curves = items.filter(({ method, options }) => methods[method].family === 'curve' && !options.match)
   const kinds = [...new Set(curves.map(readingsOf))]
   return new Map(kinds.flatMap((kind) => ranksOf(curves.filter((item) => readingsOf(item) === kind))))
 }
