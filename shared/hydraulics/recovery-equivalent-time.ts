@@ -1,4 +1,4 @@
-import type { AnalysisInputs, AnalysisOptions, Finding, FittedCurve, MethodOutcome } from './analysis.ts'
+import type { AnalysisInputs, AnalysisOptions, Finding, MethodOutcome } from './analysis.ts'
 import { casingFinding } from './casing-storage.ts'
 import { storativityFromZero, transmissivityFromSlope } from './cooper-jacob.ts'
 import { drawdownAtStop, logEquivalentTime, type StopDrawdown } from './equivalent-time.ts'
@@ -12,15 +12,16 @@ import {
   rateFindings,
   storageClassOf,
 } from './findings.ts'
-import { sharedOptions, storativity, transmissivity, type Method } from './method.ts'
+import { storativity, transmissivity, type Method } from './method.ts'
 import { parameterEstimate, scaledEstimate, UNDETERMINED_FACTOR } from './parameter-estimate.ts'
 import { lateWindow } from './proposed-window.ts'
 import { rateHistory, type RateHistory } from './rates.ts'
+import { casingOver, recoveryCurve, recoveryExtras, recoveryNeeds, recoveryOptions } from './recovery-common.ts'
 import { lateRecoveryStart } from './recovery-start.ts'
 import { largest, recoveryPhase, requireReadings, selectReadings, type Selected } from './selection.ts'
 import { LARGEST_U, smallUFinding, theisU, timeOfU } from './small-u.ts'
 import { lineResiduals, slopeSd, storageSd, straightLine, zeroAbscissa, type StraightLine } from './straight-line.ts'
-import { drawnDrawdown, thinningFactor, thinningFindings, thinningGuard } from './unconfined.ts'
+import { thinningFactor, thinningFindings, thinningGuard } from './unconfined.ts'
 import { distanceError, radiusOf } from './wells.ts'
 
 /** Everything known once the line is drawn. */
@@ -120,63 +121,30 @@ function extrasOf({ history, well, stop, line }: Drawn): Record<string, number> 
     slope_m: line.slope,
     intercept_m: line.intercept,
     zero_s: 10 ** zeroAbscissa(line),
-    rate_m3_s: history.lastRate_m3_s,
-    stop_s: history.stop_s as number,
     stop_drawdown_m: stop.drawdown_m,
-    window_from_s: well.time_s[0] as number,
-    window_to_s: well.time_s.at(-1) as number,
+    ...recoveryExtras(history, well),
   }
 }
 
-function curve(
-  inputs: AnalysisInputs,
-  options: AnalysisOptions,
-  { extras }: MethodOutcome,
-  times_s: number[],
-): FittedCurve[] {
-  const history = rateHistory(inputs.rates)
-  const drawdown_m = times_s.map((time) => {
-    if (!(time > (extras.stop_s as number))) return null
-    const back = (extras.slope_m as number) * logEquivalentTime(history, options, time) + (extras.intercept_m as number)
-    return drawnDrawdown((extras.stop_drawdown_m as number) - back, inputs, options)
-  })
-  return options.wellIds.map((wellId) => ({ wellId, drawdown_m }))
-}
+const curve = recoveryCurve((history, options, { stop_drawdown_m = NaN, slope_m = NaN, intercept_m = NaN }, time) => {
+  const back = slope_m * logEquivalentTime(history, options, time) + intercept_m
+  return stop_drawdown_m - back
+})
 
 export const recoveryEquivalentTime: Method = {
   id: 'recovery-equivalent-time',
   label: 'Recovery by equivalent time (Agarwal)',
-  version: 1,
+  ...recoveryNeeds,
   source: 'Agarwal 1980; Cooper & Jacob 1946',
-  family: 'recovery',
-  aquifers: ['confined'],
-  needs: { phase: 'recovery', wells: { least: 1, most: 1, roles: ['pumped', 'observation'] } },
   unknowns: [transmissivity, storativity],
-  options: [
-    { name: 'window', label: 'Window of time since the stop', kind: 'window', axis: 'since-stop' },
-    { name: 'line', label: 'Line drawn by hand', kind: 'line', abscissa: 'elapsed' },
-    {
-      name: 'rateHistory',
-      label: 'Rate that varied',
-      kind: 'choice',
-      values: ['superposition', 'equivalent'],
-      default: 'superposition',
-    },
-    sharedOptions.thinning,
-    sharedOptions.afterDrainage,
-    sharedOptions.readingsPerCycle,
-  ],
+  options: recoveryOptions('elapsed'),
   validity: [
     {
       code: 'u-large',
       statement: 'u = r²S/(4Tt) is at most 0.05 at the first reading since the stop, and at the stop',
       source: 'Agarwal 1980',
     },
-    {
-      code: 'casing-storage',
-      statement: 'At the pumped well the window begins after 250 r_c²/T',
-      source: 'Papadopulos & Cooper 1967',
-    },
+    casingOver,
   ],
   run,
   curve,

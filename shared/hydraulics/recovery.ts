@@ -1,24 +1,18 @@
-import type {
-  AnalysisInputs,
-  AnalysisOptions,
-  Finding,
-  FittedCurve,
-  MethodOutcome,
-  ParameterEstimate,
-} from './analysis.ts'
+import type { AnalysisInputs, AnalysisOptions, Finding, MethodOutcome, ParameterEstimate } from './analysis.ts'
 import { casingFinding } from './casing-storage.ts'
 import { transmissivityFromSlope } from './cooper-jacob.ts'
 import { determinationFindings, fitFindings, handLineFinding } from './findings.ts'
-import { sharedOptions, transmissivity, type Method } from './method.ts'
+import { transmissivity, type Method } from './method.ts'
 import { parameterEstimate, UNDETERMINED_FACTOR } from './parameter-estimate.ts'
 import { lateWindow } from './proposed-window.ts'
 import { rateHistory, type RateHistory } from './rates.ts'
+import { casingOver, recoveryCurve, recoveryExtras, recoveryNeeds, recoveryOptions } from './recovery-common.ts'
 import { lateRecoveryStart } from './recovery-start.ts'
 import { ratioFinding, recoveryAbscissa, storageRatio, type StorageRatio } from './recovery-line.ts'
 import { largest, recoveryPhase, requireReadings, selectReadings, type Selected } from './selection.ts'
 import { LARGEST_U, smallUFinding } from './small-u.ts'
 import { lineResiduals, slopeSd, straightLine, type StraightLine } from './straight-line.ts'
-import { drawnDrawdown, thinningFindings, thinningGuard } from './unconfined.ts'
+import { thinningFindings, thinningGuard } from './unconfined.ts'
 
 function run(inputs: AnalysisInputs, options: AnalysisOptions): MethodOutcome {
   const history = rateHistory(inputs.rates)
@@ -94,58 +88,25 @@ function extrasOf(
     storage_ratio: ratio.value,
     storage_ratio_low: ratio.low,
     storage_ratio_high: ratio.high,
-    rate_m3_s: history.lastRate_m3_s,
-    stop_s: history.stop_s as number,
-    window_from_s: well.time_s[0] as number,
-    window_to_s: well.time_s.at(-1) as number,
+    ...recoveryExtras(history, well),
   }
 }
 
-function curve(
-  inputs: AnalysisInputs,
-  options: AnalysisOptions,
-  { extras }: MethodOutcome,
-  times_s: number[],
-): FittedCurve[] {
-  const history = rateHistory(inputs.rates)
-  const drawdown_m = times_s.map((time) => {
-    if (!(time > (extras.stop_s as number))) return null
-    const x = recoveryAbscissa(history, options, time)
-    return drawnDrawdown((extras.intercept_m as number) + (extras.slope_m as number) * x, inputs, options)
-  })
-  return options.wellIds.map((wellId) => ({ wellId, drawdown_m }))
-}
+const curve = recoveryCurve(
+  (history, options, { intercept_m = NaN, slope_m = NaN }, time) =>
+    intercept_m + slope_m * recoveryAbscissa(history, options, time),
+)
 
 export const recovery: Method = {
   id: 'recovery',
   label: 'Recovery line (Theis)',
-  version: 1,
+  ...recoveryNeeds,
   source: 'Theis 1935; ASTM D5269',
-  family: 'recovery',
-  aquifers: ['confined'],
-  needs: { phase: 'recovery', wells: { least: 1, most: 1, roles: ['pumped', 'observation'] } },
   unknowns: [transmissivity],
-  options: [
-    { name: 'window', label: 'Window of time since the stop', kind: 'window', axis: 'since-stop' },
-    { name: 'line', label: 'Line drawn by hand', kind: 'line', abscissa: 'time-ratio' },
-    {
-      name: 'rateHistory',
-      label: 'Rate that varied',
-      kind: 'choice',
-      values: ['superposition', 'equivalent'],
-      default: 'superposition',
-    },
-    sharedOptions.thinning,
-    sharedOptions.afterDrainage,
-    sharedOptions.readingsPerCycle,
-  ],
+  options: recoveryOptions('time-ratio'),
   validity: [
     { code: 'u-large', statement: "u' = r²S/(4Tt') is at most 0.05 in the window", source: 'ASTM D5269' },
-    {
-      code: 'casing-storage',
-      statement: 'At the pumped well the window begins after 250 r_c²/T',
-      source: 'Papadopulos & Cooper 1967',
-    },
+    casingOver,
     {
       code: 'recovery-ratio-high',
       statement: "The line reaches zero near t/t' = 1",
