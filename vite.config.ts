@@ -52,6 +52,8 @@ export default defineConfig({
           name: 'server',
           include: ['tests/server/**/*.test.ts'],
           environment: 'node',
+          // Each file has its own database, application and folder; loading the server anew would take longer than its tests.
+          isolate: false,
           globalSetup: [at('tests/support/database.global.ts')],
           testTimeout: 30_000,
           hookTimeout: 60_000,
