@@ -19,6 +19,9 @@ import { readingSeriesRoutes } from './reading-series/reading-series.routes.ts'
 import { reviewsRoutes } from './reviews/reviews.routes.ts'
 import { aquiferUnitsRoutes } from './aquifer-units/aquifer-units.routes.ts'
 import { boundariesRoutes } from './boundaries/boundaries.routes.ts'
+import { correctionsRoutes } from './corrections/corrections.routes.ts'
+import { otherWellsRoutes } from './other-wells/other-wells.routes.ts'
+import { outsideSeriesRoutes } from './outside-series/outside-series.routes.ts'
 import { mapRoutes } from './map/map.routes.ts'
 import { searchRoutes } from './search/search.routes.ts'
 import { streamsRoutes } from './streams/streams.routes.ts'
@@ -53,6 +56,9 @@ export function allRoutes(services: Services, deps: Deps): Route[] {
     ...boundariesRoutes(services),
     ...pumpingTestsRoutes(services, deps),
     ...readingSeriesRoutes(services, deps),
+    ...outsideSeriesRoutes(services, deps),
+    ...correctionsRoutes(services, deps),
+    ...otherWellsRoutes(services, deps),
     ...analysesRoutes(services, deps),
     ...analysisReportsRoutes(services),
     ...reviewsRoutes(services),

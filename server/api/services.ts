@@ -7,11 +7,14 @@ import { createInputsService } from './analyses/inputs.service.ts'
 import { createAquiferUnitsService } from './aquifer-units/aquifer-units.service.ts'
 import { createAuditTrailService } from './audit-trail/audit-trail.service.ts'
 import { createBoundariesService } from './boundaries/boundaries.service.ts'
+import { createCorrectionsService, type CorrectionsService } from './corrections/corrections.service.ts'
 import { createEstimatesService } from './estimates/estimates.service.ts'
 import { createHealthService } from './health/health.service.ts'
 import { createJobsService } from './jobs/jobs.service.ts'
 import { createMapService } from './map/map.service.ts'
+import { createOtherWellsService, type OtherWellsService } from './other-wells/other-wells.service.ts'
 import { createOutboxService } from './outbox/outbox.service.ts'
+import { createOutsideSeriesService } from './outside-series/outside-series.service.ts'
 import { createPasswordService } from './password/password.service.ts'
 import { createPeopleService } from './people/people.service.ts'
 import { createPumpingTestsService } from './pumping-tests/pumping-tests.service.ts'
@@ -37,8 +40,11 @@ export function createServices(deps: Deps) {
     testsOf: (viewer, wellId) => pumpingTests.ofWell(viewer, wellId),
     valuesOf: (viewer, wellId) => adoptedValues.ofWell(viewer, wellId),
     async wellChanged(executor, wellId) {
-      for (const testId of await analyses.testsOfWell(executor, wellId))
-        await analyses.markInputsChanged(executor, testId)
+      const tests = [
+        ...(await analyses.testsOfWell(executor, wellId)),
+        ...(await otherWells.testsListing(executor, wellId)),
+      ]
+      for (const testId of new Set(tests)) await analyses.markInputsChanged(executor, testId)
       await adoptedValues.changedAt(executor, 'well', wellId)
     },
   })
@@ -47,10 +53,20 @@ export function createServices(deps: Deps) {
     markInputsChanged: (executor, testId) => analyses.markInputsChanged(executor, testId),
     valuesChanged: (executor, testId) => adoptedValues.changedAt(executor, 'pumping-test', testId),
   })
+  const otherWells: OtherWellsService = createOtherWellsService(deps, {
+    pumpingTests,
+    markInputsChanged: (executor, testId) => analyses.markInputsChanged(executor, testId),
+  })
+  const corrections: CorrectionsService = createCorrectionsService(deps, {
+    pumpingTests,
+    otherWells,
+    markInputsChanged: (executor, testId) => analyses.markInputsChanged(executor, testId),
+    appliedTo: (executor, testId) => analyses.appliedTo(executor, testId),
+  })
   // A well shows its tests, and a change of a test concerns its analyses: services that know each other have named types.
   const analyses: AnalysesService = createAnalysesService(
     deps,
-    createInputsService({ pumpingTests, streams, boundaries, wells }),
+    createInputsService({ pumpingTests, streams, boundaries, wells, corrections, otherWells }),
   )
   const { markInputsChanged, isInUse } = analyses
   return {
@@ -61,11 +77,14 @@ export function createServices(deps: Deps) {
     aquiferUnits: createAquiferUnitsService(deps),
     auditTrail: createAuditTrailService(deps),
     boundaries,
+    corrections,
     estimates: createEstimatesService(deps, { region, streams, adoptedValues }),
     health: createHealthService(deps),
     jobs: createJobsService(deps),
     map: createMapService(deps, { adoptedValues }),
+    otherWells,
     outbox: createOutboxService(deps),
+    outsideSeries: createOutsideSeriesService(deps, { pumpingTests, corrections, isInUse }),
     password: createPasswordService(deps),
     people: createPeopleService(deps, region),
     pumpingTests,

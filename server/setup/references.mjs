@@ -19,6 +19,7 @@ const python = '/usr/bin/python3'
 const references = [
   ...[
     'bessel-functions',
+    'corrections',
     'distributions',
     'hydraulics-fits',
     'laplace-solutions',

@@ -124,6 +124,8 @@ const workbenchParts = z.object({
       seriesId: recordId,
       seq: z.array(z.int()),
       flags: z.array(z.string()),
+      /** Drawdown before corrections; left out where there are none. */
+      uncorrected_m: z.array(z.number()).optional(),
     }),
   ),
   /** Logs that give no drawdown yet, and what is missing. */

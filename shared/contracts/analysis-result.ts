@@ -1,4 +1,5 @@
 import { z } from 'zod'
+import { correctionKindIds, type CorrectionKind } from '../hydraulics/corrections/kinds.ts'
 import { storageClass } from './kinds.ts'
 
 /** Stored analyses carry `version: 1`; a later shape brings its own literal and one upgrade from this one. */
@@ -86,6 +87,25 @@ const construction = {
   screen: interval.nullable().optional(),
 }
 
+/** What was taken off the readings of a well, frozen with them. */
+const appliedCorrection = z.object({
+  kind: z.enum(correctionKindIds as [CorrectionKind]),
+  given: z.boolean(),
+  outside: z.string().nullable(),
+  record: z.record(z.string(), z.number()),
+  findings: z.array(finding),
+})
+
+const otherPumpingWell = z.object({
+  wellId: z.string().nullable(),
+  label: z.string(),
+  rates: z.array(rateStep),
+  fitted: z.boolean(),
+  distance_m: z.number(),
+  bearing_deg: z.number(),
+  distances: z.array(z.object({ wellId: z.string(), distance_m: z.number() })),
+})
+
 export const series = z.object({
   wellId: z.string(),
   label: z.string(),
@@ -97,6 +117,7 @@ export const series = z.object({
   elapsed_s: z.array(z.number()),
   drawdown_m: z.array(z.number()),
   included: z.array(z.boolean()),
+  corrections: z.array(appliedCorrection).optional(),
 })
 
 export const analysisInputs = z.object({
@@ -110,6 +131,7 @@ export const analysisInputs = z.object({
   thicknessBasis: z.enum(['aquifer', 'screen', 'saturated', 'unknown']),
   thicknessError: z.number(),
   streamDistance_m: z.number().nullable(),
+  otherWells: z.array(otherPumpingWell).optional(),
 })
 
 const boundary = z.object({

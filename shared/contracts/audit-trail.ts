@@ -7,8 +7,11 @@ export type AuditAction =
   | `analyses/${'create' | 'delete' | 'edit' | 'report' | 'submit' | 'take-back'}`
   | 'aquifer-units/create'
   | 'boundaries/create'
+  | `corrections/${'create' | 'edit' | 'delete'}`
   | 'jobs/cancel'
   | `password/${'change' | 'set'}`
+  | `other-wells/${'create' | 'edit' | 'delete'}`
+  | `outside-series/${'add' | 'delete' | 'replace'}`
   | `people/${'edit' | 'invite' | 'invite-again'}`
   | `pumping-tests/${'create' | 'edit' | 'report'}`
   | `readings/${'add' | 'decide' | 'delete'}`

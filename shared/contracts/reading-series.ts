@@ -32,21 +32,21 @@ export const logMapping = z.object({
 export const seriesInput = z.object({ testWellId: recordId, mapping: logMapping })
 export type SeriesInput = z.infer<typeof seriesInput>
 
-/** Travels beside the file in one multipart form, as JSON text. */
-export const seriesForm = z.object({
-  request: z
-    .string()
-    .max(10_000)
-    .transform((text, context) => {
-      try {
-        return JSON.parse(text) as unknown
-      } catch {
-        context.addIssue({ code: 'custom', message: 'field/invalid' })
-        return z.NEVER
-      }
-    })
-    .pipe(seriesInput),
-})
+/** JSON that travels as the text of one part of a form. */
+export const jsonText = z
+  .string()
+  .max(10_000)
+  .transform((text, context) => {
+    try {
+      return JSON.parse(text) as unknown
+    } catch {
+      context.addIssue({ code: 'custom', message: 'field/invalid' })
+      return z.NEVER
+    }
+  })
+
+/** Travels beside the file in one multipart form. */
+export const seriesForm = z.object({ request: jsonText.pipe(seriesInput) })
 
 const params = z.record(z.string(), z.union([z.string(), z.number()]))
 export const rowIssue = z.object({ code: z.string(), field: z.string(), params })

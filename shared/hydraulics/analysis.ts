@@ -1,4 +1,5 @@
 import type { MethodId } from './catalogue.ts'
+import type { AppliedCorrection } from './corrections/correction.ts'
 import type { KindErrorCode } from './kind-errors.ts'
 import type { CurveMatch } from './laid-curve.ts'
 import type { PenetrationErrorCode } from './penetration-errors.ts'
@@ -33,6 +34,24 @@ export interface Series {
   elapsed_s: number[]
   drawdown_m: number[]
   included: boolean[]
+  /** What was taken off the drawdown before; left out: nothing. */
+  corrections?: AppliedCorrection[]
+}
+
+/** Another well that pumped before or during the test. */
+export interface OtherWell {
+  /** Of the map; null for a place that was typed. */
+  wellId: string | null
+  label: string
+  /** On the clock of the test; may begin before it. */
+  rates: RateStep[]
+  /** One factor on its rates is an unknown of the fit; otherwise they are taken as they are. */
+  fitted: boolean
+  /** Where it stands, as seen from the pumped well. */
+  distance_m: number
+  bearing_deg: number
+  /** How far it is from each well of the test. */
+  distances: { wellId: string; distance_m: number }[]
 }
 
 /** Everything an analysis depends on, all in SI; stored as the analysis's snapshot. */
@@ -51,6 +70,8 @@ export interface AnalysisInputs {
   thicknessError: number
   /** Distance to a connected stream, null where there is none. */
   streamDistance_m: number | null
+  /** Superposed by curve methods; left out: none is known. */
+  otherWells?: OtherWell[]
 }
 
 export interface TimeWindow {
@@ -249,6 +270,9 @@ export type AnalysisErrorCode =
   | 'analysis/boundaries-angle'
   | 'analysis/boundary-place'
   | 'analysis/bearing-unknown'
+  | 'analysis/other-well-distance'
+  | 'analysis/other-well-behind'
+  | 'analysis/other-wells-boundary'
 
 /** Inputs a method refuses, as a code and parameters; the sentence is in shared/words/findings.ts. */
 export class AnalysisError extends Error {

@@ -10,6 +10,7 @@ import {
 import { cooperJacob } from './cooper-jacob.ts'
 import { curveMethod } from './curve-method.ts'
 import { distanceDrawdown } from './distance-drawdown.ts'
+import { correctionFindings, otherWellFindings } from './input-findings.ts'
 import { keptResiduals } from './kept-residuals.ts'
 import { limitFindings } from './limits.ts'
 import type { Method } from './method.ts'
@@ -78,6 +79,8 @@ export function analyse(methodId: MethodId, inputs: AnalysisInputs, options: Ana
       }),
       ...outcome.findings,
       ...thicknessFindings(inputs),
+      ...otherWellFindings(method, inputs, chosenSeries(inputs, options)),
+      ...chosenSeries(inputs, options).flatMap(correctionFindings),
     ],
   }
 }

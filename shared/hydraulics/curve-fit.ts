@@ -20,6 +20,7 @@ import {
   UNDETERMINED_FACTOR,
   type LogUncertainty,
 } from './parameter-estimate.ts'
+import type { OtherSource } from './other-wells.ts'
 import type { ResponsePlace } from './place.ts'
 import type { RateHistory } from './rates.ts'
 import type { Selected } from './selection.ts'
@@ -35,12 +36,14 @@ export interface Fitted {
   history: RateHistory
   wells: Selected[]
   places: ResponsePlace[]
+  /** Other pumping wells, as each well feels them. */
+  others: OtherSource[][]
   logarithmic: boolean
   fit: RobustFit
 }
 
-/** Step in ln of a distance for its effect on the residuals. */
-const DISTANCE_STEP = 1e-4
+/** Step in ln of a distance or rate for its effect on the residuals. */
+const STEP = 1e-4
 
 /** Measured − calculated drawdown of each reading, in metres whatever the objective. */
 export function curveResiduals({ wells, fit, logarithmic }: Fitted): Residual[] {
@@ -118,30 +121,46 @@ function otherEstimate({ id, scale }: Unknown, value: number, known: LogUncertai
   return { id, value, low: estimate.low, high: estimate.high, determined: estimate.determined }
 }
 
-/** Change of the fitted parameters when the rate is one standard deviation higher. */
-function rateShift({ fit, wells, logarithmic, inputs }: Fitted): number[] {
+/** Change of the fitted parameters when the rate of the pumped well is one standard deviation higher. */
+function rateShift(fitted: Fitted): number[] {
+  const { fit, wells, logarithmic, inputs } = fitted
   const measured = wells.flatMap((well) => well.drawdown_m)
-  const effect = measured.map((value, i) => (logarithmic ? 1 : value + (fit.residuals[i] as number)))
+  const effect = fitted.others.some((sources) => sources.length > 0)
+    ? slopeOf((step) => residualsAt(fitted, { rates: Math.exp(step) }))
+    : measured.map((value, i) => (logarithmic ? 1 : value + (fit.residuals[i] as number)))
   return parameterShift(fit, effect).map((shift) => shift * inputs.rateError)
+}
+
+/** Change of residuals with a logarithm, by central differences. */
+function slopeOf(residuals: (step: number) => Float64Array): number[] {
+  const [more, less] = [residuals(STEP), residuals(-STEP)]
+  return Array.from(more, (value, i) => (value - (less[i] as number)) / (2 * STEP))
 }
 
 /** Change of the fitted parameters when one well's distance is one standard deviation longer. */
 function distanceShift(fitted: Fitted, well: Selected, index: number): number[] {
   const error = distanceError(well.series)
   if (!(error > 0)) return fitted.solution.unknowns.map(() => 0)
-  const longer = residualsAt(fitted, index, Math.exp(DISTANCE_STEP))
-  const shorter = residualsAt(fitted, index, Math.exp(-DISTANCE_STEP))
-  const effect = Array.from(longer, (value, i) => (value - (shorter[i] as number)) / (2 * DISTANCE_STEP))
+  const effect = slopeOf((step) => residualsAt(fitted, { distance: { index, stretch: Math.exp(step) } }))
   return parameterShift(fitted.fit, effect).map((shift) => shift * error)
 }
 
+interface Moved {
+  /** Factor on the rates of the pumped well. */
+  rates?: number
+  /** Factor on the distance of one well. */
+  distance?: { index: number; stretch: number }
+}
+
 function residualsAt(
-  { solution, wells, places, history, logarithmic, fit }: Fitted,
-  index: number,
-  stretch: number,
+  { solution, wells, places, others, history, logarithmic, fit }: Fitted,
+  { rates = 1, distance }: Moved,
 ): Float64Array {
-  const moved = places.map((place, w) => (w === index ? { ...place, distance_m: place.distance_m * stretch } : place))
-  const problem = curveProblem(solution, placed(wells, moved), history.increments, logarithmic)
+  const moved = places.map((place, w) =>
+    w === distance?.index ? { ...place, distance_m: place.distance_m * distance.stretch } : place,
+  )
+  const increments = history.increments.map((one) => ({ ...one, change_m3_s: one.change_m3_s * rates }))
+  const problem = curveProblem(solution, placed(wells, moved, others), increments, logarithmic)
   const residuals = new Float64Array(problem.count)
   problem.residuals(fit.parameters, residuals)
   return residuals

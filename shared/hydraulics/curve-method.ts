@@ -8,6 +8,7 @@ import {
   type Finding,
   type FittedCurve,
   type MethodOutcome,
+  type Series,
 } from './analysis.ts'
 import { boundedSolution } from './boundaries/bounded-solution.ts'
 import { casingFinding } from './casing-storage.ts'
@@ -31,6 +32,7 @@ import {
   storageClassOf,
 } from './findings.ts'
 import { sharedOptions, type Method } from './method.ts'
+import { otherDrawdown, otherSources, withRateFactors, type OtherSource } from './other-wells.ts'
 import { placeOf } from './place.ts'
 import { rateHistory, type RateHistory } from './rates.ts'
 import { chosenSeries, largest, pumpingPhase, requireReadings, selectReadings, type Selected } from './selection.ts'
@@ -56,12 +58,25 @@ export function curveMethod(solution: Solution): Method {
       ...(known ? { known } : {}),
     },
     options: curveOptions,
-    run: (inputs, options) => run(bounded(solution, options), inputs, options),
-    curve: (inputs, options, outcome, times_s) => curve(bounded(solution, options), inputs, options, outcome, times_s),
+    run: (inputs, options) => run(placedModel(solution, inputs, options), inputs, options),
+    curve: (inputs, options, outcome, times_s) =>
+      curve(placedModel(solution, inputs, options), inputs, options, outcome, times_s),
   }
 }
 
-const bounded = (solution: Solution, { boundaries = [] }: AnalysisOptions) => boundedSolution(solution, boundaries)
+/** A solution where the test is: with the edges of the aquifer, and with the other wells that pump. */
+interface PlacedModel {
+  solution: Solution
+  sourcesAt: (series: Series) => OtherSource[]
+}
+
+function placedModel(solution: Solution, inputs: AnalysisInputs, { boundaries = [] }: AnalysisOptions): PlacedModel {
+  const bounded = boundedSolution(solution, boundaries)
+  return {
+    solution: withRateFactors(bounded, inputs),
+    sourcesAt: (series) => otherSources(series, { solution, inputs, boundaries, unknowns: bounded.unknowns.length }),
+  }
+}
 
 const curveOptions: Method['options'] = [
   sharedOptions.window,
@@ -86,7 +101,8 @@ const curveOptions: Method['options'] = [
   sharedOptions.readingsPerCycle,
 ]
 
-function run(solution: Solution, inputs: AnalysisInputs, options: AnalysisOptions): MethodOutcome {
+function run(model: PlacedModel, inputs: AnalysisInputs, options: AnalysisOptions): MethodOutcome {
+  const { solution } = model
   const history = rateHistory(inputs.rates)
   const phase = pumpingPhase(history, options.window)
   const selection = selectReadings(inputs, options, {
@@ -98,7 +114,7 @@ function run(solution: Solution, inputs: AnalysisInputs, options: AnalysisOption
   const wells = selection.wells.filter((well) => well.time_s.length > 0)
   const last_s = largest(wells.map((well) => well.time_s.at(-1) as number))
   thinningGuard(options, last_s)
-  const fitted = fit(solution, wells, history, inputs, options)
+  const fitted = fit(model, wells, history, inputs, options)
   const covariance = curveCovariance(fitted)
   const summary = curveSummary(fitted, covariance)
   const observed = wells.some(({ series }) => series.role === 'observation')
@@ -127,7 +143,7 @@ function run(solution: Solution, inputs: AnalysisInputs, options: AnalysisOption
 }
 
 function fit(
-  solution: Solution,
+  { solution, sourcesAt }: PlacedModel,
   wells: Selected[],
   history: RateHistory,
   inputs: AnalysisInputs,
@@ -135,12 +151,13 @@ function fit(
 ): Fitted {
   const logarithmic = options.objective === 'log-drawdown'
   const places = wells.map(({ series }) => placeOf(series, inputs))
-  const problem = curveProblem(solution, placed(wells, places), history.increments, logarithmic)
+  const others = wells.map(({ series }) => sourcesAt(series))
+  const problem = curveProblem(solution, placed(wells, places, others), history.increments, logarithmic)
   if (wells.every((well) => well.drawdown_m.every((value) => !(value > 0))))
     throw new AnalysisError('analysis/no-drawdown')
   try {
     const result = searched(problem, options, solution.guess({ inputs, wells, history }))
-    return { inputs, options, solution, history, wells, places, logarithmic, fit: result }
+    return { inputs, options, solution, history, wells, places, others, logarithmic, fit: result }
   } catch (error) {
     if (error instanceof RangeError) throw new AnalysisError('analysis/no-fit')
     throw error
@@ -182,7 +199,7 @@ const pumpedInJointFit: Finding = { code: 'pumped-well-in-joint-fit', severity: 
 const atBound = (parameter: string): Finding => ({ code: 'at-bound', severity: 'bad', params: { parameter } })
 
 function curve(
-  solution: Solution,
+  { solution, sourcesAt }: PlacedModel,
   inputs: AnalysisInputs,
   options: AnalysisOptions,
   { extras }: MethodOutcome,
@@ -193,8 +210,9 @@ function curve(
   const parameters = solution.unknowns.map(({ id }) => extras[`fitted_${id}`] as number)
   const span = askedSpan(increments, times_s)
   return chosenSeries(inputs, options).map((series) => {
+    const others = sourcesAt(series).map((source) => otherDrawdown(source, parameters, times_s))
     const respond = solution.respond(parameters, placeOf(series, inputs), span)
-    const modelled = drawdownHistory(respond, size, increments, times_s)
+    const modelled = drawdownHistory(respond, size, increments, times_s, others)
     return { wellId: series.wellId, drawdown_m: modelled.map((value) => drawnDrawdown(value, inputs, options)) }
   })
 }

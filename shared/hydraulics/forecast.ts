@@ -85,8 +85,10 @@ function elsewhere({ inputs, options }: AnalysedCurve, { distance_m, bearing_deg
     drawdown_m: [],
     included: [],
   }
+  // The forecast is of the pumped well alone, whoever else pumped during the test.
+  const { otherWells: _others, ...own } = inputs
   return {
-    inputs: { ...inputs, rates, series: [place], ...(pumped ? { pumpedWell: pumped } : {}) },
+    inputs: { ...own, rates, series: [place], ...(pumped ? { pumpedWell: pumped } : {}) },
     options: { ...options, wellIds: [PLACE], window: null },
   }
 }

@@ -38,6 +38,9 @@ export function askedSpan(increments: RateIncrement[], elapsed_s: readonly numbe
   return to > 0 ? { from, to } : null
 }
 
+/** Adds what a further source draws at a moment, value and derivatives. */
+export type AddDrawdown = (elapsed_s: number, out: Float64Array) => void
+
 /**
  * Drawdown alone, at several times.
  * @param unknowns how many derivatives `respond` writes
@@ -47,11 +50,13 @@ export function drawdownHistory(
   unknowns: number,
   increments: RateIncrement[],
   elapsed_s: number[],
+  others: readonly AddDrawdown[] = [],
 ): number[] {
   const out = new Float64Array(unknowns + 1)
   const scratch = new Float64Array(unknowns + 1)
   return elapsed_s.map((time) => {
     superpose(respond, increments, time, out, scratch)
+    for (const add of others) add(time, out)
     return out[0] as number
   })
 }

@@ -1,9 +1,12 @@
 import type { AnalysisErrorCode, Finding } from '#shared/hydraulics/analysis.ts'
 import { methods } from '#shared/hydraulics/catalogue.ts'
+import { rateFactorWell } from '#shared/hydraulics/other-wells.ts'
 import { kindMethods } from '#shared/hydraulics/kinds.ts'
 import { formatElapsed } from '#shared/quantities/elapsed.ts'
 import { formatNumber, formatQuantity } from '#shared/quantities/format.ts'
 import { defaultUnitSystemId, unitSystemById, type UnitSystem } from '#shared/quantities/systems.ts'
+import { correctionFindings, correctionRefusals } from './correction-findings.ts'
+import { correctionFigures } from './corrections.ts'
 import { forecastFindings } from './forecast.ts'
 import { kindFindings, kindOptionNames, kindRefusals } from './kind-findings.ts'
 import { leakageFindings, penetrationRefusals } from './leakage-findings.ts'
@@ -18,14 +21,25 @@ export interface Words {
   span: (name: string) => string
   rate: (name: string) => string
   transmissivity: (name: string) => string
+  pressure: (name: string) => string
+  /** Figures of a correction, which are the params themselves. */
+  figures: () => string
 }
 export type Sentences<Code extends string> = Record<Code, (words: Words) => string>
 
 /** The name that the methods give to a quantity they find. */
 const parameterName = (id: string): string =>
+  rateFactorName(id) ??
   [...Object.values(methods), ...kindMethods]
     .flatMap(({ unknowns }): readonly { id: string; label: string }[] => unknowns)
-    .find((unknown) => unknown.id === id)?.label ?? id
+    .find((unknown) => unknown.id === id)?.label ??
+  id
+
+function rateFactorName(id: string): string | null {
+  const well = rateFactorWell(id)
+  return well === null ? null : `The factor on the rates of ${well}`
+}
+
 const optionNames: Record<string, string> = {
   ...kindOptionNames,
   window: 'The time window must end after it begins, and cannot begin before zero.',
@@ -36,6 +50,7 @@ const optionNames: Record<string, string> = {
 
 /** Every finding of an analysis. */
 const findings: Sentences<string> = {
+  ...correctionFindings,
   ...forecastFindings,
   ...kindFindings,
   ...leakageFindings,
@@ -121,6 +136,7 @@ const refusals: Sentences<AnalysisErrorCode> = {
   ...kindRefusals,
   ...penetrationRefusals,
   ...storageRefusals,
+  ...correctionRefusals,
   'analysis/unknown-method': ({ text }) => `The method "${text('method')}" is not known. Reload the page.`,
   'analysis/no-wells': () => 'Choose at least one well.',
   'analysis/unknown-well': () => 'A chosen well is not part of this test. Choose the wells again.',
@@ -192,6 +208,11 @@ export function analysisErrorText(
 /** Codes that have a sentence, for tests and menus. */
 export const findingCodes = Object.keys(findings)
 
+const numbersOf = (params: Finding['params']) =>
+  Object.fromEntries(
+    Object.entries(params).flatMap(([name, value]) => (typeof value === 'number' ? [[name, value]] : [])),
+  )
+
 function wordsOf(params: Finding['params'], units: UnitSystem): Words {
   const value = (name: string) => Number(params[name])
   return {
@@ -202,5 +223,7 @@ function wordsOf(params: Finding['params'], units: UnitSystem): Words {
     span: (name) => formatElapsed(value(name)),
     rate: (name) => formatQuantity(value(name), units.discharge, { trim: true }),
     transmissivity: (name) => formatQuantity(value(name), units.transmissivity, { trim: true }),
+    pressure: (name) => formatQuantity(value(name), units.pressure, { trim: true }),
+    figures: () => correctionFigures({ record: numbersOf(params), given: params.given === 1 }, units),
   }
 }

@@ -1,6 +1,7 @@
 import type { AnalysisOptions, ChosenBoundary } from '#shared/hydraulics/analysis.ts'
 import { methods } from '#shared/hydraulics/catalogue.ts'
 import type { Unknown } from '#shared/hydraulics/method.ts'
+import { rateFactorWell } from '#shared/hydraulics/other-wells.ts'
 import type { Dimension } from '#shared/quantities/units.ts'
 
 /** A quantity that an analysis found beside T and the storage it reports, as screens and reports name it. */
@@ -31,6 +32,8 @@ export function foundQuantity(
 ): FoundQuantity {
   const unknown = methods[method].unknowns.find((candidate) => candidate.id === id)
   if (unknown) return { symbol: symbols[id] ?? id, name: unknown.label, dimension: dimensions[unknown.dimension] }
+  const other = rateFactorWell(id)
+  if (other !== null) return { symbol: 'f', name: `Factor on the rates of ${other}`, dimension: 'storage' }
   const boundary = boundaries[Number(/^boundary_(\d+)$/.exec(id)?.[1]) - 1]
   if (!boundary) throw new RangeError(`${method} does not find ${id}`)
   return { ...edges[boundary.kind], dimension: 'length' }

@@ -14,6 +14,7 @@ import { recordAudit } from '../audit-trail/record-audit.ts'
 import { listAdopted } from './adopted.repository.ts'
 import * as repository from './analyses.repository.ts'
 import { adoptedRows } from './adoption.ts'
+import { appliedCorrections } from './applied-corrections.ts'
 import { calculate, checkExpected } from './calculate.ts'
 import { checkAdoptable } from './check-adoptable.ts'
 import { everything } from './everything.ts'
@@ -248,6 +249,12 @@ export function createAnalysesService(deps: Deps, inputs: ReturnType<typeof crea
     },
 
     testsOfWell: repository.analysedTestsOf,
+
+    /** Logs of a test that give no drawdown, and what the others were corrected by. */
+    async appliedTo(executor: Executor, testId: number) {
+      const { problems, inputs: built } = await inputs.snapshot(executor, everything, testId)
+      return { problems, applied: appliedCorrections(built) }
+    },
 
     /** Losses of a well by its accepted step-drawdown tests that the viewer may see, newest test first. */
     async wellLosses(viewer: Viewer, wellId: number) {

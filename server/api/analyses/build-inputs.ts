@@ -1,7 +1,9 @@
-import type { AnalysisInputs, Series } from '#shared/hydraulics/analysis.ts'
+import type { AnalysisInputs, OtherWell, Series } from '#shared/hydraulics/analysis.ts'
 import { toDrawdown, type StaticLevel } from '#shared/readings/drawdown.ts'
 import type { Quantity } from '#shared/readings/model.ts'
+import type { CorrectionParts } from '../corrections/corrections.service.ts'
 import type { PumpingTestRow, TestParts, TestWellRow } from '../pumping-tests/view.ts'
+import { correctedLog } from './corrected.ts'
 import type { listEdits, ReadingRow } from './inputs.repository.ts'
 import { placement, type Construction } from './placement.ts'
 
@@ -12,6 +14,8 @@ export interface InputParts extends TestParts {
   streamDistanceM: number | null
   /** By id of the well. */
   constructions: Map<number, Construction>
+  corrections: CorrectionParts
+  otherWells: OtherWell[]
 }
 
 /** Which stored reading stands behind each point of an inputs series, so that the workbench can leave it out. */
@@ -20,6 +24,8 @@ export interface SeriesReadings {
   seriesId: number
   seq: number[]
   flags: string[]
+  /** Drawdown before corrections; left out where there are none. */
+  uncorrected_m?: number[]
 }
 
 interface Problem {
@@ -43,7 +49,7 @@ type Built = { series: Series; readings: SeriesReadings } | { problem: SeriesPro
  * readings that were not taken, or that somebody left out, are there but not included.
  */
 export function buildInputs(parts: InputParts): BuiltInputs {
-  const { test, steps, streamDistanceM } = parts
+  const { test, steps, streamDistanceM, otherWells } = parts
   const pumped = parts.wells.find(({ row }) => row.role === 'pumped')
   const all = parts.wells.flatMap((well) => wellSeries(well, parts))
   const built = all.flatMap((item) => ('series' in item ? [item] : []))
@@ -59,6 +65,8 @@ export function buildInputs(parts: InputParts): BuiltInputs {
       thicknessBasis: test.thicknessBasis,
       thicknessError: test.thicknessError,
       streamDistance_m: streamDistanceM,
+      // Left out where there are none, so that tests without keep their hash.
+      ...(otherWells.length > 0 ? { otherWells } : {}),
     },
     readings: built.map(({ readings }) => readings),
     problems: all.flatMap((item) => ('problem' in item ? [item.problem] : [])),
@@ -77,7 +85,18 @@ function wellSeries(well: TestWellRow, parts: InputParts): Built[] {
   const included = rows.map(({ seq, taken }) => decided.get(seq) ?? taken)
   const drawdown = drawdownOf(rows, included, log.quantity, staticLevel(well))
   if (!Array.isArray(drawdown)) return [{ problem: { wellId: String(well.row.wellId), ...drawdown } }]
-  const points = rows.map((row, i) => ({ row, s: drawdown[i]!, included: included[i]! })).sort(byTime)
+  const asked = { elapsed_s: rows.map(({ elapsedS }) => elapsedS!), drawdown_m: drawdown, included }
+  const meanBefore = log.quantity !== 'drawdown' && well.row.staticLevelM === null
+  const corrected = correctedLog(well.row.wellId, parts.corrections, asked, meanBefore)
+  if (corrected && 'code' in corrected) return [{ problem: { wellId: String(well.row.wellId), ...corrected } }]
+  const points = rows
+    .map((row, i) => ({
+      row,
+      s: corrected?.drawdown_m[i] ?? drawdown[i]!,
+      uncorrected: drawdown[i]!,
+      included: included[i]!,
+    }))
+    .sort(byTime)
   return [
     {
       series: {
@@ -92,12 +111,14 @@ function wellSeries(well: TestWellRow, parts: InputParts): Built[] {
         elapsed_s: points.map(({ row }) => row.elapsedS!),
         drawdown_m: points.map(({ s }) => s),
         included: points.map((point) => point.included),
+        ...(corrected ? { corrections: corrected.applied } : {}),
       },
       readings: {
         wellId: String(well.row.wellId),
         seriesId: log.id,
         seq: points.map(({ row }) => row.seq),
         flags: points.map(({ row }) => row.flags),
+        ...(corrected ? { uncorrected_m: points.map(({ uncorrected }) => uncorrected) } : {}),
       },
     },
   ]

@@ -1,6 +1,8 @@
 import { atLeast, type Viewer } from '#shared/contracts/permissions.ts'
 import type { Executor } from '../../db/client.ts'
 import type { createBoundariesService } from '../boundaries/boundaries.service.ts'
+import type { CorrectionsService } from '../corrections/corrections.service.ts'
+import type { OtherWellsService } from '../other-wells/other-wells.service.ts'
 import type { createPumpingTestsService } from '../pumping-tests/pumping-tests.service.ts'
 import { openAt } from '../pumping-tests/tested-interval.ts'
 import type { createStreamsService } from '../streams/streams.service.ts'
@@ -17,6 +19,8 @@ export interface InputsNeeds {
   streams: Pick<ReturnType<typeof createStreamsService>, 'nearestConnected' | 'pathsConnected'>
   boundaries: Pick<ReturnType<typeof createBoundariesService>, 'affecting'>
   wells: Pick<WellsService, 'screensOf' | 'picksOf'>
+  corrections: Pick<CorrectionsService, 'partsOf'>
+  otherWells: Pick<OtherWellsService, 'partsOf'>
 }
 
 type WholeTest = Awaited<ReturnType<InputsNeeds['pumpingTests']['whole']>>
@@ -42,7 +46,9 @@ function snapshotOf(parts: InputParts, test: WholeTest): Snapshot {
 }
 
 /** What analyses of a test are made from, as the viewer sees the test. */
-export function createInputsService({ pumpingTests, streams, boundaries, wells: wellsService }: InputsNeeds) {
+export function createInputsService(needs: InputsNeeds) {
+  const { pumpingTests, streams, boundaries, wells: wellsService, corrections, otherWells } = needs
+
   /** By well: screens that were open at the test's date, and depths of the units. */
   async function constructions(executor: Executor, { found: { test }, parts }: WholeTest) {
     const found = new Map<number, Construction>()
@@ -63,7 +69,9 @@ export function createInputsService({ pumpingTests, streams, boundaries, wells: 
     async wellsSeen(executor: Executor, viewer: Viewer, testId: number): Promise<Set<string> | null> {
       if (atLeast(viewer, 'analyst')) return null
       const { parts } = await pumpingTests.whole(executor, viewer, testId)
-      return new Set(parts.wells.map(({ row }) => String(row.wellId)))
+      const others = await otherWells.partsOf(executor, viewer, testId, parts.wells)
+      const listed = others.flatMap(({ wellId }) => (wellId === null ? [] : [wellId]))
+      return new Set([...parts.wells.map(({ row }) => String(row.wellId)), ...listed])
     },
 
     /** Streams and edges of the aquifer near the pumped well: offered to analyses, and no part of what they rest on. */
@@ -93,6 +101,8 @@ export function createInputsService({ pumpingTests, streams, boundaries, wells: 
         edits,
         streamDistanceM: stream?.distanceM ?? null,
         constructions: await constructions(executor, test),
+        corrections: await corrections.partsOf(executor, testId),
+        otherWells: await otherWells.partsOf(executor, viewer, testId, wells),
       }
       return snapshotOf(parts, test)
     },

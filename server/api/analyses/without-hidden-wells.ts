@@ -2,6 +2,7 @@ import type { Analysis } from '#shared/contracts/analyses.ts'
 import { analysisInputs, analysisOptions } from '#shared/contracts/analysis-result.ts'
 import type { AnalysisOptions } from '#shared/hydraulics/analysis.ts'
 import { kindOfMethod } from '#shared/hydraulics/any-kind.ts'
+import { rateFactorWell } from '#shared/hydraulics/other-wells.ts'
 
 /**
  * An analysis rests on all wells of its test; its reader is told nothing of those that are hidden from them.
@@ -12,10 +13,13 @@ export function withoutHiddenWells(analysis: Analysis, inputs: unknown, seen: Se
   if (seen === null || analysis.method === 'reported') return analysis
   // A test of a kind of its own has one well, without which nobody sees the test.
   if (kindOfMethod(analysis.method) !== 'constant-rate') return analysis
-  const hidden = analysisInputs.parse(inputs).series.filter(({ wellId }) => !seen.has(wellId))
+  const { series, otherWells = [] } = analysisInputs.parse(inputs)
+  const others = otherWells.filter(({ wellId }) => wellId !== null && !seen.has(wellId))
+  const hidden = [...series.filter(({ wellId }) => !seen.has(wellId)), ...others]
   if (hidden.length === 0) return analysis
   const codes = new Set<string | number>(hidden.map(({ label }) => label))
   const { options, result } = analysis
+  const isNamed = (id: string) => codes.has(rateFactorWell(id) ?? '')
   const visible = ({ wellId }: { wellId: string }) => seen.has(wellId)
   return {
     ...analysis,
@@ -25,7 +29,14 @@ export function withoutHiddenWells(analysis: Analysis, inputs: unknown, seen: Se
       residuals: result.residuals.filter(visible),
       ...(result.residualsShown && { residualsShown: result.residualsShown.filter(visible) }),
       leftOut: result.leftOut.filter(visible),
-      findings: result.findings.filter(({ params }) => params.well === undefined || !codes.has(params.well)),
+      ...(result.others && { others: result.others.filter(({ id }) => !isNamed(id)) }),
+      extras: Object.fromEntries(
+        Object.entries(result.extras).filter(([name]) => !isNamed(name.replace(/^fitted_/, ''))),
+      ),
+      findings: result.findings.filter(
+        ({ params: { well, parameter } }) =>
+          (well === undefined || !codes.has(well)) && !isNamed(String(parameter ?? '')),
+      ),
     },
   }
 }

@@ -34,7 +34,7 @@ export function readingRows(seriesId: number, { rows, issues }: LogReading): Sto
 }
 
 /** Lines that carry no reading by nature have a flag and no issue; a reader asks why all the same. */
-const issuesOf = ({ issues, flags }: StoredRow): ReadingRow['issues'] =>
+export const issuesOf = ({ issues, flags }: Pick<StoredRow, 'issues' | 'flags'>): ReadingRow['issues'] =>
   issues ??
   flags
     .split(',')

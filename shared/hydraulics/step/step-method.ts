@@ -1,4 +1,5 @@
 import { AnalysisError, type Finding, type FittedCurve, type OtherEstimate } from '../analysis.ts'
+import { correctionFindings } from '../input-findings.ts'
 import type { Kind, KindMethod, KindOutcome } from '../kind.ts'
 import { rateHistory } from '../rates.ts'
 import { stepIncrements, trendAbscissa, type StepIncrements } from './increments.ts'
@@ -57,6 +58,7 @@ function run(inputs: StepInputs, options: StepOptions, fit: Fit, findings: Spec[
       ...findings(fitted, increments),
       ...stepFindings(increments, inputs),
       ...predictionFindings(fitted, options),
+      ...correctionFindings(inputs.well),
     ],
     leftOut: increments.leftOut,
   }

@@ -7,6 +7,7 @@ import { peopleErrors } from './people.ts'
 import { regionErrors } from './region.ts'
 import { adoptedValueErrors } from './adopted-values.ts'
 import { analysisErrors } from './analyses.ts'
+import { correctionErrors } from './corrections.ts'
 import { estimateErrors } from './estimates.ts'
 import { pumpingTestErrors } from './pumping-tests.ts'
 import { readingErrors } from './readings.ts'
@@ -25,6 +26,7 @@ export const errorCatalogue = {
   ...pumpingTestErrors,
   ...estimateErrors,
   ...analysisErrors,
+  ...correctionErrors,
   ...adoptedValueErrors,
   ...fieldErrors,
   ...clientErrors,

@@ -6,6 +6,7 @@ import { agreementText } from '../agreement.ts'
 import { cautions, type CautionId } from '../cautions.ts'
 import { analysisName, analysisSection } from './analysis-section.ts'
 import { reportDate, reportStart } from './dates.ts'
+import { correctionsSection } from './corrections-section.ts'
 import type { AnalysisReport, ReportGiven, ReportMark, ReportSection } from './document.ts'
 import { conditionsSection, dataSection, identitySection, wellsSection } from './test-sections.ts'
 
@@ -25,6 +26,7 @@ export function analysisReport(given: ReportGiven): AnalysisReport {
       wellsSection(given),
       conditionsSection(given),
       dataSection(given),
+      ...correctionsSection(given),
       ...(analyses.length > 0 ? analyses.map((analysis) => analysisSection(analysis, given)) : [noAnalysis]),
       ...agreementSection(analyses),
       cautionsSection,
