@@ -1,6 +1,7 @@
 import type { AnalysisInputs, Series, TimeWindow } from './analysis.ts'
 import { DERIVATIVE_SMOOTHING, logDerivative, type DerivativePoint } from './derivative.ts'
 import { derivativeStretches, type Stretch, type Trend } from './derivative-stretches.ts'
+import { LONGEST_CREST } from './radial-flow.ts'
 
 /** What rules the flow for a while, as far as the derivative shows it. */
 export type Regime = 'casing-storage' | 'linear-flow' | 'radial-flow' | 'drainage' | 'recharge' | 'barrier'
@@ -9,12 +10,6 @@ export type Regime = 'casing-storage' | 'linear-flow' | 'radial-flow' | 'drainag
 export interface RegimeSpan extends TimeWindow {
   regime: Regime
 }
-
-/**
- * A level between a rise and a fall that is no longer than so many factors of ten is their crest, not radial flow: of a
- * leaky response with r/B = 0.33, which gives T 38 % too high, 1.1 are level.
- */
-const LONGEST_CREST = 1.5
 
 interface Diagnosed {
   smoothing?: number

@@ -1,7 +1,8 @@
 import type { AnalysisInputs, AnalysisOptions, AnalysisResult, Finding } from './analysis.ts'
+import { methods } from './catalogue.ts'
 import { logDerivative } from './derivative.ts'
 import type { EvidenceFacts } from './evidence.ts'
-import { radialFlowSpan } from './radial-flow.ts'
+import { showsRadialFlow, type WantedLevel } from './radial-flow.ts'
 import { rateHistory } from './rates.ts'
 import { chosenSeries, pumpingPhase, selectReadings } from './selection.ts'
 import { isAfterDrainage } from './unconfined.ts'
@@ -42,7 +43,7 @@ export function evidenceFacts(
     aquifer: inputs.aquifer,
     observationWell: observed.length > 0,
     recoveryAgrees,
-    radialFlowShown: radialFlowShown(inputs, options),
+    radialFlowShown: radialFlowShown(inputs, options, wantedLevel(options, result)),
     conditionsHold: !result.findings.some(doubtsT),
     storageClass: result.S ? result.storageClass : null,
     distanceError: Math.max(0, ...observed.map(distanceError)),
@@ -51,12 +52,22 @@ export function evidenceFacts(
   }
 }
 
-/** A level derivative in every well chosen, and in an unconfined aquifer one that lasts past delayed drainage. */
-function radialFlowShown(inputs: AnalysisInputs, options: AnalysisOptions): boolean {
+/** Where a line in time was drawn; and whether a curve of radial flow alone was fitted. */
+function wantedLevel({ boundaries = [] }: AnalysisOptions, { method, extras }: AnalysisResult): WantedLevel {
+  const { family, aquifers } = methods[method]
+  const { window_from_s: from_s, window_to_s: to_s } = extras
+  return {
+    window: family === 'line' && from_s !== undefined && to_s !== undefined ? { from_s, to_s } : null,
+    toTheEnd: family === 'curve' && aquifers.includes('confined') && boundaries.length === 0,
+  }
+}
+
+/** Radial flow in every well chosen, and in an unconfined aquifer readings that last past delayed drainage. */
+function radialFlowShown(inputs: AnalysisInputs, options: AnalysisOptions, wanted: WantedLevel): boolean {
   const history = rateHistory(inputs.rates)
   const { wells } = selectReadings(inputs, options, pumpingPhase(history, null))
   return wells.every(({ time_s, drawdown_m }) => {
-    const span = radialFlowSpan(logDerivative(time_s, drawdown_m))
-    return span !== null && (inputs.aquifer !== 'unconfined' || isAfterDrainage(options, time_s.at(-1) ?? 0))
+    const shown = showsRadialFlow(logDerivative(time_s, drawdown_m), wanted)
+    return shown && (inputs.aquifer !== 'unconfined' || isAfterDrainage(options, time_s.at(-1) ?? 0))
   })
 }
