@@ -2,6 +2,7 @@ import fc from 'fast-check'
 import { describe, expect, it } from 'vitest'
 import { incompleteBeta, logGamma } from '#shared/numerics/gamma-beta.ts'
 import { normalQuantile } from '#shared/numerics/normal.ts'
+import { mixtureQuantile } from '#shared/numerics/student-mixture.ts'
 import { studentCdf, studentQuantile } from '#shared/numerics/student.ts'
 import reference from '../../reference/numerics-functions.json'
 
@@ -31,6 +32,23 @@ describe('quantiles and the functions under them', () => {
     fc.assert(
       fc.property(fc.double({ min: -50, max: 50, noNaN: true }), (t) => {
         near(studentCdf(t, 1), 0.5 + Math.atan(t) / Math.PI, 1e-13)
+      }),
+    )
+  })
+
+  it('give, mixed, the share asked for below the quantile, and between the narrowest and the widest part', () => {
+    const part = fc.record({
+      share: fc.double({ min: 0.01, max: 1, noNaN: true }),
+      sd: fc.double({ min: 1e-3, max: 10, noNaN: true }),
+    })
+    fc.assert(
+      fc.property(fc.array(part, { minLength: 1, maxLength: 6 }), freedom, (parts, f) => {
+        const found = mixtureQuantile(0.975, parts, f)
+        const total = parts.reduce((sum, { share }) => sum + share, 0)
+        near(parts.reduce((sum, { share, sd }) => sum + share * studentCdf(found / sd, f), 0) / total, 0.975, 1e-11)
+        const sds = parts.map(({ sd }) => sd)
+        expect(found).toBeGreaterThanOrEqual(Math.min(...sds) * studentQuantile(0.975, f) * (1 - 1e-9))
+        expect(found).toBeLessThanOrEqual(Math.max(...sds) * studentQuantile(0.975, f) * (1 + 1e-9))
       }),
     )
   })
