@@ -83,9 +83,13 @@ export function curveSummary(fitted: Fitted, { covariance, effectiveNumber }: Co
 
 /** What is known of the unknowns of a fit: the values' scatter, and the errors of rate and distances. */
 export function curveUncertainties(fitted: Fitted, { covariance }: CorrelatedCovariance): LogUncertainty[] {
-  const { fit, solution, wells } = fitted
+  const { fit, solution, wells, options } = fitted
   const freedom = Math.max(1, fit.residuals.length - solution.unknowns.length)
-  const shifts = [rateShift(fitted), ...wells.map((well, w) => distanceShift(fitted, well, w))]
+  const shifts = [
+    rateShift(fitted),
+    ...wells.map((well, w) => distanceShift(fitted, well, w)),
+    ...(options.match ? [laidShift(fitted)] : []),
+  ]
   return solution.unknowns.map((_, k) => {
     const variance = (covariance[k] as number[])[k] as number
     return {
@@ -120,6 +124,12 @@ function otherEstimate({ id, scale }: Unknown, value: number, known: LogUncertai
     scale === 'log' ? parameterEstimate(value, known, UNDETERMINED_FACTOR.S) : linearEstimate(value, known)
   return { id, value, low: estimate.low, high: estimate.high, determined: estimate.determined }
 }
+
+/**
+ * How far least squares would move a curve that was laid by hand, to first order: what the readings say of the place that
+ * the hand chose, which their scatter about the curve does not show.
+ */
+const laidShift = ({ fit }: Fitted) => parameterShift(fit, Array.from(fit.residuals))
 
 /** Change of the fitted parameters when the rate of the pumped well is one standard deviation higher. */
 function rateShift(fitted: Fitted): number[] {

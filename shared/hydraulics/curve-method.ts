@@ -1,4 +1,5 @@
 import type { LeastSquaresProblem } from '#shared/numerics/least-squares-problem.ts'
+import { laidFit } from '#shared/numerics/laid-fit.ts'
 import { levenbergMarquardt } from '#shared/numerics/levenberg-marquardt.ts'
 import { robustLeastSquares } from '#shared/numerics/robust-least-squares.ts'
 import {
@@ -31,6 +32,7 @@ import {
   pumpedStorageFinding,
   storageClassOf,
 } from './findings.ts'
+import { handCurveFinding, laidParameters, type CurveShift } from './laid-curve.ts'
 import { sharedOptions, type Method } from './method.ts'
 import { otherDrawdown, otherSources, withRateFactors, type OtherSource } from './other-wells.ts'
 import { placeOf } from './place.ts'
@@ -42,7 +44,7 @@ import { drawnDrawdown, thinningFindings, thinningGuard } from './unconfined.ts'
 
 /** A catalogue method that fits one analytical solution to any number of wells jointly, under any rate history. */
 export function curveMethod(solution: Solution): Method {
-  const { id, label, version, source, aquifers, known, unknowns, validity } = solution
+  const { id, label, version, source, aquifers, known, unknowns, validity, shift } = solution
   return {
     id,
     label,
@@ -57,7 +59,7 @@ export function curveMethod(solution: Solution): Method {
       wells: { least: 1, most: null, roles: ['pumped', 'observation'] },
       ...(known ? { known } : {}),
     },
-    options: curveOptions,
+    options: [...curveOptions, ...(shift ? [matchOption(shift)] : [])],
     run: (inputs, options) => run(placedModel(solution, inputs, options), inputs, options),
     curve: (inputs, options, outcome, times_s) =>
       curve(placedModel(solution, inputs, options), inputs, options, outcome, times_s),
@@ -101,6 +103,13 @@ const curveOptions: Method['options'] = [
   sharedOptions.readingsPerCycle,
 ]
 
+const matchOption = (shift: CurveShift): Method['options'][number] => ({
+  name: 'match',
+  label: 'Curve laid by hand',
+  kind: 'match',
+  shift,
+})
+
 function run(model: PlacedModel, inputs: AnalysisInputs, options: AnalysisOptions): MethodOutcome {
   const { solution } = model
   const history = rateHistory(inputs.rates)
@@ -130,9 +139,11 @@ function run(model: PlacedModel, inputs: AnalysisInputs, options: AnalysisOption
     ...(others.length > 0 ? { others } : {}),
     extras: extrasOf(fitted),
     residuals: curveResiduals(fitted),
-    fit: summary,
+    // Criteria for choosing among fits ask for the least squares, which a hand does not find.
+    fit: options.match ? { ...summary, aicc: null } : summary,
     findings: [
       ...modelFindings(fitted, last_s),
+      ...(options.match ? [handCurveFinding] : []),
       ...fitFindings(summary),
       ...determinationFindings(observed ? { T, [storage.unknown]: S } : { T }),
       ...determinationFindings(Object.fromEntries(others.map((other) => [other.id, other]))),
@@ -156,7 +167,9 @@ function fit(
   if (wells.every((well) => well.drawdown_m.every((value) => !(value > 0))))
     throw new AnalysisError('analysis/no-drawdown')
   try {
-    const result = searched(problem, options, solution.guess({ inputs, wells, history }))
+    const result = options.match
+      ? { ...laidFit(problem, laidParameters(options.match, solution)), limit: null }
+      : searched(problem, options, solution.guess({ inputs, wells, history }))
     return { inputs, options, solution, history, wells, places, others, logarithmic, fit: result }
   } catch (error) {
     if (error instanceof RangeError) throw new AnalysisError('analysis/no-fit')
