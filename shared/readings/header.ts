@@ -14,7 +14,7 @@ function unitOfText(text: string, dimension: Dimension): string | null {
 }
 
 /** The unit that a column's name gives: in brackets, or as its last word; a longer word ("minutes") anywhere. */
-export function unitInName(name: string, dimension: 'length' | 'time'): string | null {
+export function unitInName(name: string, dimension: 'length' | 'time' | 'pressure'): string | null {
   const bracketed = [...name.matchAll(BRACKETS)].map((match) => match[1] ?? '')
   const words = name.replace(BRACKETS, ' ').split(/[\s_,/:;-]+/)
   const [last = '', ...others] = words.filter((word) => word !== '').reverse()

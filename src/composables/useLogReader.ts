@@ -33,7 +33,7 @@ export function useLogReader() {
 
   return {
     inspect: (bytes: Uint8Array) => ask({ ask: 'inspect', bytes }) as Promise<LogInspection | Refusal>,
-    read: (mapping: LogMapping, context: LogContext) =>
+    read: (mapping: LogMapping<string>, context: LogContext) =>
       ask({ ask: 'read', mapping, context }) as Promise<LogPreview | Refusal>,
   }
 }

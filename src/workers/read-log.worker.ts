@@ -6,7 +6,7 @@ import { readLog } from '#shared/readings/read.ts'
 
 export type LogRequest =
   | { id: number; ask: 'inspect'; bytes: Uint8Array }
-  | { id: number; ask: 'read'; mapping: LogMapping; context: LogContext }
+  | { id: number; ask: 'read'; mapping: LogMapping<string>; context: LogContext }
 
 /** The first rows with content, their issues, and the sum of all: a long log itself stays in the worker. */
 export type LogPreview = Pick<LogReading, 'ok' | 'rows' | 'issues' | 'summary'>
@@ -21,7 +21,7 @@ function inspect(bytes: Uint8Array): LogInspection | Refusal {
   return inspectLog(text)
 }
 
-function preview(mapping: LogMapping, context: LogContext): LogPreview | Refusal {
+function preview(mapping: LogMapping<string>, context: LogContext): LogPreview | Refusal {
   const reading = readLog(text, mapping, context)
   if (!reading.ok) return reading
   const first = reading.rows.findIndex(({ row }) => row >= mapping.firstDataRow)

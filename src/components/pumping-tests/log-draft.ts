@@ -52,7 +52,8 @@ export function formOf({ draft, questions }: LogInspection): LogForm {
   }
 }
 
-function timeOf(form: LogForm) {
+/** How the times are to be read. */
+export function timeOf(form: LogForm) {
   const { timeKind, timeColumn: column, timeUnit: unit, zero_s, dateColumn, dateOrder, zone } = form
   return timeKind === 'elapsed'
     ? { kind: timeKind, column, unit, zero_s }

@@ -1,8 +1,7 @@
 import type { KindWorkbenchInputs, WorkbenchInputs } from '#shared/contracts/analyses.ts'
 import type { PumpingTest } from '#shared/contracts/pumping-tests.ts'
 import type { UnitSystem } from '#shared/quantities/systems.ts'
-import type { ReadingCode } from '#shared/readings/codes.ts'
-import { readingIssueText } from '#shared/words/readings.ts'
+import { inputProblemText } from '#shared/words/input-problems.ts'
 
 export interface InputProblem {
   well: string
@@ -17,6 +16,5 @@ export const problemsOf = (
 ): InputProblem[] =>
   problems.map(({ wellId, code, params }) => ({
     well: wells.find((well) => String(well.wellId) === wellId)?.code ?? wellCode,
-    // Codes of the readings travel as plain strings.
-    text: readingIssueText(code as ReadingCode, params, units),
+    text: inputProblemText(code, params, units),
   }))
