@@ -1,5 +1,5 @@
 import { emptyChecklist, isRecorded, type TestChecklist } from '#shared/contracts/test-checklist.ts'
-import { unitSystemById, defaultUnitSystemId } from '#shared/quantities/systems.ts'
+import type { UnitSystem } from '#shared/quantities/systems.ts'
 import { asksDisposalDistance, asksTrendTime, checklistLines } from '#shared/words/test-checklist.ts'
 
 /** The checklist of a saved test, to be changed. */
@@ -17,8 +17,8 @@ export function checklistOf(form: TestChecklist): TestChecklist | null {
 }
 
 /** One line for telling two versions of a checklist apart. */
-export const checklistText = (form: TestChecklist): string =>
-  checklistLines(form, unitSystemById(defaultUnitSystemId))
+export const checklistText = (form: TestChecklist, units: UnitSystem): string =>
+  checklistLines(form, units)
     .filter(({ recorded }) => recorded)
     .map(({ label, text }) => `${label}: ${text.toLowerCase()}`)
     .join('; ') || '–'
