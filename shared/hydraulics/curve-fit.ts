@@ -1,6 +1,7 @@
 import { lagOneAutocorrelation } from '#shared/numerics/autocorrelation.ts'
 import { correlatedCovariance, type CorrelatedCovariance } from '#shared/numerics/correlated-residuals.ts'
 import type { ResidualSeries } from '#shared/numerics/fading-noise.ts'
+import type { LeastSquaresProblem } from '#shared/numerics/least-squares-problem.ts'
 import type { RobustFit } from '#shared/numerics/robust-least-squares.ts'
 import type {
   AnalysisInputs,
@@ -22,6 +23,7 @@ import {
 } from './parameter-estimate.ts'
 import type { OtherSource } from './other-wells.ts'
 import type { ResponsePlace } from './place.ts'
+import { profiledEstimate } from './profiled-estimate.ts'
 import type { RateHistory } from './rates.ts'
 import type { Selected } from './selection.ts'
 import type { Solution } from './solution.ts'
@@ -39,6 +41,7 @@ export interface Fitted {
   /** Other pumping wells, as each well feels them. */
   others: OtherSource[][]
   logarithmic: boolean
+  problem: LeastSquaresProblem
   fit: RobustFit
 }
 
@@ -113,16 +116,22 @@ export function curveEstimate(fitted: Fitted, known: LogUncertainty[], id: strin
 /** The unknowns beside T and the storage that is reported as S. */
 export function otherEstimates(fitted: Fitted, known: LogUncertainty[], reported: readonly string[]): OtherEstimate[] {
   return fitted.solution.unknowns.flatMap((unknown, k) =>
-    reported.includes(unknown.id)
-      ? []
-      : [otherEstimate(unknown, fitted.fit.parameters[k] as number, known[k] as LogUncertainty)],
+    reported.includes(unknown.id) ? [] : [otherEstimate(fitted, unknown, k, known[k] as LogUncertainty)],
   )
 }
 
-function otherEstimate({ id, scale }: Unknown, value: number, known: LogUncertainty): OtherEstimate {
-  const estimate =
-    scale === 'log' ? parameterEstimate(value, known, UNDETERMINED_FACTOR.S) : linearEstimate(value, known)
-  return { id, value, low: estimate.low, high: estimate.high, determined: estimate.determined }
+function otherEstimate(
+  { fit, problem, options }: Fitted,
+  { id, scale }: Unknown,
+  index: number,
+  known: LogUncertainty,
+): OtherEstimate {
+  const value = fit.parameters[index] as number
+  const onLine = () =>
+    // A curve laid by hand is at no minimum, from which a profile could rise.
+    options.match ? linearEstimate(value, known) : profiledEstimate(problem, fit, index, known)
+  const { low, high, determined } = scale === 'log' ? parameterEstimate(value, known, UNDETERMINED_FACTOR.S) : onLine()
+  return { id, value, low, high, determined }
 }
 
 /**

@@ -170,7 +170,7 @@ function fit(
     const result = options.match
       ? { ...laidFit(problem, laidParameters(options.match, solution)), limit: null }
       : searched(problem, options, solution.guess({ inputs, wells, history }))
-    return { inputs, options, solution, history, wells, places, others, logarithmic, fit: result }
+    return { inputs, options, solution, history, wells, places, others, logarithmic, problem, fit: result }
   } catch (error) {
     if (error instanceof RangeError) throw new AnalysisError('analysis/no-fit')
     throw error

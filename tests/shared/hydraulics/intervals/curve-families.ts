@@ -41,14 +41,17 @@ function curveFamily(synthetic: CurveTest): Family {
   )
   const storage = solution.unknowns.findIndex(({ id }) => id === (solution.storage?.unknown ?? 'S'))
   const [T = NaN, S = NaN] = [parameters[0], parameters[storage]]
+  // Skin, whose interval is made otherwise than those on a log scale.
+  const others = solution.unknowns.flatMap(({ id, scale }, k) => (scale === 'linear' ? [[id, parameters[k]]] : []))
   return {
     id: synthetic.id ?? solution.id,
     laplace,
-    truth: { T, S },
+    truth: { T, S, ...(Object.fromEntries(others) as Record<string, number>) },
     counts: countsOf(inputs),
     find: (noise) => {
-      const { T: foundT, S: foundS } = method.run(withNoise(exact, noise, sigma_m), options)
-      return { T: foundT, S: foundS }
+      const outcome = method.run(withNoise(exact, noise, sigma_m), options)
+      const further = (outcome.others ?? []).map((other) => [other.id, other] as const)
+      return { ...Object.fromEntries(further), T: outcome.T, S: outcome.S }
     },
   }
 }
