@@ -7,6 +7,12 @@ import {
 } from './least-squares-problem.ts'
 import { solveSymmetric } from './small-matrix.ts'
 
+/**
+ * Farthest step in ln of an unknown. A longer one, where a drawdown hardly answers to leakage or storage, ends where it
+ * does not answer at all and no way leads back.
+ */
+const FARTHEST_STEP = 1
+
 /** Where a search stands; `x` are transformed parameters. */
 export interface State {
   x: number[]
@@ -38,15 +44,22 @@ export function dampedStep(problem: LeastSquaresProblem, state: State, damping: 
       : []
   const target = [...state.x]
   if (!solved) return null
-  free.forEach((k, i) => (target[k] = (target[k] as number) + (solved[i] as number)))
+  free.forEach((k, i) => (target[k] = (target[k] as number) + trusted(unknownAt(problem, k), solved[i] as number)))
   const x = project(target, problem)
   const delta = x.map((value, k) => value - (state.x[k] as number))
   const promised = delta.reduce((sum, d, i) => {
     const curved = delta.reduce((inner, e, j) => inner + ((normal[i] as number[])[j] as number) * e, 0)
     return sum - d * (2 * (gradient[i] as number) + curved)
   }, 0)
+  // A step cut short in some unknowns may lead uphill; with more damping it turns downhill.
+  const isCut = free.some((k, i) => trusted(unknownAt(problem, k), solved[i] as number) !== solved[i])
+  if (isCut && !(promised > 0)) return null
   return { x, promised, length: Math.max(0, ...delta.map(Math.abs)) }
 }
+
+/** The step of one unknown, no longer than the model's slope can be trusted; the others take theirs all the same. */
+const trusted = ({ scale }: FitUnknown, step: number) =>
+  scale === 'log' ? Math.max(-FARTHEST_STEP, Math.min(FARTHEST_STEP, step)) : step
 
 export function normalEquations({ residuals, jacobian }: Pick<State, 'residuals' | 'jacobian'>, size: number) {
   const gradient = new Array<number>(size).fill(0)

@@ -2,12 +2,36 @@ import { describe, expect, it } from 'vitest'
 import type { Interval } from '#shared/hydraulics/analysis.ts'
 import { curveMethod } from '#shared/hydraulics/curve-method.ts'
 import { leakyStorage } from '#shared/hydraulics/solutions/leaky-storage.ts'
-import { leaky } from '#shared/hydraulics/solutions/leaky.ts'
+import { curveProblem } from '#shared/hydraulics/curve-problem.ts'
+import { leaky, leakyDrawdown } from '#shared/hydraulics/solutions/leaky.ts'
 import { partialPenetration } from '#shared/hydraulics/solutions/partial-penetration.ts'
+import { levenbergMarquardt } from '#shared/numerics/levenberg-marquardt.ts'
 import reference from '../../reference/leaky-fits.json'
-import { makeInputs, makeOptions, makeSeries, relative, valueOf } from './make-inputs.ts'
+import { makePlace } from '../../support/place.ts'
+import { makeNoise } from '../numerics/make-noise.ts'
+import { DAY, logSpaced, makeInputs, makeOptions, makeSeries, relative, valueOf } from './make-inputs.ts'
 
 const interval = ([top_m = NaN, bottom_m = NaN]: number[]): Interval => ({ top_m, bottom_m })
+
+describe('A search for leakage from one start', () => {
+  const truth = [5e-3, 2e-4, 200] as const
+  const elapsed_s = logSpaced(40, 60, DAY)
+  const noise = makeNoise(1, elapsed_s.length)
+  const drawdown_m = elapsed_s.map((t, i) => leakyDrawdown(0.01, truth, 50, t) + 0.005 * (noise[i] as number))
+  const readings = [{ place: makePlace({ distance_m: 50 }), elapsed_s, drawdown_m }]
+  const problem = curveProblem(leaky, readings, [{ start_s: 0, change_m3_s: 0.01 }], false)
+  const factors = [0.1, 1, 10]
+  const starts = factors.flatMap((T) => factors.flatMap((S) => factors.map((B) => [T, S, B])))
+
+  it('ends at the least squares from ten times off in T, S and B, up or down', () => {
+    const best = levenbergMarquardt(problem, { starts: [[...truth]] })
+    expect(relative(best.parameters[0] as number, truth[0])).toBeLessThan(0.05)
+    for (const start of starts) {
+      const { objective } = levenbergMarquardt(problem, { starts: [start.map((factor, k) => factor * truth[k]!)] })
+      expect(relative(objective, best.objective)).toBeLessThan(1e-9)
+    }
+  })
+})
 
 describe.each([leaky, leakyStorage, partialPenetration])('fit of $id', (solution) => {
   const { t, s, parameters, objective, lnCovariance } =
