@@ -33,7 +33,7 @@ test('Readings are corrected by an uploaded barometer, the analysis says so, and
   page,
   watch,
 }) => {
-  watch.expect(/400/)
+  watch.expect(/400|409/)
   await visitAs(page, 'analyst')
   const series = await openTest(page)
   const panel = page.getByRole('region', { name: 'Corrections', exact: true })
