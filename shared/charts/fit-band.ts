@@ -17,7 +17,10 @@ export interface Fit {
 const parametersOf = ({ extras }: AnalysisResult) =>
   Object.keys(extras).filter((name) => name === 'slope_m' || name === 'intercept_m' || name.startsWith('fitted_'))
 
-/** A line or a curve laid by hand has no scatter of its own, and a fit of logarithms, or by Huber, weighs readings unlike this band. */
+/**
+ * A line or a curve laid by hand has no scatter of its own, and a fit of logarithms, or by Huber, weighs readings unlike
+ * this band.
+ */
 const hasBand = ({ options, result }: Fit) =>
   !options.line &&
   !options.match &&

@@ -32,10 +32,12 @@ const inputs: AnalysisInputs = makeInputs({
 })
 
 const barrier: ChosenBoundary = { kind: 'barrier', distance_m: null, bearing_deg: 90 }
+const streamBehind: ChosenBoundary = { kind: 'recharge', distance_m: null, bearing_deg: 270 }
 
 const cases: { solution: Solution; parameters: number[]; boundaries?: ChosenBoundary[]; runs?: number }[] = [
   { solution: theis, parameters: [5e-3, 2e-4] },
   { solution: theis, parameters: [5e-3, 2e-4, 150], boundaries: [barrier] },
+  { solution: theis, parameters: [5e-3, 2e-4, 150, 300], boundaries: [barrier, streamBehind], runs: 2 },
   { solution: leaky, parameters: [5e-3, 2e-4, 100] },
   { solution: leakyStorage, parameters: [5e-3, 2e-4, 80] },
   { solution: partialPenetrationIsotropic, parameters: [5e-3, 2e-4] },
@@ -50,7 +52,8 @@ for (const { solution, parameters, boundaries = [], runs = 10 } of cases) {
   const exact = withDrawdown(boundedSolution(solution, boundaries), parameters, inputs, (i) => 0.005 * (noise[i] ?? 0))
   const method = curveMethod(solution)
   const options = makeOptions({ boundaries, readingsPerCycle: null })
-  const name = boundaries.length > 0 ? `${solution.id} with a fitted barrier` : solution.id
+  const edges = boundaries.map(({ kind }) => (kind === 'barrier' ? 'barrier' : 'stream')).join(' and ')
+  const name = edges ? `${solution.id} with the distance to ${edges} fitted` : solution.id
   const spent = medianMilliseconds(runs, () => void method.run(exact, options))
   report('solution-fits', `median time of an analysis of 1,000 readings, ${name}`, spent, 'ms')
 }
