@@ -48,7 +48,20 @@ export function forestPlot(estimates: readonly ForestEstimate[]): ForestPlot | n
       cutHigh: high > most,
       determined,
     }))
-  return { marks, ticks: ticksOf(axis).map((value) => ({ share: shareOf(axis, value), text: tickText(value) })) }
+  return { marks, ticks: apart(ticksOf(axis).map((value) => ({ share: shareOf(axis, value), text: tickText(value) }))) }
+}
+
+/** Width of a letter of the tick labels in the narrowest plot, as a share of it. */
+const LETTER = 0.026
+
+/** Leaves out what would be written over its neighbour. */
+function apart(ticks: ForestPlot['ticks']): ForestPlot['ticks'] {
+  let last: ForestPlot['ticks'][number] | null = null
+  return ticks.filter((tick) => {
+    const fits = last === null || tick.share - last.share >= (LETTER * (tick.text.length + last.text.length + 1)) / 2
+    if (fits) last = tick
+    return fits
+  })
 }
 
 /** Digits of every power of ten that are written, coarse first. */

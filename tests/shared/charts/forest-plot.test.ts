@@ -44,6 +44,13 @@ describe('A forest plot', () => {
     }
   })
 
+  it('writes no tick over another, however long its number', () => {
+    const { ticks } = forestPlot([makeEstimate({ value: 1.2e-4, low: 7.7e-5, high: 2e-4 })])!
+    expect(ticks.length).toBeGreaterThan(1)
+    for (const [i, { share, text }] of ticks.slice(1).entries())
+      expect(share - ticks[i]!.share).toBeGreaterThan(0.026 * text.length)
+  })
+
   it('has enough ticks to read by where estimates agree', () => {
     const { ticks } = forestPlot([makeEstimate({ value: 365, low: 330, high: 450 })])!
     expect(ticks.map(({ text }) => text)).toEqual(['400', '500', '600'])
