@@ -13,7 +13,8 @@ interface CorrectOptions {
 /**
  * Takes corrections off the readings of one well. What is given comes off first; everything that is learned is learned
  * together, by one regression on the readings before pumping, so that a trend is not taken for air pressure and a daily
- * wave of air pressure not for a tide. Effects that follow a series count from the start of pumping.
+ * wave of air pressure not for a tide. Effects that follow a series count from the start of pumping, tides by their
+ * periods about their mean.
  * @throws AnalysisError for readings or a series that do not suffice
  */
 export function correctReadings(
