@@ -36,6 +36,7 @@ describe('95 % intervals of T', () => {
     ['white noise, a 72 h one-minute log', minutes, 0],
     ['noise that lasts 50 min (φ 0.98), a 72 h one-minute log', minutes, 0.98],
     ['noise alike from reading to reading (φ 0.7), 100 readings', logSpaced(100, 60, DAY), 0.7],
+    ['noise that lasts a quarter of a short log (φ 0.9), 40 readings', logSpaced(40, 60, DAY), 0.9],
   ])('of a Theis fit hold the truth: %s', (_, elapsed_s, phi) => {
     expect(coverage('theis', elapsed_s, phi)).toBeGreaterThanOrEqual(LOW)
   })
