@@ -67,6 +67,7 @@ export function createServices(deps: Deps) {
   const analyses: AnalysesService = createAnalysesService(
     deps,
     createInputsService({ pumpingTests, streams, boundaries, wells, corrections, otherWells }),
+    { removeReportedTest: pumpingTests.removeReported },
   )
   const { markInputsChanged, isInUse } = analyses
   return {

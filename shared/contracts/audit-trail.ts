@@ -13,7 +13,7 @@ export type AuditAction =
   | `other-wells/${'create' | 'edit' | 'delete'}`
   | `outside-series/${'add' | 'delete' | 'replace'}`
   | `people/${'edit' | 'invite' | 'invite-again'}`
-  | `pumping-tests/${'create' | 'edit' | 'report'}`
+  | `pumping-tests/${'create' | 'delete' | 'edit' | 'report'}`
   | `readings/${'add' | 'decide' | 'delete'}`
   | 'region/edit'
   | `reviews/${'accept' | 'return'}`

@@ -27,6 +27,7 @@ export const auditActionWords: Record<AuditAction, string> = {
   'people/invite': 'Invited a person',
   'people/invite-again': 'Sent an invitation again',
   'pumping-tests/create': 'Entered a pumping test',
+  'pumping-tests/delete': 'Took out a test of which only values were known',
   'pumping-tests/edit': 'Changed a pumping test',
   'pumping-tests/report': 'Entered a test of which only values are known',
   'readings/add': 'Uploaded a log of readings',

@@ -86,7 +86,14 @@ export function analysesRoutes({ analyses }: Services, deps: Deps): Route[] {
       ({ viewer, params: { id }, body }) => analyses.update(viewer, id, body),
     ),
     route(
-      { method: 'delete', path: one, action: 'analyses/create', summary: 'Delete a draft', params, response: nothing },
+      {
+        method: 'delete',
+        path: one,
+        action: 'analyses/create',
+        summary: 'Delete a draft, or a reported value that waits for review',
+        params,
+        response: nothing,
+      },
       ({ viewer, params: { id } }) => analyses.remove(viewer, id),
     ),
     route(

@@ -21,6 +21,7 @@ import { everything } from './everything.ts'
 import type { createInputsService } from './inputs.service.ts'
 import { checkDraft, lockDraft } from './lock-draft.ts'
 import { readInputs } from './packed-inputs.repository.ts'
+import { createRemoval, type RemovalNeeds } from './removal.ts'
 import { reportedFacts, reportedResult, type ReportedValue } from './reported.ts'
 import { createSubmissions } from './submissions.ts'
 import { analysisView, type Surroundings } from './view.ts'
@@ -28,7 +29,7 @@ import { wellLossView } from './well-loss-view.ts'
 import { isWellSeen, listStepAnalyses } from './well-losses.repository.ts'
 import { withoutHiddenWells } from './without-hidden-wells.ts'
 
-export function createAnalysesService(deps: Deps, inputs: ReturnType<typeof createInputsService>) {
+export function createAnalysesService(deps: Deps, inputs: ReturnType<typeof createInputsService>, needs: RemovalNeeds) {
   const { db } = deps.connection
   const { now, workers } = deps
 
@@ -107,6 +108,7 @@ export function createAnalysesService(deps: Deps, inputs: ReturnType<typeof crea
   const { submit, takeBack, repeat, lockForReview, settle } = createSubmissions(deps, { inputs, view })
 
   return {
+    ...createRemoval(deps, needs),
     submit,
     takeBack,
     repeat,
@@ -162,7 +164,7 @@ export function createAnalysesService(deps: Deps, inputs: ReturnType<typeof crea
     /** Enters a value that came down without readings, submitted; it still needs a reviewer. */
     report: (viewer: Viewer, testId: number, value: ReportedValue) =>
       inTransaction(deps, async (tx) => {
-        if (!(await inputs.maySee(tx, viewer, testId))) throw notFound()
+        if (!(await inputs.hold(tx, viewer, testId))) throw notFound()
         const { T: _T, K: _K, S, storageClass, ...known } = value
         const snapshot = { version: 1 as const, kind: 'reported' as const, ...known }
         const result = reportedResult(value, evidenceOf(reportedFacts(known, S === null ? null : storageClass)))
@@ -210,14 +212,6 @@ export function createAnalysesService(deps: Deps, inputs: ReturnType<typeof crea
         return view(tx, viewer, id)
       })
     },
-
-    remove: (viewer: Viewer, id: number) =>
-      inTransaction(deps, async (tx) => {
-        await lockDraft(tx, viewer, id)
-        await repository.deleteAnalysis(tx, id)
-        await recordAudit(tx, { viewer, at: now(), action: 'analyses/delete', subject: 'analysis', subjectId: id })
-        return {}
-      }),
 
     /** The values stood for by an analysis that was repeated from its own snapshot and accepted. */
     async valuesOf(executor: Executor, id: number) {

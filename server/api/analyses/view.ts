@@ -15,9 +15,9 @@ const isTheirs = (viewer: Viewer, { createdBy }: FoundAnalysis['row']): boolean 
 export const mayChange = (viewer: Viewer, row: FoundAnalysis['row']): boolean =>
   row.state === 'draft' && isTheirs(viewer, row)
 
-/** A value that was reported has no draft to go back to: a reviewer returns it. */
+/** An analysis is a draft again then; a reported value, which has none, is deleted. */
 export const mayTakeBack = (viewer: Viewer, row: FoundAnalysis['row']): boolean =>
-  row.state === 'submitted' && row.method !== 'reported' && isTheirs(viewer, row)
+  row.state === 'submitted' && isTheirs(viewer, row)
 
 /** Nobody reviews an analysis in which they took part. */
 const mayDecide = (viewer: Viewer, { row, tookPart }: FoundAnalysis): boolean =>

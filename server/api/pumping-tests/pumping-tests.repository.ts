@@ -59,6 +59,13 @@ export async function updatePumpingTest(
   return result.affectedRows === 1
 }
 
+/** A test without readings, rates and analyses, with its wells and units. */
+export async function deleteBareTest(executor: Executor, id: number): Promise<void> {
+  await executor.delete(testWells).where(eq(testWells.pumpingTestId, id))
+  await executor.delete(testUnits).where(eq(testUnits.pumpingTestId, id))
+  await executor.delete(pumpingTests).where(eq(pumpingTests.id, id))
+}
+
 /** Wells of a test that the viewer may see, with code and place; the pumped well first. */
 export function listTestWells(executor: Executor, viewer: Viewer, testId: number) {
   return executor

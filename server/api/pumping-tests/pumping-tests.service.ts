@@ -175,6 +175,17 @@ export function createPumpingTestsService(deps: Deps, { wells, markInputsChanged
         return { id }
       }),
 
+    /** A test that was entered for its values alone is nothing without them; what it was stays in the audit trail. */
+    async removeReported(executor: Executor, viewer: Viewer, id: number): Promise<void> {
+      const row = await repository.lockPumpingTest(executor, viewer, id)
+      if (row?.kind !== 'reported') return
+      await repository.deleteBareTest(executor, id)
+      const { wellId, startAt, startPrecision, source } = row
+      const details = { wellId, startAt, startPrecision, source }
+      const about = { subject: 'pumping-test', subjectId: id, details }
+      await recordAudit(executor, { viewer, at: now(), action: 'pumping-tests/delete', ...about })
+    },
+
     /** Who may see the test stays as it is: showing and hiding is the stewards' business. */
     update: (viewer: Viewer, id: number, { rowVersion, ...changed }: PumpingTestUpdate) =>
       inTransaction(deps, async (tx) => {

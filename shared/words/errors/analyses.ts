@@ -41,7 +41,13 @@ export const analysisErrors = {
   },
   'analysis/reported-stays': {
     status: 409,
-    sentence: () => 'A reported value has no draft to go back to. A reviewer can return it.',
+    sentence: () =>
+      'A reported value has no draft to go back to. Delete it while nobody has decided about it, or a reviewer returns it.',
+  },
+  'analysis/reported-decided': {
+    status: 409,
+    sentence: () =>
+      'A reviewer has decided about this reported value, so that it stays on record. A steward can withdraw an accepted one from the regional table.',
   },
   'analysis/no-transmissivity': {
     status: 400,

@@ -1,8 +1,9 @@
-import { and, eq } from 'drizzle-orm'
+import { and, asc, eq } from 'drizzle-orm'
 import { beforeAll, describe, expect, it } from 'vitest'
 import type { Analysis } from '#shared/contracts/analyses.ts'
+import type { Viewer } from '#shared/contracts/permissions.ts'
 import type { Problem } from '#shared/contracts/problem.ts'
-import { auditTrail } from '../../../server/db/schema/index.ts'
+import { auditTrail, testUnits, testWells } from '../../../server/db/schema/index.ts'
 import {
   accept,
   enterTest,
@@ -12,8 +13,8 @@ import {
   submitDraft,
 } from '../../support/analysed-test.ts'
 import { useApp, type SignedIn } from '../../support/app.ts'
-import { makeRegion, makeUnit, saveAnalysis } from '../../support/domain.ts'
-import { keepBooks, wholly } from '../../support/values.ts'
+import { createWell, makeRegion, makeUnit, saveAnalysis } from '../../support/domain.ts'
+import { keepBooks, reportAt, wholly } from '../../support/values.ts'
 
 const tested = useApp()
 let analyst: SignedIn
@@ -113,7 +114,84 @@ describe('what cannot be taken back', () => {
   it('is a reported value, which has no draft', async () => {
     const { analysisId } = await (await keepBooks(tested)).report({ units: wholly(unitId) })
     const reported = await readAnalysis(steward, analysisId)
-    expect(reported.mayTakeBack).toBe(false)
     expect(codeOf(await takeBack(steward, reported).expect(409))).toBe('analysis/reported-stays')
+  })
+})
+
+describe('a reported value that waits for review', () => {
+  const remove = (person: SignedIn, id: number) => person.delete(`/api/analyses/${id}`)
+  const entriesAbout = (subject: string, subjectId: number) =>
+    tested.deps.connection.db
+      .select()
+      .from(auditTrail)
+      .where(and(eq(auditTrail.subject, subject), eq(auditTrail.subjectId, subjectId)))
+      .orderBy(asc(auditTrail.id))
+
+  /** Entered by an analyst of old reports. */
+  async function reported() {
+    const { services } = await keepBooks(tested)
+    const person: Viewer = { id: analyst.id, name: 'Analyst', role: 'analyst', mayReview: false }
+    const wellId = await createWell(steward)
+    const overrides = { units: wholly(unitId), visibility: 'internal' as const }
+    return { wellId, person, services, ...(await reportAt(services, person, wellId, overrides)) }
+  }
+
+  it('is taken back by the person who entered it, with the test that is known for nothing else', async () => {
+    const { testId, analysisId, wellId } = await reported()
+    expect((await readAnalysis(other, analysisId)).mayTakeBack).toBe(false)
+    expect(codeOf(await remove(other, analysisId).expect(403))).toBe('analysis/not-yours')
+    expect((await readAnalysis(analyst, analysisId)).mayTakeBack).toBe(true)
+    await remove(analyst, analysisId).expect(200)
+    await analyst.get(`/api/analyses/${analysisId}`).expect(404)
+    await analyst.get(`/api/pumping-tests/${testId}`).expect(404)
+    const well = (await analyst.get(`/api/wells/${wellId}`).expect(200)).body as { tests: unknown[] }
+    expect(well.tests).toEqual([])
+    for (const table of [testWells, testUnits])
+      expect(await tested.deps.connection.db.$count(table, eq(table.pumpingTestId, testId))).toBe(0)
+    await remove(analyst, analysisId).expect(404)
+  })
+
+  it('stays in the audit trail with its value and source', async () => {
+    const { testId, analysisId } = await reported()
+    await remove(analyst, analysisId).expect(200)
+    expect((await entriesAbout('analysis', analysisId)).at(-1)).toMatchObject({
+      actorId: analyst.id,
+      action: 'analyses/take-back',
+      details: { method: 'reported', testId, rationale: 'Old report', result: { T: { value: 1e-3 } } },
+    })
+    expect((await entriesAbout('pumping-test', testId)).at(-1)).toMatchObject({
+      actorId: analyst.id,
+      action: 'pumping-tests/delete',
+      details: { source: 'Old report' },
+    })
+  })
+
+  it('leaves the test alone while another value of it is on record', async () => {
+    const { testId, analysisId, services, person } = await reported()
+    const value = { T: 2e-3, S: null, K: null, storageClass: null, origin: 'legacy-reviewed' as const }
+    const facts = { observationWell: true, aquifer: 'confined' as const, source: 'A second report' }
+    const second = await services.analyses.report(person, testId, { ...value, ...facts })
+    await remove(analyst, analysisId).expect(200)
+    await analyst.get(`/api/pumping-tests/${testId}`).expect(200)
+    expect((await readAnalysis(analyst, second.id)).state).toBe('submitted')
+  })
+
+  it('is a matter of record once it was decided about', async () => {
+    const { analysisId } = await reported()
+    await accept(reviewer, await readAnalysis(reviewer, analysisId)).expect(200)
+    expect((await readAnalysis(analyst, analysisId)).mayTakeBack).toBe(false)
+    expect(codeOf(await remove(analyst, analysisId).expect(409))).toBe('analysis/reported-decided')
+    expect(codeOf(await remove(steward, analysisId).expect(409))).toBe('analysis/reported-decided')
+  })
+
+  it('is either taken back or accepted when both happen at once', async () => {
+    const { analysisId } = await reported()
+    const analysis = await readAnalysis(reviewer, analysisId)
+    const answers = await Promise.all([remove(analyst, analysisId), accept(reviewer, analysis)])
+    const [removed, accepted] = answers.map(({ status }) => status)
+    expect([
+      [200, 404],
+      [409, 200],
+    ]).toContainEqual([removed, accepted])
   })
 })
