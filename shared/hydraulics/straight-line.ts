@@ -1,7 +1,6 @@
 import { lagOneAutocorrelation } from '#shared/numerics/autocorrelation.ts'
 import { correlatedCovariance } from '#shared/numerics/correlated-residuals.ts'
 import { describeLine, lineFreedom, linearRegression, type LineFit } from '#shared/numerics/linear-regression.ts'
-import { invertSymmetric } from '#shared/numerics/small-matrix.ts'
 import { AnalysisError, type FitSummary, type HandLine, type Residual } from './analysis.ts'
 import type { Selected } from './selection.ts'
 
@@ -83,16 +82,26 @@ export function regressionLine(
   }
 }
 
+/** Found for the height at the middle of the readings, which no unit of x moves, and turned into that of the intercept. */
 function lineCovariance(x: number[], residuals: number[], time_s: number[] | undefined) {
-  const jacobian = x.flatMap((value) => [1, value])
-  const sumX = x.reduce((sum, value) => sum + value, 0)
-  const sumXX = x.reduce((sum, value) => sum + value * value, 0)
-  const { inverse } = invertSymmetric([
-    [x.length, sumX],
-    [sumX, sumXX],
-  ])
+  const middle = x.reduce((sum, value) => sum + value, 0) / x.length
+  const jacobian = x.flatMap((value) => [1, value - middle])
+  const squares = x.reduce((sum, value) => sum + (value - middle) ** 2, 0)
+  const inverse = [
+    [1 / x.length, 0],
+    [0, 1 / squares],
+  ]
   const axes = time_s ? [time_s, time_s.map(Math.log)] : []
-  return correlatedCovariance([{ residuals, jacobian, axes }], inverse)
+  const { covariance, effectiveNumber } = correlatedCovariance([{ residuals, jacobian, axes }], inverse)
+  const [[height = NaN, both = NaN] = [], [, slope = NaN] = []] = covariance
+  const joint = both - middle * slope
+  return {
+    covariance: [
+      [height - 2 * middle * both + middle * middle * slope, joint],
+      [joint, slope],
+    ],
+    effectiveNumber,
+  }
 }
 
 /** Residuals of a line through the readings of one well. */

@@ -39,7 +39,7 @@ interface Judged {
  * Residuals are described as white noise plus an Ornstein–Uhlenbeck process along one of the axes. Every description on
  * a grid is weighed by its restricted likelihood. With the covariance NJ'RJN·σ² of ordinary least squares each gives a
  * Student's t for a parameter, and the mixture of all is what is known of it: the covariance is averaged and then scaled
- * so that the interval of a parameter is, on the mean, the mixture's. One lag-1 autocorrelation is not enough: the readings of a logger, thinned logarithmically, lie
+ * so that the interval of each parameter is the mixture's. One lag-1 autocorrelation is not enough: the readings of a logger, thinned logarithmically, lie
  * close together early and far apart late, and 95 % intervals for a 72 h one-minute log would cover 60 % (see the tests).
  * @param normalInverse N = (J'J)⁻¹ over all series
  * Sources: Patterson & Thompson 1971 (restricted likelihood); Hoeting et al. 1999 (averaging).
@@ -55,12 +55,13 @@ export function correlatedCovariance(series: ResidualSeries[], normalInverse: nu
   const averaged = normalInverse.map((row, i) =>
     row.map((_, j) => judged.reduce((sum, one, k) => sum + shareOf(k) * at(one.covariance, i, j), 0)),
   )
-  // Variance per direction in units of independent residuals: the same however the unknowns are combined.
-  const information = invertSymmetric(normalInverse).inverse
-  const sdOf = (matrix: number[][]) => Math.sqrt(product(information, matrix) / normalInverse.length)
-  const parts = judged.map((one, k) => ({ share: shareOf(k), sd: sdOf(one.covariance) }))
-  const scale = scaleOf(parts, sdOf(averaged), countOf(series) - normalInverse.length)
-  const covariance = averaged.map((row) => row.map((value) => value * scale * scale))
+  const scales = normalInverse.map((_, i) => {
+    const parts = judged.map((one, k) => ({ share: shareOf(k), sd: Math.sqrt(at(one.covariance, i, i)) }))
+    return scaleOf(parts, Math.sqrt(at(averaged, i, i)), countOf(series) - normalInverse.length)
+  })
+  const covariance = averaged.map((row, i) =>
+    row.map((value, j) => value * (scales[i] as number) * (scales[j] as number)),
+  )
   const shares = normalInverse.map((_, k) => at(white.covariance, k, k) / at(covariance, k, k))
   return { covariance, effectiveNumber: countOf(series) * Math.min(1, ...shares.filter(Number.isFinite)) }
 }
@@ -114,10 +115,6 @@ function judge(series: ResidualSeries[], normalInverse: number[][], noise: Fadin
 
 const quadratic = (matrix: number[][], vector: number[]) =>
   vector.reduce((sum, a, i) => sum + vector.reduce((inner, b, j) => inner + a * b * at(matrix, i, j), 0), 0)
-
-/** Trace of a product of symmetric matrices. */
-const product = (one: number[][], other: number[][]) =>
-  one.reduce((sum, row, i) => sum + row.reduce((inner, value, j) => inner + value * at(other, i, j), 0), 0)
 
 function sandwich(outer: number[][], inner: number[][]): number[][] {
   return outer.map((row) =>
