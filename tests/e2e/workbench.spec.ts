@@ -283,6 +283,7 @@ test('A barrier is taken into a curve, drawn on the sketch, and the analyses are
     page.getByRole('img', { name: /Barrier, a barrier of the analysis, lies 250 m to the south-east/ }),
   ).toBeVisible()
 
+  await page.getByRole('tab', { name: 'Comparison' }).click()
   const comparison = page.getByRole('region', { name: 'Comparison', exact: true })
   await expect(comparison.getByRole('row').filter({ hasText: 'Confined aquifer curve' }).first()).toBeVisible()
   await expect(comparison.getByText(/compares fits, not geology/)).toBeVisible()
@@ -297,12 +298,57 @@ test('A barrier is taken into a curve, drawn on the sketch, and the analyses are
   await expectAccessible(page)
 })
 
+test('A curve is laid over the readings by hand, by mouse and keys, and the change is undone', async ({ page }) => {
+  await visitAs(page, 'analyst')
+  await page.goto(await testAddress(page))
+  await page.getByRole('button', { name: 'New analysis' }).click()
+  await page
+    .getByRole('listitem')
+    .filter({ hasText: /^Leaky aquifer curve \(/ })
+    .click()
+  const card = page.getByRole('article', { name: /^Leaky aquifer curve/ })
+  await card.getByRole('button', { name: 'Lay the curve by hand' }).click()
+  await expect(card.getByText(/The curve was laid over the readings by hand/)).toBeVisible()
+  const [T, B] = [
+    card.getByLabel('Transmissivity', { exact: true }),
+    card.getByLabel('Leakage factor', { exact: true }),
+  ]
+  const found = await T.inputValue()
+
+  const curve = page.getByRole('application', { name: 'Curve laid by hand' })
+  const box = (await curve.boundingBox())!
+  await page.mouse.move(box.x + box.width / 2, box.y + box.height / 2)
+  await page.mouse.down()
+  await page.mouse.move(box.x + box.width / 2 + 20, box.y + box.height / 2 + 30, { steps: 6 })
+  await page.mouse.up()
+  await expect.poll(async () => Number(await T.inputValue())).toBeGreaterThan(Number(found))
+  await page.keyboard.press('Control+z')
+  await expect(T).toHaveValue(found)
+  await curve.focus()
+  await page.keyboard.press('Shift+ArrowUp')
+  await expect.poll(async () => Number(await T.inputValue())).toBeLessThan(Number(found))
+  const raised = await T.inputValue()
+  const leakage = Number(await B.inputValue())
+  await card.getByRole('button', { name: 'Leakage factor: next curve up' }).click()
+  await expect.poll(async () => Number(await B.inputValue()) / leakage).toBeCloseTo(10 ** 0.1, 2)
+  await expect(T).toHaveValue(raised)
+  await expectAccessible(page)
+  await card.getByRole('button', { name: 'Save this analysis' }).click()
+  await expect(card.getByRole('button', { name: 'Submit for review' })).toBeVisible()
+  await card.getByRole('button', { name: 'Delete' }).click()
+  await page.getByRole('alertdialog').getByRole('button', { name: 'Delete' }).click()
+  await expect(page.getByText('The draft is deleted.')).toBeVisible()
+})
+
 const pages: Record<string, (address: string) => string> = {
   'list of tests': () => '/pumping-tests',
   'form of a new test': () => '/pumping-tests/new',
   'form of a test': (address) => `${address}/edit`,
   'readings of a test': (address) => `${address}/readings`,
   workbench: (address) => address,
+  'comparison of analyses': (address) => `${address}?part=comparison`,
+  'forecast of a test': (address) => `${address}?part=forecast`,
+  'wells and conditions of a test': (address) => `${address}?part=test`,
 }
 
 for (const [name, pathOf] of Object.entries(pages)) {
