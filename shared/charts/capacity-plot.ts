@@ -1,4 +1,4 @@
-import { AnalysisError } from '#shared/hydraulics/analysis.ts'
+import { AnalysisError } from '#shared/hydraulics/analysis-error.ts'
 import {
   assumedStorage,
   specificCapacityMethod,

@@ -1,5 +1,6 @@
 import type { EChartsOption } from 'echarts'
-import { AnalysisError, type AnalysisInputs } from '#shared/hydraulics/analysis.ts'
+import { AnalysisError } from '#shared/hydraulics/analysis-error.ts'
+import type { AnalysisInputs } from '#shared/hydraulics/analysis.ts'
 import { rateHistory } from '#shared/hydraulics/rates.ts'
 import { distanceDrawing, distancePlot } from './distance-plot.ts'
 import type { Fit } from './fit-band.ts'

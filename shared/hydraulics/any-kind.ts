@@ -1,4 +1,5 @@
-import { AnalysisError, type AnalysisResult, type FittedCurve } from './analysis.ts'
+import { AnalysisError } from './analysis-error.ts'
+import type { AnalysisResult, FittedCurve } from './analysis.ts'
 import { analyse, type MethodId } from './catalogue.ts'
 import {
   analyseKind,

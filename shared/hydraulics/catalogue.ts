@@ -1,11 +1,11 @@
-import {
-  AnalysisError,
-  type AnalysisInputs,
-  type AnalysisOptions,
-  type AnalysisResult,
-  type Finding,
-  type FittedCurve,
-  type ParameterEstimate,
+import { AnalysisError } from './analysis-error.ts'
+import type {
+  AnalysisInputs,
+  AnalysisOptions,
+  AnalysisResult,
+  Finding,
+  FittedCurve,
+  ParameterEstimate,
 } from './analysis.ts'
 import { cooperJacob } from './cooper-jacob.ts'
 import { curveMethod } from './curve-method.ts'

@@ -2,15 +2,8 @@ import type { LeastSquaresProblem } from '#shared/numerics/least-squares-problem
 import { laidFit } from '#shared/numerics/laid-fit.ts'
 import { levenbergMarquardt } from '#shared/numerics/levenberg-marquardt.ts'
 import { robustLeastSquares } from '#shared/numerics/robust-least-squares.ts'
-import {
-  AnalysisError,
-  type AnalysisInputs,
-  type AnalysisOptions,
-  type Finding,
-  type FittedCurve,
-  type MethodOutcome,
-  type Series,
-} from './analysis.ts'
+import { AnalysisError } from './analysis-error.ts'
+import type { AnalysisInputs, AnalysisOptions, Finding, FittedCurve, MethodOutcome, Series } from './analysis.ts'
 import { boundedSolution } from './boundaries/bounded-solution.ts'
 import { casingFinding } from './casing-storage.ts'
 import {

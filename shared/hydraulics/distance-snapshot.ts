@@ -1,4 +1,5 @@
-import { AnalysisError, type AnalysisOptions, type LeftOut } from './analysis.ts'
+import { AnalysisError } from './analysis-error.ts'
+import type { AnalysisOptions, LeftOut } from './analysis.ts'
 import { interpolated } from './interpolate.ts'
 import { meanRate, type RateHistory } from './rates.ts'
 import { largest, type Selected } from './selection.ts'

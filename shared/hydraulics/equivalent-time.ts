@@ -1,4 +1,5 @@
-import { AnalysisError, type AnalysisInputs, type AnalysisOptions } from './analysis.ts'
+import { AnalysisError } from './analysis-error.ts'
+import type { AnalysisInputs, AnalysisOptions } from './analysis.ts'
 import { volumeUntil, type RateHistory } from './rates.ts'
 import { pumpingPhase, selectReadings, type Selected } from './selection.ts'
 import { propagated, regressionLine } from './straight-line.ts'

@@ -1,5 +1,6 @@
 import type { AnalysisInputs, AnalysisOptions } from './analysis.ts'
-import { AnalysisError, type FittedCurve, type MethodOutcome, type ParameterEstimate } from './analysis.ts'
+import { AnalysisError } from './analysis-error.ts'
+import type { FittedCurve, MethodOutcome, ParameterEstimate } from './analysis.ts'
 import { methods } from './catalogue.ts'
 import type { Kind, KindMethod, KindOutcome } from './kind.ts'
 import { limitFindings } from './limits.ts'

@@ -1,4 +1,5 @@
-import { AnalysisError, type Finding } from './analysis.ts'
+import { AnalysisError } from './analysis-error.ts'
+import type { Finding } from './analysis.ts'
 import type { Unknown } from './method.ts'
 
 /** Values of all unknowns of a curve method, by their id, as somebody laid its curve over the readings. */

@@ -1,4 +1,5 @@
-import { AnalysisError, type AnalysisInputs, type ChosenBoundary, type OtherWell, type Series } from './analysis.ts'
+import { AnalysisError } from './analysis-error.ts'
+import type { AnalysisInputs, ChosenBoundary, OtherWell, Series } from './analysis.ts'
 import { boundedSolution } from './boundaries/bounded-solution.ts'
 import type { Unknown } from './method.ts'
 import { placeOf, type ResponsePlace } from './place.ts'

@@ -1,5 +1,6 @@
 import { besselK0, besselK1 } from '#shared/numerics/bessel.ts'
-import { AnalysisError, type Interval } from './analysis.ts'
+import { AnalysisError } from './analysis-error.ts'
+import type { Interval } from './analysis.ts'
 import type { ResponsePlace } from './place.ts'
 
 /** Modes whose K0 is below e^-36 are nothing beside the rest; so many are summed at the most. */

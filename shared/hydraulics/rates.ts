@@ -1,4 +1,5 @@
-import { AnalysisError, type RateStep } from './analysis.ts'
+import { AnalysisError } from './analysis-error.ts'
+import type { RateStep } from './analysis.ts'
 
 /** A change of rate, for superposition. */
 export interface RateIncrement {

@@ -1,4 +1,5 @@
-import { AnalysisError, type AnalysisErrorCode, type AnalysisInputs } from './analysis.ts'
+import { AnalysisError, type AnalysisErrorCode } from './analysis-error.ts'
+import type { AnalysisInputs } from './analysis.ts'
 import type { Method } from './method.ts'
 import { rateHistory } from './rates.ts'
 

@@ -1,13 +1,6 @@
 import { thinLogarithmically } from '#shared/numerics/logarithmic-thinning.ts'
-import {
-  AnalysisError,
-  type AnalysisInputs,
-  type AnalysisOptions,
-  type LeftOut,
-  type LeftOutReason,
-  type Series,
-  type TimeWindow,
-} from './analysis.ts'
+import { AnalysisError } from './analysis-error.ts'
+import type { AnalysisInputs, AnalysisOptions, LeftOut, LeftOutReason, Series, TimeWindow } from './analysis.ts'
 import type { RateHistory } from './rates.ts'
 import { thinnedDrawdown } from './unconfined.ts'
 

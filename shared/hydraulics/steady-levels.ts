@@ -1,4 +1,5 @@
-import { AnalysisError, type Finding } from './analysis.ts'
+import { AnalysisError } from './analysis-error.ts'
+import type { Finding } from './analysis.ts'
 import { largest, type Selected } from './selection.ts'
 import { propagated, regressionLine, type StraightLine } from './straight-line.ts'
 import { radiusOf } from './wells.ts'

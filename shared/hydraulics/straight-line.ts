@@ -1,7 +1,8 @@
 import { lagOneAutocorrelation } from '#shared/numerics/autocorrelation.ts'
 import { correlatedCovariance } from '#shared/numerics/correlated-residuals.ts'
 import { describeLine, lineFreedom, linearRegression, type LineFit } from '#shared/numerics/linear-regression.ts'
-import { AnalysisError, type FitSummary, type HandLine, type Residual } from './analysis.ts'
+import { AnalysisError } from './analysis-error.ts'
+import type { FitSummary, HandLine, Residual } from './analysis.ts'
 import type { Selected } from './selection.ts'
 
 /** A line of drawdown on a logarithmic axis, with its covariance widened for residuals that are not independent. */

@@ -1,4 +1,5 @@
-import { AnalysisError, type AnalysisInputs, type AnalysisOptions, type Finding } from './analysis.ts'
+import { AnalysisError } from './analysis-error.ts'
+import type { AnalysisInputs, AnalysisOptions, Finding } from './analysis.ts'
 
 /** Thinning matters, and its correction is offered, above this share of the saturated thickness. */
 export const THINNING_OFFERED_ABOVE = 0.1

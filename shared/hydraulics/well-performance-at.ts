@@ -1,4 +1,5 @@
-import { AnalysisError, type AnalysisInputs, type ParameterEstimate } from './analysis.ts'
+import { AnalysisError } from './analysis-error.ts'
+import type { AnalysisInputs, ParameterEstimate } from './analysis.ts'
 import { interpolated } from './interpolate.ts'
 import { meanRate, rateHistory } from './rates.ts'
 import { pumpingPhase, selectReadings } from './selection.ts'

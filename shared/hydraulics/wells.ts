@@ -1,4 +1,5 @@
-import { AnalysisError, type Series } from './analysis.ts'
+import { AnalysisError } from './analysis-error.ts'
+import type { Series } from './analysis.ts'
 
 /** Stands in for an unknown radius of the pumped well, where T does not depend on it and S is not reported. */
 const NOMINAL_RADIUS_M = 0.1

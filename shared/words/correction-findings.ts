@@ -1,4 +1,4 @@
-import type { AnalysisErrorCode } from '#shared/hydraulics/analysis.ts'
+import type { AnalysisErrorCode } from '#shared/hydraulics/analysis-error.ts'
 import { correctionName } from './corrections.ts'
 import type { Sentences } from './findings.ts'
 

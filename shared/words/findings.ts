@@ -1,4 +1,5 @@
-import type { AnalysisErrorCode, Finding } from '#shared/hydraulics/analysis.ts'
+import type { AnalysisErrorCode } from '#shared/hydraulics/analysis-error.ts'
+import type { Finding } from '#shared/hydraulics/analysis.ts'
 import { methods } from '#shared/hydraulics/catalogue.ts'
 import { rateFactorWell } from '#shared/hydraulics/other-wells.ts'
 import { kindMethods } from '#shared/hydraulics/kinds.ts'

@@ -1,4 +1,4 @@
-import type { AnalysisErrorCode } from '#shared/hydraulics/analysis.ts'
+import type { AnalysisErrorCode } from '#shared/hydraulics/analysis-error.ts'
 import type { UnitSystem } from '#shared/quantities/systems.ts'
 import type { Params, ReadingCode } from '#shared/readings/codes.ts'
 import { analysisErrorText } from './findings.ts'

@@ -1,5 +1,5 @@
 import type { EfficiencySettings } from '#shared/contracts/corrections.ts'
-import { AnalysisError } from '#shared/hydraulics/analysis.ts'
+import { AnalysisError } from '#shared/hydraulics/analysis-error.ts'
 import type { WantedCorrection } from '#shared/hydraulics/corrections/catalogue.ts'
 import { correctReadings } from '#shared/hydraulics/corrections/correct-readings.ts'
 import type { AppliedCorrection, Efficiency, Readings } from '#shared/hydraulics/corrections/correction.ts'

@@ -1,4 +1,4 @@
-import type { AnalysisErrorCode } from '#shared/hydraulics/analysis.ts'
+import type { AnalysisErrorCode } from '#shared/hydraulics/analysis-error.ts'
 import { analysisErrorText } from '#shared/words/findings.ts'
 import { AppError } from '../../errors.ts'
 import type { SeriesProblem } from '../analyses/build-inputs.ts'

@@ -1,5 +1,5 @@
 import { parseInputs, parseOptions } from '#shared/contracts/kind-analyses.ts'
-import { AnalysisError } from '#shared/hydraulics/analysis.ts'
+import { AnalysisError } from '#shared/hydraulics/analysis-error.ts'
 import { analyseAny, type AnyInputs, type AnyOptions, type AnyResult } from '#shared/hydraulics/any-kind.ts'
 import { packJson, unpackJson } from '../../db/packed-json.ts'
 

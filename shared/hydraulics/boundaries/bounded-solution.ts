@@ -1,5 +1,6 @@
 import type { TimeSpan } from '#shared/numerics/laplace-inversion.ts'
-import { AnalysisError, type ChosenBoundary } from '../analysis.ts'
+import { AnalysisError } from '../analysis-error.ts'
+import type { ChosenBoundary } from '../analysis.ts'
 import type { Unknown } from '../method.ts'
 import type { ResponsePlace } from '../place.ts'
 import type { Solution, SolutionReadings } from '../solution.ts'

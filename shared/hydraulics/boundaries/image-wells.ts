@@ -1,4 +1,4 @@
-import { AnalysisError } from '../analysis.ts'
+import { AnalysisError } from '../analysis-error.ts'
 import { parallelRows } from './parallel-images.ts'
 
 /** A straight, fully penetrating edge of the aquifer, as seen from the pumped well. */

@@ -1,4 +1,5 @@
-import { AnalysisError, type Finding } from '../analysis.ts'
+import { AnalysisError } from '../analysis-error.ts'
+import type { Finding } from '../analysis.ts'
 import type { Readings } from './correction.ts'
 
 /** Readings of before pumping in order of time, from which corrections learn. */

@@ -1,4 +1,5 @@
-import { AnalysisError, type Finding } from '../analysis.ts'
+import { AnalysisError } from '../analysis-error.ts'
+import type { Finding } from '../analysis.ts'
 import { lengthFindings, type Antecedent } from './antecedent.ts'
 import type { Efficiency, Outside, Readings } from './correction.ts'
 import type { CorrectionKind } from './kinds.ts'

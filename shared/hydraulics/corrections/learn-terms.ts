@@ -1,4 +1,4 @@
-import { AnalysisError } from '../analysis.ts'
+import { AnalysisError } from '../analysis-error.ts'
 import { regression, regressionCovariance, type Regression } from './regression.ts'
 import type { Learned, Term } from './term.ts'
 

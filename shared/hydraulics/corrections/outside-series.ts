@@ -1,4 +1,5 @@
-import { AnalysisError, type Finding } from '../analysis.ts'
+import { AnalysisError } from '../analysis-error.ts'
+import type { Finding } from '../analysis.ts'
 import type { Outside } from './correction.ts'
 
 /** Reads an outside series at any moment, linear between its values; beyond its ends the last value stands. */

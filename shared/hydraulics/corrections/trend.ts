@@ -1,4 +1,4 @@
-import { AnalysisError } from '../analysis.ts'
+import { AnalysisError } from '../analysis-error.ts'
 import { lengthFindings, type Antecedent } from './antecedent.ts'
 import type { Term } from './term.ts'
 

@@ -3,7 +3,8 @@ import { correlatedCovariance } from '#shared/numerics/correlated-residuals.ts'
 import type { FitUnknown } from '#shared/numerics/least-squares-problem.ts'
 import { levenbergMarquardt } from '#shared/numerics/levenberg-marquardt.ts'
 import { thinLogarithmically } from '#shared/numerics/logarithmic-thinning.ts'
-import { AnalysisError, type FitSummary, type Residual } from '../analysis.ts'
+import { AnalysisError } from '../analysis-error.ts'
+import type { FitSummary, Residual } from '../analysis.ts'
 import type { Heads } from './slug-test.ts'
 
 /** Default of SlugOptions.readingsPerCycle. */

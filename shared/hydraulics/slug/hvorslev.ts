@@ -1,4 +1,5 @@
-import { AnalysisError, type Finding } from '../analysis.ts'
+import { AnalysisError } from '../analysis-error.ts'
+import type { Finding } from '../analysis.ts'
 import { effectiveCasingRadius, intakeRadius, wettedLength } from './effective-radius.ts'
 import { lineMethod } from './line-method.ts'
 import { hasLength, shapeFactorIds, shapeFactors, type ShapeFactorId } from './shape-factors.ts'

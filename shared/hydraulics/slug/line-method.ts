@@ -1,4 +1,5 @@
-import { AnalysisError, type Finding, type FittedCurve, type HandLine } from '../analysis.ts'
+import { AnalysisError } from '../analysis-error.ts'
+import type { Finding, FittedCurve, HandLine } from '../analysis.ts'
 import { fitFindings, handLineFinding } from '../findings.ts'
 import type { KindMethod, KindOutcome } from '../kind.ts'
 import { slopeSd, straightLine, type StraightLine } from '../straight-line.ts'

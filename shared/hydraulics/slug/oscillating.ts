@@ -1,4 +1,5 @@
-import { AnalysisError, type FittedCurve } from '../analysis.ts'
+import { AnalysisError } from '../analysis-error.ts'
+import type { FittedCurve } from '../analysis.ts'
 import { fitFindings } from '../findings.ts'
 import type { KindOutcome } from '../kind.ts'
 import { GRAVITY, springDisplacement, springTransmissivity } from './damped-spring.ts'

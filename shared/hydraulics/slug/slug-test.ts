@@ -1,4 +1,5 @@
-import { AnalysisError, type HandLine, type LeftOut, type LeftOutReason } from '../analysis.ts'
+import { AnalysisError } from '../analysis-error.ts'
+import type { HandLine, LeftOut, LeftOutReason } from '../analysis.ts'
 import type { ShapeFactorId } from './shape-factors.ts'
 
 /** One slug: the level moved at once, and came back. */

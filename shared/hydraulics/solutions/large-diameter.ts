@@ -10,7 +10,8 @@ import {
   type Complex,
 } from '#shared/numerics/complex.ts'
 import { laplaceInverter, type LaplaceTransform, type TimeSpan } from '#shared/numerics/laplace-inversion.ts'
-import { AnalysisError, type Finding } from '../analysis.ts'
+import { AnalysisError } from '../analysis-error.ts'
+import type { Finding } from '../analysis.ts'
 import { CASING_STORAGE } from '../casing-storage.ts'
 import { storativity, transmissivity, type Unknown } from '../method.ts'
 import type { ResponsePlace } from '../place.ts'

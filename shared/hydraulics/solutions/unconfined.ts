@@ -1,6 +1,7 @@
 import { inverseExponentialIntegral } from '#shared/numerics/exponential-integral.ts'
 import { laplaceInverter, type TimeSpan } from '#shared/numerics/laplace-inversion.ts'
-import { AnalysisError, type Finding, type Interval } from '../analysis.ts'
+import { AnalysisError } from '../analysis-error.ts'
+import type { Finding, Interval } from '../analysis.ts'
 import { storativity, transmissivity, type Unknown } from '../method.ts'
 import type { ResponsePlace } from '../place.ts'
 import { meanRate } from '../rates.ts'

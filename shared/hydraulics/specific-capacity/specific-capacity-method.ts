@@ -1,4 +1,5 @@
-import { AnalysisError, type Finding, type FittedCurve, type ParameterEstimate } from '../analysis.ts'
+import { AnalysisError } from '../analysis-error.ts'
+import type { Finding, FittedCurve, ParameterEstimate } from '../analysis.ts'
 import { casingFinding } from '../casing-storage.ts'
 import { determinationFindings } from '../findings.ts'
 import type { Kind, KindMethod, KindOutcome } from '../kind.ts'

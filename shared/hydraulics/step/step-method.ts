@@ -1,4 +1,5 @@
-import { AnalysisError, type Finding, type FittedCurve, type OtherEstimate } from '../analysis.ts'
+import { AnalysisError } from '../analysis-error.ts'
+import type { Finding, FittedCurve, OtherEstimate } from '../analysis.ts'
 import { correctionFindings } from '../input-findings.ts'
 import type { Kind, KindMethod, KindOutcome } from '../kind.ts'
 import { rateHistory } from '../rates.ts'

@@ -1,4 +1,4 @@
-import { AnalysisError } from '../analysis.ts'
+import { AnalysisError } from '../analysis-error.ts'
 import { rateHistory, type RateHistory } from '../rates.ts'
 import type { StepInputs, StepOptions } from './step-test.ts'
 

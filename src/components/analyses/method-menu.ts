@@ -1,4 +1,5 @@
-import type { AnalysisError, AnalysisInputs } from '#shared/hydraulics/analysis.ts'
+import type { AnalysisError } from '#shared/hydraulics/analysis-error.ts'
+import type { AnalysisInputs } from '#shared/hydraulics/analysis.ts'
 import { methodIds, methods, type MethodId } from '#shared/hydraulics/catalogue.ts'
 import type { Family } from '#shared/hydraulics/method.ts'
 import { obstacle } from '#shared/hydraulics/requirements.ts'

@@ -1,5 +1,6 @@
 import { computed, ref } from 'vue'
-import { AnalysisError, type RateStep } from '#shared/hydraulics/analysis.ts'
+import { AnalysisError } from '#shared/hydraulics/analysis-error.ts'
+import type { RateStep } from '#shared/hydraulics/analysis.ts'
 import { forecastDrawdown, forecastRefusal } from '#shared/hydraulics/forecast.ts'
 import type { AnalysedCurve } from '#shared/hydraulics/forecast-uncertainty.ts'
 import { formatElapsed } from '#shared/quantities/elapsed.ts'

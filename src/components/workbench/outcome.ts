@@ -1,4 +1,4 @@
-import { AnalysisError } from '#shared/hydraulics/analysis.ts'
+import { AnalysisError } from '#shared/hydraulics/analysis-error.ts'
 import { analyseAny, type AnyInputs, type AnyOptions, type AnyResult } from '#shared/hydraulics/any-kind.ts'
 import type { UnitSystem } from '#shared/quantities/systems.ts'
 import { analysisErrorText } from '#shared/words/findings.ts'

@@ -1,5 +1,6 @@
 import { describe, expect, it, vi } from 'vitest'
-import { AnalysisError, type AnalysisInputs } from '#shared/hydraulics/analysis.ts'
+import { AnalysisError } from '#shared/hydraulics/analysis-error.ts'
+import type { AnalysisInputs } from '#shared/hydraulics/analysis.ts'
 import { analyse, fittedCurve, methodIds, methods, type MethodId } from '#shared/hydraulics/catalogue.ts'
 import { obstacle } from '#shared/hydraulics/requirements.ts'
 import { DAY, logSpaced, makeInputs, makeOptions, makeSeries, makeTheisSeries } from './make-inputs.ts'

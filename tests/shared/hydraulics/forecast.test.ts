@@ -1,5 +1,6 @@
 import { describe, expect, it } from 'vitest'
-import { AnalysisError, type AnalysisInputs, type AnalysisOptions, type RateStep } from '#shared/hydraulics/analysis.ts'
+import { AnalysisError } from '#shared/hydraulics/analysis-error.ts'
+import type { AnalysisInputs, AnalysisOptions, RateStep } from '#shared/hydraulics/analysis.ts'
 import { analyse, type MethodId } from '#shared/hydraulics/catalogue.ts'
 import { forecastDrawdown, forecastRefusal, type ForecastRequest } from '#shared/hydraulics/forecast.ts'
 import { unknownsCovariance } from '#shared/hydraulics/forecast-uncertainty.ts'

@@ -1,6 +1,7 @@
 import { describe, expect, it } from 'vitest'
 import { straightLine } from '#shared/hydraulics/straight-line.ts'
-import { AnalysisError, type AnalysisInputs } from '#shared/hydraulics/analysis.ts'
+import { AnalysisError } from '#shared/hydraulics/analysis-error.ts'
+import type { AnalysisInputs } from '#shared/hydraulics/analysis.ts'
 import { analyse } from '#shared/hydraulics/catalogue.ts'
 
 const times = Array.from({ length: 40 }, (_, i) => 60 * (i + 1))

@@ -1,5 +1,5 @@
 import { describe, expect, it } from 'vitest'
-import { AnalysisError } from '#shared/hydraulics/analysis.ts'
+import { AnalysisError } from '#shared/hydraulics/analysis-error.ts'
 import { imageRows, type Boundary } from '#shared/hydraulics/boundaries/image-wells.ts'
 import { rowPoints } from '#shared/hydraulics/boundaries/parallel-images.ts'
 import { exponentialIntegral } from '#shared/numerics/exponential-integral.ts'
