@@ -3,8 +3,6 @@ import type { OutsideInput, OutsideMapping, OutsideRowQuery } from '#shared/cont
 import type { Viewer } from '#shared/contracts/permissions.ts'
 import { outsideQuantities } from '#shared/hydraulics/corrections/kinds.ts'
 import type { Outside } from '#shared/hydraulics/corrections/correction.ts'
-import type { LogReading, Refusal } from '#shared/readings/model.ts'
-import { readingIssueText } from '#shared/words/readings.ts'
 import type { Executor } from '../../db/client.ts'
 import { inTransaction, transactionOf, type Transaction } from '../../db/transaction.ts'
 import type { Deps } from '../../deps.ts'
@@ -14,6 +12,7 @@ import type { createCorrectionsService } from '../corrections/corrections.servic
 import { pageOf } from '../page-of.ts'
 import type { createPumpingTestsService } from '../pumping-tests/pumping-tests.service.ts'
 import { mayEdit } from '../pumping-tests/view.ts'
+import { readLogOnThread } from '../reading-series/read-log.ts'
 import type { LogFile } from '../reading-series/reading-series.service.ts'
 import { checkSeries } from './check-series.ts'
 import * as repository from './outside-series.repository.ts'
@@ -40,9 +39,7 @@ export function createOutsideSeriesService(deps: Deps, { pumpingTests, correctio
     const start = { instant: found.test.startAt.toISOString(), zone: found.test.zone }
     // Neither weather nor river knows when a pump is switched.
     const input = { bytes, mapping, context: { start, events_s: [] } }
-    const reading = await workers.run<LogReading | Refusal>('read-log', input)
-    if (reading.ok) return { reading, start: start.instant }
-    throw new AppError('readings/refused', { reason: readingIssueText(reading.code, reading.params) })
+    return { reading: await readLogOnThread(workers, input), start: start.instant }
   }
 
   async function findVisible(viewer: Viewer, id: number) {

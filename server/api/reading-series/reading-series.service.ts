@@ -7,17 +7,16 @@ import type {
   SeriesInput,
 } from '#shared/contracts/reading-series.ts'
 import type { Viewer } from '#shared/contracts/permissions.ts'
-import type { LogReading, Refusal } from '#shared/readings/model.ts'
-import { readingIssueText } from '#shared/words/readings.ts'
+import type { LogReading } from '#shared/readings/model.ts'
 import type { Executor } from '../../db/client.ts'
 import { inTransaction, transactionOf, type Transaction } from '../../db/transaction.ts'
 import type { Deps } from '../../deps.ts'
 import { AppError, notFound } from '../../errors.ts'
-import type { ReadLogInput } from '../../jobs/tasks/read-log.ts'
 import { recordAudit } from '../audit-trail/record-audit.ts'
 import { pageOf } from '../page-of.ts'
 import type { createPumpingTestsService } from '../pumping-tests/pumping-tests.service.ts'
 import { mayEdit, seriesView } from '../pumping-tests/view.ts'
+import { readLogOnThread } from './read-log.ts'
 import * as repository from './reading-series.repository.ts'
 import { readingRows, rowView } from './rows.ts'
 
@@ -51,10 +50,7 @@ export function createReadingSeriesService(
     if (!parts.wells.some(({ row }) => row.id === testWellId)) throw notFound()
     const start = { instant: found.test.startAt.toISOString(), zone: found.test.zone }
     const context = { start, events_s: parts.steps.map(({ startS }) => startS) }
-    const input: ReadLogInput = { bytes, mapping, context }
-    const reading = await workers.run<LogReading | Refusal>('read-log', input)
-    if (reading.ok) return { reading, start: start.instant }
-    throw new AppError('readings/refused', { reason: readingIssueText(reading.code, reading.params) })
+    return { reading: await readLogOnThread(workers, { bytes, mapping, context }), start: start.instant }
   }
 
   /** The series with its test, when the viewer may see the test. */
