@@ -1,12 +1,8 @@
-import { createHash } from 'node:crypto'
 import type { z } from 'zod'
 import type { AnalysisInput, AnalysisUpdate, anyWorkbenchInputs } from '#shared/contracts/analyses.ts'
 import type { Viewer } from '#shared/contracts/permissions.ts'
 import { kindOfMethod } from '#shared/hydraulics/any-kind.ts'
-import { evidenceOf } from '#shared/hydraulics/evidence.ts'
-import { limitRules } from '#shared/hydraulics/limits.ts'
 import type { Executor } from '../../db/client.ts'
-import { packJson } from '../../db/packed-json.ts'
 import { inTransaction, transactionOf, type Transaction } from '../../db/transaction.ts'
 import type { Deps } from '../../deps.ts'
 import { AppError, notFound } from '../../errors.ts'
@@ -16,13 +12,12 @@ import * as repository from './analyses.repository.ts'
 import { adoptedRows } from './adoption.ts'
 import { appliedCorrections } from './applied-corrections.ts'
 import { calculate, checkExpected } from './calculate.ts'
-import { checkAdoptable } from './check-adoptable.ts'
 import { everything } from './everything.ts'
 import type { createInputsService } from './inputs.service.ts'
 import { checkDraft, lockDraft } from './lock-draft.ts'
 import { readInputs } from './packed-inputs.repository.ts'
 import { createRemoval, type RemovalNeeds } from './removal.ts'
-import { reportedFacts, reportedResult, type ReportedValue } from './reported.ts'
+import { createReporting } from './reporting.ts'
 import { createSubmissions } from './submissions.ts'
 import { analysisView, type Surroundings } from './view.ts'
 import { wellLossView } from './well-loss-view.ts'
@@ -109,6 +104,7 @@ export function createAnalysesService(deps: Deps, inputs: ReturnType<typeof crea
 
   return {
     ...createRemoval(deps, needs),
+    ...createReporting(deps, { inputs, view }),
     submit,
     takeBack,
     repeat,
@@ -160,46 +156,6 @@ export function createAnalysesService(deps: Deps, inputs: ReturnType<typeof crea
         return view(tx, viewer, id)
       })
     },
-
-    /** Enters a value that came down without readings, submitted; it still needs a reviewer. */
-    report: (viewer: Viewer, testId: number, value: ReportedValue) =>
-      inTransaction(deps, async (tx) => {
-        if (!(await inputs.hold(tx, viewer, testId))) throw notFound()
-        const { T: _T, K: _K, S, storageClass, ...known } = value
-        const snapshot = { version: 1 as const, kind: 'reported' as const, ...known }
-        const result = reportedResult(value, evidenceOf(reportedFacts(known, S === null ? null : storageClass)))
-        checkAdoptable(
-          result,
-          // Nobody can be asked about a value that was measured long ago: the reviewer sees the question instead.
-          limitRules.map(({ code }) => code),
-        )
-        const at = now()
-        const id = await repository.insertAnalysis(tx, {
-          pumpingTestId: testId,
-          method: 'reported',
-          methodVersion: 1,
-          state: 'submitted',
-          packedInputs: packJson(snapshot),
-          inputsSha256: createHash('sha256').update(JSON.stringify(snapshot)).digest('hex'),
-          options: null,
-          result,
-          label: known.source.slice(0, 120),
-          rationale: known.source,
-          submittedAt: at,
-          createdBy: viewer.id,
-          createdAt: at,
-        })
-        await repository.addEditor(tx, id, viewer)
-        await recordAudit(tx, {
-          viewer,
-          at,
-          action: 'analyses/report',
-          subject: 'analysis',
-          subjectId: id,
-          details: { testId },
-        })
-        return view(tx, viewer, id)
-      }),
 
     async update(viewer: Viewer, id: number, { rowVersion, ...input }: AnalysisUpdate) {
       const computed = await computeAgain(viewer, id, input)
