@@ -21,7 +21,7 @@ import {
 import { rateHistory } from './rates.ts'
 import { largest, pumpingPhase, selectReadings } from './selection.ts'
 import { LARGEST_U, smallUFinding, STRAIGHT_LINE_CONSTANT, theisU, timeOfU } from './small-u.ts'
-import { slopeSd, storageSd, zeroAbscissa, type StraightLine } from './straight-line.ts'
+import { slopeSd, storageSd, zeroAbscissa } from './straight-line.ts'
 import { drawnDrawdown, thinningFactor, thinningFindings, thinningGuard } from './unconfined.ts'
 import { distanceError, radiusOf } from './wells.ts'
 
@@ -75,7 +75,7 @@ function run(inputs: AnalysisInputs, options: AnalysisOptions): MethodOutcome {
 function estimates({ points, time_s, rate, line }: Snapshot, inputs: AnalysisInputs, options: AnalysisOptions) {
   const T = transmissivityFromDistanceSlope(rate, -line.slope)
   const S = storativityFromDistance(T, time_s, 10 ** zeroAbscissa(line))
-  const byDistance = options.line ? { T: 0, S: 0 } : distanceEffects(points, line)
+  const byDistance = distanceEffects(points)
   const uncertain = (fitSd: number, otherSd: number): LogUncertainty => ({
     fitSd,
     freedom: line.freedom,
@@ -95,20 +95,22 @@ function estimates({ points, time_s, rate, line }: Snapshot, inputs: AnalysisInp
   }
 }
 
-/** Standard deviations of ln T and ln S that come from the errors of the distances, each moved a little in turn. */
-function distanceEffects(points: Point[], line: StraightLine): { T: number; S: number } {
+/**
+ * Standard deviations of ln T and ln S that come from the errors of the distances, each moved a little in turn: those of
+ * least squares, for a hand draws its line at the same distances.
+ */
+function distanceEffects(points: Point[]): { T: number; S: number } {
   const x = logDistances(points)
-  const logS = (slope: number, intercept: number) => -Math.log(-slope) + 2 * Math.LN10 * (intercept / slope)
+  const found = linearRegression(x, drawdowns(points))
   const effects = points.map(({ well }, i) => {
     const moved = linearRegression(
       x.map((value, j) => value + (i === j ? DISTANCE_STEP : 0)),
       drawdowns(points),
     )
     const scale = distanceError(well.series) / (DISTANCE_STEP * Math.LN10)
-    return {
-      T: scale * Math.log(line.slope / moved.slope),
-      S: scale * (logS(moved.slope, moved.intercept) - logS(line.slope, line.intercept)),
-    }
+    const logT = Math.log(found.slope / moved.slope)
+    const zero = moved.intercept / moved.slope - found.intercept / found.slope
+    return { T: scale * logT, S: scale * (logT + 2 * Math.LN10 * zero) }
   })
   return { T: Math.hypot(...effects.map((effect) => effect.T)), S: Math.hypot(...effects.map((effect) => effect.S)) }
 }

@@ -89,7 +89,8 @@ function uncertaintyOf(levels: SteadyLevel[], line: StraightLine, { rateError }:
   return {
     fitSd: two ? byReadings : Math.abs(slopeSd(line)),
     freedom: two ? levels.reduce((sum, level) => sum + level.line.freedom, 0) : line.freedom,
-    otherSd: Math.hypot(rateError, ...byDistance),
+    // The line through more wells holds the move of a line drawn by hand already.
+    otherSd: Math.hypot(rateError, ...byDistance, two ? line.slopeShift / line.slope : 0),
   }
 }
 

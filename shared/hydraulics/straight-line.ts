@@ -1,16 +1,23 @@
 import { lagOneAutocorrelation } from '#shared/numerics/autocorrelation.ts'
 import { correlatedCovariance } from '#shared/numerics/correlated-residuals.ts'
 import { describeLine, lineFreedom, linearRegression, type LineFit } from '#shared/numerics/linear-regression.ts'
+import { normalQuantile } from '#shared/numerics/normal.ts'
+import { studentQuantile } from '#shared/numerics/student.ts'
 import { AnalysisError } from './analysis-error.ts'
 import type { FitSummary, HandLine, Residual } from './analysis.ts'
 import type { Selected } from './selection.ts'
 
-/** A line of drawdown on a logarithmic axis, with its covariance widened for residuals that are not independent. */
+/**
+ * A line of drawdown on a logarithmic axis, with its covariance widened for residuals that are not independent, and of a
+ * line drawn by hand for how far least squares would move it.
+ */
 export interface StraightLine {
   slope: number
   intercept: number
   /** Covariance of (intercept, slope), in drawdown and drawdown per factor of ten. */
   covariance: LineFit['covariance']
+  /** How far least squares would move the slope of a line drawn by hand. */
+  slopeShift: number
   freedom: number
   residuals: number[]
   summary: FitSummary
@@ -25,6 +32,8 @@ interface LineOptions {
   rising?: boolean
 }
 
+/** The side of a 95 % interval. */
+const TWO_SIDED = 0.975
 /** A rise along the line that is a smaller part of the drawdown than this is rounding: the log is level. */
 const LEAST_RISE = 1e-9
 
@@ -62,12 +71,15 @@ export function regressionLine(
   drawdown: number[],
   { hand = null, time_s }: Omit<LineOptions, 'rising'> = {},
 ): StraightLine {
-  const fit = hand ? describeLine(x, drawdown, hand.slope, hand.intercept) : linearRegression(x, drawdown)
+  const found = linearRegression(x, drawdown)
+  const fit = hand ? describeLine(x, drawdown, hand.slope, hand.intercept) : found
+  const slopeShift = found.slope - fit.slope
   const { covariance, effectiveNumber } = lineCovariance(x, fit.residuals, time_s)
   return {
     slope: fit.slope,
     intercept: fit.intercept,
-    covariance: covariance as LineFit['covariance'],
+    covariance: hand ? withShift(covariance, [found.intercept - fit.intercept, slopeShift], x.length) : covariance,
+    slopeShift,
     freedom: lineFreedom(fit.count),
     residuals: fit.residuals,
     summary: {
@@ -96,13 +108,28 @@ function lineCovariance(x: number[], residuals: number[], time_s: number[] | und
   const { covariance, effectiveNumber } = correlatedCovariance([{ residuals, jacobian, axes }], inverse)
   const [[height = NaN, both = NaN] = [], [, slope = NaN] = []] = covariance
   const joint = both - middle * slope
-  return {
-    covariance: [
-      [height - 2 * middle * both + middle * middle * slope, joint],
-      [joint, slope],
-    ],
-    effectiveNumber,
-  }
+  const ofIntercept: LineFit['covariance'] = [
+    [height - 2 * middle * both + middle * middle * slope, joint],
+    [joint, slope],
+  ]
+  return { covariance: ofIntercept, effectiveNumber }
+}
+
+/**
+ * Holds how far least squares would move a line drawn by hand beside the scatter of the readings about it, which does not
+ * show it: the likeness of readings that all lie to one side of the line is taken for noise. Covariances are multiplied
+ * by Student's t later; the move counts like every error that the readings do not show, by the normal distribution.
+ */
+function withShift(
+  [[aa, ab], [ba, bb]]: LineFit['covariance'],
+  [da, db]: [intercept: number, slope: number],
+  count: number,
+): LineFit['covariance'] {
+  const weight = (normalQuantile(TWO_SIDED) / studentQuantile(TWO_SIDED, lineFreedom(count))) ** 2
+  return [
+    [aa + weight * da * da, ab + weight * da * db],
+    [ba + weight * da * db, bb + weight * db * db],
+  ]
 }
 
 /** Residuals of a line through the readings of one well. */

@@ -72,7 +72,8 @@ const findings: Sentences<string> = {
     'No storativity is given, because drawdown in the pumped well mixes it with losses at the well.',
   'pumped-well-in-joint-fit': () =>
     'The pumped well is fitted together with observation wells. Losses at the well pull the result; try without it.',
-  'hand-line': () => 'The line was drawn by hand; the interval rests on the scatter of the readings about it.',
+  'hand-line': () =>
+    'The line was drawn by hand. Its interval holds the scatter of the readings about it, and how far least squares would move the line.',
   'hand-curve': () =>
     'The curve was laid over the readings by hand, and nothing was searched. Its interval holds the scatter of the readings, and how far least squares would move the curve.',
   'rate-varied': ({ percent }) =>
