@@ -4,7 +4,7 @@ import { fileURLToPath } from 'node:url'
 import { z } from 'zod'
 import { overzoom } from './overzoom.ts'
 import type { TileAddress } from './tile-address.ts'
-import { createCache } from './tile-cache.ts'
+import { createCache } from '../cache.ts'
 
 export const bundledTiles = fileURLToPath(new URL('../../tiles', import.meta.url))
 

@@ -1,23 +1,14 @@
 import type { Analysis } from '#shared/contracts/analyses.ts'
-import {
-  analysisInputs,
-  analysisOptions,
-  analysisResult,
-  type StoredResult,
-} from '#shared/contracts/analysis-result.ts'
-import { parseInputs } from '#shared/contracts/kind-analyses.ts'
+import { analysisOptions, analysisResult, type StoredResult } from '#shared/contracts/analysis-result.ts'
 import { recoveryConfirms } from '#shared/hydraulics/agreement.ts'
-import type { AnalysisResult } from '#shared/hydraulics/analysis.ts'
 import { kindOfMethod } from '#shared/hydraulics/any-kind.ts'
 import { phaseOfMethod } from '#shared/hydraulics/catalogue.ts'
-import { evidenceFacts } from '#shared/hydraulics/evidence-facts.ts'
 import { evidenceOf, type EvidenceFacts } from '#shared/hydraulics/evidence.ts'
-import type { KindShapes } from '#shared/hydraulics/kinds.ts'
 import type { NewValue } from '../adopted-values/adopted-values.service.ts'
 import { localStart } from '../pumping-tests/start-time.ts'
 import type { PumpingTestRow, TestParts } from '../pumping-tests/view.ts'
 import type { AnalysisRow } from './analyses.repository.ts'
-import { reportedFacts, reportedInputs } from './reported.ts'
+import type { Digest } from './digest.ts'
 
 /** Common practice: apportioning a composite value to its units leaves at least this error of log10. */
 const leastCompositeError = 0.35
@@ -45,33 +36,6 @@ function recoveryAgrees(row: Weighed, siblings: Weighed[]): boolean {
     const other = compared(sibling)
     return mine !== null && other !== null && recoveryConfirms(mine, other)
   })
-}
-
-function factsOf(row: Weighed, inputs: unknown, siblings: Weighed[]): EvidenceFacts {
-  const result = resultOf(row)
-  const kind = kindOfMethod(row.method)
-  if (kind === 'slug' || kind === 'specific-capacity') return kindFacts(kind, row.method, inputs, result)
-  if (row.method !== 'reported') {
-    const agrees = { recoveryAgrees: recoveryAgrees(row, siblings) }
-    return evidenceFacts(
-      analysisInputs.parse(inputs),
-      analysisOptions.parse(row.options),
-      result as AnalysisResult,
-      agrees,
-    )
-  }
-  return reportedFacts(reportedInputs.parse(inputs), result.S ? result.storageClass : null)
-}
-
-const kindOrigins = { slug: 'slug-test', 'specific-capacity': 'specific-capacity' } as const
-
-/** Tests in a single well whose evidence follows from their kind, and from their own error where that is larger. */
-function kindFacts(kind: keyof typeof kindOrigins, method: string, inputs: unknown, result: StoredResult) {
-  const { aquifer } = parseInputs(method, inputs) as KindShapes[typeof kind]['inputs']
-  const storageClass = result.S ? result.storageClass : null
-  const facts = reportedFacts({ origin: kindOrigins[kind], observationWell: false, aquifer }, storageClass)
-  const measured = kind === 'slug' ? result.K : result.T
-  return { ...facts, ownLogSdT: measured?.logSd ?? null, ownLogSdS: result.S?.logSd ?? null }
 }
 
 const asReasons = (codes: (string | null | undefined)[]): NonNullable<Analysis['adoption']>['reasons'] =>
@@ -119,17 +83,17 @@ function originOf({ origin, observationWell }: EvidenceFacts): NewValue['origin'
 /**
  * The rows of the regional table that an accepted analysis stands for: T, and S and K where it gives them, for each
  * unit. A test of several units gives each its share of T, with the error that apportioning leaves, and no S or K.
- * @param inputs the snapshot of the analysis
+ * @param digest of the analysis
  */
 export function adoptedRows(
   row: Weighed,
-  inputs: unknown,
+  digest: Digest,
   siblings: Weighed[],
   { found: { test }, parts: { units } }: AdoptedTest,
 ): NewValue[] {
   const { T, S, K, storageClass } = resultOf(row)
-  if (!T && !(K && kindOfMethod(row.method) === 'slug')) return []
-  const facts = factsOf(row, inputs, siblings)
+  if (!digest.facts) return []
+  const facts = { ...digest.facts, recoveryAgrees: recoveryAgrees(row, siblings) }
   const evidence = evidenceOf(facts)
   const common = {
     pumpingTestId: test.id,

@@ -12,10 +12,11 @@ import * as repository from './analyses.repository.ts'
 import { adoptedRows } from './adoption.ts'
 import { appliedCorrections } from './applied-corrections.ts'
 import { calculate, checkExpected } from './calculate.ts'
+import type { Digest } from './digest.ts'
+import { createDigests } from './digests.ts'
 import { everything } from './everything.ts'
 import type { createInputsService } from './inputs.service.ts'
 import { checkDraft, lockDraft } from './lock-draft.ts'
-import { readInputs } from './packed-inputs.repository.ts'
 import { createRemoval, type RemovalNeeds } from './removal.ts'
 import { createReporting } from './reporting.ts'
 import { createSubmissions } from './submissions.ts'
@@ -31,11 +32,13 @@ export function createAnalysesService(deps: Deps, inputs: ReturnType<typeof crea
   const siblingsOf = async (executor: Executor, testId: number) =>
     (await repository.listAnalyses(executor, everything, testId)).map(({ row }) => row)
 
-  /** Snapshots of those among the analyses whose view is made from them: they are long, and most views need none. */
-  async function inputsFor(executor: Executor, ids: number[]) {
-    const read = new Map<number, unknown>()
-    for (const id of ids) read.set(id, await readInputs(executor, id))
-    return read
+  const digest = createDigests(workers)
+
+  /** One after the other: a transaction has one connection. */
+  async function digestsOf(executor: Executor, rows: repository.AnalysisRow[]) {
+    const made = new Map<number, Digest>()
+    for (const row of rows) made.set(row.id, await digest(executor, row))
+    return made
   }
 
   /** Analyses of one test as the viewer sees them. */
@@ -49,14 +52,14 @@ export function createAnalysesService(deps: Deps, inputs: ReturnType<typeof crea
       siblings: await siblingsOf(executor, testId),
       reviews: await repository.listReviews(executor, ids),
       test: await inputs.testOf(executor, everything, testId),
-      inputs: await inputsFor(
+      digests: await digestsOf(
         executor,
-        ids.filter((id) => !settled.has(id)),
+        found.map(({ row }) => row).filter(({ id }) => !settled.has(id)),
       ),
     }
     return found.map((one) => {
       const shown = analysisView(viewer, one, around)
-      return withoutHiddenWells(shown, around.inputs.get(one.row.id), seen)
+      return seen === null ? shown : withoutHiddenWells(shown, around.digests.get(one.row.id)!.wells, seen)
     })
   }
 
@@ -180,7 +183,7 @@ export function createAnalysesService(deps: Deps, inputs: ReturnType<typeof crea
         pumpingTestId: found.row.pumpingTestId,
         values: adoptedRows(
           found.row,
-          await readInputs(executor, id),
+          await digest(executor, found.row),
           await siblingsOf(executor, found.row.pumpingTestId),
           test,
         ),

@@ -1,6 +1,5 @@
 import { asc, eq } from 'drizzle-orm'
 import type { Executor } from '../../db/client.ts'
-import { unpackJson } from '../../db/packed-json.ts'
 import { analysisInputParts } from '../../db/schema/index.ts'
 
 /** Written twice as long in a statement; the smallest packet that a database may be set to take holds it many times. */
@@ -18,7 +17,7 @@ export async function savePackedInputs(executor: Executor, analysisId: number, p
 export const deletePackedInputs = (executor: Executor, analysisId: number) =>
   executor.delete(analysisInputParts).where(eq(analysisInputParts.analysisId, analysisId))
 
-/** The packed snapshot of an analysis. @throws where there is none */
+/** The packed snapshot of an analysis, whose JSON its schema in shared/contracts parses. @throws where there is none */
 export async function readPackedInputs(executor: Executor, analysisId: number): Promise<Uint8Array> {
   const parts = await executor
     .select({ bytes: analysisInputParts.bytes })
@@ -28,7 +27,3 @@ export async function readPackedInputs(executor: Executor, analysisId: number): 
   if (parts.length === 0) throw new Error(`Analysis ${analysisId} has no inputs`)
   return Buffer.concat(parts.map(({ bytes }) => bytes))
 }
-
-/** The snapshot of an analysis, as its schema in shared/contracts parses it. */
-export const readInputs = async (executor: Executor, analysisId: number): Promise<unknown> =>
-  unpackJson(await readPackedInputs(executor, analysisId))

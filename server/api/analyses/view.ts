@@ -6,6 +6,7 @@ import { limitFindings } from '#shared/hydraulics/limits.ts'
 import type { AdoptedRow } from './adopted.repository.ts'
 import { adoptedRows, adoptionOf, type AdoptedTest } from './adoption.ts'
 import type { FoundAnalysis, listReviews } from './analyses.repository.ts'
+import type { Digest } from './digest.ts'
 
 type ReviewRows = Awaited<ReturnType<typeof listReviews>>
 
@@ -30,17 +31,18 @@ export interface Surroundings {
   reviews: ReviewRows
   adopted: AdoptedRow[]
   test: AdoptedTest
-  /** Snapshots by analysis, of those at least that are not adopted. */
-  inputs: Map<number, unknown>
+  /** By analysis, of those at least that are not adopted. */
+  digests: Map<number, Digest>
 }
 
 /**
  * What adopting the analysis wrote into the regional table, or would write; null where it gives no transmissivity.
  * Analyses of the same test weigh only until a reviewer has decided: what was adopted stays what it was.
  */
-function adoptionShown(row: FoundAnalysis['row'], { adopted, inputs, siblings, test }: Surroundings) {
+function adoptionShown(row: FoundAnalysis['row'], { adopted, digests, siblings, test }: Surroundings) {
   const written = adopted.filter(({ analysisId }) => analysisId === row.id)
-  return adoptionOf(written) ?? adoptionOf(adoptedRows(row, inputs.get(row.id), siblings, test))
+  const digest = digests.get(row.id)
+  return adoptionOf(written) ?? (digest ? adoptionOf(adoptedRows(row, digest, siblings, test)) : null)
 }
 
 export function analysisView(viewer: Viewer, found: FoundAnalysis, around: Surroundings): Analysis {

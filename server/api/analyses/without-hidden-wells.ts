@@ -1,21 +1,16 @@
 import type { Analysis } from '#shared/contracts/analyses.ts'
-import { analysisInputs, analysisOptions } from '#shared/contracts/analysis-result.ts'
+import { analysisOptions } from '#shared/contracts/analysis-result.ts'
 import type { AnalysisOptions } from '#shared/hydraulics/analysis.ts'
-import { kindOfMethod } from '#shared/hydraulics/any-kind.ts'
 import { rateFactorWell } from '#shared/hydraulics/other-wells.ts'
+import type { Digest } from './digest.ts'
 
 /**
  * An analysis rests on all wells of its test; its reader is told nothing of those that are hidden from them.
- * @param inputs the snapshot of the analysis
- * @param seen ids of the test's wells that the reader may see; null for everything.
+ * @param wells that the analysis rests on
+ * @param seen ids of the test's wells that the reader may see
  */
-export function withoutHiddenWells(analysis: Analysis, inputs: unknown, seen: Set<string> | null): Analysis {
-  if (seen === null || analysis.method === 'reported') return analysis
-  // A test of a kind of its own has one well, without which nobody sees the test.
-  if (kindOfMethod(analysis.method) !== 'constant-rate') return analysis
-  const { series, otherWells = [] } = analysisInputs.parse(inputs)
-  const others = otherWells.filter(({ wellId }) => wellId !== null && !seen.has(wellId))
-  const hidden = [...series.filter(({ wellId }) => !seen.has(wellId)), ...others]
+export function withoutHiddenWells(analysis: Analysis, wells: Digest['wells'], seen: Set<string>): Analysis {
+  const hidden = wells.filter(({ wellId }) => wellId !== null && !seen.has(wellId))
   if (hidden.length === 0) return analysis
   const codes = new Set<string | number>(hidden.map(({ label }) => label))
   const { options, result } = analysis

@@ -1,6 +1,7 @@
 import { createRequire } from 'node:module'
 import type { AnalysisReportInput } from './analysis-report.ts'
 import { analyseTask, repeatAnalysisTask } from './analyse.ts'
+import { digestAnalysisTask } from './digest-analysis.ts'
 import { fitModelTask } from './fit-model.ts'
 import { readLogTask } from './read-log.ts'
 
@@ -18,6 +19,7 @@ const tasks = {
   analyse: analyseTask,
   'repeat-analysis': repeatAnalysisTask,
   'analysis-report': analysisReport,
+  'digest-analysis': digestAnalysisTask,
   'fit-model': fitModelTask,
   'read-log': readLogTask,
 } as const

@@ -67,7 +67,14 @@ describe('On a database that takes statements of 16 MB', () => {
     })
     const { test, created } = await testWithLog(['minutes,drawdown', ...rows].join('\n'))
     expect(created.series.takenCount).toBe(readings)
+    const run = vi.spyOn(tested.deps.workers, 'run')
     const draft = (await saveAnalysis(analyst, test.id, 'cooper-jacob')).body as Analysis
+    const shown = (await analyst.get(`/api/analyses/${draft.id}`).expect(200)).body as Analysis
+    expect(shown.adoption).toEqual(draft.adoption)
+    // What accepting it would mean is taken from its long snapshot once, on a thread.
+    expect(shown.adoption).toMatchObject({ evidence: expect.any(String), log10ErrorT: expect.any(Number) })
+    expect(run.mock.calls.filter(([task]) => task === 'digest-analysis')).toHaveLength(1)
+    run.mockRestore()
     const submitted = (await submit(analyst, draft).expect(200)).body as Analysis
     const accepted = (await decide(reviewer, submitted, 'accepted').expect(200)).body as Analysis
     expect(accepted.state).toBe('accepted')

@@ -2,7 +2,8 @@ import { cpSync, mkdirSync, readFileSync, readdirSync, rmSync, writeFileSync } f
 import { join } from 'node:path'
 import { migrate } from 'drizzle-orm/mysql2/migrator'
 import { afterAll, beforeAll, describe, expect, it, vi } from 'vitest'
-import { readInputs } from '../../../server/api/analyses/packed-inputs.repository.ts'
+import { readPackedInputs } from '../../../server/api/analyses/packed-inputs.repository.ts'
+import { unpackJson } from '../../../server/db/packed-json.ts'
 import { connect } from '../../../server/db/client.ts'
 import { analyses } from '../../../server/db/schema/index.ts'
 import { databaseFolder } from '../../../server/setup/databases.mjs'
@@ -68,7 +69,7 @@ describe('a data folder made by the first migration', () => {
   it('keeps what its analyses were made from, packed', async () => {
     const { db, close } = connect(server.url(), 1)
     const [row] = await db.select({ id: analyses.id }).from(analyses)
-    expect(await readInputs(db, row!.id).finally(close)).toEqual(snapshot)
+    expect(await unpackJson(await readPackedInputs(db, row!.id).finally(close))).toEqual(snapshot)
     const unpacked = 'SELECT CONVERT(UNCOMPRESS(bytes) USING utf8mb4) FROM analysis_input_parts'
     expect(await server.query(unpacked)).toEqual([[JSON.stringify(snapshot)]])
   })

@@ -1,7 +1,7 @@
 import { describe, expect, it } from 'vitest'
-import { createCache } from '../../../server/tiles/tile-cache.ts'
+import { createCache } from '../../server/cache.ts'
 
-describe('the cache of enlarged tiles', () => {
+describe('a cache of values that take long to make', () => {
   it('makes a value once while it is kept', async () => {
     const cached = createCache<number>(2)
     let made = 0
