@@ -17,7 +17,9 @@ type Weighed = Pick<AnalysisRow, 'id' | 'method' | 'options' | 'result' | 'state
 
 const resultOf = (row: Weighed): StoredResult => analysisResult.parse(row.result)
 
+/** Null where there is nothing to compare: another kind of test, or a value that came down without readings. */
 function compared(row: Weighed) {
+  if (row.method === 'reported') return null
   const { T } = resultOf(row)
   if (kindOfMethod(row.method) !== 'constant-rate') return null
   const { wellIds } = analysisOptions.parse(row.options)
