@@ -14,6 +14,7 @@ export interface LineMarks {
 interface MarkedPlot {
   kind: PlotKind
   x: Axis
+  y: Axis
   units: { time: string; length: string }
 }
 
@@ -26,6 +27,8 @@ function abscissaOf({ kind, units }: MarkedPlot) {
   return { toSI: 1, zero: (x: number) => `t/t' ${formatNumber(x)}` }
 }
 
+const isOn = ({ min, max }: Axis, value: number) => value >= min && value <= max
+
 export function lineMarks(plot: MarkedPlot, { result: { extras, method } }: Fit): LineMarks | null {
   const { slope_m: slope, intercept_m: intercept } = extras
   if (slope === undefined || intercept === undefined || !drawsLine(method, plot.kind)) return null
@@ -33,17 +36,21 @@ export function lineMarks(plot: MarkedPlot, { result: { extras, method } }: Fit)
   const length = unitById(plot.units.length)
   const y = (x: number) => (intercept + slope * Math.log10(x * toSI)) / length.toSI
   const x0 = 10 ** (-intercept / slope) / toSI
-  const within = x0 >= plot.x.min && x0 <= plot.x.max
+  const within = isOn(plot.x, x0) && isOn(plot.y, 0)
   const fall = `Δs ${formatNumber(Math.abs(slope) / length.toSI)} ${length.label} in one log cycle`
-  return { zero: within ? { at: [x0, 0], label: zero(x0) } : null, cycle: cycleMark(plot.x, y, fall) }
+  return { zero: within ? { at: [x0, 0], label: zero(x0) } : null, cycle: cycleMark(plot, y, fall) }
 }
 
 /** The last whole factor of ten on the axis in which the line lies below zero drawdown at neither end. */
-function cycleMark({ min, max }: Axis, y: (x: number) => number, label: string): LineMarks['cycle'] {
+function cycleMark(
+  { x: { min, max }, y: upright }: MarkedPlot,
+  y: (x: number) => number,
+  label: string,
+): LineMarks['cycle'] {
   for (let power = Math.floor(Math.log10(max)) - 1; 10 ** power >= min; power--) {
     const [a, b] = [10 ** power, 10 ** (power + 1)]
     const [ya, yb] = [y(a), y(b)]
-    if (ya >= 0 && yb >= 0)
+    if (ya >= 0 && yb >= 0 && isOn(upright, Math.max(ya, yb)))
       return {
         corner:
           ya < yb

@@ -1,4 +1,4 @@
-import { thinLogarithmically } from '#shared/numerics/logarithmic-thinning.ts'
+import { largestTriangles } from '#shared/numerics/largest-triangle.ts'
 import type { AnalysisInputs, Series } from '#shared/hydraulics/analysis.ts'
 import { DERIVATIVE_SMOOTHING, logDerivative } from '#shared/hydraulics/derivative.ts'
 import { rateHistory } from '#shared/hydraulics/rates.ts'
@@ -33,8 +33,9 @@ const symbols = ['circle', 'diamond', 'triangle', 'rect', 'arrow', 'pin'] as con
 export const symbolOf = (index: number) => symbols[index % symbols.length] as (typeof symbols)[number]
 
 /** More points than a screen can show apart only cost time. */
+const MOST_POINTS = 1200
+const FEWEST_POINTS = 480
 const POINTS_PER_CYCLE = 120
-const MOST_LINEAR = 1200
 
 interface WellsRequest {
   kind: PlotKind
@@ -44,6 +45,8 @@ interface WellsRequest {
   /** The reader's unit of length, m. */
   length_m: number
   smoothing?: number
+  /** The part of the abscissa that is shown; left out: all of it. */
+  within?: readonly [number, number] | undefined
 }
 
 export function plotWells(request: WellsRequest): PlotWell[] {
@@ -51,15 +54,16 @@ export function plotWells(request: WellsRequest): PlotWell[] {
   return inputs.series.filter(({ wellId }) => wellIds.includes(wellId)).map((series) => plotWell(request, series))
 }
 
-function plotWell({ kind, inputs, clock, length_m, smoothing }: WellsRequest, series: Series): PlotWell {
-  const placed = placedReadings(series, clock, length_m, kind === 'log-log')
+function plotWell({ kind, inputs, clock, length_m, smoothing, within }: WellsRequest, series: Series): PlotWell {
+  const all = placedReadings(series, clock, length_m, kind === 'log-log')
+  const placed = within ? all.filter(({ x }) => x >= within[0] && x <= within[1]) : all
   const kept = placed.filter(({ included }) => included)
   const { wellId, label, role } = series
   return {
     wellId,
     label,
     role,
-    points: thinned(kept, kind, clock.origin_s),
+    points: thinned(kept, kind),
     readingCount: kept.length,
     leftOut: placed.filter(({ included }) => !included),
     derivative: hasDerivative(kind) ? derivativeOf(inputs, wellId, clock, { length_m, smoothing, kind }) : [],
@@ -75,14 +79,17 @@ function placedReadings(series: Series, clock: PlotClock, length_m: number, posi
   })
 }
 
-function thinned<Point extends PlotPoint>(points: Point[], kind: PlotKind, origin_s: number): Point[] {
-  if (points.length <= MOST_LINEAR) return points
-  if (kind === 'linear') {
-    const step = Math.ceil(points.length / MOST_LINEAR)
-    return points.filter((_, i) => i % step === 0 || i === points.length - 1)
-  }
-  const times = points.map(({ elapsed_s }) => elapsed_s - origin_s)
-  return thinLogarithmically(times, POINTS_PER_CYCLE).map((i) => points[i] as Point)
+/** By what they look like on the axes of the plot: the spikes and steps of a long log stay. */
+function thinned<Point extends PlotPoint>(points: Point[], kind: PlotKind): Point[] {
+  if (points.length <= MOST_POINTS) return points
+  const along = points.map(({ x }) => (kind === 'linear' ? x : Math.log10(x)))
+  const up = points.map(({ y }) => (kind === 'log-log' ? Math.log10(y) : y))
+  const span = (along.at(-1) as number) - (along[0] as number)
+  // t/t' falls while time goes on.
+  const ascending = span < 0 ? along.map((x) => -x) : along
+  const wanted = kind === 'linear' ? MOST_POINTS : POINTS_PER_CYCLE * Math.abs(span)
+  const buckets = Math.min(Math.max(Math.ceil(wanted), FEWEST_POINTS), MOST_POINTS)
+  return largestTriangles(ascending, up, buckets - 2).map((i) => points[i] as Point)
 }
 
 /** How many of the wells' readings are drawn; null where all are. */

@@ -41,6 +41,8 @@ export function regimeSeries(regimes: readonly DrawnRegime[], theme: ChartTheme)
 function band(label: string, edges: [number, number], ground: Ground, theme: ChartTheme) {
   const left = Math.max(ground.x, Math.min(...edges))
   const right = Math.min(ground.x + ground.width, Math.max(...edges))
+  // It may lie beyond the part of the plot that is looked at.
+  if (right <= left) return []
   const y = ground.y - HEIGHT - ABOVE
   const box = {
     type: 'rect',

@@ -24,6 +24,8 @@ export interface TimePlotRequest {
   smoothing?: number
   /** The well whose derivative is diagnosed, on plots that show one; null: none. */
   diagnosed?: string | null
+  /** The part of the abscissa that is looked at, in its unit; left out or null: all of it. */
+  view?: readonly [number, number] | null
 }
 
 /** A plot against time before any analysis is drawn on it. */
@@ -41,20 +43,22 @@ export interface TimePlot {
 }
 
 export function timePlot(request: TimePlotRequest): TimePlot {
-  const { kind, inputs, wellIds, options, units, direction, smoothing, diagnosed = null } = request
+  const { kind, inputs, wellIds, options, units, direction, smoothing, diagnosed = null, view = null } = request
   const clock = plotClock(kind, inputs, options, unitById(units.time).toSI)
   const length_m = unitById(units.length).toSI
   const smoothed = smoothing === undefined ? {} : { smoothing }
-  const wells = plotWells({ kind, inputs, wellIds, clock, length_m, ...smoothed })
+  const viewed = view && viewedAxis(kind, view, units)
+  const within = viewed ? ([viewed.min, viewed.max] as const) : undefined
+  const wells = plotWells({ kind, inputs, wellIds, clock, length_m, within, ...smoothed })
   const wellId = hasDerivative(kind) && wells.some((well) => well.wellId === diagnosed) ? diagnosed : null
-  const x = timeAxis(kind, wells, units)
+  const x = viewed ?? timeAxis(kind, wells, units)
   return {
     kind,
     clock,
     wells,
     units,
     x,
-    y: drawdownAxis(kind, wells, units, direction),
+    y: drawdownAxis(kind, wells, units, { inverse: direction === 'down', fromZero: viewed === null }),
     curve_s: curveTimes(kind, x, clock),
     regimes: drawnRegimes({ inputs, wellId, clock, ...smoothed }),
   }
@@ -81,16 +85,27 @@ const ys = (wells: PlotWell[]) => [
 ]
 
 function timeAxis(kind: TimePlot['kind'], wells: PlotWell[], units: PlotUnits): Axis {
-  const unit = unitById(units.time).label
-  if (kind === 'linear') return linearAxis(xs(wells), `time since pumping began, ${unit}`, { parts: 8 })
-  if (kind === 'recovery') return ratioAxis(xs(wells))
-  return logAxis(xs(wells), `time since pumping began, ${unit}`)
+  if (kind === 'linear') return linearAxis(xs(wells), timeTitle(kind, units), { parts: 8 })
+  if (kind === 'recovery') return ratioAxis(xs(wells), timeTitle(kind, units))
+  return logAxis(xs(wells), timeTitle(kind, units))
+}
+
+const timeTitle = (kind: TimePlot['kind'], units: PlotUnits) =>
+  kind === 'recovery'
+    ? "t/t', time since pumping began over time since it stopped"
+    : `time since pumping began, ${unitById(units.time).label}`
+
+/** A part of the axis; a linear one reaches to the next round numbers. */
+function viewedAxis(kind: TimePlot['kind'], [min, max]: readonly [number, number], units: PlotUnits): Axis {
+  const title = timeTitle(kind, units)
+  if (kind === 'linear') return linearAxis([min, max], title, { fromZero: false })
+  return { scale: 'log', min, max, title, inverse: false }
 }
 
 /** From 1, where recovery ends, outwards. */
-function ratioAxis(ratios: number[]): Axis {
+function ratioAxis(ratios: number[], title: string): Axis {
   const [, most] = extentOf(ratios) ?? [1, 100]
-  const axis = logAxis([1, most], "t/t', time since pumping began over time since it stopped")
+  const axis = logAxis([1, most], title)
   return { ...axis, min: 1 }
 }
 
@@ -103,9 +118,15 @@ export function withoutNoise(values: number[]): number[] {
 }
 
 /** Readings set the scale: stray derivatives of a noisy log must not flatten the plot. */
-function drawdownAxis(kind: TimePlot['kind'], wells: PlotWell[], units: PlotUnits, direction: 'down' | 'up'): Axis {
+function drawdownAxis(
+  kind: TimePlot['kind'],
+  wells: PlotWell[],
+  units: PlotUnits,
+  { inverse, fromZero }: { inverse: boolean; fromZero: boolean },
+): Axis {
   const unit = unitById(units.length).label
   if (kind === 'log-log') return logAxis(ys(wells), `drawdown and its derivative, ${unit}`)
   const title = kind === 'recovery' ? `residual drawdown, ${unit}` : `drawdown, ${unit}`
-  return linearAxis(withoutNoise(measured(wells)), title, { inverse: direction === 'down' })
+  // A part of the plot is looked at for its detail, at the beginning around zero too.
+  return linearAxis(fromZero ? withoutNoise(measured(wells)) : measured(wells), title, { inverse, fromZero })
 }

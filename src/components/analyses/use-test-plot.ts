@@ -23,10 +23,12 @@ interface PlotSettings {
   moment: Ref<number | null>
   /** Well whose derivative is diagnosed. */
   diagnosed: Ref<string | null>
+  /** Ends of the part of the time axis that is looked at; null: all of it. */
+  view: Ref<[number, number] | null>
 }
 
 /** The plot that stands, and the drawing that follows the mouse. The plot is made anew only when what it shows changes. */
-export function useTestPlot({ smoothing, moment, diagnosed }: PlotSettings) {
+export function useTestPlot({ smoothing, moment, diagnosed, view }: PlotSettings) {
   const { snapshot, present, result, calculated, moving, plotKind } = useWorkbench()
   const units = useUnits()
   const preferences = usePreferences()
@@ -57,7 +59,8 @@ export function useTestPlot({ smoothing, moment, diagnosed }: PlotSettings) {
     if (kind === 'distance') return distancePlot({ ...common, time_s: moment.value })
     const options = history.value
     if (kind === 'composite') return compositePlot({ ...common, options })
-    return timePlot({ ...common, kind, options, smoothing: smoothing.value, diagnosed: diagnosed.value })
+    const looked = { smoothing: smoothing.value, diagnosed: diagnosed.value, view: view.value }
+    return timePlot({ ...common, kind, options, ...looked })
   })
 
   const fit = computed<Fit | null>(() =>
