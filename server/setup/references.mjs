@@ -29,11 +29,13 @@ const references = [
     'published-cases',
     'readings-filters',
     'readings-zones',
+    'regional-statistics',
     'robust-fits',
     'test-kinds',
     'units-factors',
   ].map((name) => ({ name, command: python, script: `${name}.py`, prints: true })),
   { name: 'gstat-kriging', command: 'Rscript', script: 'gstat-kriging.R', prints: true },
+  { name: 'gstat-means', command: 'Rscript', script: 'gstat-means.R', prints: true },
   { name: 'crs-geodesics', command: 'sh', script: 'crs-geodesics.sh', prints: false },
 ]
 
