@@ -146,7 +146,7 @@ export const analysisOptions = z.object({
   wellIds: z.array(z.string()).max(60),
   window: window.nullable(),
   line: z.object({ slope: z.number(), intercept: z.number() }).nullable().optional(),
-  match: z.record(z.string().max(40), z.number()).nullable().optional(),
+  match: z.record(z.string().max(60), z.number()).nullable().optional(),
   objective: z.enum(['drawdown', 'log-drawdown']).optional(),
   weighting: z.enum(['equal', 'huber']).optional(),
   thinning: z.boolean().optional(),

@@ -18,7 +18,7 @@ export function withoutHiddenWells(analysis: Analysis, wells: Digest['wells'], s
   const visible = ({ wellId }: { wellId: string }) => seen.has(wellId)
   return {
     ...analysis,
-    options: options && withWells(analysisOptions.parse(options), seen),
+    options: options && withWells(analysisOptions.parse(options), seen, isNamed),
     result: {
       ...result,
       residuals: result.residuals.filter(visible),
@@ -36,7 +36,9 @@ export function withoutHiddenWells(analysis: Analysis, wells: Digest['wells'], s
   }
 }
 
-const withWells = (options: AnalysisOptions, seen: Set<string>): AnalysisOptions => ({
+/** A curve laid by hand names the wells whose rates it multiplies. */
+const withWells = (options: AnalysisOptions, seen: Set<string>, isNamed: (id: string) => boolean): AnalysisOptions => ({
   ...options,
   wellIds: options.wellIds.filter((id) => seen.has(id)),
+  ...(options.match && { match: Object.fromEntries(Object.entries(options.match).filter(([id]) => !isNamed(id))) }),
 })

@@ -53,6 +53,15 @@ const columns = ({ settings, wellIds, active }: Wanted) => ({
   active,
 })
 
+/** A reader is told nothing of corrections of wells that are hidden from them. */
+const ofWellsSeen = (listed: CorrectionRecord[], wells: TestWellRow[]): CorrectionRecord[] =>
+  listed
+    .map((one) => ({
+      ...one,
+      wellIds: one.wellIds?.filter((id) => wells.some(({ row }) => row.wellId === id)) ?? null,
+    }))
+    .filter(({ wellIds }) => wellIds?.length !== 0)
+
 const covers = (wellIds: number[] | null, wellId: number) => wellIds === null || wellIds.includes(wellId)
 
 export function createCorrectionsService(deps: Deps, needs: CorrectionsNeeds) {
@@ -117,12 +126,14 @@ export function createCorrectionsService(deps: Deps, needs: CorrectionsNeeds) {
 
   return {
     async list(viewer: Viewer, testId: number): Promise<TestCorrections> {
-      const { found } = await pumpingTests.whole(db, viewer, testId)
+      const { found, parts } = await pumpingTests.whole(db, viewer, testId)
+      const listed = (await repository.listCorrections(db, testId)).map(viewOf)
+      const may = mayEdit(viewer, found.test)
       return {
-        corrections: (await repository.listCorrections(db, testId)).map(viewOf),
+        corrections: may ? listed : ofWellsSeen(listed, parts.wells),
         series: await listOutsideSeries(db, testId),
         otherWells: await otherWells.list(db, viewer, testId),
-        mayEdit: mayEdit(viewer, found.test),
+        mayEdit: may,
       }
     },
 

@@ -31,7 +31,7 @@ export async function findOtherWell(executor: Executor, id: number): Promise<Oth
 /** A well of the map that the viewer may see. */
 export async function findWellForTest(executor: Executor, viewer: Viewer, id: number) {
   const [row] = await executor
-    .select({ id: wells.id, code: wells.code, position: wells.position })
+    .select({ id: wells.id, code: wells.code, position: wells.position, visibility: wells.visibility })
     .from(wells)
     .where(and(eq(wells.id, id), readable.wells(viewer)))
   return row ?? null

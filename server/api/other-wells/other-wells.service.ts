@@ -33,6 +33,9 @@ export function createOtherWellsService(deps: Deps, { pumpingTests, markInputsCh
     const wellId = wanted.place.kind === 'well' ? wanted.place.wellId : null
     const well = wellId === null ? null : await repository.findWellForTest(tx, viewer, wellId)
     if (wellId !== null && !well) throw fieldError('place.wellId', 'pumping-test/unknown-well')
+    // As for observation wells: nobody analyses what rests on a well that they may not see.
+    if (well?.visibility === 'private' && found.test.visibility !== 'private')
+      throw fieldError('place.wellId', 'correction/other-well-private')
     const label = wanted.label ?? well!.code
     const listed = await repository.listOtherWells(tx, viewer, testId)
     if (listed.some(({ row }) => row.id !== own && row.label === label))

@@ -4,6 +4,7 @@ import type { Executor } from '../../db/client.ts'
 import { readable } from '../../db/readable.ts'
 import {
   aquiferUnits,
+  outsideSeries,
   pumpingTests,
   rateSteps,
   readingSeries,
@@ -114,6 +115,17 @@ export const listLoggedWells = (executor: Executor, testId: number) =>
     .from(readingSeries)
     .innerJoin(testWells, eq(testWells.id, readingSeries.testWellId))
     .where(and(eq(readingSeries.pumpingTestId, testId), isNull(readingSeries.deletedAt)))
+
+/** How many series from outside were put on the clock of a test by their clock times. */
+export const countClockSeries = (executor: Executor, testId: number): Promise<number> =>
+  executor.$count(
+    outsideSeries,
+    and(
+      eq(outsideSeries.pumpingTestId, testId),
+      isNull(outsideSeries.deletedAt),
+      sql`json_value(${outsideSeries.mapping}, '$.time.kind') = 'clock'`,
+    ),
+  )
 
 /** Wells the viewer may see, with what a test needs of them. */
 export function findWellsForTest(executor: Executor, viewer: Viewer, ids: number[]) {

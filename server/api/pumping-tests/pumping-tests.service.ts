@@ -194,7 +194,8 @@ export function createPumpingTestsService(deps: Deps, { wells, markInputsChanged
         const input = { ...changed, visibility: before.visibility }
         const { row, wellRows } = await resolve(tx, viewer, input, before.embargoUntil)
         if (!(await repository.updatePumpingTest(tx, id, rowVersion, row))) throw new AppError('edit/conflict')
-        checkLogs(await repository.listLoggedWells(tx, id), before, row, wellRows)
+        const logged = await repository.listLoggedWells(tx, id)
+        checkLogs({ logged, clockSeries: await repository.countClockSeries(tx, id) }, before, row, wellRows)
         await write(tx, id, input, wellRows)
         await markInputsChanged(tx, id)
         await valuesChanged(tx, id)

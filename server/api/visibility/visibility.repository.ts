@@ -1,7 +1,7 @@
-import { and, eq, inArray, isNotNull, lte, ne, type SQL } from 'drizzle-orm'
+import { and, eq, inArray, isNotNull, isNull, lte, ne, or, type SQL } from 'drizzle-orm'
 import type { Executor } from '../../db/client.ts'
 import { readable } from '../../db/readable.ts'
-import { pumpingTests, testWells, wells } from '../../db/schema/index.ts'
+import { otherWells, pumpingTests, testWells, wells } from '../../db/schema/index.ts'
 import { recountingWells } from '../../db/well-cells.ts'
 import type { Viewer } from '#shared/contracts/permissions.ts'
 import type { Exposure } from './exposure.ts'
@@ -63,15 +63,24 @@ export const exposuresOfTests = (executor: Executor, wellId: number): Promise<Ex
     .from(pumpingTests)
     .where(and(eq(pumpingTests.wellId, wellId), readable.pumpingTests(steward)))
 
-/** Tests that are not private and in which the well is observed: they would hold a private well. */
+/** Tests that are not private and in which the well is observed, or superposed: they would hold a private well. */
 export const countOpenTestsWith = (executor: Executor, wellId: number): Promise<number> =>
   executor.$count(
     pumpingTests,
     and(
       ne(pumpingTests.visibility, 'private'),
-      inArray(
-        pumpingTests.id,
-        executor.select({ id: testWells.pumpingTestId }).from(testWells).where(eq(testWells.wellId, wellId)),
+      or(
+        inArray(
+          pumpingTests.id,
+          executor.select({ id: testWells.pumpingTestId }).from(testWells).where(eq(testWells.wellId, wellId)),
+        ),
+        inArray(
+          pumpingTests.id,
+          executor
+            .select({ id: otherWells.pumpingTestId })
+            .from(otherWells)
+            .where(and(eq(otherWells.wellId, wellId), isNull(otherWells.deletedAt))),
+        ),
       ),
       readable.pumpingTests(steward),
     ),
@@ -82,9 +91,18 @@ export const countPrivateWellsOf = (executor: Executor, testId: number): Promise
     wells,
     and(
       eq(wells.visibility, 'private'),
-      inArray(
-        wells.id,
-        executor.select({ id: testWells.wellId }).from(testWells).where(eq(testWells.pumpingTestId, testId)),
+      or(
+        inArray(
+          wells.id,
+          executor.select({ id: testWells.wellId }).from(testWells).where(eq(testWells.pumpingTestId, testId)),
+        ),
+        inArray(
+          wells.id,
+          executor
+            .select({ id: otherWells.wellId })
+            .from(otherWells)
+            .where(and(eq(otherWells.pumpingTestId, testId), isNull(otherWells.deletedAt))),
+        ),
       ),
       readable.wells(steward),
     ),

@@ -68,6 +68,11 @@ export const correctionErrors = {
     status: 409,
     sentence: ({ label }) => `${label} is among the other wells already. Add its rates there, or choose another name.`,
   },
+  'correction/other-well-private': {
+    status: 400,
+    sentence: () =>
+      'This well is private and the test is not. Type its place and another name, or ask a steward to show it.',
+  },
   'correction/other-well-in-test': {
     status: 400,
     sentence: ({ label }) => `${label} stands on a well of this test. Its rates belong to the test itself.`,

@@ -35,6 +35,11 @@ export const pumpingTestErrors = {
     sentence: () =>
       'Readings with clock times were read from the start as it is. Delete those logs, change the start, and upload them again.',
   },
+  'pumping-test/start-series': {
+    status: 400,
+    sentence: () =>
+      'A series of air pressure, stage or tides has clock times, which were read from the start as it is. Remove its corrections and the series, change the start, and upload it again.',
+  },
   'pumping-test/well-has-readings': {
     status: 400,
     sentence: () => 'A well with readings cannot leave the test. Delete its readings first.',

@@ -2,8 +2,9 @@ import { beforeAll, describe, expect, it } from 'vitest'
 import type { Analysis } from '#shared/contracts/analyses.ts'
 import type { CorrectionRecord } from '#shared/contracts/corrections.ts'
 import type { Problem } from '#shared/contracts/problem.ts'
+import type { Well } from '#shared/contracts/wells.ts'
 import type { OutsideRow } from '#shared/contracts/outside-series.ts'
-import { accept, publishTest, readAnalysis, submitDraft } from '../../support/analysed-test.ts'
+import { accept, inputOf, publishTest, readAnalysis, submitDraft } from '../../support/analysed-test.ts'
 import { useApp, type SignedIn } from '../../support/app.ts'
 import { makeRegion, makeUnit, saveAnalysis } from '../../support/domain.ts'
 import {
@@ -132,6 +133,23 @@ describe('a correction', () => {
     expect([shown.corrections.length, shown.series.length, shown.mayEdit]).toEqual([1, 1, false])
   })
 
+  it('names no well that is hidden from its reader', async () => {
+    const entered = await enterWeatherTest(analyst, unitId)
+    const { id: seriesId } = await uploadPressure(analyst, entered.id)
+    await correct(analyst, entered.id, { ...barometric(seriesId), wellIds: [entered.observation] }).expect(201)
+    await publishTest(steward, entered)
+    const wellIds = async (person: SignedIn) =>
+      (await correctionsOf(person, entered.id)).corrections.map((one) => one.wellIds)
+    expect(await wellIds(reader)).toEqual([[entered.observation]])
+    const { rowVersion } = (await steward.get(`/api/wells/${entered.observation}`).expect(200)).body as Well
+    await steward
+      .put(`/api/wells/${entered.observation}/visibility`)
+      .send({ rowVersion, visibility: 'internal', embargoUntil: null })
+      .expect(200)
+    expect(await wellIds(analyst)).toEqual([[entered.observation]])
+    expect(await wellIds(reader)).toEqual([])
+  })
+
   it('is made once for each cause, for wells of the test, and by a series that measures its cause', async () => {
     const { id, pumped } = await enterWeatherTest(analyst, unitId)
     const { id: seriesId } = await uploadPressure(analyst, id)
@@ -197,6 +215,24 @@ describe('a series from outside', () => {
     const answer = await uploadOutside(analyst, id, text, { mapping: pressureMapping(unit) }).expect(400)
     expect(codeOf(answer)).toBe(code)
     expect((await correctionsOf(analyst, id)).series).toEqual([])
+  })
+
+  it('with clock times holds the start of its test, which its times were read from', async () => {
+    const { id, pumped, observation, test } = await enterWeatherTest(analyst, unitId)
+    const time = { kind: 'clock' as const, column: 0, dateColumn: null, dateOrder: 'ymd' as const, zone: null }
+    const text = 'time,pressure\n2019-03-10 09:00,1013\n2019-03-14 09:00,1009\n2019-03-16 09:00,1015'
+    const uploaded = await uploadOutside(analyst, id, text, { mapping: { ...pressureMapping(), time } }).expect(201)
+    const { series } = uploaded.body as { series: { id: number; firstS: number } }
+    expect(series.firstS).toBe(-4 * 86_400)
+    const move = () =>
+      analyst.put(`/api/pumping-tests/${id}`).send({
+        ...inputOf({ unitId }, pumped, observation),
+        startLocal: '2019-03-13T09:00',
+        rowVersion: test.rowVersion,
+      })
+    expect(codeOf(await move())).toBe('pumping-test/start-series')
+    await analyst.delete(`/api/outside-series/${series.id}?rowVersion=1`).expect(200)
+    await move().expect(200)
   })
 
   it('is kept while a correction follows it, and replaced by another that the correction follows then', async () => {

@@ -76,7 +76,12 @@ describe('another well that pumped', () => {
     const draft = (await saveAnalysis(analyst, id, 'theis')).body as Analysis
     const submitted = await submitDraft(analyst, draft)
     await accept(reviewer, submitted).expect(200)
+    const match = { T: 0.005, S: 2e-4, [`rate_factor:${well.code}`]: 0.9 }
+    const laid = (await saveAnalysis(analyst, id, 'theis', { match })).body as Analysis
+    await accept(reviewer, await submitDraft(analyst, laid)).expect(200)
     await publishTest(steward, entered)
+    expect((await readAnalysis(analyst, laid.id)).options).toMatchObject({ match })
+    expect(JSON.stringify(await readAnalysis(reader, laid.id))).not.toContain(`:${well.code}"`)
     expect(JSON.stringify(await readAnalysis(analyst, draft.id))).toContain(well.code)
     expect(JSON.stringify(await readAnalysis(reader, draft.id))).not.toContain(`"${well.code}"`)
     expect(JSON.stringify(await readAnalysis(reader, draft.id))).not.toContain(`:${well.code}"`)
@@ -89,6 +94,22 @@ describe('another well that pumped', () => {
       .send({ ...moved, rowVersion: well.rowVersion })
       .expect(200)
     expect((await readAnalysis(analyst, draft.id)).inputsChanged).toBe(true)
+  })
+
+  it('that is private stands in no test that others see, so that all who analyse have the same inputs', async () => {
+    const { id } = await enterTest(analyst, { unitId })
+    const wellId = await createWell(analyst, { x: islandMiddle[0] + 0.004 })
+    const hide = async () => {
+      const { rowVersion } = (await steward.get(`/api/wells/${wellId}`).expect(200)).body as Well
+      const hidden = { rowVersion, visibility: 'private', embargoUntil: null }
+      return steward.put(`/api/wells/${wellId}/visibility`).send(hidden)
+    }
+    const wanted = makeOther({ label: null, place: { kind: 'well', wellId } })
+    const { id: otherId } = (await list(analyst, id, wanted).expect(201)).body as OtherWellRecord
+    expect(codeOf(await hide())).toBe('visibility/tests-more-visible')
+    await analyst.delete(`/api/other-wells/${otherId}?rowVersion=1`).expect(200)
+    expect((await hide()).status).toBe(200)
+    expect(codeOf(await list(analyst, id, wanted))).toBe('correction/other-well-private')
   })
 
   it('has a name and a place of its own, a rate above zero, and is listed once', async () => {
