@@ -1,13 +1,16 @@
 import type { EChartsOption } from 'echarts'
 import { AnalysisError } from '#shared/hydraulics/analysis-error.ts'
 import type { AnalysisInputs } from '#shared/hydraulics/analysis.ts'
+import type { OwnInputs, OwnKindId } from '#shared/hydraulics/any-kind.ts'
 import { rateHistory } from '#shared/hydraulics/rates.ts'
 import { distanceDrawing, distancePlot } from './distance-plot.ts'
 import type { Fit } from './fit-band.ts'
 import { fitDrawing, type FitDrawing } from './fit-drawing.ts'
+import { firstKindPlot, kindPlot, type KindFit, type KindPlotUnits } from './kind-plot.ts'
 import { paperTheme } from './paper-theme.ts'
 import { plotFrame, type Size } from './plot-frame.ts'
 import { plotOfMethod } from './plot-kinds.ts'
+import { simpleChart } from './simple-chart.ts'
 import { testChart, type TestPlot } from './test-chart.ts'
 import { timePlot, type PlotUnits, type TimePlotRequest } from './time-plot.ts'
 
@@ -18,6 +21,19 @@ export interface ReportChartRequest {
   inputs: AnalysisInputs
   units: PlotUnits
   direction: 'down' | 'up'
+}
+
+export interface KindChartRequest {
+  kind: OwnKindId
+  inputs: OwnInputs
+  units: KindPlotUnits
+  direction: 'down' | 'up'
+}
+
+/** An analysis of a test of a kind of its own in the plot that it is judged by. */
+export function kindChart({ kind, ...request }: KindChartRequest, fit: KindFit): EChartsOption {
+  const plot = kindPlot(kind, firstKindPlot(kind, fit.method), { ...request, fit })
+  return simpleChart(plot, plotFrame(REPORT_CHART, { withStrip: false }), paperTheme)
 }
 
 /** All readings of a test; null where nothing was pumped, so that there is no clock. */

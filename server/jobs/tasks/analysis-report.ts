@@ -1,8 +1,10 @@
+import type { EChartsOption } from 'echarts'
 import type { ReportGiven } from '#shared/words/report/document.ts'
 import { analysisReport } from '#shared/words/report/analysis-report.ts'
 import { distanceText } from '#shared/words/distances.ts'
+import type { KindFit } from '#shared/charts/kind-plot.ts'
 import { REPORT_CHART } from '#shared/charts/report-charts.ts'
-import { reportChart, reportSketch, type PicturedAnalysis } from '#shared/charts/report-pictures.ts'
+import { kindReportChart, reportChart, reportSketch, type PicturedAnalysis } from '#shared/charts/report-pictures.ts'
 import { chartSvg, inOneFont } from '../../reports/draw-charts.ts'
 import { reportDefinition, type ReportPictures } from '../../reports/report-pdf.ts'
 import { writePdf } from '../../reports/write-pdf.ts'
@@ -12,9 +14,15 @@ export interface AnalysisReportInput {
   direction: 'down' | 'up'
 }
 
+const drawn = (option: EChartsOption | null) => option && chartSvg(option, REPORT_CHART)
+
 function picturesOf({ given, direction }: AnalysisReportInput): ReportPictures {
   const { snapshot, units } = given
-  if ('kind' in snapshot) return { sketch: null, plot: () => null }
+  if ('kind' in snapshot) {
+    const request = { ...snapshot, units, direction }
+    const analyses = given.analyses as unknown as ({ id: number } & KindFit)[]
+    return { sketch: null, plot: (analysisId) => drawn(kindReportChart(request, analyses, analysisId)) }
+  }
   const { inputs, surroundings } = snapshot
   const request = { inputs, units, direction }
   const edges = surroundings.map((edge) => ({ ...edge, chosen: false }))
@@ -22,8 +30,7 @@ function picturesOf({ given, direction }: AnalysisReportInput): ReportPictures {
   return {
     sketch: inOneFont(svg),
     plot(analysisId) {
-      const option = reportChart(request, given.analyses as unknown as PicturedAnalysis[], analysisId)
-      return option && chartSvg(option, REPORT_CHART)
+      return drawn(reportChart(request, given.analyses as unknown as PicturedAnalysis[], analysisId))
     },
   }
 }

@@ -1,6 +1,6 @@
 import type { Analysis } from '#shared/contracts/analyses.ts'
 import type { AnalysisOptions, Finding, OtherEstimate } from '#shared/hydraulics/analysis.ts'
-import { isOwnKind, kindOfMethod, methodsOf } from '#shared/hydraulics/any-kind.ts'
+import { isOwnKind, kindOfMethod, methodsOf, type OwnKindId } from '#shared/hydraulics/any-kind.ts'
 import { methods, type MethodId } from '#shared/hydraulics/catalogue.ts'
 import type { ValidityRule } from '#shared/hydraulics/method.ts'
 import { formatElapsed } from '#shared/quantities/elapsed.ts'
@@ -80,9 +80,17 @@ const changedInputs: ReportBlock = {
   ],
 }
 
+const kindCaptions: Record<OwnKindId, string> = {
+  step: 'Drawdown over rate of each step, and the losses fitted to it',
+  slug: 'Head over first displacement, and what was fitted to it',
+  'specific-capacity': 'Transmissivity for the storativity assumed, and for others',
+}
+
 function plotBlock({ id, method }: Analysis, { snapshot }: ReportGiven): ReportBlock[] {
-  return isConstantRate(method) && !('kind' in snapshot) && snapshot.inputs.series.length > 0
-    ? [{ kind: 'plot', analysisId: id, caption: 'Readings, fitted curve with its 95 % band, and residuals' }]
+  const plot = (caption: string): ReportBlock[] => [{ kind: 'plot', analysisId: id, caption }]
+  if ('kind' in snapshot) return kindOfMethod(method) === snapshot.kind ? plot(kindCaptions[snapshot.kind]) : []
+  return isConstantRate(method) && snapshot.inputs.series.length > 0
+    ? plot('Readings, fitted curve with its 95 % band, and residuals')
     : []
 }
 

@@ -1,7 +1,8 @@
 import type { EChartsOption } from 'echarts'
 import { computed } from 'vue'
 import type { Analysis, KindWorkbenchInputs, WorkbenchInputs } from '#shared/contracts/analyses.ts'
-import { reportChart, reportSketch, type PicturedAnalysis } from '#shared/charts/report-pictures.ts'
+import type { KindFit } from '#shared/charts/kind-plot.ts'
+import { kindReportChart, reportChart, reportSketch, type PicturedAnalysis } from '#shared/charts/report-pictures.ts'
 import { distanceText } from '#shared/words/distances.ts'
 import { sketchText } from '#shared/words/test-sketch.ts'
 import { useUnits } from '../../composables/useUnits.ts'
@@ -23,7 +24,11 @@ export function useReportPictures(
 
   return computed<ReportPictures>(() => {
     const given = snapshot()
-    if ('kind' in given) return { sketch: null, chart: () => null }
+    if ('kind' in given) {
+      const request = { ...given, units: units.system.value, direction: preferences.drawdownDirection }
+      const fits = analyses() as unknown as ({ id: number } & KindFit)[]
+      return { sketch: null, chart: (analysisId) => kindReportChart(request, fits, analysisId) }
+    }
     const { inputs, surroundings } = given
     const distance = (metres: number) => distanceText(metres, units.system.value)
     const edges = surroundings.map((edge) => ({ ...edge, chosen: false }))

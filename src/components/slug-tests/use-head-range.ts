@@ -1,4 +1,5 @@
 import { computed } from 'vue'
+import { headsOf } from '#shared/charts/kind-plot.ts'
 import type { SlugOptions } from '#shared/hydraulics/slug/slug-test.ts'
 import { useKindBench } from '../kind-tests/use-kind-bench.ts'
 
@@ -10,14 +11,10 @@ export interface HeadRange {
 
 /** Between which heads the line is drawn: those of the method until somebody says others; null where there is no line. */
 export function useHeadRange() {
-  const { present, method, setOptions } = useKindBench()
+  const { present, setOptions } = useKindBench()
 
-  const recommended = computed(() => {
-    const spec = method.value?.options.find((option) => option.kind === 'heads')
-    return spec?.kind === 'heads' ? spec.default : null
-  })
   const given = computed(() => (present.value?.options as SlugOptions | undefined)?.heads ?? null)
-  const heads = computed<HeadRange | null>(() => recommended.value && (given.value ?? recommended.value))
+  const heads = computed<HeadRange | null>(() => headsOf(present.value))
   const setHeads = (range: HeadRange | null) => setOptions({ heads: range })
 
   return { heads, given, setHeads }
