@@ -1,5 +1,5 @@
 import { AnalysisError } from '../analysis-error.ts'
-import { regression, regressionCovariance, type Regression } from './regression.ts'
+import { regression, regressionBeside, regressionCovariance, type Regression } from './regression.ts'
 import type { Learned, Term } from './term.ts'
 
 interface Learning {
@@ -45,14 +45,20 @@ const explainedOf = (fit: Regression, without: Regression) =>
   without.squares > 0 ? Math.max(0, 1 - fit.squares / without.squares) : 0
 
 function bestLags(terms: Term[], time_s: number[], drawdown_m: number[]): number[] {
-  const parts = terms.map((term) => term.lags_s.map((lag_s) => () => term.columns(time_s, lag_s)))
+  const parts = terms.map((): number[][][] => [])
   const chosen = terms.map(() => 0)
-  const columnsAt = (term: number, lag: number) => (parts[term]?.[lag] as () => number[][])()
+  // Reading a series at hundreds of lags is most of the work, and every round asks for the same.
+  const columnsAt = (term: number, lag: number) =>
+    ((parts[term] as number[][][])[lag] ??= (terms[term] as Term).columns(
+      time_s,
+      (terms[term] as Term).lags_s[lag] as number,
+    ))
   for (let round = 0; round < MOST_ROUNDS; round++) {
     const moved = terms.map(({ lags_s }, k) => {
       if (lags_s.length === 1) return false
       const beside = terms.flatMap((_, i) => (i === k ? [] : columnsAt(i, chosen[i] as number)))
-      const best = leastSquares(lags_s.length, (lag) => regression([...beside, ...columnsAt(k, lag)], drawdown_m))
+      const withLag = regressionBeside(beside, drawdown_m)
+      const best = leastSquares(lags_s.length, (lag) => withLag(columnsAt(k, lag)))
       const changed = best !== chosen[k]
       chosen[k] = best
       return changed

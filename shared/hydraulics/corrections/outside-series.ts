@@ -5,9 +5,10 @@ import type { Outside } from './correction.ts'
 /** Reads an outside series at any moment, linear between its values; beyond its ends the last value stands. */
 export type ReadOutside = (time_s: number) => number
 
-interface Point {
-  time: number
-  value: number
+/** Times that do not fall, and their values. */
+interface Points {
+  times: Float64Array
+  values: Float64Array
 }
 
 /** An hour more than a daily wave of twelve hours changes noticeably in (common practice). */
@@ -20,23 +21,46 @@ export function readOutside(
   to_s: number,
 ): { read: ReadOutside; findings: Finding[] } {
   if (elapsed_s.length !== value_m.length) throw new AnalysisError('analysis/uneven-series', { wellId: '' })
-  const points = elapsed_s
-    .flatMap((time, i) =>
-      Number.isFinite(time) && Number.isFinite(value_m[i]) ? [{ time, value: value_m[i] as number }] : [],
-    )
-    .sort((a, b) => a.time - b.time)
-  const [first, last] = [points[0], points.at(-1)]
-  if (!first || !last || first.time > from_s || last.time < to_s) throw uncovered(first?.time, last?.time, from_s, to_s)
+  const points = pointsOf(elapsed_s, value_m)
+  const [first, last] = [points.times[0], points.times.at(-1)]
+  if (first === undefined || last === undefined || first > from_s || last < to_s)
+    throw uncovered(first, last, from_s, to_s)
   return { read: reader(points), findings: gapFindings(points, from_s, to_s) }
 }
 
-function reader(points: Point[]): ReadOutside {
+/** Hundreds of thousands of values, asked for well by well: sorted only where they do not rise already. */
+function pointsOf(elapsed_s: readonly number[], value_m: readonly number[]): Points {
+  const [times, values] = [new Float64Array(elapsed_s.length), new Float64Array(elapsed_s.length)]
+  let count = 0
+  let rises = true
+  for (let i = 0; i < elapsed_s.length; i++) {
+    const [time, value] = [elapsed_s[i] as number, value_m[i] as number]
+    if (!Number.isFinite(time) || !Number.isFinite(value)) continue
+    if (count > 0 && time < (times[count - 1] as number)) rises = false
+    times[count] = time
+    values[count] = value
+    count += 1
+  }
+  const points = { times: times.subarray(0, count), values: values.subarray(0, count) }
+  return rises ? points : inOrder(points)
+}
+
+function inOrder({ times, values }: Points): Points {
+  const order = Array.from(times, (_, i) => i).sort((a, b) => (times[a] as number) - (times[b] as number))
+  return {
+    times: Float64Array.from(order, (i) => times[i] as number),
+    values: Float64Array.from(order, (i) => values[i] as number),
+  }
+}
+
+function reader({ times, values }: Points): ReadOutside {
   return (time) => {
-    const right = upperIndex(points, time)
-    const b = points[right] as Point
-    const a = points[Math.max(0, right - 1)] as Point
-    const share = b.time > a.time ? Math.min(1, (time - a.time) / (b.time - a.time)) : 1
-    return a.value + (b.value - a.value) * Math.max(0, share)
+    const right = upperIndex(times, time)
+    const left = Math.max(0, right - 1)
+    const [a, b] = [times[left] as number, times[right] as number]
+    const [from, to] = [values[left] as number, values[right] as number]
+    const share = b > a ? Math.min(1, (time - a) / (b - a)) : 1
+    return from + (to - from) * Math.max(0, share)
   }
 }
 
@@ -47,9 +71,9 @@ function uncovered(first: number | undefined, last: number | undefined, from_s: 
 }
 
 /** A long gap where the readings are: what lies between its ends is a guess. */
-function gapFindings(points: Point[], from_s: number, to_s: number): Finding[] {
-  const gap_s = points.reduce((longest, { time }, i) => {
-    const before = points[i - 1]?.time ?? time
+function gapFindings({ times }: Points, from_s: number, to_s: number): Finding[] {
+  const gap_s = times.reduce((longest, time, i) => {
+    const before = times[i - 1] ?? time
     return time > from_s && before < to_s ? Math.max(longest, time - before) : longest
   }, 0)
   return gap_s > LONGEST_GAP_S
@@ -58,12 +82,12 @@ function gapFindings(points: Point[], from_s: number, to_s: number): Finding[] {
 }
 
 /** Index of the first point at or after a time, by halving; the last one where all lie before. */
-function upperIndex(points: Point[], time: number): number {
+function upperIndex(times: Float64Array, time: number): number {
   let low = 0
-  let high = points.length - 1
+  let high = times.length - 1
   while (low < high) {
     const middle = (low + high) >> 1
-    if ((points[middle] as Point).time < time) low = middle + 1
+    if ((times[middle] as number) < time) low = middle + 1
     else high = middle
   }
   return low
