@@ -21,6 +21,9 @@ const unreachable = new Set([
   'ER_UNKNOWN_COM_ERROR',
 ])
 
+/** There is no room left: for the database's tables, or for files. */
+const full = new Set(['ER_DISK_FULL', 'ER_RECORD_FILE_FULL', 'ENOSPC', 'EDQUOT'])
+
 /**
  * The driver's code of an error, looked for behind the wrappers that libraries put around it. A rollback on a connection
  * that is gone fails without a code and hides why; whether the commit before it arrived is not known then, so that this
@@ -35,6 +38,7 @@ export function databaseCode(error: unknown): string | null {
 }
 
 export const isDuplicate = (error: unknown) => databaseCode(error) === 'ER_DUP_ENTRY'
+export const isFull = (error: unknown) => full.has(databaseCode(error) ?? '')
 export const isUnreachable = (error: unknown) => unreachable.has(databaseCode(error) ?? '')
 
 /** Runs a transaction again when the database says that it only lost a race. */

@@ -1,7 +1,7 @@
 import type { ErrorRequestHandler, Request, RequestHandler } from 'express'
 import type { Problem } from '#shared/contracts/problem.ts'
 import { errorText, type ErrorCode } from '#shared/words/errors/index.ts'
-import { isUnreachable } from '../db/retry.ts'
+import { isFull, isUnreachable } from '../db/retry.ts'
 import { AppError } from '../errors.ts'
 
 export const requestId = (req: Request): string => String(req.id ?? '')
@@ -15,6 +15,7 @@ const codeOf = (status: number): ErrorCode | undefined =>
 function toAppError(error: unknown, req: Request): AppError {
   if (error instanceof AppError) return error
   if (isUnreachable(error)) return new AppError('server/unavailable')
+  if (isFull(error)) return new AppError('server/full')
   const status = error instanceof Error && 'status' in error ? Number(error.status) : 500
   const code = codeOf(status)
   if (code) return new AppError(code, code === 'request/too-large' ? { limit: '1 MB' } : {})

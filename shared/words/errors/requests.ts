@@ -42,5 +42,10 @@ export const requestErrors = {
     sentence: () =>
       'The database does not answer at the moment. Your entries are kept on this page: try again shortly.',
   },
+  'server/full': {
+    status: 507,
+    sentence: () =>
+      'The server has no room left on its disk. Nothing was saved; your entries are kept on this page. Tell your administrator to make room, then try again.',
+  },
   'server/not-ready': { status: 503, sentence: ({ reason }) => `The server is not ready: ${reason}.` },
 } satisfies ErrorCatalogue
