@@ -16,7 +16,7 @@ import { AppError, fieldError, notFound } from '../../errors.ts'
 import type { SeriesProblem } from '../analyses/build-inputs.ts'
 import { recordAudit } from '../audit-trail/record-audit.ts'
 import type { OtherWellsService } from '../other-wells/other-wells.service.ts'
-import { listOutsideSeries, outsideOf } from '../outside-series/outside-series.service.ts'
+import { createOutsideValues, listOutsideSeries } from '../outside-series/outside-series.service.ts'
 import type { createPumpingTestsService } from '../pumping-tests/pumping-tests.service.ts'
 import { mayEdit, type TestWellRow } from '../pumping-tests/view.ts'
 import { checkProblems, isCorrectable } from './check-applied.ts'
@@ -68,6 +68,7 @@ export function createCorrectionsService(deps: Deps, needs: CorrectionsNeeds) {
   const { pumpingTests, otherWells, markInputsChanged, appliedTo } = needs
   const { db } = deps.connection
   const { now } = deps
+  const outsideOf = createOutsideValues()
 
   /** Everything of a correction that can be checked without applying it. */
   async function check(tx: Executor, viewer: Viewer, testId: number, wanted: Wanted, own: number | null) {

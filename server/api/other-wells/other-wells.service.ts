@@ -19,6 +19,9 @@ export interface OtherWellsNeeds {
 
 type Wanted = z.output<typeof otherWellInput>
 
+/** More than any test has about it; each costs every fit as much time as a well of the test. */
+const MOST_LISTED = 60
+
 /** Closer than this two wells are one and the same. */
 const SAME_PLACE_M = 0.5
 
@@ -40,6 +43,8 @@ export function createOtherWellsService(deps: Deps, { pumpingTests, markInputsCh
     const listed = await repository.listOtherWells(tx, viewer, testId)
     if (listed.some(({ row }) => row.id !== own && row.label === label))
       throw fieldError('label', 'correction/other-well-twice', { label })
+    if (own === null && listed.length >= MOST_LISTED)
+      throw new AppError('correction/other-wells-many', { most: MOST_LISTED })
     const { place, rateSteps, fitted, active } = wanted
     const row = { wellId, label, place, rateSteps, fitted, active }
     checkApart(row, well?.position ?? null, parts.wells)

@@ -1,4 +1,4 @@
-import { and, asc, eq, inArray, isNotNull, isNull, ne, or, sql, type SQL } from 'drizzle-orm'
+import { and, asc, eq, isNotNull, isNull, ne, or, sql, type SQL } from 'drizzle-orm'
 import type { OutsideRowQuery } from '#shared/contracts/outside-series.ts'
 import type { Executor } from '../../db/client.ts'
 import { outsideReadings, outsideSeries, readings, readingSeries, users } from '../../db/schema/index.ts'
@@ -44,19 +44,16 @@ export async function endSeries(executor: Executor, id: number, version: number,
   return result.affectedRows === 1
 }
 
-/** Times and values that were taken, in the order of the files. */
-export const listTaken = (executor: Executor, seriesIds: number[]) =>
-  seriesIds.length === 0
-    ? Promise.resolve([])
-    : executor
-        .select({
-          seriesId: outsideReadings.seriesId,
-          elapsedS: sql<number>`${outsideReadings.elapsedS}`.mapWith(Number),
-          value: sql<number>`${outsideReadings.value}`.mapWith(Number),
-        })
-        .from(outsideReadings)
-        .where(and(inArray(outsideReadings.seriesId, seriesIds), eq(outsideReadings.taken, true)))
-        .orderBy(asc(outsideReadings.seriesId), asc(outsideReadings.seq))
+/** Times and values that were taken, in the order of the file. */
+export const listTaken = (executor: Executor, seriesId: number) =>
+  executor
+    .select({
+      elapsedS: sql<number>`${outsideReadings.elapsedS}`.mapWith(Number),
+      value: sql<number>`${outsideReadings.value}`.mapWith(Number),
+    })
+    .from(outsideReadings)
+    .where(and(eq(outsideReadings.seriesId, seriesId), eq(outsideReadings.taken, true)))
+    .orderBy(asc(outsideReadings.seq))
 
 const conditions: Record<OutsideRowQuery['only'], SQL | undefined> = {
   all: undefined,

@@ -1,13 +1,15 @@
 import { createHash } from 'node:crypto'
 import type { OutsideInput, OutsideMapping, OutsideRowQuery } from '#shared/contracts/outside-series.ts'
 import type { Viewer } from '#shared/contracts/permissions.ts'
-import { outsideQuantities } from '#shared/hydraulics/corrections/kinds.ts'
+import { outsideQuantities, type OutsideQuantity } from '#shared/hydraulics/corrections/kinds.ts'
 import type { Outside } from '#shared/hydraulics/corrections/correction.ts'
 import type { Executor } from '../../db/client.ts'
 import { inTransaction, transactionOf, type Transaction } from '../../db/transaction.ts'
 import type { Deps } from '../../deps.ts'
+import { createCache } from '../../cache.ts'
 import { AppError, fieldError, notFound } from '../../errors.ts'
 import { recordAudit } from '../audit-trail/record-audit.ts'
+import { isCorrectable } from '../corrections/check-applied.ts'
 import type { createCorrectionsService } from '../corrections/corrections.service.ts'
 import { pageOf } from '../page-of.ts'
 import type { createPumpingTestsService } from '../pumping-tests/pumping-tests.service.ts'
@@ -36,6 +38,7 @@ export function createOutsideSeriesService(deps: Deps, { pumpingTests, correctio
   async function read(viewer: Viewer, testId: number, { bytes }: LogFile, mapping: OutsideMapping) {
     const { found } = await pumpingTests.whole(db, viewer, testId)
     if (!mayEdit(viewer, found.test)) throw new AppError('pumping-test/not-editable')
+    if (!isCorrectable(found.test.kind)) throw new AppError('correction/wrong-kind')
     const start = { instant: found.test.startAt.toISOString(), zone: found.test.zone }
     // Neither weather nor river knows when a pump is switched.
     const input = { bytes, mapping, context: { start, events_s: [] } }
@@ -109,7 +112,7 @@ export function createOutsideSeriesService(deps: Deps, { pumpingTests, correctio
 
     async values(viewer: Viewer, id: number) {
       await findVisible(viewer, id)
-      return drawnOf(await repository.listTaken(db, [id]))
+      return drawnOf(await repository.listTaken(db, id))
     },
 
     async file(viewer: Viewer, id: number): Promise<LogFile> {
@@ -140,20 +143,30 @@ export function createOutsideSeriesService(deps: Deps, { pumpingTests, correctio
 export const listOutsideSeries = async (executor: Executor, testId: number) =>
   (await repository.listSeries(executor, testId)).map(summaryOf)
 
+/** Series whose values are kept, up to 5 MB each: every view of a test asks for them, and they never change. */
+const mostKept = 8
+
 /** What corrections follow, by series: as metres of water, on the clock of the test. */
-export async function outsideOf(executor: Executor, ids: number[]): Promise<Map<number, Outside & { label: string }>> {
-  const found = new Map<number, Outside & { label: string }>()
-  const taken = await repository.listTaken(executor, ids)
-  for (const id of ids) {
-    const series = await repository.findSeries(executor, id)
-    if (!series) continue
-    const { toMetres } = outsideQuantities[series.row.quantity]
-    const own = taken.filter(({ seriesId }) => seriesId === id)
-    found.set(id, {
-      label: series.row.label,
-      elapsed_s: own.map(({ elapsedS }) => elapsedS),
-      value_m: own.map(({ value }) => value * toMetres),
-    })
+export function createOutsideValues() {
+  const kept = createCache<Outside>(mostKept)
+
+  async function valuesOf(executor: Executor, id: number, quantity: OutsideQuantity): Promise<Outside> {
+    const taken = await repository.listTaken(executor, id)
+    const { toMetres } = outsideQuantities[quantity]
+    return {
+      elapsed_s: taken.map(({ elapsedS }) => elapsedS),
+      value_m: taken.map(({ value }) => value * toMetres),
+    }
   }
-  return found
+
+  return async (executor: Executor, ids: number[]): Promise<Map<number, Outside & { label: string }>> => {
+    const found = new Map<number, Outside & { label: string }>()
+    for (const id of ids) {
+      const series = await repository.findSeries(executor, id)
+      if (!series) continue
+      const { label, quantity } = series.row
+      found.set(id, { label, ...(await kept(String(id), () => valuesOf(executor, id, quantity))) })
+    }
+    return found
+  }
 }

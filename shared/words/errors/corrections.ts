@@ -68,6 +68,11 @@ export const correctionErrors = {
     status: 409,
     sentence: ({ label }) => `${label} is among the other wells already. Add its rates there, or choose another name.`,
   },
+  'correction/other-wells-many': {
+    status: 409,
+    sentence: ({ most }) =>
+      `A test takes up to ${most} other wells. Remove those that are far away, or enter a well field as one well.`,
+  },
   'correction/other-well-private': {
     status: 400,
     sentence: () =>

@@ -7,6 +7,7 @@ import type { OutsideRow } from '#shared/contracts/outside-series.ts'
 import { accept, inputOf, publishTest, readAnalysis, submitDraft } from '../../support/analysed-test.ts'
 import { useApp, type SignedIn } from '../../support/app.ts'
 import { makeRegion, makeUnit, saveAnalysis } from '../../support/domain.ts'
+import { enterKind, makeSlugDetails } from '../other-tests/support.ts'
 import {
   barometric,
   correct,
@@ -215,6 +216,11 @@ describe('a series from outside', () => {
     const answer = await uploadOutside(analyst, id, text, { mapping: pressureMapping(unit) }).expect(400)
     expect(codeOf(answer)).toBe(code)
     expect((await correctionsOf(analyst, id)).series).toEqual([])
+  })
+
+  it('belongs to no test whose readings it could not correct', async () => {
+    const slug = await enterKind(analyst, { unitId, details: makeSlugDetails() })
+    expect(codeOf(await uploadOutside(analyst, slug.id, pressureLog()))).toBe('correction/wrong-kind')
   })
 
   it('with clock times holds the start of its test, which its times were read from', async () => {

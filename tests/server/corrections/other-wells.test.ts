@@ -3,6 +3,7 @@ import type { Analysis } from '#shared/contracts/analyses.ts'
 import type { OtherWellInput, OtherWellRecord } from '#shared/contracts/other-wells.ts'
 import type { Problem } from '#shared/contracts/problem.ts'
 import type { Well } from '#shared/contracts/wells.ts'
+import { otherWells } from '../../../server/db/schema/index.ts'
 import { accept, enterTest, publishTest, readAnalysis, submitDraft } from '../../support/analysed-test.ts'
 import { useApp, type SignedIn } from '../../support/app.ts'
 import { createWell, islandMiddle, makeRegion, makeUnit, makeWellInput, saveAnalysis } from '../../support/domain.ts'
@@ -110,6 +111,17 @@ describe('another well that pumped', () => {
     await analyst.delete(`/api/other-wells/${otherId}?rowVersion=1`).expect(200)
     expect((await hide()).status).toBe(200)
     expect(codeOf(await list(analyst, id, wanted))).toBe('correction/other-well-private')
+  })
+
+  it('is one of sixty at most', async () => {
+    const { id } = await enterTest(analyst, { unitId })
+    const { place, rateSteps, fitted } = makeOther()
+    const set = { createdAt: new Date(), changedAt: new Date() }
+    const row = { pumpingTestId: id, place, rateSteps, fitted, active: false, ...set }
+    const rows = Array.from({ length: 59 }, (_, i) => ({ ...row, label: `Field ${i}` }))
+    await tested.deps.connection.db.insert(otherWells).values(rows)
+    await list(analyst, id, makeOther()).expect(201)
+    expect(codeOf(await list(analyst, id, makeOther({ label: 'One more' })))).toBe('correction/other-wells-many')
   })
 
   it('has a name and a place of its own, a rate above zero, and is listed once', async () => {
