@@ -25,6 +25,7 @@ import { outsideSeriesRoutes } from './outside-series/outside-series.routes.ts'
 import { mapRoutes } from './map/map.routes.ts'
 import { searchRoutes } from './search/search.routes.ts'
 import { streamsRoutes } from './streams/streams.routes.ts'
+import { unitStatisticsRoutes } from './unit-statistics/unit-statistics.routes.ts'
 import { wellsRoutes } from './wells/wells.routes.ts'
 import { mountRoutes } from './mount.ts'
 import { outboxRoutes } from './outbox/outbox.routes.ts'
@@ -64,6 +65,7 @@ export function allRoutes(services: Services, deps: Deps): Route[] {
     ...reviewsRoutes(services),
     ...adoptedValuesRoutes(services),
     ...estimatesRoutes(services),
+    ...unitStatisticsRoutes(services),
     ...visibilityRoutes(services),
   ]
   return withDescription(routes, deps)

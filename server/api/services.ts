@@ -24,6 +24,7 @@ import { createReviewsService } from './reviews/reviews.service.ts'
 import { createSearchService } from './search/search.service.ts'
 import { createSessionService } from './session/session.service.ts'
 import { createStreamsService } from './streams/streams.service.ts'
+import { createUnitStatisticsService } from './unit-statistics/unit-statistics.service.ts'
 import { createVisibilityService } from './visibility/visibility.service.ts'
 import { createWellsService, type WellsService } from './wells/wells.service.ts'
 
@@ -70,6 +71,7 @@ export function createServices(deps: Deps) {
     { removeReportedTest: pumpingTests.removeReported },
   )
   const { markInputsChanged, isInUse } = analyses
+  const estimates = createEstimatesService(deps, { region, streams, adoptedValues })
   return {
     account: createAccountService(deps, region),
     adoptedValues,
@@ -79,7 +81,7 @@ export function createServices(deps: Deps) {
     auditTrail: createAuditTrailService(deps),
     boundaries,
     corrections,
-    estimates: createEstimatesService(deps, { region, streams, adoptedValues }),
+    estimates,
     health: createHealthService(deps),
     jobs: createJobsService(deps),
     map: createMapService(deps, { adoptedValues }),
@@ -95,6 +97,7 @@ export function createServices(deps: Deps) {
     search: createSearchService(deps),
     session: createSessionService(deps, region),
     streams,
+    unitStatistics: createUnitStatisticsService(deps, { estimates }),
     visibility: createVisibilityService(deps, { adoptedValues }),
     wells,
   }

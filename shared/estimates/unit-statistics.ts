@@ -1,10 +1,12 @@
-import { statisticsOf, type Statistics } from '#shared/geostatistics/statistics.ts'
+import { independentInterval, statisticsOf, type Interval, type Statistics } from '#shared/geostatistics/statistics.ts'
 import type { PreparedValues } from './prepared-values.ts'
 import type { Evidence, UnitModel } from './types.ts'
 
 /** Statistics of one unit and quantity, log10, over the values that the data rules let in. */
 export interface UnitStatistics extends Omit<Statistics, 'outliers'> {
   sites: number
+  /** 95 % interval of the mean where only sites that stand apart count as independent; null for fewer than two. */
+  meanBySites: Interval | null
   evidence: Record<Evidence, number>
   /** Values whose robust z exceeds 3.5, to be looked at again. */
   outlierIds: string[]
@@ -22,9 +24,11 @@ export function unitStatistics(values: PreparedValues, model: UnitModel | null):
   }
   const { outliers, ...statistics } = statisticsOf(data, model?.variogram ?? null)
   const count = (evidence: Evidence): number => used.filter((v) => v.evidence === evidence).length
+  const sites = values.sites().length
   return {
     ...statistics,
-    sites: values.sites().length,
+    sites,
+    meanBySites: independentInterval(statistics.mean, statistics.deviation, sites),
     evidence: { firm: count('firm'), fair: count('fair'), slight: count('slight') },
     outlierIds: outliers.map((i) => used[i]!.id),
   }

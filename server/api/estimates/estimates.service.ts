@@ -1,4 +1,4 @@
-import type { Estimate, EstimateQuery, NearbyQuery } from '#shared/contracts/estimates.ts'
+import type { Estimate, EstimateQuantity, EstimateQuery, NearbyQuery } from '#shared/contracts/estimates.ts'
 import type { Viewer } from '#shared/contracts/permissions.ts'
 import { estimateFrom } from '#shared/estimates/estimate-at.ts'
 import type { EstimateContext } from '#shared/estimates/types.ts'
@@ -61,6 +61,15 @@ export function createEstimatesService(deps: Deps, { region, streams, adoptedVal
       }
       const result = estimateFrom(point, data.values, model, context)
       return estimateView(shown, { result, model, data, dataVersion, outdated, stream: near[0] ?? null })
+    },
+
+    /** The values of a unit that estimates for the viewer are made from, with their model; null: there is no such unit. */
+    async unitValues(viewer: Viewer, unitId: number, quantity: EstimateQuantity) {
+      const unit = await repository.findUnit(db, unitId)
+      if (!unit) return null
+      const { epsg } = await region.get()
+      const { data, model, outdated } = await models.current(unitId, quantity, scopeOf(viewer), epsg)
+      return { unit, values: data.siteValues, model, outdated }
     },
 
     /** Tests within a radius that the viewer may see, nearest first, with their current values. */

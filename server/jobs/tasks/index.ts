@@ -4,6 +4,7 @@ import { analyseTask, repeatAnalysisTask } from './analyse.ts'
 import { digestAnalysisTask } from './digest-analysis.ts'
 import { fitModelTask } from './fit-model.ts'
 import { readLogTask } from './read-log.ts'
+import { unitOverviewTask } from './unit-overview.ts'
 
 /**
  * Charts and layout are large packages: a thread loads them with its first report. By `require`, because a thread that
@@ -22,6 +23,7 @@ const tasks = {
   'digest-analysis': digestAnalysisTask,
   'fit-model': fitModelTask,
   'read-log': readLogTask,
+  'unit-overview': unitOverviewTask,
 } as const
 
 export type TaskName = keyof typeof tasks
