@@ -6,6 +6,7 @@ import { unitOf } from '../../../server/db/seed/island/units.ts'
 import { demoRecords, demoValues, makePlan } from '../../../server/db/seed/records/index.ts'
 import type { DemoFullTest, DemoReportedTest } from '../../../server/db/seed/records/types.ts'
 import { pumpingTestInput } from '#shared/contracts/pumping-tests.ts'
+import { testChecklist } from '#shared/contracts/test-checklist.ts'
 import { logMapping } from '#shared/contracts/reading-series.ts'
 
 // A region takes seconds to make: slow on a machine that does other things too.
@@ -36,6 +37,20 @@ describe('the demo records', () => {
       'Brannet Sandstone',
     ])
     expect(records.boundaries.map(({ units }) => units)).toEqual([['FL', 'BS']])
+  })
+
+  it('say of every test with readings how it was run, older ones less, and nothing that the levels do not hold', () => {
+    const checklists = full.map(({ checklist, startLocal }) => ({ ...testChecklist.parse(checklist), startLocal }))
+    for (const list of checklists) {
+      expect(list.dischargeMeasured).not.toBe('not-recorded')
+      expect(list.disposalDistanceM).toBeGreaterThanOrEqual(50)
+      expect(['none', 'not-recorded']).toContain(list.nearbyPumping)
+      expect(['falling', 'rising']).not.toContain(list.staticTrend)
+      expect(list.trendWatchedS === null).toBe(list.staticTrend !== 'steady')
+    }
+    const silent = checklists.filter(({ nearbyPumping }) => nearbyPumping === 'not-recorded')
+    expect(silent.length).toBeGreaterThan(0)
+    expect(Math.max(...silent.map(({ startLocal }) => yearOf(startLocal)))).toBeLessThan(2000)
   })
 
   it('span forty years', () => {

@@ -2,6 +2,7 @@ import { distanceBetween } from '../island/lines.ts'
 import type { Point } from '../island/frame.ts'
 import type { Draws } from '../random.ts'
 import { draws } from '../random.ts'
+import { makeChecklist, type TestedSite } from './checklist.ts'
 import { drawdownCurve, imagesOf, type Observed } from './drawdown.ts'
 import { region } from './geography.ts'
 import { groundUnder } from './ground.ts'
@@ -83,6 +84,12 @@ function describe({ faults }: PlannedTest, images: Known['images'], at: Point): 
   return parts.length > 0 ? parts.join(' ') : null
 }
 
+function testedSite({ design, site, year }: PlannedTest, images: Known['images']): TestedSite {
+  const streams = images.filter(({ kind }) => kind === 'stream').map((image) => distanceBetween(site.at, image.at) / 2)
+  const nearest = streams.length > 0 ? Math.min(...streams) : null
+  return { year, streamM: nearest, rate_m3_s: design.rate.m3s }
+}
+
 const RATIONALES: Record<DemoOutcome, string> = {
   adopted: 'Curve of the observation wells; the other analyses of the test agree.',
   submitted: 'Joint fit of the observation wells, boundary effects left out by the window.',
@@ -141,6 +148,7 @@ export function makeFullTest(
     outcome,
     rationale: RATIONALES[outcome],
     conditions: describe(test, recording.images, site.at),
+    checklist: makeChecklist(draws(seed, `checklist/${index}`), testedSite(test, recording.images)),
     visibility: pumped.well.visibility,
     embargoUntil: pumped.well.embargoUntil,
   }

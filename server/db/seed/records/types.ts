@@ -1,3 +1,4 @@
+import type { TestChecklist } from '#shared/contracts/test-checklist.ts'
 import type { MethodId } from '#shared/hydraulics/catalogue.ts'
 import type { TimeWindow } from '#shared/hydraulics/analysis.ts'
 import type { LogMapping } from '#shared/readings/model.ts'
@@ -127,6 +128,8 @@ export interface DemoFullTest extends DemoTestBase {
   kind: 'constant-rate'
   rateSteps: { startS: number; rate: { value: number; unit: string } }[]
   staticLevelM: number
+  /** What the crew wrote down of the circumstances. */
+  checklist: TestChecklist
   observationWells: { wellCode: string; distanceM: number; staticLevelM: number }[]
   series: DemoSeries[]
   faults: LogFault[]
