@@ -51,13 +51,14 @@ export function createInputsService(needs: InputsNeeds) {
 
   /** By well: screens that were open at the test's date, and depths of the units. */
   async function constructions(executor: Executor, { found: { test }, parts }: WholeTest) {
-    const found = new Map<number, Construction>()
-    for (const { row } of parts.wells) {
-      const screens = await wellsService.screensOf(executor, row.wellId)
-      const picks = await wellsService.picksOf(executor, row.wellId)
-      found.set(row.wellId, { screens: screens.filter(openAt(test.startAt)), picks })
-    }
-    return found
+    const ids = parts.wells.map(({ row }) => row.wellId)
+    const screens = (await wellsService.screensOf(executor, ids)).filter(openAt(test.startAt))
+    const picks = await wellsService.picksOf(executor, ids)
+    const at = (id: number): Construction => ({
+      screens: screens.filter(({ wellId }) => wellId === id),
+      picks: picks.filter(({ wellId }) => wellId === id),
+    })
+    return new Map(ids.map((id) => [id, at(id)]))
   }
 
   return {

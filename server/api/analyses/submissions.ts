@@ -1,4 +1,5 @@
 import type { Analysis, SubmissionInput } from '#shared/contracts/analyses.ts'
+import { analysisResult } from '#shared/contracts/analysis-result.ts'
 import type { Viewer } from '#shared/contracts/permissions.ts'
 import type { Executor } from '../../db/client.ts'
 import { inTransaction } from '../../db/transaction.ts'
@@ -43,8 +44,7 @@ export function createSubmissions(deps: Deps, { inputs, view }: SubmissionsNeeds
         const snapshot = await inputs.snapshot(tx, everything, row.pumpingTestId)
         if (snapshot.sha256 !== row.inputsSha256) throw new AppError('analysis/inputs-changed')
         if (snapshot.test.found.test.visibility === 'private') throw new AppError('analysis/private-test')
-        const { result } = await view(tx, viewer, id)
-        checkAdoptable(result, confirmed)
+        checkAdoptable(analysisResult.parse(row.result), confirmed)
         const change = { state: 'submitted' as const, rationale, submittedAt: now() }
         if (!(await repository.updateAnalysis(tx, id, rowVersion, change))) throw new AppError('edit/conflict')
         await repository.addEditor(tx, id, viewer)

@@ -57,7 +57,7 @@ export function createPumpingTestsService(deps: Deps, { wells, markInputsChanged
     const known = new Map<number, WellForTest>(found.map((well) => [well.id, well]))
     const wellRows = testWellRows(input, known)
     const start = startTime(input.startLocal, input.zone, now())
-    const screens = await wells.screensOf(executor, input.wellId)
+    const screens = await wells.screensOf(executor, [input.wellId])
     const interval = testedInterval(input, known.get(input.wellId)!, screens, start.at)
     const unitIds = new Set(input.units.map(({ unitId }) => unitId))
     if ((await repository.countUnits(executor, [...unitIds])) !== input.units.length)

@@ -1,6 +1,7 @@
-import { asc, eq } from 'drizzle-orm'
+import { asc, inArray } from 'drizzle-orm'
 import type { Executor } from '../../db/client.ts'
 import { wellScreens } from '../../db/schema/index.ts'
 
-export const listScreens = (executor: Executor, wellId: number) =>
-  executor.select().from(wellScreens).where(eq(wellScreens.wellId, wellId)).orderBy(asc(wellScreens.topM))
+/** Screens of the wells, whenever they were valid; the uppermost first. */
+export const listScreens = (executor: Executor, wellIds: number[]) =>
+  executor.select().from(wellScreens).where(inArray(wellScreens.wellId, wellIds)).orderBy(asc(wellScreens.topM))

@@ -24,7 +24,7 @@ export function wellView(row: WellRow, { screens, picks, tests, values, mayEdit 
       validFrom: validFrom?.toISOString() ?? null,
       validTo: validTo?.toISOString() ?? null,
     })),
-    picks,
+    picks: picks.map(({ wellId: _, ...pick }) => pick),
     tests,
     values,
     mayEdit,

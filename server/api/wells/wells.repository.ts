@@ -55,19 +55,21 @@ export async function updateWell(executor: Executor, id: number, version: number
   return result.affectedRows === 1
 }
 
-export async function replaceScreens(executor: Executor, wellId: number, rows: NewScreen[]) {
+export async function insertParts(executor: Executor, wellId: number, screens: NewScreen[], picks: NewPick[]) {
+  if (screens.length > 0) await executor.insert(wellScreens).values(screens.map((row) => ({ ...row, wellId })))
+  if (picks.length > 0) await executor.insert(unitPicks).values(picks.map((row) => ({ ...row, wellId })))
+}
+
+export async function deleteParts(executor: Executor, wellId: number) {
   await executor.delete(wellScreens).where(eq(wellScreens.wellId, wellId))
-  if (rows.length > 0) await executor.insert(wellScreens).values(rows.map((row) => ({ ...row, wellId })))
-}
-
-export async function replacePicks(executor: Executor, wellId: number, rows: NewPick[]) {
   await executor.delete(unitPicks).where(eq(unitPicks.wellId, wellId))
-  if (rows.length > 0) await executor.insert(unitPicks).values(rows.map((row) => ({ ...row, wellId })))
 }
 
-export const listPicks = (executor: Executor, wellId: number) =>
+/** Depths of the units at the wells; the uppermost first. */
+export const listPicks = (executor: Executor, wellIds: number[]) =>
   executor
     .select({
+      wellId: unitPicks.wellId,
       unitId: unitPicks.unitId,
       unitName: aquiferUnits.name,
       topM: unitPicks.topM,
@@ -76,7 +78,7 @@ export const listPicks = (executor: Executor, wellId: number) =>
     })
     .from(unitPicks)
     .innerJoin(aquiferUnits, eq(aquiferUnits.id, unitPicks.unitId))
-    .where(eq(unitPicks.wellId, wellId))
+    .where(inArray(unitPicks.wellId, wellIds))
     .orderBy(asc(unitPicks.topM))
 
 export const countUnits = (executor: Executor, ids: number[]): Promise<number> =>

@@ -37,25 +37,24 @@ export function createWellsService(deps: Deps, { region, testsOf, valuesOf, well
     return { ...facts, ...wellPosition(input, await region.get(executor)) }
   }
 
-  async function writeParts(executor: Executor, id: number, { screens, picks }: WellInput) {
+  function writeParts(executor: Executor, id: number, { screens, picks }: WellInput) {
     const instant = (text: string | null) => (text === null ? null : new Date(text))
     const rows = screens.map((screen) => ({
       ...screen,
       validFrom: instant(screen.validFrom),
       validTo: instant(screen.validTo),
     }))
-    await repository.replaceScreens(executor, id, rows)
-    await repository.replacePicks(executor, id, picks)
+    return repository.insertParts(executor, id, rows, picks)
   }
 
   const mayEdit = (viewer: Viewer, { createdBy }: repository.WellRow) =>
     atLeast(viewer, 'steward') || (atLeast(viewer, 'analyst') && createdBy === viewer.id)
 
   return {
-    /** All screens of a well, whenever they were valid. */
+    /** All screens of wells, whenever they were valid. */
     screensOf: listScreens,
 
-    /** Depths of the units at a well, metres below ground. */
+    /** Depths of the units at wells, metres below ground. */
     picksOf: repository.listPicks,
 
     async list(viewer: Viewer, query: WellQuery) {
@@ -67,8 +66,8 @@ export function createWellsService(deps: Deps, { region, testsOf, valuesOf, well
       const row = await repository.findWell(db, viewer, id)
       if (!row) throw notFound()
       const [screens, picks, tests, values] = await Promise.all([
-        listScreens(db, id),
-        repository.listPicks(db, id),
+        listScreens(db, [id]),
+        repository.listPicks(db, [id]),
         testsOf(viewer, id),
         valuesOf(viewer, id),
       ])
@@ -103,6 +102,7 @@ export function createWellsService(deps: Deps, { region, testsOf, valuesOf, well
           const { visibility: _kept, ...change } = await columns(tx, input)
           if (samePosition(input, before)) change.positionAccuracyM = before.positionAccuracyM
           if (!(await repository.updateWell(tx, id, rowVersion, change))) throw new AppError('edit/conflict')
+          await repository.deleteParts(tx, id)
           await writeParts(tx, id, input)
           await wellChanged(tx, id)
           await recordAudit(tx, { viewer, at: now(), action: 'wells/edit', subject: 'well', subjectId: id })
