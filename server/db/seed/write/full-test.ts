@@ -1,9 +1,9 @@
 import type { WorkbenchInputs } from '#shared/contracts/analyses.ts'
 import { Buffer } from 'node:buffer'
-import { analyse } from '#shared/hydraulics/catalogue.ts'
-import { AnalysisError } from '#shared/hydraulics/analysis-error.ts'
 import type { AnalysisOptions } from '#shared/hydraulics/analysis.ts'
 import type { Services } from '../../../api/services.ts'
+import type { Analysed, AnalyseInput } from '../../../jobs/tasks/analyse.ts'
+import type { Workers } from '../../../jobs/workers.ts'
 import type { DemoAnalysis, DemoFullTest } from '../records/types.ts'
 import type { UnitIds } from './geography.ts'
 import { publishTest } from './publish-test.ts'
@@ -18,9 +18,9 @@ async function createTest(
   wellIds: WellIds,
   unitIds: UnitIds,
 ) {
-  const { startLocal, zone, aquifer, thicknessM, thicknessBasis, conditions, checklist, rateSteps, staticLevelM } = test
+  const { startLocal, zone, aquifer, thicknessM, thicknessBasis, conditions, rateSteps, staticLevelM } = test
   const { id } = await pumpingTests.create(analyst, {
-    ...{ startLocal, zone, aquifer, thicknessM, thicknessBasis, conditions, checklist, rateSteps, staticLevelM },
+    ...{ startLocal, zone, aquifer, thicknessM, thicknessBasis, conditions, rateSteps, staticLevelM },
     visibility: 'internal',
     wellId: wellIds.get(test.wellCode)!,
     intervalBasis: 'screens',
@@ -60,30 +60,46 @@ const optionsOf = (planned: DemoAnalysis, wellIds: WellIds): AnalysisOptions => 
   afterDrainage: planned.afterDrainage,
 })
 
-/** Calculates and saves as the workbench does; null where the method refuses these readings, as it may a poor log. */
+interface Planned {
+  method: DemoAnalysis['method']
+  label: string
+  options: AnalysisOptions
+  inputsSha256: string
+  outcome: Promise<Analysed>
+}
+
+/** Begins to calculate as the workbench does; other tests are entered meanwhile. */
+async function beginAnalyses(
+  { analyses }: Services,
+  workers: Workers,
+  { analyst }: Cast,
+  testId: number,
+  planned: DemoAnalysis[],
+  wellIds: WellIds,
+): Promise<Planned[]> {
+  const { inputs, sha256: inputsSha256 } = (await analyses.workbench(analyst, testId)) as WorkbenchInputs
+  return planned.map((analysis) => {
+    const { method, label } = analysis
+    const options = optionsOf(analysis, wellIds)
+    const outcome = workers.run<Analysed>('analyse', { inputs, method, options } satisfies AnalyseInput)
+    // Whoever waits for it is told; until then nobody has to.
+    outcome.catch(() => undefined)
+    return { method, label, options, inputsSha256, outcome }
+  })
+}
+
+/** Saves as the workbench does; null where the method refuses these readings, as it may a poor log. */
 async function saveAnalysis(
   { analyses }: Services,
   { analyst }: Cast,
   testId: number,
-  planned: DemoAnalysis,
-  wellIds: WellIds,
+  { outcome, ...analysis }: Planned,
 ) {
-  const { inputs, sha256 } = (await analyses.workbench(analyst, testId)) as WorkbenchInputs
-  const options = optionsOf(planned, wellIds)
-  try {
-    const result = analyse(planned.method, inputs, options)
-    const expected = { methodVersion: result.methodVersion, T: result.T?.value ?? null, S: result.S?.value ?? null }
-    return await analyses.create(analyst, testId, {
-      method: planned.method,
-      options,
-      label: planned.label,
-      expected,
-      inputsSha256: sha256,
-    })
-  } catch (error) {
-    if (error instanceof AnalysisError) return null
-    throw error
-  }
+  const calculated = await outcome
+  if (!calculated.ok) return null
+  const { methodVersion, T, S } = calculated.result
+  const expected = { methodVersion, T: T?.value ?? null, S: S?.value ?? null }
+  return analyses.create(analyst, testId, { ...analysis, expected })
 }
 
 type Saved = NonNullable<Awaited<ReturnType<typeof saveAnalysis>>>
@@ -109,19 +125,26 @@ async function bringForward(
   })
 }
 
-/** A test with readings, from its creation to where its analyses have come. */
-export async function writeFullTest(
+/**
+ * Enters a test with readings, whose analyses begin to be calculated.
+ * @returns what takes them as far as they have come
+ */
+export async function enterFullTest(
   services: Services,
+  workers: Workers,
   cast: Cast,
   test: DemoFullTest,
   wellIds: WellIds,
   unitIds: UnitIds,
-) {
+): Promise<() => Promise<void>> {
   const created = await createTest(services, cast, test, wellIds, unitIds)
   await publishTest(services, cast, created, test)
   await uploadLogs(services, cast, created, test)
-  const saved: (Saved | null)[] = []
-  for (const planned of test.analyses) saved.push(await saveAnalysis(services, cast, created.id, planned, wellIds))
-  const chosen = saved.find((analysis) => analysis?.result.T)
-  if (chosen) await bringForward(services, cast, chosen, test)
+  const planned = await beginAnalyses(services, workers, cast, created.id, test.analyses, wellIds)
+  return async () => {
+    const saved: (Saved | null)[] = []
+    for (const analysis of planned) saved.push(await saveAnalysis(services, cast, created.id, analysis))
+    const chosen = saved.find((analysis) => analysis?.result.T)
+    if (chosen) await bringForward(services, cast, chosen, test)
+  }
 }

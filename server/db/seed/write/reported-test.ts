@@ -19,14 +19,17 @@ function valuesOf({ values, thicknessM }: DemoReportedTest) {
   return { T, K, S: of('S')?.value ?? null, storageClass: of('S')?.storageClass ?? null }
 }
 
-/** A test of which only values came down, entered by the steward and accepted by the reviewer. */
-export async function writeReportedTest(
+/**
+ * Enters a test of which only values came down, as the steward does.
+ * @returns what enters its value and has the reviewer accept it
+ */
+export async function enterReportedTest(
   services: Services,
   cast: Cast,
   test: DemoReportedTest,
   wellIds: Map<string, number>,
   unitIds: UnitIds,
-) {
+): Promise<() => Promise<void>> {
   const { startLocal, zone, aquifer, thicknessM, thicknessBasis, source } = test
   const { id } = await services.pumpingTests.createReported(cast.steward, {
     ...{ startLocal, zone, aquifer, thicknessM, thicknessBasis, source },
@@ -39,10 +42,12 @@ export async function writeReportedTest(
   })
   await publishTest(services, cast, { id, rowVersion: 1 }, test)
   const known = { origin: origins[test.basis], observationWell: false, aquifer, source }
-  const analysis = await services.analyses.report(cast.steward, id, { ...known, ...valuesOf(test) })
-  await services.reviews.decide(cast.reviewer, analysis.id, {
-    rowVersion: analysis.rowVersion,
-    decision: 'accepted',
-    comment: null,
-  })
+  return async () => {
+    const analysis = await services.analyses.report(cast.steward, id, { ...known, ...valuesOf(test) })
+    await services.reviews.decide(cast.reviewer, analysis.id, {
+      rowVersion: analysis.rowVersion,
+      decision: 'accepted',
+      comment: null,
+    })
+  }
 }

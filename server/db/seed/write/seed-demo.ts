@@ -1,4 +1,4 @@
-import { createServices } from '../../../api/services.ts'
+import { createServices, type Services } from '../../../api/services.ts'
 import type { Deps } from '../../../deps.ts'
 import type { JobContext, JobHandler } from '../../../jobs/jobs.ts'
 import type { Executor } from '../../client.ts'
@@ -7,10 +7,11 @@ import { seedAccounts } from '../accounts.ts'
 import { demoRecords } from '../records/index.ts'
 import type { DemoRecords, DemoTest } from '../records/types.ts'
 import { localStart } from '../../../api/pumping-tests/start-time.ts'
-import { writeFullTest } from './full-test.ts'
+import { calculatingOnce } from './calculating-once.ts'
+import { enterFullTest } from './full-test.ts'
 import { writeGeography } from './geography.ts'
 import { castOf } from './people.ts'
-import { writeReportedTest } from './reported-test.ts'
+import { enterReportedTest } from './reported-test.ts'
 import { writeWell } from './wells.ts'
 
 /** The demo region is always drawn from this seed. */
@@ -18,18 +19,30 @@ export const demoSeed = 1
 /** Records that are written in one transaction: each is there whole, or not at all. */
 const recordsPerTransaction = 10
 
-type Write = (tx: Executor) => Promise<void>
+/** Writes a record; what is left to do once the others of its transaction are there too. */
+type Write = (services: Services) => Promise<(() => Promise<void>) | undefined>
+type Database = Deps['connection']['db']
 
-/** Services whose own transactions are parts of one larger. */
+/** A transaction in place of the database: what would be one of its own is a part of this one. */
+function asDatabase(tx: Executor): Database {
+  const transaction = (work: (own: Executor) => Promise<unknown>) => work(tx)
+  return new Proxy(tx as Database, {
+    get: (target, name) => (name === 'transaction' ? transaction : (Reflect.get(target, name) as unknown)),
+  })
+}
+
 const servicesIn = (deps: Deps, tx: Executor) =>
-  createServices({ ...deps, connection: { ...deps.connection, db: tx as Deps['connection']['db'] } })
+  createServices({ ...deps, connection: { ...deps.connection, db: asDatabase(tx) } })
 
 async function inBatches(deps: Deps, context: JobContext, what: string, writes: Write[]) {
   for (let start = 0; start < writes.length; start += recordsPerTransaction) {
     await context.checkCancelled()
     await context.report({ done: start, total: writes.length, message: what })
     await deps.connection.db.transaction(async (tx) => {
-      for (const write of writes.slice(start, start + recordsPerTransaction)) await write(tx)
+      const services = servicesIn(deps, tx)
+      const begun: Awaited<ReturnType<Write>>[] = []
+      for (const write of writes.slice(start, start + recordsPerTransaction)) begun.push(await write(services))
+      for (const goOn of begun) await goOn?.()
     })
   }
   await context.report({ done: writes.length, total: writes.length, message: what })
@@ -54,7 +67,8 @@ function withoutPastEmbargoes(records: DemoRecords, now: Date): DemoRecords {
 }
 
 /** Fills an empty region with the Isle of Veldray, through the program's own services; repeating it changes nothing. */
-export function seedDemo(deps: Deps): JobHandler {
+export function seedDemo(outside: Deps): JobHandler {
+  const deps = { ...outside, workers: calculatingOnce(outside.workers) }
   const { db } = deps.connection
   return async (_payload, context) => {
     await seedAccounts(deps, db)
@@ -64,17 +78,17 @@ export function seedDemo(deps: Deps): JobHandler {
 
     const wellIds = new Map((await db.select().from(wells)).map(({ code, id }) => [code, id]))
     const missingWells = records.wells.filter(({ code }) => !wellIds.has(code))
-    const writeWells = missingWells.map((well): Write => async (tx) => {
-      wellIds.set(well.code, await writeWell(servicesIn(deps, tx), cast, records, well, unitIds))
+    const writeWells = missingWells.map((well): Write => async (services) => {
+      wellIds.set(well.code, await writeWell(services, cast, records, well, unitIds))
+      return undefined
     })
     await inBatches(deps, context, 'wells', writeWells)
 
     const known = await knownTests(db)
     const isMissing = ({ wellCode, startLocal }: DemoTest) => !known.has(keyOf(wellIds.get(wellCode)!, startLocal))
-    const writeTests = records.tests.filter(isMissing).map((test): Write => (tx) => {
-      const services = servicesIn(deps, tx)
-      if (test.kind === 'reported') return writeReportedTest(services, cast, test, wellIds, unitIds)
-      return writeFullTest(services, cast, test, wellIds, unitIds)
+    const writeTests = records.tests.filter(isMissing).map((test): Write => (services) => {
+      if (test.kind === 'reported') return enterReportedTest(services, cast, test, wellIds, unitIds)
+      return enterFullTest(services, deps.workers, cast, test, wellIds, unitIds)
     })
     await inBatches(deps, context, 'tests', writeTests)
   }
