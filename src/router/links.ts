@@ -55,8 +55,20 @@ export const toPumpingTest = (id: number, analysisId: number | null = null): Lin
   params: { id },
   query: analysisId === null ? {} : { analysis: String(analysisId) },
 })
+export const toCorrections = (id: number): Link => ({
+  name: 'pumping-test',
+  params: { id },
+  query: { part: 'corrections' },
+})
 export const toEditPumpingTest = (id: number): Link => named('edit-pumping-test', { id })
 export const toReadings = (id: number): Link => named('readings', { id })
+
+/** Statistics of an aquifer unit; of transmissivity unless told otherwise. */
+export const toUnitStatistics = (id: number, quantity: string | null = null): Link => ({
+  name: 'unit-statistics',
+  params: { id },
+  query: quantity === null ? {} : { quantity },
+})
 
 export const toRegionalTable = (): Link => named('regional-table')
 /** A value of the regional table, with the way back to its readings. */

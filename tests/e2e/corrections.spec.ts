@@ -8,13 +8,13 @@ interface Inputs {
   inputs: { series: { label: string; elapsed_s: number[] }[] }
 }
 
-/** A test of the demo region with readings of several wells that nobody has submitted anything of. */
+/** The corrections of a test of the demo region with readings of several wells that nobody has submitted anything of. */
 async function openTest(page: Page) {
   const answer = await page.request.get('/api/pumping-tests?kind=constant-rate&state=open&limit=50')
   const { items } = (await answer.json()) as { items: { id: number; wellCount: number }[] }
   const { id } = items.find(({ wellCount }) => wellCount >= 2)!
   const { inputs } = (await (await page.request.get(`/api/pumping-tests/${id}/inputs`)).json()) as Inputs
-  await page.goto(`/pumping-tests/${id}`)
+  await page.goto(`/pumping-tests/${id}?part=corrections`)
   return inputs.series
 }
 
@@ -73,7 +73,9 @@ test('Readings are corrected by an uploaded barometer, the analysis says so, and
   await panel.getByRole('button', { name: 'Read as tables' }).click()
   await expect(panel.getByRole('columnheader', { name: /air pressure, kPa/ })).toBeVisible()
   await panel.getByRole('button', { name: 'Show the plots' }).click()
+  await page.getByRole('tab', { name: 'Analyses' }).click()
   await expect(page.getByText(/are corrected for air pressure by Storm: efficiency 0.5/).first()).toBeVisible()
+  await page.goBack()
 
   await page.setViewportSize({ width: 360, height: 760 })
   await page.emulateMedia({ colorScheme: 'dark' })
@@ -82,7 +84,10 @@ test('Readings are corrected by an uploaded barometer, the analysis says so, and
 
   await correction.getByRole('button', { name: 'Switch off' }).click()
   await expect(correction.getByRole('button', { name: 'Switch on' })).toBeVisible()
+  await page.getByRole('tab', { name: 'Analyses' }).click()
+  await expect(page.getByRole('article').getByRole('definition').first()).toBeVisible()
   await expect(page.getByText(/are corrected for air pressure by Storm/)).toHaveCount(0)
+  await page.getByRole('tab', { name: 'Corrections' }).click()
   await storm.getByRole('button', { name: 'Delete Storm' }).click()
   const dialog = page.getByRole('alertdialog')
   await dialog.getByRole('button', { name: 'Delete' }).click()
@@ -113,9 +118,11 @@ test('Another pumping well is listed by distance and direction, superposed by a 
   await form.getByRole('button', { name: 'Add this well' }).click()
   const other = panel.getByRole('article', { name: 'Pumping well Dairy' })
   await expect(other.getByText('400 m to the east')).toBeVisible()
+  await page.getByRole('tab', { name: 'Analyses' }).click()
   await expect(
     page.getByText(/Dairy pumped too, and this method|drawdown by Dairy is superposed/).first(),
   ).toBeVisible()
+  await page.goBack()
   await other.getByRole('button', { name: /^Remove/ }).click()
   await page.getByRole('alertdialog').getByRole('button', { name: 'Remove' }).click()
   await expect(other).toHaveCount(0)

@@ -13,15 +13,18 @@ export interface WellWithCorrections extends CorrectedWell {
 
 const seriesOf = ({ inputs }: WorkbenchInputs | KindWorkbenchInputs) =>
   'series' in inputs ? inputs.series : 'well' in inputs ? [inputs.well] : []
+const hasReadings = ({ elapsed_s }: { elapsed_s: readonly number[] }) => elapsed_s.length > 0
 
 /** Wells with readings, with what was taken off them. */
 export const correctedWells = (snapshot: WorkbenchInputs | KindWorkbenchInputs): WellWithCorrections[] =>
-  seriesOf(snapshot).map(({ wellId, label, elapsed_s, drawdown_m, included, corrections = [] }) => ({
-    wellId,
-    label,
-    elapsed_s,
-    drawdown_m,
-    included,
-    corrections,
-    uncorrected_m: snapshot.readings.find((one) => one.wellId === wellId)?.uncorrected_m ?? null,
-  }))
+  seriesOf(snapshot)
+    .filter(hasReadings)
+    .map(({ wellId, label, elapsed_s, drawdown_m, included, corrections = [] }) => ({
+      wellId,
+      label,
+      elapsed_s,
+      drawdown_m,
+      included,
+      corrections,
+      uncorrected_m: snapshot.readings.find((one) => one.wellId === wellId)?.uncorrected_m ?? null,
+    }))
