@@ -18,9 +18,9 @@ async function createTest(
   wellIds: WellIds,
   unitIds: UnitIds,
 ) {
-  const { startLocal, zone, aquifer, thicknessM, thicknessBasis, conditions, rateSteps, staticLevelM } = test
+  const { startLocal, zone, aquifer, thicknessM, thicknessBasis, conditions, checklist, rateSteps, staticLevelM } = test
   const { id } = await pumpingTests.create(analyst, {
-    ...{ startLocal, zone, aquifer, thicknessM, thicknessBasis, conditions, rateSteps, staticLevelM },
+    ...{ startLocal, zone, aquifer, thicknessM, thicknessBasis, conditions, checklist, rateSteps, staticLevelM },
     visibility: 'internal',
     wellId: wellIds.get(test.wellCode)!,
     intervalBasis: 'screens',
