@@ -1,4 +1,5 @@
 import { aquiferUnitDetail, aquiferUnitList } from '#shared/contracts/map.ts'
+import { unitStatistics, type UnitStatisticsQuery } from '#shared/contracts/unit-statistics.ts'
 import { api } from './client.ts'
 
 export const fetchAquiferUnits = (signal?: AbortSignal) =>
@@ -6,3 +7,6 @@ export const fetchAquiferUnits = (signal?: AbortSignal) =>
 
 export const fetchAquiferUnit = (id: number, signal?: AbortSignal) =>
   api.get(`/api/aquifer-units/${id}`, { response: aquiferUnitDetail, signal })
+
+export const fetchUnitStatistics = (id: number, query: UnitStatisticsQuery, signal?: AbortSignal) =>
+  api.get(`/api/aquifer-units/${id}/statistics`, { query: { ...query }, response: unitStatistics, signal })

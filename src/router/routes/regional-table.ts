@@ -16,4 +16,10 @@ export const regionalTableRoutes: RouteRecordRaw[] = [
       },
     ],
   },
+  {
+    path: '/regional-table/aquifer-units/:id(\\d+)',
+    name: 'unit-statistics',
+    meta: { title: 'Statistics of an aquifer unit', action: 'estimates/read' },
+    component: () => import('../../views/UnitStatisticsView.vue'),
+  },
 ]
