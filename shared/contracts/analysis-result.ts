@@ -117,6 +117,7 @@ export const series = z.object({
   elapsed_s: z.array(z.number()),
   drawdown_m: z.array(z.number()),
   included: z.array(z.boolean()),
+  zero: z.literal('mean-before').optional(),
   corrections: z.array(appliedCorrection).optional(),
 })
 

@@ -31,6 +31,8 @@ export interface Series {
   elapsed_s: number[]
   drawdown_m: number[]
   included: boolean[]
+  /** Drawdown counts from the mean of the included readings before pumping; left out: from the level as pumping began. */
+  zero?: 'mean-before'
   /** What was taken off the drawdown before; left out: nothing. */
   corrections?: AppliedCorrection[]
 }

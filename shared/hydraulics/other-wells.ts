@@ -12,6 +12,8 @@ export interface OtherSource {
   respond: Solution['respond']
   place: ResponsePlace
   increments: RateIncrement[]
+  /** Moments whose mean level drawdown counts from. */
+  zero_s: readonly number[]
   /** Position among the unknowns of the factor on its rates; null: rates as given. */
   factorAt: number | null
 }
@@ -60,12 +62,25 @@ interface Place {
  */
 export function otherSources(series: Series, { solution, inputs, boundaries, unknowns }: Place): OtherSource[] {
   const fitted = fittedOf(inputs)
+  const zero_s = zeroOf(series)
   return (inputs.otherWells ?? []).map((other) => ({
     respond: boundedSolution(solution, seenFrom(other, boundaries)).respond,
     place: placeFrom(other, series, inputs),
     increments: rateHistory(other.rates).increments,
+    zero_s,
     factorAt: other.fitted ? unknowns + fitted.indexOf(other) : null,
   }))
+}
+
+/** More moments make no other mean, and cost time. */
+const MOST_MOMENTS = 200
+
+/** The same moments that the level drawdown counts from was read at: each in the middle of as many readings. */
+function zeroOf({ elapsed_s, included, zero }: Series): number[] {
+  const before = zero ? elapsed_s.filter((time, i) => time <= 0 && included[i]) : []
+  if (before.length === 0) return [0]
+  const count = Math.min(before.length, MOST_MOMENTS)
+  return Array.from({ length: count }, (_, k) => before[Math.floor(((k + 0.5) * before.length) / count)] as number)
 }
 
 function placeFrom(other: OtherWell, series: Series, inputs: AnalysisInputs): ResponsePlace {
@@ -101,19 +116,22 @@ function seenFrom(other: OtherWell, boundaries: readonly ChosenBoundary[]): Chos
 }
 
 /**
- * Drawdown by another well since the start of the test: what it drew before is part of the level that drawdown counts
- * from, and is taken off. Derivatives by the transformed unknowns, the factor on the rates on a log scale.
+ * Drawdown by another well beside what it drew when the level was read that drawdown counts from: as pumping began, or
+ * on the mean of the readings before. Derivatives by the transformed unknowns, the factor on the rates on a log scale.
  * Source: superposition in a linear system (Theis 1935).
  */
 export function otherDrawdown(
-  { respond, place, increments, factorAt }: OtherSource,
+  { respond, place, increments, zero_s, factorAt }: OtherSource,
   parameters: ArrayLike<number>,
   times_s: readonly number[],
 ): AddDrawdown {
   const size = parameters.length + 1
   const [start, now, scratch] = [new Float64Array(size), new Float64Array(size), new Float64Array(size)]
-  const atPlace = respond(parameters, place, askedSpan(increments, [0, ...times_s]))
-  superpose(atPlace, increments, 0, start, scratch)
+  const atPlace = respond(parameters, place, askedSpan(increments, [...zero_s, ...times_s]))
+  for (const moment_s of zero_s) {
+    superpose(atPlace, increments, moment_s, now, scratch)
+    for (let k = 0; k < size; k++) start[k] = (start[k] as number) + (now[k] as number) / zero_s.length
+  }
   const factor = factorAt === null ? 1 : (parameters[factorAt] as number)
   return (elapsed_s, out) => {
     superpose(atPlace, increments, elapsed_s, now, scratch)

@@ -111,6 +111,8 @@ function wellSeries(well: TestWellRow, parts: InputParts): Built[] {
         elapsed_s: points.map(({ row }) => row.elapsedS!),
         drawdown_m: points.map(({ s }) => s),
         included: points.map((point) => point.included),
+        // Nothing else asks for it, and tests without other wells keep their hash.
+        ...(meanBefore && parts.otherWells.length > 0 ? { zero: 'mean-before' as const } : {}),
         ...(corrected ? { corrections: corrected.applied } : {}),
       },
       readings: {

@@ -29,8 +29,7 @@ export function withoutHiddenWells(analysis: Analysis, wells: Digest['wells'], s
         Object.entries(result.extras).filter(([name]) => !isNamed(name.replace(/^fitted_/, ''))),
       ),
       findings: result.findings.filter(
-        ({ params: { well, parameter } }) =>
-          (well === undefined || !codes.has(well)) && !isNamed(String(parameter ?? '')),
+        ({ params }) => !Object.values(params).some((value) => codes.has(value) || isNamed(String(value))),
       ),
     },
   }

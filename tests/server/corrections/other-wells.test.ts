@@ -7,7 +7,7 @@ import { otherWells } from '../../../server/db/schema/index.ts'
 import { accept, enterTest, publishTest, readAnalysis, submitDraft } from '../../support/analysed-test.ts'
 import { useApp, type SignedIn } from '../../support/app.ts'
 import { createWell, islandMiddle, makeRegion, makeUnit, makeWellInput, saveAnalysis } from '../../support/domain.ts'
-import { correctionsOf, inputsOf } from './support.ts'
+import { correctionsOf, enterWeatherTest, inputsOf } from './support.ts'
 
 const tested = useApp()
 let analyst: SignedIn
@@ -95,6 +95,16 @@ describe('another well that pumped', () => {
       .send({ ...moved, rowVersion: well.rowVersion })
       .expect(200)
     expect((await readAnalysis(analyst, draft.id)).inputsChanged).toBe(true)
+  })
+
+  it('is counted from the mean of the readings before pumping, where the static level is that mean', async () => {
+    const { id } = await enterWeatherTest(analyst, unitId)
+    const zero = async () => (await inputsOf(analyst, id)).inputs.series[0]!.zero
+    expect(await zero()).toBeUndefined()
+    await list(analyst, id, makeOther()).expect(201)
+    expect(await zero()).toBe('mean-before')
+    const saved = await saveAnalysis(analyst, id, 'theis')
+    expect(saved.status).toBe(201)
   })
 
   it('that is private stands in no test that others see, so that all who analyse have the same inputs', async () => {

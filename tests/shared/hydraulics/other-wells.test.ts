@@ -57,6 +57,27 @@ describe('another pumping well', () => {
     expect(codes(result)).toContain('other-well-superposed')
   })
 
+  it('that began to pump in the middle of the record before is counted from the mean of that record, as drawdown is', () => {
+    const before = Array.from({ length: 61 }, (_, i) => (i - 60) * 0.08 * DAY)
+    const asked = [...before, ...elapsed_s]
+    const moved = asked.map((time) => byOther(time, 260) + (time > 0 ? theisDrawdown(rate, T, S, 40, time) : 0))
+    const mean = moved.slice(0, before.length).reduce((sum, value) => sum + value, 0) / before.length
+    expect(-mean).toBeGreaterThan(0.05)
+    const inputs = inputsWith({})
+    const readings = {
+      elapsed_s: asked,
+      drawdown_m: moved.map((value) => value - mean),
+      included: asked.map(() => true),
+    }
+    const result = analyse(
+      'theis',
+      { ...inputs, series: [{ ...inputs.series[0]!, ...readings, zero: 'mean-before' }] },
+      makeOptions(),
+    )
+    expect(relative(valueOf(result.T), T)).toBeLessThan(1e-6)
+    expect(relative(valueOf(result.S), S)).toBeLessThan(1e-5)
+  })
+
   it('spoils the curve where it is not told of', () => {
     const { otherWells: _none, ...without } = inputsWith({})
     expect(relative(valueOf(analyse('theis', without, makeOptions()).T), T)).toBeGreaterThan(0.05)
