@@ -1,6 +1,8 @@
 import type { Content, TDocumentDefinitions } from 'pdfmake/interfaces.js'
 import type { AnalysisReport, ReportBlock, ReportMark, ReportSection } from '#shared/words/report/document.ts'
+import { forestSvg } from '#shared/charts/forest-svg.ts'
 import { paperTheme } from '#shared/charts/paper-theme.ts'
+import { inOneFont } from './draw-charts.ts'
 import { printed } from './printed.ts'
 
 /** Pictures of a report by the block they belong to; null where there is none to draw. */
@@ -82,11 +84,21 @@ function blockContent(block: ReportBlock, pictures: ReportPictures): Content[] {
       return pictures.sketch === null ? [] : [{ svg: pictures.sketch, width: WIDTH * 0.62, margin: [0, 4, 0, 4] }]
     case 'plot':
       return plotContent(block, pictures)
+    case 'forest':
+      return forestContent(block)
   }
 }
 
 function plotContent({ analysisId, caption }: ReportBlock & { kind: 'plot' }, pictures: ReportPictures): Content[] {
-  const svg = pictures.plot(analysisId)
+  return captioned(caption, pictures.plot(analysisId))
+}
+
+function forestContent({ caption, rows }: ReportBlock & { kind: 'forest' }): Content[] {
+  const svg = forestSvg(rows, paperTheme)
+  return captioned(caption, svg && inOneFont(svg))
+}
+
+function captioned(caption: string, svg: string | null): Content[] {
   if (svg === null) return []
   return [
     {

@@ -8,7 +8,8 @@ const entities: Record<string, string> = { '&': '&amp;', '<': '&lt;', '>': '&gt;
 const forbidden = /[\u0000-\u0008\u000b\u000c\u000e-\u001f\ufffe\uffff]/g
 
 /** Text of anybody, made harmless inside an SVG. */
-const safe = (text: string) => text.replace(forbidden, '').replace(/[&<>"']/g, (letter) => entities[letter] ?? '')
+export const safeText = (text: string) =>
+  text.replace(forbidden, '').replace(/[&<>"']/g, (letter) => entities[letter] ?? '')
 
 /** The sketch of a test as a picture of its own, for documents. */
 export function sketchSvg({ size, centre, wells, rings, edges }: TestSketch, theme: ChartTheme): string {
@@ -31,7 +32,7 @@ export function sketchSvg({ size, centre, wells, rings, edges }: TestSketch, the
 }
 
 const text = ({ x, y, anchor, text: said }: SketchLabel, { ink }: ChartTheme) =>
-  `<text x="${x}" y="${y}" text-anchor="${anchor}" fill="${ink}" font-family="${safe(CHART_FONT)}" font-size="${CHART_FONT_SIZE}">${safe(said)}</text>`
+  `<text x="${x}" y="${y}" text-anchor="${anchor}" fill="${ink}" font-family="${safeText(CHART_FONT)}" font-size="${CHART_FONT_SIZE}">${safeText(said)}</text>`
 
 const wellMark = ({ role, x, y }: SketchWell, { ochre, ink, sheet }: ChartTheme) =>
   role === 'pumped'
@@ -39,4 +40,4 @@ const wellMark = ({ role, x, y }: SketchWell, { ochre, ink, sheet }: ChartTheme)
     : `<circle cx="${x}" cy="${y}" r="5" fill="${sheet}" stroke="${ink}" stroke-width="1.5"/><path d="M${x - 8} ${y}H${x + 8}M${x} ${y - 8}V${y + 8}" stroke="${ink}" stroke-width="1"/>`
 
 const north = (width: number, { inkSoft }: ChartTheme) =>
-  `<path d="M${width - 16} 12l5 15-5-4-5 4z" fill="${inkSoft}"/><text x="${width - 16}" y="39" text-anchor="middle" fill="${inkSoft}" font-family="${safe(CHART_FONT)}" font-size="${CHART_FONT_SIZE}">N</text>`
+  `<path d="M${width - 16} 12l5 15-5-4-5 4z" fill="${inkSoft}"/><text x="${width - 16}" y="39" text-anchor="middle" fill="${inkSoft}" font-family="${safeText(CHART_FONT)}" font-size="${CHART_FONT_SIZE}">N</text>`

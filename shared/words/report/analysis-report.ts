@@ -1,13 +1,11 @@
 import type { Analysis } from '#shared/contracts/analyses.ts'
-import { agreements, type Agreement, type ComparedAnalysis } from '#shared/hydraulics/agreement.ts'
-import { methods, type MethodId } from '#shared/hydraulics/catalogue.ts'
 import { kindLabels } from '#shared/hydraulics/kinds.ts'
-import { agreementText } from '../agreement.ts'
 import { cautions, type CautionId } from '../cautions.ts'
-import { analysisName, analysisSection } from './analysis-section.ts'
+import { agreementSection } from './agreement-section.ts'
+import { analysisSection } from './analysis-section.ts'
 import { reportDate, reportStart } from './dates.ts'
 import { correctionsSection } from './corrections-section.ts'
-import type { AnalysisReport, ReportGiven, ReportMark, ReportSection } from './document.ts'
+import type { AnalysisReport, ReportGiven, ReportSection } from './document.ts'
 import { conditionsSection, dataSection, identitySection, wellsSection } from './test-sections.ts'
 
 /** What stands for nothing any more comes last. */
@@ -28,7 +26,7 @@ export function analysisReport(given: ReportGiven): AnalysisReport {
       dataSection(given),
       ...correctionsSection(given),
       ...(analyses.length > 0 ? analyses.map((analysis) => analysisSection(analysis, given)) : [noAnalysis]),
-      ...agreementSection(analyses),
+      ...agreementSection(analyses, given.units),
       cautionsSection,
     ],
     made: `Made with Basinbook on ${reportDate(madeAt)} from the data of ${test.wellCode} as they were then.`,
@@ -39,39 +37,6 @@ const noAnalysis: ReportSection = {
   id: 'analyses',
   title: 'Analyses',
   blocks: [{ kind: 'text', text: 'This test has no analysis yet.' }],
-}
-
-const severities: Record<Agreement['code'], ReportMark['severity']> = {
-  agree: 'good',
-  'agree-roughly': 'note',
-  disagree: 'caution',
-}
-const words: Record<Agreement['code'], string> = {
-  agree: 'Agree',
-  'agree-roughly': 'Roughly',
-  disagree: 'Disagree',
-}
-
-/** What was returned or withdrawn is evidence of nothing, and is not compared. */
-function compared({ id, method, label, state, result, options }: Analysis): ComparedAnalysis[] {
-  if (state === 'returned' || state === 'withdrawn' || !result.T || !Object.hasOwn(methods, method)) return []
-  const { phase, wells } = methods[method as MethodId].needs
-  const wellIds = options && 'wellIds' in options ? options.wellIds : []
-  const name = `${analysisName({ method, label })} (${id})`
-  return [
-    { id: String(id), label: name, T: result.T, wellIds, phase, usesDistances: wells.least > 1 || wellIds.length > 1 },
-  ]
-}
-
-function agreementSection(analyses: readonly Analysis[]): ReportSection[] {
-  const pairs = agreements(analyses.flatMap(compared))
-  if (pairs.length === 0) return []
-  const items = pairs.map((pair): ReportMark => ({
-    severity: severities[pair.code],
-    word: words[pair.code],
-    text: agreementText(pair),
-  }))
-  return [{ id: 'agreement', title: 'Agreement', blocks: [{ kind: 'marked', items }] }]
 }
 
 const ofReport: readonly CautionId[] = ['drawdown', 'discharge', 'site']

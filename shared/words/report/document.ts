@@ -13,6 +13,16 @@ export type ReportBlock =
   | { kind: 'sketch' }
   /** All readings, or the plot of the analysis with this id. */
   | { kind: 'plot'; analysisId: number | null; caption: string }
+  /** Estimates of one quantity under each other, in the reader's unit. */
+  | { kind: 'forest'; caption: string; rows: ReportEstimate[] }
+
+export interface ReportEstimate {
+  label: string
+  value: number
+  low: number
+  high: number
+  determined: boolean
+}
 
 export interface ReportFact {
   label: string

@@ -133,7 +133,15 @@ describe('the report of a test', () => {
   it('compares what stands, and not what was returned or withdrawn', () => {
     const other = makeAnalysis('cooper-jacob', { id: 12 })
     const both = reportOf({ analyses: [makeAnalysis(), other] })
-    expect(JSON.stringify(section(both, 'agreement'))).toContain('agree')
+    const agreement = section(both, 'agreement')!
+    expect(agreement.blocks.map(({ kind }) => kind)).toEqual(['table', 'forest', 'marked'])
+    const [table, forest] = agreement.blocks
+    if (table?.kind !== 'table' || forest?.kind !== 'forest') throw new Error('other blocks')
+    expect(table.rows.map(([name]) => name)).toEqual(forest.rows.map(({ label }) => label))
+    // In the reader's unit: m²/d.
+    expect(forest.rows[1]!.value / (other.result.T!.value * 86_400)).toBeCloseTo(1, 12)
+    expect(Number(table.rows[1]![4])).toBeCloseTo(other.result.T!.value / makeAnalysis().result.T!.value, 2)
+    expect(JSON.stringify(agreement)).toContain('agree')
     const returned = { ...other, state: 'returned' as const }
     expect(section(reportOf({ analyses: [makeAnalysis(), returned] }), 'agreement')).toBeUndefined()
   })
