@@ -15,7 +15,7 @@ import { edgeOfBoundary, surroundingsOf } from './surroundings.ts'
 import { settingOf, sha256Of, sha256OfKind, type Setting } from './setting.ts'
 
 export interface InputsNeeds {
-  pumpingTests: Pick<ReturnType<typeof createPumpingTestsService>, 'whole' | 'maySee' | 'hold'>
+  pumpingTests: Pick<ReturnType<typeof createPumpingTestsService>, 'whole' | 'withUnits' | 'maySee' | 'hold'>
   streams: Pick<ReturnType<typeof createStreamsService>, 'nearestConnected' | 'pathsConnected'>
   boundaries: Pick<ReturnType<typeof createBoundariesService>, 'affecting'>
   wells: Pick<WellsService, 'screensOf' | 'picksOf'>
@@ -64,7 +64,7 @@ export function createInputsService(needs: InputsNeeds) {
   return {
     maySee: pumpingTests.maySee,
     hold: pumpingTests.hold,
-    testOf: pumpingTests.whole,
+    testOf: pumpingTests.withUnits,
 
     /** Ids of the wells of a test that the viewer may see; null where all of them are, as for those who analyse. */
     async wellsSeen(executor: Executor, viewer: Viewer, testId: number): Promise<Set<string> | null> {

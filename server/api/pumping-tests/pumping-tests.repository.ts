@@ -147,19 +147,26 @@ export async function countUnits(executor: Executor, ids: number[]): Promise<num
   return executor.$count(aquiferUnits, inArray(aquiferUnits.id, ids))
 }
 
-/** Replaces rate steps and unit shares; wells keep their rows where they stay, so that their series stay too. */
-export async function replaceSteps(executor: Executor, testId: number, steps: NewRateStep[]) {
-  await executor.delete(rateSteps).where(eq(rateSteps.pumpingTestId, testId))
+export async function insertSteps(executor: Executor, testId: number, steps: NewRateStep[]) {
   if (steps.length === 0) return
   await executor.insert(rateSteps).values(steps.map((step) => ({ ...step, pumpingTestId: testId })))
 }
 
-export async function replaceUnits(executor: Executor, testId: number, units: NewTestUnit[]) {
-  await executor.delete(testUnits).where(eq(testUnits.pumpingTestId, testId))
+export async function insertUnits(executor: Executor, testId: number, units: NewTestUnit[]) {
   await executor.insert(testUnits).values(units.map((unit) => ({ ...unit, pumpingTestId: testId })))
 }
 
-export async function replaceTestWells(executor: Executor, testId: number, rows: NewTestWell[]) {
+export async function deleteUnitsAndSteps(executor: Executor, testId: number) {
+  await executor.delete(rateSteps).where(eq(rateSteps.pumpingTestId, testId))
+  await executor.delete(testUnits).where(eq(testUnits.pumpingTestId, testId))
+}
+
+export async function insertTestWells(executor: Executor, testId: number, rows: NewTestWell[]) {
+  await executor.insert(testWells).values(rows.map((row) => ({ ...row, pumpingTestId: testId })))
+}
+
+/** Wells that stay keep their rows, so that their series stay too. */
+export async function changeTestWells(executor: Executor, testId: number, rows: NewTestWell[]) {
   const before = await executor.select().from(testWells).where(eq(testWells.pumpingTestId, testId))
   const kept = new Set(rows.map(({ wellId }) => wellId))
   const gone = before.filter(({ wellId }) => !kept.has(wellId)).map(({ id }) => id)

@@ -66,16 +66,15 @@ export function createPumpingTestsService(deps: Deps, { wells, markInputsChanged
     return { wellRows, row: { ...columns(input), ...interval, startAt: start.at, startPrecision: start.precision } }
   }
 
-  async function write(executor: Executor, id: number, input: PumpingTestInput, wellRows: repository.NewTestWell[]) {
-    await repository.replaceTestWells(executor, id, wellRows)
-    await repository.replaceUnits(executor, id, input.units)
-    await repository.replaceSteps(executor, id, input.rateSteps.map(stepRow))
+  async function find(executor: Executor, viewer: Viewer, id: number) {
+    const found = await repository.findPumpingTest(executor, viewer, id)
+    if (!found) throw notFound()
+    return found
   }
 
   /** A test with everything that belongs to it, as far as the viewer may see it. */
   async function whole(executor: Executor, viewer: Viewer, id: number) {
-    const found = await repository.findPumpingTest(executor, viewer, id)
-    if (!found) throw notFound()
+    const found = await find(executor, viewer, id)
     // One after the other: inside a transaction there is one connection.
     const testWells = await repository.listTestWells(executor, viewer, id)
     const units = await repository.listTestUnits(executor, id)
@@ -114,6 +113,12 @@ export function createPumpingTestsService(deps: Deps, { wells, markInputsChanged
     get,
     whole,
 
+    /** A test with its units alone. */
+    async withUnits(executor: Executor, viewer: Viewer, id: number) {
+      const found = await find(executor, viewer, id)
+      return { found, parts: { units: await repository.listTestUnits(executor, id) } }
+    },
+
     async maySee(executor: Executor, viewer: Viewer, id: number): Promise<boolean> {
       return (await repository.findPumpingTest(executor, viewer, id)) !== null
     },
@@ -141,7 +146,9 @@ export function createPumpingTestsService(deps: Deps, { wells, markInputsChanged
           createdBy: viewer.id,
           createdAt: at,
         })
-        await write(tx, id, input, wellRows)
+        await repository.insertTestWells(tx, id, wellRows)
+        await repository.insertUnits(tx, id, input.units)
+        await repository.insertSteps(tx, id, input.rateSteps.map(stepRow))
         await recordAudit(tx, { viewer, at, action: 'pumping-tests/create', subject: 'pumping-test', subjectId: id })
         return { id }
       }),
@@ -169,8 +176,8 @@ export function createPumpingTestsService(deps: Deps, { wells, markInputsChanged
           thicknessError: 0.1,
           rateError: 0.05,
         })
-        await repository.replaceTestWells(tx, id, [pumpedWellRow(wellId, null)])
-        await repository.replaceUnits(tx, id, units)
+        await repository.insertTestWells(tx, id, [pumpedWellRow(wellId, null)])
+        await repository.insertUnits(tx, id, units)
         await recordAudit(tx, { viewer, at, action: 'pumping-tests/report', subject: 'pumping-test', subjectId: id })
         return { id }
       }),
@@ -178,7 +185,7 @@ export function createPumpingTestsService(deps: Deps, { wells, markInputsChanged
     /** A test that was entered for its values alone is nothing without them; what it was stays in the audit trail. */
     async removeReported(executor: Executor, viewer: Viewer, id: number): Promise<void> {
       const row = await repository.lockPumpingTest(executor, viewer, id)
-      if (row?.kind !== 'reported') return
+      if (row?.kind !== 'reported' || (await repository.listSeries(executor, id)).length > 0) return
       await repository.deleteBareTest(executor, id)
       const { wellId, startAt, startPrecision, source } = row
       const details = { wellId, startAt, startPrecision, source }
@@ -196,7 +203,10 @@ export function createPumpingTestsService(deps: Deps, { wells, markInputsChanged
         if (!(await repository.updatePumpingTest(tx, id, rowVersion, row))) throw new AppError('edit/conflict')
         const logged = await repository.listLoggedWells(tx, id)
         checkLogs({ logged, clockSeries: await repository.countClockSeries(tx, id) }, before, row, wellRows)
-        await write(tx, id, input, wellRows)
+        await repository.changeTestWells(tx, id, wellRows)
+        await repository.deleteUnitsAndSteps(tx, id)
+        await repository.insertUnits(tx, id, input.units)
+        await repository.insertSteps(tx, id, input.rateSteps.map(stepRow))
         await markInputsChanged(tx, id)
         await valuesChanged(tx, id)
         await recordAudit(tx, {
