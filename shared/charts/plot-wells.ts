@@ -54,10 +54,9 @@ export function plotWells(request: WellsRequest): PlotWell[] {
   return inputs.series.filter(({ wellId }) => wellIds.includes(wellId)).map((series) => plotWell(request, series))
 }
 
-function plotWell({ kind, inputs, clock, length_m, smoothing, within }: WellsRequest, series: Series): PlotWell {
-  const all = placedReadings(series, clock, length_m, kind === 'log-log')
-  const placed = within ? all.filter(({ x }) => x >= within[0] && x <= within[1]) : all
-  const kept = placed.filter(({ included }) => included)
+function plotWell(request: WellsRequest, series: Series): PlotWell {
+  const { kind, inputs, clock, length_m, smoothing } = request
+  const { kept, leftOut } = placedReadings(series, request)
   const { wellId, label, role } = series
   return {
     wellId,
@@ -65,22 +64,29 @@ function plotWell({ kind, inputs, clock, length_m, smoothing, within }: WellsReq
     role,
     points: thinned(kept, kind),
     readingCount: kept.length,
-    leftOut: placed.filter(({ included }) => !included),
+    leftOut,
     derivative: hasDerivative(kind) ? derivativeOf(inputs, wellId, clock, { length_m, smoothing, kind }) : [],
   }
 }
 
-function placedReadings(series: Series, clock: PlotClock, length_m: number, positive: boolean) {
-  return series.elapsed_s.flatMap((elapsed_s, i) => {
+/** Readings with a place in the part that is shown. A loop: arrays of one element each take seconds of a long log. */
+function placedReadings(series: Series, { kind, clock, length_m, within = [-Infinity, Infinity] }: WellsRequest) {
+  const { elapsed_s: times, drawdown_m, included } = series
+  const [kept, leftOut]: [PlotPoint[], PlotPoint[]] = [[], []]
+  for (let i = 0; i < times.length; i++) {
+    const elapsed_s = times[i] as number
     const x = clock.place(elapsed_s)
-    const y = (series.drawdown_m[i] as number) / length_m
-    if (x === null || !Number.isFinite(y) || (positive && !(y > 0))) return []
-    return [{ x, y, elapsed_s, included: series.included[i] as boolean }]
-  })
+    const y = (drawdown_m[i] as number) / length_m
+    const isShown = x !== null && x >= within[0] && x <= within[1]
+    if (!isShown || !Number.isFinite(y) || (kind === 'log-log' && !(y > 0))) continue
+    if (included[i]) kept.push({ x, y, elapsed_s })
+    else leftOut.push({ x, y, elapsed_s })
+  }
+  return { kept, leftOut }
 }
 
 /** By what they look like on the axes of the plot: the spikes and steps of a long log stay. */
-function thinned<Point extends PlotPoint>(points: Point[], kind: PlotKind): Point[] {
+function thinned(points: PlotPoint[], kind: PlotKind): PlotPoint[] {
   if (points.length <= MOST_POINTS) return points
   const along = points.map(({ x }) => (kind === 'linear' ? x : Math.log10(x)))
   const up = points.map(({ y }) => (kind === 'log-log' ? Math.log10(y) : y))
@@ -89,7 +95,7 @@ function thinned<Point extends PlotPoint>(points: Point[], kind: PlotKind): Poin
   const ascending = span < 0 ? along.map((x) => -x) : along
   const wanted = kind === 'linear' ? MOST_POINTS : POINTS_PER_CYCLE * Math.abs(span)
   const buckets = Math.min(Math.max(Math.ceil(wanted), FEWEST_POINTS), MOST_POINTS)
-  return largestTriangles(ascending, up, buckets - 2).map((i) => points[i] as Point)
+  return largestTriangles(ascending, up, buckets - 2).map((i) => points[i] as PlotPoint)
 }
 
 /** How many of the wells' readings are drawn; null where all are. */
