@@ -149,6 +149,23 @@ const cases: Record<string, { bad: Case[]; good: Case[] }> = {
       ['server/api/a/a.repository.ts', 'export const add = (db: Db) => db.insert(wells).values(row)'],
     ],
   },
+  'what is written to wells is counted in the cells of the map': {
+    bad: [
+      ['server/api/wells/wells.repository.ts', 'export const add = (db: Db) => db.insert(wells).values(row)'],
+      [
+        'server/api/a/a.repository.ts',
+        'const kept = (db: Db) => addToCells(db, all)\nexport const move = (db: Db) => db.update(wells).set(place)',
+      ],
+      ['server/jobs/a.ts', 'export const drop = (db: Db) => db.delete(wells).where(old)'],
+    ],
+    good: [
+      [
+        'server/api/a/a.repository.ts',
+        'export const move = (db: Db) => recountingWells(db, ids, () => db.update(wells).set(place))',
+      ],
+      ['server/api/a/a.repository.ts', 'export const screens = (db: Db) => db.insert(wellScreens).values(rows)'],
+    ],
+  },
   'no file is longer than 400 lines': {
     bad: [['src/a.ts', 'let a\n'.repeat(401)]],
     good: [['src/a.ts', 'let a\n'.repeat(400)]],

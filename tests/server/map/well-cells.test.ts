@@ -1,4 +1,4 @@
-import { ne, sql } from 'drizzle-orm'
+import { eq, ne, sql } from 'drizzle-orm'
 import { beforeAll, beforeEach, describe, expect, it } from 'vitest'
 import { visitor, type Viewer } from '#shared/contracts/permissions.ts'
 import { mercatorInts } from '#shared/geodesy/index.ts'
@@ -202,6 +202,12 @@ describe('counts of cells', () => {
     await app.deps.jobs.drain()
     const after = await keptCounts()
     expect(after).not.toEqual(before)
+    const { db } = app.deps.connection
+    expect(await db.$count(wellCells, eq(wellCells.wellCount, 0))).toBeGreaterThan(0)
+    await app.deps.jobs.enqueue(db, 'clean-up')
+    await app.deps.jobs.drain()
+    expect(await db.$count(wellCells)).toBe(after.size)
+    expect(await keptCounts()).toEqual(after)
   })
 
   it('are as before when a change is not carried through', async () => {

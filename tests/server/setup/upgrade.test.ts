@@ -1,11 +1,13 @@
 import { cpSync, mkdirSync, readFileSync, readdirSync, rmSync, writeFileSync } from 'node:fs'
 import { join } from 'node:path'
+import { sql } from 'drizzle-orm'
 import { migrate } from 'drizzle-orm/mysql2/migrator'
 import { afterAll, beforeAll, describe, expect, it, vi } from 'vitest'
 import { readPackedInputs } from '../../../server/api/analyses/packed-inputs.repository.ts'
 import { unpackJson } from '../../../server/db/packed-json.ts'
 import { connect } from '../../../server/db/client.ts'
-import { analyses } from '../../../server/db/schema/index.ts'
+import { analyses, wellCells } from '../../../server/db/schema/index.ts'
+import { addToCells } from '../../../server/db/well-cells.ts'
 import { databaseFolder } from '../../../server/setup/databases.mjs'
 import { startMariadb, type Mariadb } from '../../../server/setup/mariadb.mjs'
 import { inRoot } from '../../../server/setup/places.mjs'
@@ -41,7 +43,16 @@ async function applyFirstMigration(url: string): Promise<void> {
 
 const snapshot = { version: 1, kind: 'reported', source: 'Brønn № 5 💧' }
 
+const well = (code: string, mx: number, exposure: string) => `
+  INSERT INTO wells (code, kind, position, mx, my, original_x, original_y, original_epsg, position_operation,
+      position_accuracy_m, visibility, embargo_until, created_by, created_at)
+    VALUES ('${code}', 'well', ST_PointFromText('POINT(-21.2 -38.4)', 4326), ${mx}, 10300001, 1, 2, 32727, 'none', 3,
+      ${exposure}, '2026-01-02');`
+
 const records = `
+  ${well('V-1', 7400001, "'published', NULL, NULL")}
+  ${well('V-2', 7400002, "'published', NULL, NULL")}
+  ${well('V-3', 7400003, "'published', '2031-01-01', 7")}
   INSERT INTO analyses (pumping_test_id, method, method_version, state, inputs, inputs_sha256, result, created_at)
     VALUES (1, 'reported', 1, 'accepted', '${JSON.stringify(snapshot)}', repeat('0', 64), '{}', '2026-01-02');
   INSERT INTO users (email, name, role, created_at) VALUES ('a@b.example', 'Ada Ö. 🌊', 'analyst', '2026-01-02 03:04:05.678');
@@ -72,6 +83,16 @@ describe('a data folder made by the first migration', () => {
     expect(await unpackJson(await readPackedInputs(db, row!.id).finally(close))).toEqual(snapshot)
     const unpacked = 'SELECT CONVERT(UNCOMPRESS(bytes) USING utf8mb4) FROM analysis_input_parts'
     expect(await server.query(unpacked)).toEqual([[JSON.stringify(snapshot)]])
+  })
+
+  it('counts its wells by the cells of the map, as it does when they are written', async () => {
+    const { db, close } = connect(server.url(), 1)
+    const migrated = await db.select().from(wellCells)
+    await db.delete(wellCells)
+    await addToCells(db, sql`true`)
+    const written = await db.select().from(wellCells).finally(close)
+    expect(migrated).toEqual(written)
+    expect(migrated.map(({ wellCount }) => wellCount).sort()).toEqual([1, 1, 1, 2, 2, 2])
   })
 
   it('has then the schema of a new one', async () => {

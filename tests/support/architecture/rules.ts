@@ -1,7 +1,7 @@
 import { clientAndServerApart, clientDirection, serverLayers, sharedDirection } from './import-rules.ts'
 import { sharedIsPure } from './purity-rules.ts'
 import type { Rule } from './source-file.ts'
-import { readsAreGuarded, sqlInRepositories } from './sql-rules.ts'
+import { readsAreGuarded, sqlInRepositories, wellsAreCounted } from './sql-rules.ts'
 import { everyTestRuns } from './test-rules.ts'
 import { filesAreShort, noHtmlStrings, noWorkplace, settingsInPlace } from './text-rules.ts'
 
@@ -14,6 +14,7 @@ export const rules: Record<string, Rule> = {
   'shared code is pure': sharedIsPure,
   'SQL stays in repositories': sqlInRepositories,
   'wells, pumping tests and attachments are read through readable(viewer)': readsAreGuarded,
+  'what is written to wells is counted in the cells of the map': wellsAreCounted,
   'no file is longer than 400 lines': filesAreShort,
   'no component renders a string as HTML': noHtmlStrings,
   'no test is held back': everyTestRuns,

@@ -43,6 +43,9 @@ const reads = new RegExp(
 /** `@everyRow why`, in the comment above a function: a job or a write that must see every row, whoever asks. */
 const marker = /@everyRow\s+\S.{14,}/
 
+const writesWells = /\.(?:insert|update|delete)\(\s*wells\b/
+const keepsCells = /\b(?:addToCells|recountingWells)\b/
+
 interface Declaration {
   name: string
   /** Without comments, which may speak of tables. */
@@ -110,3 +113,16 @@ export const readsAreGuarded: Rule = (files) =>
           message: `${each.name || 'a statement'} reads wells, pumping tests or attachments without readable(viewer)`,
         }))
     })
+
+/** The map counts wells by cells, which are written with the wells. */
+export const wellsAreCounted: Rule = (files) =>
+  files
+    .filter(({ path }) => /^server\/.*\.ts$/.test(path))
+    .flatMap((file) =>
+      declarations(file)
+        .filter(({ code }) => writesWells.test(code) && !keepsCells.test(code))
+        .map(({ name }) => ({
+          path: file.path,
+          message: `${name || 'a statement'} writes wells without the cells of the map (server/db/well-cells.ts)`,
+        })),
+    )
