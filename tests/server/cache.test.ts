@@ -24,4 +24,15 @@ describe('a cache of values that take long to make', () => {
     await expect(cached('a', () => Promise.reject(new Error('disk')))).rejects.toThrow('disk')
     expect(await cached('a', async () => 'read')).toBe('read')
   })
+
+  it('counts values by what they weigh, and keeps none that is heavier than all may be', async () => {
+    const cached = createCache<string>(5, ({ length }) => length)
+    await cached('a', async () => 'xx')
+    await cached('b', async () => 'yyy')
+    await cached('c', async () => 'z')
+    expect(await cached('b', async () => 'made again')).toBe('yyy')
+    expect(await cached('a', async () => 'aa')).toBe('aa')
+    await cached('d', async () => 'far too long')
+    expect(await cached('d', async () => 'short')).toBe('short')
+  })
 })
