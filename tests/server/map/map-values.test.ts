@@ -225,8 +225,7 @@ describe('values that are kept', () => {
       await valuesOf(visitor, mapQuery({ unitId: String(id) }))
       return statements() - before
     }
-    // The version alone is one statement. Both lists and their three values together are one too many.
-
+    // The version alone is one statement. The lists of both units weigh one too many to be kept together.
     expect([await look(unitId), await look(unitId)]).toEqual([2, 1])
     expect([await look(other), await look(other), await look(unitId)]).toEqual([2, 1, 2])
     await bumpDataVersions(db, [unitId])
