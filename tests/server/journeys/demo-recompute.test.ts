@@ -11,7 +11,7 @@ import { draws } from '../../../server/db/seed/random.ts'
 import { demoRecords } from '../../../server/db/seed/records/index.ts'
 import { openPart } from '../../../server/db/seed/records/open-part.ts'
 import type { DemoAnalysis, DemoFullTest, DemoSeries } from '../../../server/db/seed/records/types.ts'
-import { writeFullTest } from '../../../server/db/seed/write/full-test.ts'
+import { enterFullTest } from '../../../server/db/seed/write/full-test.ts'
 import { writeGeography } from '../../../server/db/seed/write/geography.ts'
 import { castOf } from '../../../server/db/seed/write/people.ts'
 import { writeWell } from '../../../server/db/seed/write/wells.ts'
@@ -58,7 +58,10 @@ beforeAll(async () => {
   )
   for (const well of records.wells.filter(({ code }) => codes.has(code)))
     wellIds.set(well.code, await writeWell(services, cast, records, well, unitIds))
-  for (const test of tests) await writeFullTest(services, cast, test, wellIds, unitIds)
+  for (const test of tests) {
+    const analysed = await enterFullTest(services, tested.deps.workers, cast, test, wellIds, unitIds)
+    await analysed()
+  }
   analyst = await tested.signIn('steward')
 }, 120_000)
 
