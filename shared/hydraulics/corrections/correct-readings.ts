@@ -38,15 +38,21 @@ function findingsOfAll(terms: Term[], before: Antecedent): Map<Term, Learned> {
   const found = new Map(terms.flatMap((term) => (term.given ? [[term, asGiven(term)] as const] : [])))
   const learned = terms.filter(({ given }) => given === null)
   if (learned.length === 0) return found
-  requireAntecedent(before, Math.max(...learned.map(({ needed }) => needed)))
+  const trend = learned.find(({ kind }) => kind === 'trend') ?? trendTerm(before, null)
+  const others = learned.filter((term) => term !== trend)
+  requireAntecedent(before, fewestFor(learned, others))
   const rest = [...found].reduce(
     (left, [term, known]) => minus(left, effectOf(term, known, before.elapsed_s)),
     before.drawdown_m,
   )
-  const trend = learned.find(({ kind }) => kind === 'trend') ?? trendTerm(before, null)
-  const others = learned.filter((term) => term !== trend)
   learnTerms({ trend, others }, before.elapsed_s, rest).forEach((figures, term) => found.set(term, figures))
   return found
+}
+
+/** What the most demanding term takes, and two moments more than there are figures beside level and trend. */
+function fewestFor(learned: Term[], others: Term[]): number {
+  const figures = others.reduce((sum, term) => sum + term.columns([], term.lags_s[0] as number).length, 0)
+  return Math.max(...learned.map(({ needed }) => needed), others.length > 0 ? figures + 4 : 0)
 }
 
 const asGiven = ({ given, lags_s }: Term): Learned => ({

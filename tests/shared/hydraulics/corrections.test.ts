@@ -37,6 +37,27 @@ const removeBarometric = (readings: Readings, outside: Outside, efficiency: Effi
 const removeRiverStage = (readings: Readings, outside: Outside, efficiency: Efficiency) =>
   only(readings, { kind: 'river', outside, efficiency })
 
+describe('causes that are learned together', () => {
+  it('need more readings before pumping than there are figures to find', () => {
+    const outside = stageSeries(-2, 2)
+    const moved = outside.value_m.map((value, i) => value + Math.sin(i / 7))
+    const turned = outside.value_m.map((value, i) => value + Math.cos(i / 11))
+    const efficiency = { longestLag_s: 0, lagStep_s: HOUR }
+    const wanted: WantedCorrection[] = [
+      { kind: 'barometric', outside, efficiency },
+      { kind: 'river', outside: { ...outside, value_m: moved }, efficiency },
+      { kind: 'gauge', outside: { ...outside, value_m: turned }, efficiency },
+      { kind: 'tides' },
+    ]
+    const after = (count: number) => {
+      const elapsed_s = [...Array.from({ length: count }, (_, i) => (i - count) * HOUR), HOUR]
+      return correctReadings({ elapsed_s, drawdown_m: elapsed_s.map((time) => 0.01 * Math.sin(time)) }, wanted)
+    }
+    expect(() => after(8)).toThrow('analysis/correction-readings')
+    after(9).corrections.forEach(({ record }) => expect(Object.values(record).every(Number.isFinite)).toBe(true))
+  })
+})
+
 describe('an antecedent trend', () => {
   it('is taken off the whole record, and leaves the drawdown of pumping', () => {
     const readings = makeReadings(5, 3, (time) => pumping(time) + 0.3 + 2e-7 * time)
