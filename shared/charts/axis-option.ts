@@ -1,5 +1,5 @@
 import type { XAXisComponentOption, YAXisComponentOption } from 'echarts'
-import { logLabels, tickText, type Axis } from './axis.ts'
+import { logLabels, textOn, type Axis } from './axis.ts'
 import { CHART_FONT_SIZE, faded, type ChartTheme } from './chart-theme.ts'
 
 /** Strength of the grid lines between powers of ten. */
@@ -7,7 +7,7 @@ const MINOR = 0.45
 /** Ticks of a factor of ten: 1, 2 … 9. */
 const MINOR_TICKS = 9
 
-function common({ scale, min, max, title, inverse, step }: Axis, theme: ChartTheme) {
+function common({ scale, min, max, title, inverse, step, years }: Axis, theme: ChartTheme) {
   const line = { lineStyle: { color: theme.line, width: 1 } }
   const minor = { show: scale === 'log', splitNumber: MINOR_TICKS }
   return {
@@ -23,7 +23,7 @@ function common({ scale, min, max, title, inverse, step }: Axis, theme: ChartThe
     nameTextStyle: { color: theme.inkSoft, fontSize: CHART_FONT_SIZE },
     axisLine: { show: true, onZero: false, ...line },
     axisTick: { show: true, ...line },
-    axisLabel: { color: theme.inkSoft, fontSize: CHART_FONT_SIZE, formatter: tickText, hideOverlap: true },
+    axisLabel: { color: theme.inkSoft, fontSize: CHART_FONT_SIZE, formatter: textOn({ years }), hideOverlap: true },
     splitLine: { show: true, ...line },
     ...(scale === 'log' ? { minorTick: minor } : {}),
     minorSplitLine: { show: scale === 'log', lineStyle: { color: faded(theme.line, MINOR), width: 1 } },

@@ -10,6 +10,8 @@ export interface Axis {
   inverse: boolean
   /** Between the ticks of a linear axis. */
   step?: number
+  /** Years are written without a space between thousands. */
+  years?: boolean
 }
 
 /** Extents of values; null when there is none. Spreads into Math.min would overflow the stack on long logs. */
@@ -97,3 +99,6 @@ export function logLabels(axis: Axis): number[] {
 }
 
 export const tickText = (value: number) => formatNumber(value, { figures: 6, trim: true })
+
+/** What stands at a tick of an axis. */
+export const textOn = ({ years }: Pick<Axis, 'years'>): ((value: number) => string) => (years ? String : tickText)

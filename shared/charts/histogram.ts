@@ -1,6 +1,6 @@
 import type { EChartsOption, SeriesOption } from 'echarts'
 import { xAxisOption, yAxisOption } from './axis-option.ts'
-import { linearAxis, logAxis, tickText, type Axis } from './axis.ts'
+import { extentOf, linearAxis, logAxis, tickText, type Axis } from './axis.ts'
 import { CHART_FONT, CHART_FONT_SIZE, faded, type ChartTheme } from './chart-theme.ts'
 import type { PlotFrame } from './plot-frame.ts'
 import { quiet } from './quiet.ts'
@@ -30,14 +30,14 @@ function breaksBy(digits: readonly number[], least: number, most: number): numbe
   const all = Array.from({ length: last - first + 1 }, (_, i) => first + i).flatMap((power) =>
     digits.map((digit) => Number(`${digit}e${power}`)),
   )
-  const below = all.findLastIndex((value) => value <= least)
+  const below = all.findIndex((value) => value > least) - 1
   const above = all.findIndex((value) => value > most)
   return all.slice(below, above + 1)
 }
 
 /** Round class breaks about positive values: the coarsest that part them into as many classes as their number asks for. */
 export function roundBreaks(values: readonly number[]): number[] {
-  const [least, most] = [Math.min(...values), Math.max(...values)]
+  const [least, most] = extentOf(values) ?? [1, 1]
   const choices = DIGITS.map((digits) => breaksBy(digits, least, most))
   return choices.find((breaks) => breaks.length - 1 >= wantedClasses(values.length)) ?? choices.at(-1)!
 }
@@ -49,13 +49,11 @@ export function histogramOf(values: readonly number[], title: string): Histogram
     const from = breaks[i]!
     return { from, to, count: values.filter((value) => value >= from && value < to).length }
   })
+  const counts = classes.map(({ count }) => count)
   return {
     x: logAxis(breaks, title),
-    y: linearAxis(
-      classes.map(({ count }) => count),
-      'wells in the class',
-      { parts: 5 },
-    ),
+    // Wells are counted in whole numbers.
+    y: linearAxis(counts, 'wells in the class', { parts: Math.min(5, Math.max(...counts)) }),
     classes,
   }
 }
@@ -66,7 +64,7 @@ export function histogramChart({ x, y, classes }: Histogram, { plot }: PlotFrame
     textStyle: { fontFamily: CHART_FONT, fontSize: CHART_FONT_SIZE, color: theme.ink },
     grid: [{ ...plot, containLabel: false, outerBoundsMode: 'none' as const }],
     xAxis: [xAxisOption(x, theme)],
-    yAxis: [{ ...yAxisOption(y, theme, plot.left - 18), minInterval: 1 }],
+    yAxis: [yAxisOption(y, theme, plot.left - 18)],
     series: [
       {
         ...quiet,

@@ -1,6 +1,7 @@
 import type { EChartsOption, SeriesOption } from 'echarts'
 import { formatNumber } from '#shared/quantities/format.ts'
 import { xAxisOption, yAxisOption } from './axis-option.ts'
+import type { Axis } from './axis.ts'
 import { CHART_FONT, CHART_FONT_SIZE, faded, type ChartTheme } from './chart-theme.ts'
 import { dotSize } from './fit-series.ts'
 import type { PlotFrame } from './plot-frame.ts'
@@ -73,6 +74,9 @@ const dress = (state: SimplePoint['state'], theme: ChartTheme) =>
     'left-out': { color: theme.sheet, borderColor: theme.ink, borderWidth: 1 },
   })[state]
 
+/** A point with a name of its own is called by it. */
+const datum = ({ x, y, name }: SimplePoint) => (name === undefined ? [x, y] : { name, value: [x, y] })
+
 function dotsSeries({ label, points }: SimpleDots, index: number, theme: ChartTheme): SeriesOption[] {
   return (['outside', 'left-out', 'used'] as const).map(
     (state) =>
@@ -85,7 +89,7 @@ function dotsSeries({ label, points }: SimpleDots, index: number, theme: ChartTh
         symbol: symbolOf(index),
         symbolSize: dotSize(points.length),
         itemStyle: dress(state, theme),
-        data: points.filter((point) => point.state === state).map(({ x, y }) => [x, y]),
+        data: points.filter((point) => point.state === state).map(datum),
       }) as SeriesOption,
   )
 }
@@ -102,7 +106,8 @@ const fitted = (label: string, points: SimplePlot['lines'][number]['points'], in
     lineStyle: { color: theme.deepWater, width: LINE_WIDTH },
   }) as SeriesOption
 
-const figures = (value: number) => formatNumber(value, { figures: 4, trim: true })
+const figures = ({ years }: Axis, value: number) =>
+  years ? String(value) : formatNumber(value, { figures: 4, trim: true })
 
 function tooltip({ x, y }: SimplePlot, theme: ChartTheme) {
   return {
@@ -111,8 +116,9 @@ function tooltip({ x, y }: SimplePlot, theme: ChartTheme) {
     borderColor: theme.line,
     textStyle: { color: theme.ink, fontSize: CHART_FONT_SIZE },
     formatter: (shown: unknown) => {
-      const { seriesName, value } = shown as { seriesName: string; value: [number, number] }
-      return `${seriesName}\n${x.title}: ${figures(value[0])}\n${y.title}: ${figures(value[1])}`
+      const { name, seriesName, value } = shown as { name: string; seriesName: string; value: [number, number] }
+      const whose = [name, seriesName].filter(Boolean).join(', ')
+      return `${whose}\n${x.title}: ${figures(x, value[0])}\n${y.title}: ${figures(y, value[1])}`
     },
   }
 }

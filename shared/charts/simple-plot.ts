@@ -7,6 +7,8 @@ export interface SimplePoint {
   y: number
   fitted: number | null
   state: 'used' | 'outside' | 'left-out'
+  /** Whose it is, where points have names of their own. */
+  name?: string
 }
 
 /** Points that belong together: a repeat, the steps of a test. */

@@ -1,7 +1,7 @@
 import type { OverviewValue, Trend, UnitFigures, UnitStatistics } from '#shared/contracts/unit-statistics.ts'
 import { evidence } from '#shared/contracts/kinds.ts'
 import { fromSI, unitById } from '#shared/quantities/units.ts'
-import { extentOf, linearAxis, logAxis } from './axis.ts'
+import { extentOf, linearAxis, logAxis, type Axis } from './axis.ts'
 import type { XY } from './plot-wells.ts'
 import type { SimpleDots, SimplePlot } from './simple-plot.ts'
 
@@ -11,7 +11,8 @@ export interface Drawn {
   name: string
 }
 
-const titleOf = ({ unit, name }: Drawn) => `${name}, ${unitById(unit).label}`.replace(/, $/, '')
+/** A storativity has no unit to name. */
+export const titleOf = ({ unit, name }: Drawn) => [name, unitById(unit).label].filter(Boolean).join(', ')
 const shown = (log10: number, unit: string) => fromSI(10 ** log10, unit)
 
 type Place = (value: OverviewValue) => { x: number; y: number } | null
@@ -25,7 +26,7 @@ function dotsByEvidence(
   return evidence.options.map((label) => {
     const points = values.flatMap((value) => {
       const at = value.evidence === label ? place(value) : null
-      return at ? [{ ...at, fitted: fitted([at.x, at.y]), state: 'used' as const }] : []
+      return at ? [{ ...at, name: value.wellCode, fitted: fitted([at.x, at.y]), state: 'used' as const }] : []
     })
     return { label, points, of: points.length }
   })
@@ -63,6 +64,13 @@ function trendLine(trend: Trend | null, xs: readonly number[], toSI: (x: number)
 const fittedBy = (trend: Trend | null, at: number, unit: string) =>
   trend && shown(trend.intercept + trend.slope * at, unit)
 
+/** Whole years, with one to spare at either end. */
+function yearAxis(years: readonly number[]): Axis {
+  const [first, last] = extentOf(years) ?? [2000, 2000]
+  const parts = Math.min(8, last - first + 2)
+  return { ...linearAxis([first - 1, last + 1], 'year of the test', { fromZero: false, parts }), years: true }
+}
+
 export function yearPlot({ values, year }: Pick<UnitStatistics, 'values' | 'year'>, drawn: Drawn): SimplePlot {
   const dots = dotsByEvidence(
     values,
@@ -73,7 +81,7 @@ export function yearPlot({ values, year }: Pick<UnitStatistics, 'values' | 'year
   const xs = points.map(({ x }) => x)
   return {
     ...bare,
-    x: linearAxis(xs, 'year of the test', { fromZero: false }),
+    x: yearAxis(xs),
     y: logAxis(points.map(({ y }) => y), titleOf(drawn)), // prettier-ignore
     dots,
     lines: [{ label: 'trend', points: trendLine(year, xs, (x) => x, drawn.unit) }],
@@ -108,7 +116,8 @@ export function capacityPairsPlot(
   drawn: Drawn & { capacity: string },
 ): SimplePlot {
   const capacity = unitById(drawn.capacity)
-  const points = pairs.map(({ log10Capacity, log10T }) => ({
+  const points = pairs.map(({ wellCode: name, log10Capacity, log10T }) => ({
+    name,
     x: shown(log10Capacity, drawn.capacity),
     y: shown(log10T, drawn.unit),
     fitted: fittedBy(regression, log10Capacity, drawn.unit),

@@ -20,7 +20,7 @@ type Method = UnitStatistics['methods'][number]
 
 /** What the ratio to the curve fits says. */
 export function ratioText({ group, fromCurves }: Method): string {
-  if (group === 'curve') return 'compared with'
+  if (group === 'curve') return 'what the others are compared with'
   if (!fromCurves) return 'too few to compare'
   const { low, high } = fromCurves
   if (high < 0) return 'reads lower here'
@@ -40,7 +40,7 @@ export function trendText(trend: Slope | null, { span, of, missing }: { span: nu
   const share = formatNumber(100 * explained, { figures: 2 })
   const interval = `× ${factor(slope * span)} for ${of} (95 % interval × ${factor(slopeLow * span)} to × ${factor(slopeHigh * span)}, if wells were independent)`
   const verdict = slopeLow <= 0 && slopeHigh >= 0 ? 'No trend is shown' : slope < 0 ? 'It falls' : 'It rises'
-  return `${verdict}: ${interval}; ${n} wells, ${share} % of the scatter of log10.`
+  return `${verdict}: ${interval}; ${n} wells, and ${share} % of the variance of log10 goes with it.`
 }
 
 /** How many pairs of specific capacity and T there are, and what they say. */

@@ -14,6 +14,7 @@ export function unitStatisticsRoutes({ unitStatistics }: Services): Route[] {
         params: idParams,
         query: unitStatisticsQuery,
         response: answer,
+        limit: 'heavy',
       },
       ({ viewer, params: { id }, query }) => unitStatistics.get(viewer, id, query),
     ),

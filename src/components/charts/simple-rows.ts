@@ -15,7 +15,7 @@ const states: Record<SimplePoint['state'], string> = { used: 'used', outside: 'n
 /** The numbers of a plot, in its units, every point that is drawn; of a line without points, the line. */
 export function simpleRows({ dots, lines }: SimplePlot): SimpleRow[] {
   const points = dots.flatMap(({ label, points: each }) =>
-    each.map(({ x, y, fitted, state }) => ({ label, x, y, fitted, state: states[state] })),
+    each.map(({ x, y, fitted, state, name }) => ({ label: name ?? label, x, y, fitted, state: states[state] })),
   )
   if (points.length > 1) return points
   const drawn = lines.flatMap(({ label, points: each }) =>
@@ -39,7 +39,7 @@ export function simpleTable(plot: SimplePlot): { columns: NumbersColumn[]; rows:
     title,
     numeric: key !== 'label' && key !== 'state',
   }))
-  return { columns, rows: simpleRows(plot).map((row) => ({ ...row })) }
+  return { columns, rows: simpleRows(plot).map((row) => ({ ...row, x: plot.x.years ? String(row.x) : row.x })) }
 }
 
 /** As CSV with units in the header; a name like "=1+1" stays text in a spreadsheet. */

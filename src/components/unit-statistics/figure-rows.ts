@@ -45,19 +45,28 @@ export const figureText = (units: Units, value: number | null, dimension: Dimens
 
 export interface MeanRow {
   name: string
+  mean: number
   low: number
   high: number
   basis: string
+}
+
+/** Of log10; kriging gives a mean of its own. */
+interface Interval {
+  mean?: number
+  low: number
+  high: number
 }
 
 /** 95 % intervals of the geometric mean, SI: the one to believe first. */
 export function meanRows(figures: UnitFigures): MeanRow[] {
   const { meanByKriging, meanBySites, meanIfIndependent } = figures
   const believed = meanByKriging ?? meanBySites
-  const row = (name: string, { low, high }: { low: number; high: number }, basis: string) => ({
+  const row = (name: string, interval: Interval, basis: string): MeanRow => ({
     name,
-    low: 10 ** low,
-    high: 10 ** high,
+    mean: 10 ** (interval.mean ?? figures.mean),
+    low: 10 ** interval.low,
+    high: 10 ** interval.high,
     basis,
   })
   return [
@@ -96,7 +105,8 @@ export function figuresCsv({ unit, quantity, figures }: UnitStatistics, dimensio
       units.label('length'),
       '',
     ],
-    ...meanRows(figures).flatMap(({ name, low, high, basis }) => [
+    ...meanRows(figures).flatMap(({ name, mean, low, high, basis }) => [
+      [...of, `${name}, mean`, units.from(mean, dimension), '', label, basis],
       [...of, `${name}, 95 % low`, units.from(low, dimension), '', label, basis],
       [...of, `${name}, 95 % high`, units.from(high, dimension), '', label, basis],
     ]),

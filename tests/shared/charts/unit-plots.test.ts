@@ -2,6 +2,7 @@ import { describe, expect, it } from 'vitest'
 import { histogramChart, histogramOf, roundBreaks } from '#shared/charts/histogram.ts'
 import { paperTheme } from '#shared/charts/paper-theme.ts'
 import { plotFrame } from '#shared/charts/plot-frame.ts'
+import { simpleChart } from '#shared/charts/simple-chart.ts'
 import { capacityPairsPlot, depthPlot, probabilityPlot, yearPlot } from '#shared/charts/unit-plots.ts'
 import { makeFigures, makeStatistics } from '../../src/components/unit-statistics/make.ts'
 
@@ -46,6 +47,26 @@ describe('plots of a unit', () => {
     const values = [{ ...first!, depthM: null, year: null, evidence: 'firm' as const }, ...rest]
     expect(depthPlot({ values, depth: null }, { ...drawn, length: 'm' }).dots.map(({ points }) => points.length)).toEqual([0, 6, 0]) // prettier-ignore
     expect(yearPlot({ values, year: null }, drawn).lines[0]!.points).toEqual([])
+  })
+
+  it('name each well, and write years as years', () => {
+    const plot = yearPlot(makeStatistics(), drawn)
+    const chart = simpleChart(plot, plotFrame({ width: 600, height: 300 }, { withStrip: false }), paperTheme)
+    const { series, xAxis } = chart as unknown as {
+      series: { id: string; data: { name: string; value: number[] }[] }[]
+      xAxis: [{ axisLabel: { formatter: (value: number) => string } }]
+    }
+    expect(series.find(({ id }) => id === 'dots-1-used')!.data[0]).toMatchObject({
+      name: 'V-1',
+      value: [1990, expect.closeTo(8.64, 9)],
+    })
+    expect(xAxis[0].axisLabel.formatter(1990)).toBe('1990')
+    expect([plot.x.min, plot.x.max, plot.x.step]).toEqual([1989, 1997, 1])
+  })
+
+  it('give one year alone an axis of whole years', () => {
+    const [only] = makeStatistics().values
+    expect(yearPlot({ values: [only!], year: null }, drawn).x).toMatchObject({ min: 1989, max: 1991, step: 1 })
   })
 
   it('draw the trend alike in any unit of length', () => {
