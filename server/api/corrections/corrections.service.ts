@@ -186,14 +186,18 @@ export function createCorrectionsService(deps: Deps, needs: CorrectionsNeeds) {
       return (await repository.countFollowing(executor, seriesId)) > 0
     },
 
-    /** Lets every correction that follows one series follow another one. */
+    /** Lets every correction that follows one series follow another one, and tells what each does then. */
     async follow(tx: Executor, viewer: Viewer, testId: number, { from, to }: { from: number; to: number }) {
+      const followed: { correctionId: number; applied: unknown }[] = []
       for (const row of await repository.listFollowing(tx, from)) {
         const settings = correctionSettings.parse({ ...settingsOf(row), seriesId: to })
         const change = { settings, outsideSeriesId: to, changedBy: viewer.id, changedAt: now() }
-        await repository.updateCorrection(tx, row.id, row.rowVersion, change)
-        await apply(tx, viewer, testId, { settings, wellIds: row.wellIds, active: row.active })
+        if (!(await repository.updateCorrection(tx, row.id, row.rowVersion, change)))
+          throw new AppError('edit/conflict')
+        const applied = await apply(tx, viewer, testId, { settings, wellIds: row.wellIds, active: row.active })
+        followed.push({ correctionId: row.id, applied })
       }
+      return followed
     },
 
     /** What is switched on, with the series that it follows. */

@@ -19,6 +19,9 @@ export interface Extent {
   highest: number
 }
 
+/** Thirty years either way, as rates may lie: what is farther was misread, and gaps between such times overflow. */
+const FARTHEST_S = 1e9
+
 /**
  * The extent of a series that can correct readings.
  * @throws AppError for one value, values that do not move or cannot be, and a series apart from the readings
@@ -38,8 +41,14 @@ export function checkSeries(
     const params = { swing: shown(max_m - min_m), highest: shown(max_m), unit: unitById(unit).label, found: taken }
     throw new AppError(`correction/${refusal}`, params)
   }
+  checkNear(extent)
   checkOverlap(extent, readings)
   return extent
+}
+
+function checkNear({ firstS, lastS }: Extent): void {
+  if (firstS >= -FARTHEST_S && lastS <= FARTHEST_S) return
+  throw new AppError('correction/far-times', { from: formatElapsed(firstS), to: formatElapsed(lastS) })
 }
 
 function checkOverlap({ firstS, lastS }: Extent, readings: Span | null): void {

@@ -61,6 +61,12 @@ export function createOutsideSeriesService(deps: Deps, { pumpingTests, correctio
     return found.row
   }
 
+  /** Ends one series; what followed it follows the other. */
+  async function replace(tx: Executor, viewer: Viewer, old: repository.OutsideSeriesRow, id: number) {
+    if (!(await repository.endSeries(tx, old.id, old.rowVersion, now()))) throw new AppError('edit/conflict')
+    return corrections.follow(tx, viewer, old.pumpingTestId, { from: old.id, to: id })
+  }
+
   return {
     /** Reads the file, keeps it as it came, and stores every line with its fate. */
     async create(
@@ -86,11 +92,16 @@ export function createOutsideSeriesService(deps: Deps, { pumpingTests, correctio
         const at = now()
         const id = await repository.insertSeries(tx, { ...row, createdBy: viewer.id, createdAt: at })
         await repository.insertReadings(tx, outsideRowsOf(id, reading))
-        if (replaced) {
-          await repository.endSeries(tx, replaced.id, replaced.rowVersion, at)
-          await corrections.follow(tx, viewer, testId, { from: replaced.id, to: id })
+        const followed = replaced ? await replace(tx, viewer, replaced, id) : []
+        const details = {
+          seriesId: id,
+          label,
+          fileName,
+          quantity,
+          ...counted,
+          replaces: replaced?.id ?? null,
+          followed,
         }
-        const details = { seriesId: id, label, fileName, quantity, ...counted, replaces: replaced?.id ?? null }
         await recordAudit(tx, {
           viewer,
           at,

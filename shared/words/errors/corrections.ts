@@ -48,6 +48,11 @@ export const correctionErrors = {
     sentence: ({ from, to, first, last }) =>
       `The series runs from ${from} to ${to} after pump on, the readings from ${first} to ${last}: they share no time. Check dates, zone, and the zero of elapsed times.`,
   },
+  'correction/far-times': {
+    status: 400,
+    sentence: ({ from, to }) =>
+      `The series runs from ${from} to ${to} after pump on, which is decades away. Check the column of times, their unit, and lines with a mistyped time.`,
+  },
   'correction/pressure-swing': {
     status: 400,
     sentence: ({ swing, unit }) =>

@@ -8,12 +8,13 @@ import {
   accept,
   enterTest,
   readAnalysis,
+  readTest,
   recalculate,
   submitAnalysis,
   submitDraft,
 } from '../../support/analysed-test.ts'
 import { useApp, type SignedIn } from '../../support/app.ts'
-import { createWell, makeRegion, makeUnit, saveAnalysis } from '../../support/domain.ts'
+import { createWell, makeMapping, makeRegion, makeUnit, saveAnalysis, upload } from '../../support/domain.ts'
 import { keepBooks, reportAt, wholly } from '../../support/values.ts'
 
 const tested = useApp()
@@ -174,6 +175,14 @@ describe('a reported value that waits for review', () => {
     await remove(analyst, analysisId).expect(200)
     await analyst.get(`/api/pumping-tests/${testId}`).expect(200)
     expect((await readAnalysis(analyst, second.id)).state).toBe('submitted')
+  })
+
+  it('leaves the test alone that somebody brought readings to', async () => {
+    const { testId, analysisId } = await reported()
+    const { wells } = await readTest(analyst, testId)
+    await upload(analyst, testId, wells[0]!.id, 'minutes,drawdown\n1,0.1\n2,0.2', makeMapping()).expect(201)
+    await remove(analyst, analysisId).expect(200)
+    expect((await readTest(analyst, testId)).series).toHaveLength(1)
   })
 
   it('is a matter of record once it was decided about', async () => {

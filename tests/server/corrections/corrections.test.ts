@@ -210,6 +210,7 @@ describe('a series from outside', () => {
     ['the wrong unit', pressureLog(), 'mH2O', 'correction/pressure-swing'],
     ['a logger under water', pressureLog(-100, 200, (t) => 15 + t / 1e4), 'hPa', 'correction/pressure-high'],
     ['another time', pressureLog(100_000, 101_000), 'hPa', 'correction/no-overlap'],
+    ['a mistyped time', 'minutes,pressure\n-2.9e306,1012\n0,1013\n2.9e306,1014', 'hPa', 'correction/far-times'],
     ['a unit of length', pressureLog(), 'm', 'correction/unit'],
   ])('with %s is refused', async (_, text, unit, code) => {
     const { id } = await enterWeatherTest(analyst, unitId)
@@ -255,5 +256,11 @@ describe('a series from outside', () => {
     expect(left.map((one) => one.id)).toEqual([series.id])
     expect(corrections[0]!.settings).toMatchObject({ seriesId: series.id })
     expect((await inputsOf(analyst, id)).inputs.series[0]!.corrections![0]!.outside).toBe('Roof')
+    const administrator = await tested.signIn('administrator')
+    const trail = (await administrator.get('/api/audit-trail?limit=1').expect(200)).body as { items: unknown[] }
+    expect(trail.items[0]).toMatchObject({
+      action: 'outside-series/replace',
+      details: { replaces: old.id, followed: [{ correctionId: corrections[0]!.id }] },
+    })
   })
 })
