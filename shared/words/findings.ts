@@ -99,8 +99,14 @@ const findings: Sentences<string> = {
   'distance-uncertain': ({ text, length, percent }) =>
     `The distance of ${text('well')}, ${length('distance_m')}, is uncertain by ${length('distanceSd_m')} (${percent('share')}). Above ${percent('limit')} storativity is weak evidence; measure the distance.`,
   'few-readings': ({ text }) => `Only ${text('n')} readings are used.`,
-  'residuals-correlated': ({ text, number }) =>
-    `The ${text('n')} readings stray from the model together, not one by one: they tell as much as ${number('effectiveN')} independent readings, and the intervals are widened for it.`,
+  'residuals-correlated': ({ text, number }) => {
+    // Where the likeness of readings outlasts the log, even one independent reading would tell more.
+    const worth =
+      Number(text('effectiveN')) < 1
+        ? 'less than one independent reading would'
+        : `as much as ${number('effectiveN')} independent readings`
+    return `The ${text('n')} readings stray from the model together, not one by one: they tell ${worth}, and the intervals are widened for it.`
+  },
   'readings-weighed-less': ({ text }) =>
     `${text('count')} of ${text('n')} readings lie so far off the curve that they were weighed less. Look at them on the plot: one that is wrong is better left out with its reason.`,
   'not-converged': ({ text }) =>

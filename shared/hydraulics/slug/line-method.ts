@@ -40,7 +40,7 @@ export function lineMethod(spec: LineSpec): SlugMethod {
     unknowns: [conductivityUnknown],
     options: [
       repeatsOption,
-      { name: 'heads', label: 'Heads H/H0 of the line', kind: 'heads', default: heads },
+      { name: 'heads', label: 'Heads H/H₀ of the line', kind: 'heads', default: heads },
       { name: 'line', label: 'Line drawn by hand', kind: 'line' },
       ...spec.options,
     ],

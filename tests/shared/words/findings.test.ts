@@ -43,6 +43,14 @@ describe('sentences of findings', () => {
     expect(limit && findingText(limit, us)).toContain('ft²/d')
   })
 
+  it('count independent readings down to one, and no parts of one', () => {
+    const told = [12.3, 0.38].map((effectiveN) =>
+      findingText({ code: 'residuals-correlated', severity: 'note', params: { n: 27, effectiveN } }, metric),
+    )
+    expect(told[0]).toContain('they tell as much as 12 independent readings,')
+    expect(told[1]).toContain('they tell less than one independent reading would,')
+  })
+
   it('say what is not determined, and by how much', () => {
     const finding = { code: 'not-determined', params: { parameter: 'S', factor: 40.2 } }
     expect(findingText(finding, metric)).toBe(
