@@ -3,6 +3,7 @@ import type { Page } from '@playwright/test'
 import { expectAccessible, expectNoSidewaysScroll } from './support/accessible.ts'
 import { signIn, visitAs } from './support/sign-in.ts'
 import { expect, test } from './support/test.ts'
+import { openTest, testAddress } from './support/workbench.ts'
 
 const korendijk = fileURLToPath(new URL('../reference/oude-korendijk.csv', import.meta.url))
 
@@ -216,22 +217,6 @@ test('The line is drawn by hand with the keyboard, and goes back to least square
   await expect(page.getByText('Line by least squares')).toBeVisible()
 })
 
-/** A seeded test with three observation wells. */
-async function testAddress(page: Page): Promise<string> {
-  const answer = await page.request.get('/api/pumping-tests?kind=constant-rate&state=accepted&limit=50')
-  const { items } = (await answer.json()) as { items: { id: number; wellCount: number }[] }
-  const id = items.find(({ wellCount }) => wellCount >= 4)?.id
-  return `/pumping-tests/${id}`
-}
-
-/** Such a test with a new straight line on it. */
-async function openTest(page: Page) {
-  await page.goto(await testAddress(page))
-  await page.getByRole('button', { name: 'New analysis' }).click()
-  await page.getByRole('listitem').filter({ hasText: 'Time–drawdown line' }).click()
-  await expect(page.getByRole('slider', { name: 'Window begins at' })).toBeVisible()
-}
-
 test('Every plot of a test is drawn, read as a table and saved', async ({ page }) => {
   await visitAs(page, 'analyst')
   await openTest(page)
@@ -348,6 +333,7 @@ const pages: Record<string, (address: string) => string> = {
   workbench: (address) => address,
   'comparison of analyses': (address) => `${address}?part=comparison`,
   'forecast of a test': (address) => `${address}?part=forecast`,
+  'corrections of a test': (address) => `${address}?part=corrections`,
   'wells and conditions of a test': (address) => `${address}?part=test`,
 }
 
