@@ -20,7 +20,7 @@ type Method = UnitStatistics['methods'][number]
 
 /** What the ratio to the curve fits says. */
 export function ratioText({ group, fromCurves }: Method): string {
-  if (group === 'curve') return 'what the others are compared with'
+  if (group === 'curve') return 'the measure'
   if (!fromCurves) return 'too few to compare'
   const { low, high } = fromCurves
   if (high < 0) return 'reads lower here'
