@@ -45,7 +45,7 @@ describe('sentences of findings', () => {
 
   it('count independent readings down to one, and no parts of one', () => {
     const told = [12.3, 0.38].map((effectiveN) =>
-      findingText({ code: 'residuals-correlated', severity: 'note', params: { n: 27, effectiveN } }, metric),
+      findingText({ code: 'residuals-correlated', params: { n: 27, effectiveN } }, metric),
     )
     expect(told[0]).toContain('they tell as much as 12 independent readings,')
     expect(told[1]).toContain('they tell less than one independent reading would,')
