@@ -1,5 +1,5 @@
 import { fromScale, toScale, type LeastSquaresProblem } from './least-squares-problem.ts'
-import { dampedStep, evaluate, normalEquations, project, unknownAt, type State } from './marquardt-step.ts'
+import { dampedSteps, evaluate, normalEquations, project, unknownAt, type Move, type State } from './marquardt-step.ts'
 import { invertSymmetric } from './small-matrix.ts'
 
 export interface LeastSquaresOptions {
@@ -84,9 +84,9 @@ function follow(
   let lastStep = Infinity
   let undamped = false
   for (let iteration = 1; iteration <= mostIterations && Number.isFinite(state.objective); iteration++) {
-    const move = dampedStep(problem, state, damping)
-    if (move && move.length <= tolerance) return { ...state, iterations: iteration, converged: true }
-    const next = move && evaluate(problem, move.x)
+    const moves = dampedSteps(problem, state, damping)
+    if (moves[0] && moves[0].length <= tolerance) return { ...state, iterations: iteration, converged: true }
+    const { move, next } = better(problem, moves)
     const gain = next ? state.objective - next.objective : NaN
     const settling = move !== null && move.promised <= ROUNDING_FLOOR * state.objective
     if (settling && move.length >= lastStep) {
@@ -112,6 +112,15 @@ function follow(
     }
   }
   return { ...state, iterations: mostIterations, converged: false }
+}
+
+const noMove = { move: null, next: null }
+
+/** The move that leads lowest, and where. */
+function better(problem: LeastSquaresProblem, moves: Move[]): { move: Move; next: State } | typeof noMove {
+  const [first, ...others] = moves.map((move) => ({ move, next: evaluate(problem, move.x) }))
+  if (!first) return noMove
+  return others.reduce((best, tried) => (tried.next.objective < best.next.objective ? tried : best), first)
 }
 
 const meets = (state: State, { x, objective }: Path) =>

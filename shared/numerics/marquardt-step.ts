@@ -7,10 +7,7 @@ import {
 } from './least-squares-problem.ts'
 import { solveSymmetric } from './small-matrix.ts'
 
-/**
- * Farthest step in ln of an unknown. A longer one, where a drawdown hardly answers to leakage or storage, ends where it
- * does not answer at all and no way leads back.
- */
+/** Farthest step in ln of an unknown: a longer one leaves the neighbourhood that the slopes tell about. */
 const FARTHEST_STEP = 1
 
 /** Where a search stands; `x` are transformed parameters. */
@@ -21,8 +18,20 @@ export interface State {
   objective: number
 }
 
-/** The damped step inside the bounds; null when the system is too ill to solve, so that damping grows. */
-export function dampedStep(problem: LeastSquaresProblem, state: State, damping: number) {
+export interface Move {
+  x: number[]
+  /** By how much the objective would fall if the model were linear. */
+  promised: number
+  length: number
+}
+
+/**
+ * The damped step inside the bounds; none when the system is too ill to solve, so that damping grows. A step too far is
+ * shortened in two ways, of which the caller takes the better: as a whole, which keeps its direction along a valley; and
+ * in each unknown by itself, so that one that hardly matters yet does not hold the others back, nor goes where nothing
+ * answers at all and no way leads back.
+ */
+export function dampedSteps(problem: LeastSquaresProblem, state: State, damping: number): Move[] {
   const { gradient, normal } = normalEquations(state, problem.unknowns.length)
   const free = state.x
     .map((_, k) => k)
@@ -42,24 +51,38 @@ export function dampedStep(problem: LeastSquaresProblem, state: State, damping: 
           free.map((k) => -(gradient[k] as number)),
         )
       : []
-  const target = [...state.x]
-  if (!solved) return null
-  free.forEach((k, i) => (target[k] = (target[k] as number) + trusted(unknownAt(problem, k), solved[i] as number)))
-  const x = project(target, problem)
+  if (!solved) return []
+  const far = free.map((k, i) => farness(unknownAt(problem, k), solved[i] as number) / FARTHEST_STEP)
+  const whole = Math.max(1, ...far)
+  const shortened =
+    whole > 1
+      ? [solved.map((step) => step / whole), solved.map((step, i) => step / Math.max(1, far[i] as number))]
+      : [solved]
+  return shortened.map((steps) =>
+    moveBy(problem, state, { gradient, normal }, new Map(free.map((k, i) => [k, steps[i] as number]))),
+  )
+}
+
+function moveBy(
+  problem: LeastSquaresProblem,
+  state: State,
+  { gradient, normal }: ReturnType<typeof normalEquations>,
+  steps: Map<number, number>,
+): Move {
+  const x = project(
+    state.x.map((value, k) => value + (steps.get(k) ?? 0)),
+    problem,
+  )
   const delta = x.map((value, k) => value - (state.x[k] as number))
   const promised = delta.reduce((sum, d, i) => {
     const curved = delta.reduce((inner, e, j) => inner + ((normal[i] as number[])[j] as number) * e, 0)
     return sum - d * (2 * (gradient[i] as number) + curved)
   }, 0)
-  // A step cut short in some unknowns may lead uphill; with more damping it turns downhill.
-  const isCut = free.some((k, i) => trusted(unknownAt(problem, k), solved[i] as number) !== solved[i])
-  if (isCut && !(promised > 0)) return null
   return { x, promised, length: Math.max(0, ...delta.map(Math.abs)) }
 }
 
-/** The step of one unknown, no longer than the model's slope can be trusted; the others take theirs all the same. */
-const trusted = ({ scale }: FitUnknown, step: number) =>
-  scale === 'log' ? Math.max(-FARTHEST_STEP, Math.min(FARTHEST_STEP, step)) : step
+/** How far a step goes in an unknown that may change by factors. */
+const farness = ({ scale }: FitUnknown, step: number) => (scale === 'log' ? Math.abs(step) : 0)
 
 export function normalEquations({ residuals, jacobian }: Pick<State, 'residuals' | 'jacobian'>, size: number) {
   const gradient = new Array<number>(size).fill(0)
