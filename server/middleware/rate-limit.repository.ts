@@ -1,5 +1,6 @@
 import { eq, sql } from 'drizzle-orm'
 import type { Executor } from '../db/client.ts'
+import { rawRows } from '../db/raw-rows.ts'
 import { withRetry } from '../db/retry.ts'
 import { rateLimits } from '../db/schema/index.ts'
 
@@ -21,9 +22,7 @@ export async function countHit(executor: Executor, id: string, now: Date, window
       hits = if(reset_at <= ${now}, 1, hits + 1),
       reset_at = if(reset_at <= ${now}, ${resetAt}, reset_at)
     returning hits, reset_at as resetAt`
-  const [rows] = (await withRetry(() => executor.execute(statement))) as unknown as [
-    { hits: number; resetAt: string }[],
-  ]
+  const rows = await withRetry(() => rawRows<{ hits: number; resetAt: string }>(executor, statement))
   const { hits, resetAt: told } = rows[0]!
   return { hits, resetAt: rateLimits.resetAt.mapFromDriverValue(told) as Date }
 }

@@ -52,7 +52,10 @@ export interface Refusal {
 const metresInUnit: Record<string, number> = { 'us-ft': 1200 / 3937, ft: 0.3048 }
 
 const fieldsOf = (row: string): string[] => row.split('|')
-const boxOf = (text: string): Box => text.split(',').map(Number) as unknown as Box
+const boxOf = (text: string): Box => {
+  const [west = NaN, south = NaN, east = NaN, north = NaN] = text.split(',').map(Number)
+  return [west, south, east, north]
+}
 
 function readOperation(row: string): DatumOperation {
   const [name = '', codes = '', accuracy = '', towgs84 = '', area = ''] = fieldsOf(row)

@@ -1,19 +1,18 @@
 import { sql, type SQL } from 'drizzle-orm'
 import type { Executor } from '../../db/client.ts'
-
-/** The driver answers with the rows first. */
-const rowsOf = <Row>(result: unknown): Row[] => (result as [Row[]])[0]
+import { rawRows } from '../../db/raw-rows.ts'
 
 /** When the newest migration of the database was made, ms; null before the first. */
 export async function newestMigration(executor: Executor): Promise<number | null> {
-  const found = await executor.execute(sql`select max(created_at) as newest from __drizzle_migrations`)
-  const newest = rowsOf<{ newest: number | string | null }>(found)[0]?.newest
+  const statement = sql`select max(created_at) as newest from __drizzle_migrations`
+  const [row] = await rawRows<{ newest: number | string | null }>(executor, statement)
+  const newest = row?.newest
   return newest == null ? null : Number(newest)
 }
 
 async function shown(executor: Executor, query: SQL): Promise<string | null> {
-  const found = await executor.execute(query)
-  return rowsOf<{ Value: string }>(found)[0]?.Value ?? null
+  const [row] = await rawRows<{ Value: string }>(executor, query)
+  return row?.Value ?? null
 }
 
 /** Whether this node of a cluster takes writes; null outside a cluster, where the server says OFF to both. */
